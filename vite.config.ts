@@ -1,0 +1,50 @@
+import tailwindcss from '@tailwindcss/vite'
+import react from '@vitejs/plugin-react'
+import { defineConfig } from 'vitest/config'
+
+/** One tooling file: the web build, and the four kinds of test that vitest runs. */
+export default defineConfig({
+  plugins: [react(), tailwindcss()],
+  build: { outDir: '.data/web', emptyOutDir: true, sourcemap: false },
+  server: { watch: { ignored: ['**/.data/**'] } },
+  test: {
+    projects: [
+      {
+        test: {
+          name: 'unit',
+          include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'worker/**/*.test.ts', 'web/lib/**/*.test.ts', 'tests/unit/**/*.test.ts'],
+          setupFiles: ['tests/support/fail-on-console.ts'],
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: 'web',
+          environment: 'jsdom',
+          include: ['tests/web/**/*.test.tsx'],
+          setupFiles: ['tests/support/fail-on-console.ts'],
+        },
+      },
+      {
+        test: {
+          name: 'service',
+          include: ['tests/server/**/*.test.ts', 'tests/worker/**/*.test.ts'],
+          globalSetup: ['tests/support/database-setup.ts'],
+          setupFiles: ['tests/support/fail-on-console.ts'],
+          testTimeout: 60_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        test: {
+          name: 'browser',
+          include: ['tests/e2e/**/*.test.ts'],
+          globalSetup: ['tests/support/database-setup.ts'],
+          fileParallelism: false,
+          testTimeout: 300_000,
+          hookTimeout: 180_000,
+        },
+      },
+    ],
+  },
+})
