@@ -1,0 +1,14 @@
+import { z } from 'zod'
+
+/** One line of the audit trail. Nobody can change or delete it. */
+export const trailEntrySchema = z.object({
+  id: z.number().int(),
+  at: z.string(),
+  who: z.string(),
+  action: z.string(),
+  subject: z.string(),
+  subjectId: z.string().nullable(),
+  text: z.string(),
+})
+export type TrailEntry = z.infer<typeof trailEntrySchema>
+export const trailListSchema = z.object({ entries: z.array(trailEntrySchema), next: z.number().int().nullable() })
