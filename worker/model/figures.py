@@ -1,0 +1,69 @@
+"""Figures of a net on generated cells: accuracy, blank and void confusion, calibration."""
+
+import torch
+
+from cells import BLANK, VOID, Generator
+
+LEVELS = {"clean": 0.0, "disturbed": 0.6, "hard": 1.0}
+
+
+def logits_of(net: torch.nn.Module, cells: torch.Tensor) -> torch.Tensor:
+    with torch.no_grad():
+        return torch.cat([net(cells[i : i + 500]) for i in range(0, len(cells), 500)])
+
+
+def every_digit(source: Generator, hardness: float | None, **shares: float) -> tuple[torch.Tensor, torch.Tensor]:
+    """One cell of each digit of the source, in chunks; hardness None draws it anew for each cell."""
+    cells, labels = [], []
+    for start in range(0, len(source.images), 500):
+        pick = torch.arange(start, min(start + 500, len(source.images)))
+        hard = torch.rand(len(pick)) if hardness is None else torch.full((len(pick),), hardness)
+        x, y = source.batch(pick, hard, **shares)
+        cells.append(x)
+        labels.append(y)
+    return torch.cat(cells), torch.cat(labels)
+
+
+def calibration_error(p: torch.Tensor, labels: torch.Tensor, bins: int = 15) -> float:
+    """Expected calibration error over equal bins of the highest probability."""
+    best, choice = p.max(1)
+    right = (choice == labels).float()
+    place = (best * bins).long().clamp(max=bins - 1)
+    total = 0.0
+    for k in range(bins):
+        rows = place == k
+        if rows.any():
+            total += abs(best[rows].mean() - right[rows].mean()).item() * rows.float().mean().item()
+    return total
+
+
+def temperature_of(logits: torch.Tensor, labels: torch.Tensor) -> float:
+    """The temperature with the least cross-entropy, by a fine search."""
+    grid = [0.5 + 0.01 * k for k in range(151)]
+    return min(grid, key=lambda t: torch.nn.functional.cross_entropy(logits / t, labels).item())
+
+
+def figures(net: torch.nn.Module, source: Generator, temperature: float) -> dict[str, dict[str, float]]:
+    out: dict[str, dict[str, float]] = {}
+    for name, hardness in LEVELS.items():
+        x, y = every_digit(source, hardness, blank=0, void=0, style=0)
+        p = torch.softmax(logits_of(net, x) / temperature, 1)
+        best, choice = p.max(1)
+        right = choice == y
+        row = {
+            "digits": len(y),
+            "digitAccuracy": right.float().mean().item(),
+            "digitTakenAsVoid": (choice == VOID).float().mean().item(),
+            "digitTakenAsBlank": (choice == BLANK).float().mean().item(),
+            "shareAbove0.99": (best > 0.99).float().mean().item(),
+            "wrongAbove0.99": int(((best > 0.99) & ~right).sum()),
+        }
+        for label, shares, key in ((VOID, {"void": 1.0, "blank": 0.0}, "void"), (BLANK, {"void": 0.0, "blank": 1.0}, "blank")):
+            x, y = every_digit(source, hardness, style=0, **shares)
+            p = torch.softmax(logits_of(net, x) / temperature, 1)
+            row[f"{key}Recall"] = (p.argmax(1) == label).float().mean().item()
+            row[f"{key}TakenAsDigitAbove0.9"] = (p[:, :10].max(1).values > 0.9).float().mean().item()
+        x, y = every_digit(source, hardness)
+        row["calibrationError"] = calibration_error(torch.softmax(logits_of(net, x) / temperature, 1), y)
+        out[name] = {k: round(v, 5) for k, v in row.items()}
+    return out
