@@ -1,0 +1,36 @@
+/** Brings a database up to date: tables, the queue's own schema, and what the application's role may do. */
+import { JOBS } from '../../shared/jobs.ts'
+import { APP_ROLE } from '../postgres/roles.ts'
+import { createBoss, QUEUE_OPTIONS } from '../queue/boss.ts'
+import { createDataSource } from './database.ts'
+
+const quote = (name: string) => `"${name.replaceAll('"', '""')}"`
+
+/**
+ * Runs as the owner. `appRole` is the role of DATABASE_URL: it reads and writes everything, except that it can only add to the
+ * trail. Safe to run again.
+ */
+export async function migrate(ownerUrl: string, appRole: string = APP_ROLE): Promise<void> {
+  const boss = createBoss(ownerUrl, { owner: true })
+  await boss.start()
+  for (const name of Object.keys(JOBS)) {
+    await boss.createQueue(`${name}-failed`, { name: `${name}-failed`, policy: 'standard' })
+    await boss.createQueue(name, { name, policy: 'standard', deadLetter: `${name}-failed`, ...QUEUE_OPTIONS })
+  }
+  await boss.stop({ graceful: true, wait: true })
+  const source = await createDataSource(ownerUrl, { poolSize: 1 }).initialize()
+  try {
+    await source.runMigrations({ transaction: 'all' })
+    const role = quote(appRole)
+    for (const schema of ['public', 'pgboss']) {
+      await source.query(`GRANT USAGE ON SCHEMA ${schema} TO ${role}`)
+      await source.query(`GRANT SELECT, INSERT, UPDATE, DELETE ON ALL TABLES IN SCHEMA ${schema} TO ${role}`)
+      await source.query(`GRANT USAGE ON ALL SEQUENCES IN SCHEMA ${schema} TO ${role}`)
+      await source.query(`GRANT EXECUTE ON ALL FUNCTIONS IN SCHEMA ${schema} TO ${role}`)
+    }
+    await source.query(`REVOKE UPDATE, DELETE, TRUNCATE ON trail FROM ${role}`)
+    await source.query(`REVOKE ALL ON migrations FROM ${role}`)
+  } finally {
+    await source.destroy()
+  }
+}
