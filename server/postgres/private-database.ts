@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import { mkdirSync } from 'node:fs'
 import { dirname, join, resolve } from 'node:path'
+import type { Client } from 'pg'
 import { type Cluster, startCluster } from './cluster.ts'
 import { canReach, clusterIdentity } from './identity.ts'
 import { APP_ROLE, OWNER_ROLE, prepareDatabase, prepareRoles, withClient } from './roles.ts'
@@ -12,6 +13,8 @@ export interface PrivateDatabase {
   adminUrl: string
   ownerUrl: string
   appUrl: string
+  /** Throws the database away and makes an empty one. */
+  remake(): Promise<void>
 }
 
 /** The database of a private installation. */
@@ -31,15 +34,21 @@ export async function startPrivateDatabase(options: {
   mkdirSync(dirname(dataDir), { recursive: true })
   const cluster = await startCluster({ ...options, adminPassword: secrets.admin, logFile: `${dataDir}.log` })
   const adminUrl = cluster.url('postgres', secrets.admin, 'postgres')
+  const prepare = (admin: Client) => prepareDatabase(admin, DATABASE_NAME, cluster.url('postgres', secrets.admin, DATABASE_NAME))
   await withClient(adminUrl, async (admin) => {
     await prepareRoles(admin, secrets)
-    await prepareDatabase(admin, DATABASE_NAME, cluster.url('postgres', secrets.admin, DATABASE_NAME))
+    await prepare(admin)
   })
   return {
     cluster,
     adminUrl,
     ownerUrl: cluster.url(OWNER_ROLE, secrets.owner, DATABASE_NAME),
     appUrl: cluster.url(APP_ROLE, secrets.app, DATABASE_NAME),
+    remake: () =>
+      withClient(adminUrl, async (admin) => {
+        await admin.query(`DROP DATABASE IF EXISTS ${DATABASE_NAME} WITH (FORCE)`)
+        await prepare(admin)
+      }),
   }
 }
 

@@ -1,0 +1,102 @@
+/**
+ * `npm start`: everything on one machine, from an empty folder to a signed-in browser. Ctrl-C stops all of it.
+ * Each step says what it does; what fails says what happened and what to do.
+ */
+import { join } from 'node:path'
+import { BadSettings, readSettings, type Settings } from '../config.ts'
+import { CannotStart } from '../postgres/cannot-start.ts'
+import { keepSecrets } from '../postgres/secrets.ts'
+import { answers } from './start/answers.ts'
+import { beginSeason } from './start/begin-season.ts'
+import { buildWeb, webIsBuilt } from './start/build-web.ts'
+import { openDatabase } from './start/database.ts'
+import { greet } from './start/greet.ts'
+import { startLocalMail } from './start/mail.ts'
+import { takeFolder } from './start/only-one.ts'
+import { choosePort } from './start/port.ts'
+import { say, seconds, step } from './start/say.ts'
+import { readStartSettings, type StartSettings } from './start/start-settings.ts'
+import { Stops } from './start/stops.ts'
+import { type Supervised, supervise } from './start/supervise.ts'
+
+const READY_WITHIN_MS = 90_000
+/** A server that falls this often before its first answer will not recover by itself. */
+const FALLS_BEFORE_GIVING_UP = 3
+
+const stops = new Stops()
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.on(signal, () => void stops.runAndExit(0, 'Stopping …'))
+
+try {
+  await start(readStartSettings(process.env, process.argv.slice(2)))
+} catch (cause) {
+  if (!stops.begun) {
+    const known = cause instanceof CannotStart || cause instanceof BadSettings
+    process.stderr.write(`\n${known ? cause.message : cause instanceof Error ? cause.stack : String(cause)}\n`)
+    await stops.runAndExit(1)
+  }
+}
+
+async function start(own: StartSettings): Promise<void> {
+  const begin = Date.now()
+  stops.add(takeFolder(own.DATA_DIR))
+  const secrets = keepSecrets(join(own.DATA_DIR, 'secrets.json'))
+  const port = await choosePort(own.PORT)
+  const known = { ...defaults(own.DATA_DIR, port, secrets.session), ...present(process.env), PORT: String(port) }
+  // Bad settings are named before anything is installed or started.
+  readSettings({ DATABASE_URL: 'postgresql://private', ...known })
+
+  const webDir = readSettings({ DATABASE_URL: 'postgresql://private', ...known }).webDir
+  const built = webIsBuilt(webDir) ? Promise.resolve() : step('Building the web app', () => buildWeb(webDir))
+  built.catch(() => undefined)
+  const database = await openDatabase(own, secrets)
+  stops.add(database.stop)
+  const mail = own.SMTP_URL === undefined ? await startLocalMail(own.SMTP_PORT, join(own.DATA_DIR, 'mail')) : undefined
+  if (mail !== undefined) stops.add(mail.close)
+
+  const env: Record<string, string | undefined> = { ...known, DATABASE_URL: database.appUrl, SMTP_URL: mail?.url ?? own.SMTP_URL }
+  // The processes that serve people cannot change tables.
+  env.MIGRATE_DATABASE_URL = undefined
+  const settings = readSettings(env)
+  const season = await beginSeason(database, settings, { dataFolder: own.DATA_DIR, empty: own.empty })
+  await built
+  await runProcesses(own.DATA_DIR, env, settings)
+  await greet({ settings, season, dataFolder: own.DATA_DIR, databaseUrl: database.appUrl })
+  say(`Started in ${seconds(begin)}. Ctrl-C stops everything.`)
+}
+
+function defaults(dataFolder: string, port: number, sessionSecret: string): Record<string, string> {
+  return {
+    SESSION_SECRET: sessionSecret,
+    STORAGE_DIR: join(dataFolder, 'files'),
+    WEB_DIR: join(dataFolder, 'web'),
+    PUBLIC_URL: `http://localhost:${port}`,
+  }
+}
+
+function present(env: NodeJS.ProcessEnv): Record<string, string | undefined> {
+  return Object.fromEntries(Object.entries(env).filter(([, value]) => value !== undefined && value.trim() !== ''))
+}
+
+async function runProcesses(dataFolder: string, env: NodeJS.ProcessEnv, settings: Settings): Promise<void> {
+  const run = (name: string, script: string) => {
+    const process = supervise({ name, script, env, logFile: join(dataFolder, `${name}.log`), say })
+    stops.add(process.stop)
+    return process
+  }
+  await step('Starting the server and a worker', async () => {
+    const server = run('server', 'server/main.ts')
+    const worker = run('worker', 'worker/main.ts')
+    await waitForServer(server, worker, settings.port)
+  })
+}
+
+async function waitForServer(server: Supervised, worker: Supervised, port: number): Promise<void> {
+  const deadline = Date.now() + READY_WITHIN_MS
+  while (!(await answers(port))) {
+    const fallen = [server, worker].find((process) => process.falls() >= FALLS_BEFORE_GIVING_UP)
+    if (fallen !== undefined) throw new CannotStart(`The ${fallen.name} does not start. Its log ends:\n${fallen.lastWords()}`, '')
+    if (Date.now() > deadline)
+      throw new CannotStart(`The server does not answer on port ${port}. Its log ends:\n${server.lastWords()}`, '')
+    await new Promise((resolve) => setTimeout(resolve, 100))
+  }
+}

@@ -1,0 +1,39 @@
+import { resolve } from 'node:path'
+import { z } from 'zod'
+import { BadSettings } from '../../config.ts'
+
+/** What only the start command needs; the rest of the environment is the server's and the worker's. */
+const schema = z.object({
+  /** Everything the private installation writes. */
+  DATA_DIR: z.string().default('.data'),
+  /** Where the private cluster's files go; absent: `pg` in the data folder. */
+  POSTGRES_DIR: z.string().optional(),
+  /** Wanted loopback ports; absent or busy: another one. */
+  POSTGRES_PORT: z.coerce.number().int().min(0).max(65_535).default(0),
+  SMTP_PORT: z.coerce.number().int().min(0).max(65_535).default(0),
+  /** A database of your own; then no private cluster is started. */
+  DATABASE_URL: z.string().optional(),
+  MIGRATE_DATABASE_URL: z.string().optional(),
+  SMTP_URL: z.string().optional(),
+  PORT: z.coerce.number().int().min(1).max(65_535).optional(),
+})
+
+export interface StartSettings extends z.output<typeof schema> {
+  /** Start without the demo season. */
+  empty: boolean
+}
+
+/**
+ * @param args after `npm start --`
+ * @throws BadSettings naming every bad variable or argument
+ */
+export function readStartSettings(env: NodeJS.ProcessEnv, args: string[]): StartSettings {
+  const present = Object.fromEntries(Object.entries(env).filter(([, value]) => value !== undefined && value.trim() !== ''))
+  const parsed = schema.safeParse(present)
+  const problems = [
+    ...(parsed.error?.issues ?? []).map((issue) => `${String(issue.path[0])} ${issue.message}`),
+    ...args.filter((arg) => arg !== '--empty').map((arg) => `"${arg}" is no argument of "npm start"; there is only --empty`),
+  ]
+  if (!parsed.success || problems.length > 0) throw new BadSettings(`npm start cannot begin:\n  ${problems.join('\n  ')}`)
+  return { ...parsed.data, DATA_DIR: resolve(parsed.data.DATA_DIR), empty: args.includes('--empty') }
+}
