@@ -1,0 +1,39 @@
+/** A rule is a value: what it is called, how severe it can be, which cells it reads, and one small function. */
+import type { CheckContext } from './context.ts'
+
+/** stop: no result on these cells, no entering, until a person resolves it. doubt: its cells go to the desk. note: shown only. */
+export type Severity = 'stop' | 'doubt' | 'note'
+
+export interface Finding {
+  rule: string
+  version: number
+  severity: Severity
+  /** Keys of the cells it names. */
+  cells: string[]
+  /** One plain sentence with the numbers compared. */
+  text: string
+  compared: Record<string, number | string>
+}
+
+/** What a check returns; the runner adds rule and version. */
+export type Found = Omit<Finding, 'rule' | 'version'>
+
+export interface Rule {
+  id: string
+  version: number
+  name: string
+  /** The severities it can find, highest first. */
+  severity: readonly Severity[]
+  /** Cells it reads; a repeated cell by its stem. */
+  cells: readonly string[]
+  /** Why it is asked, for the page of rules. [P] practice, [M] a standard from memory, [F] a published page. */
+  why: string
+  check: (ctx: CheckContext) => Found[]
+}
+
+export const found = (
+  severity: Severity,
+  cells: string[],
+  text: string,
+  compared: Record<string, number | string> = {},
+): Found => ({ severity, cells, text, compared })

@@ -1,0 +1,38 @@
+/** All rules over one sheet. */
+import type { Facts } from '../trial/facts.ts'
+import type { Readings } from '../trial/readings.ts'
+import { blankRules } from './blanks.ts'
+import { byHandRules } from './by-hand.ts'
+import { clockRules } from './clock.ts'
+import { type CheckContext, type CheckOptions, contextOf } from './context.ts'
+import { fittingRules } from './fitting.ts'
+import { fuelRules } from './fuel.ts'
+import { jarRules } from './jar.ts'
+import type { Finding, Rule, Severity } from './rule.ts'
+
+/** Version of the set of rules that judged a record. Change it with any change of a rule or a default limit. */
+export const RULES_VERSION = '1.0.0'
+
+/** Every rule, by id. */
+export const RULES: readonly Rule[] = [
+  ...clockRules,
+  ...jarRules,
+  ...byHandRules,
+  ...fuelRules,
+  ...fittingRules,
+  ...blankRules,
+].sort((a, b) => a.id.localeCompare(b.id))
+
+const WEIGHT: Record<Severity, number> = { stop: 0, doubt: 1, note: 2 }
+
+export function findingsOf(ctx: CheckContext): Finding[] {
+  const all = RULES.flatMap((rule) =>
+    rule.check(ctx).map((f) => ({ rule: rule.id, version: rule.version, ...f, cells: [...new Set(f.cells)] })),
+  )
+  return all.sort((a, b) => WEIGHT[a.severity] - WEIGHT[b.severity])
+}
+
+/** What the rules find on a sheet: stops first, then doubts, then notes. Pure: the same readings and facts, the same findings. */
+export function runChecks(readings: Readings, facts: Facts = {}, options: CheckOptions = {}): Finding[] {
+  return findingsOf(contextOf(readings, facts, options))
+}

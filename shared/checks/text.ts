@@ -1,0 +1,24 @@
+/** Numbers and lists as the sentences of the rules say them. */
+
+/** At most `decimals` decimals, without trailing zeros; no digits are added. */
+export const figure = (value: number, decimals = 2): string => String(Number(value.toFixed(decimals)))
+
+/** Three figures, whatever the size. */
+export function rough(value: number): string {
+  if (value === 0) return '0'
+  const decimals = Math.max(0, 2 - Math.floor(Math.log10(Math.abs(value))))
+  return figure(value, Math.min(6, decimals))
+}
+
+/** "1, 2 and 3". */
+export function listed(items: readonly (string | number)[]): string {
+  if (items.length < 2) return items.join('')
+  return `${items.slice(0, -1).join(', ')} and ${items.at(-1)}`
+}
+
+/** The first letter small, for a label inside a sentence. */
+export const inside = (label: string): string =>
+  /^[A-Z][a-z]/.test(label) ? label.charAt(0).toLowerCase() + label.slice(1) : label
+
+/** The first letter large, for a label that begins a sentence. */
+export const leading = (label: string): string => label.charAt(0).toUpperCase() + label.slice(1)
