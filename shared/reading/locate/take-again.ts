@@ -1,0 +1,53 @@
+/** Why a picture cannot be read, and what to do better: said to the person who holds the phone. */
+export const TAKE_AGAIN_CODES = [
+  'no sheet',
+  'corner missing',
+  'too blurred',
+  'too dark',
+  'glare',
+  'too small',
+  'two sheets',
+  'unknown layout',
+  'cannot place',
+] as const
+
+export type TakeAgainCode = (typeof TAKE_AGAIN_CODES)[number]
+
+export interface TakeAgain {
+  code: TakeAgainCode
+  advice: string
+}
+
+export const CORNER_NAMES = ['upper left', 'upper right', 'lower right', 'lower left'] as const
+
+const ADVICE: Record<Exclude<TakeAgainCode, 'corner missing'>, string> = {
+  'no sheet': 'No sheet was found in the picture. Lay the sheet flat, with all four corner codes inside the picture.',
+  'too blurred': 'The picture is blurred. Hold the phone still with both hands and touch the sheet on the screen to focus.',
+  'too dark': 'The picture is too dark. Turn the sheet to the light, or switch the lamp on.',
+  glare: 'Light is mirrored on the paper. Tilt the phone or turn the sheet until the bright patch is gone.',
+  'too small': 'The sheet is too small in the picture. Move closer until it fills the picture.',
+  'two sheets': 'Two sheets are in the picture. Take one picture of each sheet.',
+  'unknown layout': 'This kind of sheet is not known here. Check that it was printed by this trial book.',
+  'cannot place': 'The printed boxes could not be found. Lay the sheet flat, without folds, and take it from straight above.',
+}
+
+export const takeAgain = (code: keyof typeof ADVICE): TakeAgain => ({ code, advice: ADVICE[code] })
+
+/** `corners`: 0 to 3 clockwise from the upper left; `outside`: whether they lie outside the picture, or are covered. */
+export function cornersMissing(corners: readonly number[], outside: boolean): TakeAgain {
+  const names = corners.map((corner) => CORNER_NAMES[corner]!)
+  const one = names.length === 1
+  const which = one ? `The ${names[0]} corner` : `The ${names.slice(0, -1).join(', ')} and ${names.at(-1)} corners`
+  const verb = one ? 'is' : 'are'
+  const advice = outside
+    ? `${which} ${verb} outside the picture. Move the phone a hand ${directionTo(corners)}, or a little higher.`
+    : `${which} cannot be read. Keep fingers, folds and shadows off the corner codes and take it again.`
+  return { code: 'corner missing', advice }
+}
+
+function directionTo(corners: readonly number[]): string {
+  if (corners.every((c) => c === 0 || c === 3)) return 'to the left'
+  if (corners.every((c) => c === 1 || c === 2)) return 'to the right'
+  if (corners.every((c) => c < 2)) return 'towards the top of the sheet'
+  return corners.every((c) => c > 1) ? 'towards the bottom of the sheet' : 'back'
+}
