@@ -1,10 +1,8 @@
 import { randomBytes } from 'node:crypto'
-import { existsSync } from 'node:fs'
-import { resolve } from 'node:path'
-import { pathToFileURL } from 'node:url'
 import type { TestProject } from 'vitest/node'
+import { migrate } from '../../server/db/migrate.ts'
 import { APP_ROLE, OWNER_ROLE, prepareDatabase, prepareRoles, withClient } from '../../server/postgres/roles.ts'
-import { startTestCluster } from './test-cluster.ts'
+import { startThrowAway } from '../../server/postgres/throw-away.ts'
 
 /** What the test files need to clone the template. */
 export interface TestDatabases {
@@ -26,7 +24,7 @@ declare module 'vitest' {
  */
 export default async function setup(project: TestProject): Promise<() => Promise<void>> {
   const given = process.env.TEST_DATABASE_URL
-  const cluster = given === undefined ? await startTestCluster() : { adminUrl: given, stop: async () => undefined }
+  const cluster = given === undefined ? await startThrowAway() : { adminUrl: given, stop: async () => undefined }
   // One password for every run on a given cluster, or two runs at once would lock each other out.
   const password = 'for-tests-only'
   const template = `template_${randomBytes(6).toString('hex')}`
@@ -56,12 +54,4 @@ export function databaseUrl(databases: TestDatabases, who: 'admin' | 'owner' | '
   url.username = databases[who].role
   url.password = databases[who].password
   return url.href
-}
-
-async function migrate(ownerUrl: string): Promise<void> {
-  const file = resolve('server/db/migrate.ts')
-  if (!existsSync(file)) return
-  const path = pathToFileURL(file).href
-  const module = (await import(path)) as { migrate(url: string): Promise<void> }
-  await module.migrate(ownerUrl)
 }

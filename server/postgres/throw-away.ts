@@ -1,21 +1,21 @@
 import { chmodSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
-import { findPostmaster, isAlive } from '../../server/postgres/postmaster.ts'
-import { startPrivateDatabase } from '../../server/postgres/private-database.ts'
-import { drawSecrets } from '../../server/postgres/secrets.ts'
+import { findPostmaster, isAlive } from './postmaster.ts'
+import { startPrivateDatabase } from './private-database.ts'
+import { drawSecrets } from './secrets.ts'
 
 const PREFIX = 'sheafbook-tests-'
 
 /** A cluster that lives as long as one run of the tests. */
-export interface TestCluster {
+export interface ThrowAway {
   /** Superuser's address of the database `postgres`. */
   adminUrl: string
   stop(): Promise<void>
 }
 
 /** Starts a throw-away cluster (fsync off) in the system's temporary folder. */
-export async function startTestCluster(): Promise<TestCluster> {
+export async function startThrowAway(): Promise<ThrowAway> {
   await sweepLeftovers()
   const folder = mkdtempSync(join(tmpdir(), PREFIX))
   // The user postgres must get to its folder inside.
