@@ -4,13 +4,19 @@ import { doubtSchema, historySchema, pageSchema, readingSchema } from './sheet.t
 import { idSchema } from './user.ts'
 
 export const resultSchema = z.object({
+  key: z.string(),
+  label: z.string(),
+  /** Unrounded; null with a reason. */
   value: z.number().nullable(),
   unit: z.string(),
-  /** Standard uncertainty and U with k = 2, in `unit`; null where no budget is made. */
+  /** Standard uncertainty and U = k u, in `unit`; null where no budget is made. */
   u: z.number().nullable(),
   U: z.number().nullable(),
+  k: z.number(),
   from: z.array(z.string()),
   formula: z.string(),
+  assumes: z.array(z.string()),
+  budget: z.array(z.record(z.string(), z.unknown())),
   reason: z.object({ code: z.string(), text: z.string() }).nullable(),
 })
 export type ResultValue = z.infer<typeof resultSchema>

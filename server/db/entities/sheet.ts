@@ -34,9 +34,6 @@ export class SheetEntity {
   @Column({ type: 'jsonb' })
   facts!: Record<string, unknown>
 
-  @Column({ type: 'text', nullable: true })
-  inkPrint!: string | null
-
   @Column({ type: 'integer' })
   openDoubts!: number
 

@@ -73,7 +73,7 @@ CREATE TABLE sheets (
   id uuid PRIMARY KEY DEFAULT gen_random_uuid(),
   code text, layout_key text, layout_version integer, planned boolean NOT NULL DEFAULT false,
   run_id uuid REFERENCES runs (id), state text NOT NULL, origin text,
-  owner_id uuid REFERENCES users (id), facts jsonb NOT NULL DEFAULT '{}', ink_print text,
+  owner_id uuid REFERENCES users (id), facts jsonb NOT NULL DEFAULT '{}',
   open_doubts integer NOT NULL DEFAULT 0, stops integer NOT NULL DEFAULT 0, first_doubt text,
   held_by uuid REFERENCES users (id), held_since timestamptz, held_until timestamptz,
   sent_back_reason text, reason text, answered boolean NOT NULL DEFAULT false,

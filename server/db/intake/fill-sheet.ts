@@ -1,0 +1,100 @@
+/** Writing what was read into a sheet: as its first ink, as an answer to what was sent back, or as a second picture of it. */
+import type { Db } from '../database.ts'
+import type { ReadingEntity } from '../entities/reading.ts'
+import type { SheetEntity } from '../entities/sheet.ts'
+import type { PageEntity, UploadEntity } from '../entities/upload.ts'
+import { isOpen, listReadings, putReadings, type ReadingRow } from '../repositories/reading.ts'
+import { noteOnSheet } from '../repositories/sheet.ts'
+import { addTrailLine } from '../repositories/trail.ts'
+import type { PageOutcome } from './page-outcome.ts'
+import { planOfRun, planValues } from './plan-of-run.ts'
+
+type ReadPage = Extract<PageOutcome, { kind: 'read' }>
+type Target = Pick<SheetEntity, 'id' | 'state' | 'ownerId' | 'runId'>
+
+export async function fillSheet(db: Db, sheet: Target, page: PageEntity, upload: UploadEntity, read: ReadPage): Promise<string> {
+  const plan = sheet.runId ? await planOfRun(db, sheet.runId) : null
+  const before = await listReadings(db, sheet.id)
+  const rows = [...readRows(sheet.id, page.id, read), ...(read.planned && plan ? planRows(sheet.id, planValues(plan)) : [])]
+  await putReadings(
+    db,
+    rows.filter((row) => !settledAlike(before, row)),
+  )
+  const answer = sheet.state === 'sent back'
+  await noteOnSheet(db, sheet.id, {
+    state: 'waiting',
+    layoutKey: read.layout,
+    layoutVersion: read.layoutVersion,
+    planned: read.planned,
+    origin: read.origin,
+    ownerId: sheet.ownerId ?? plan?.demonstratorId ?? upload.uploadedBy,
+    arrivedAt: upload.receivedAt,
+    reason: null,
+    ...(answer ? { answered: true } : {}),
+    ...(read.sheetCode ? { code: read.sheetCode } : {}),
+  })
+  const clear = read.readings.filter((r) => r.state === 'clear').length
+  const text = `${upload.fileName}, page ${page.number}: ${clear} readings clear, ${read.readings.length - clear} in doubt`
+  const details = before.length > 0 ? { before: before.map(({ key, value, origin }) => ({ key, value, origin })) } : {}
+  await addTrailLine(db, {
+    actor: null,
+    action: answer ? 'answered' : 'read',
+    subject: 'sheet',
+    subjectId: sheet.id,
+    text,
+    details,
+  })
+  return sheet.id
+}
+
+/** Another picture of the same ink: what was in doubt and is clear in this one is taken from it, nothing else changes. */
+export async function joinSheet(
+  db: Db,
+  sheet: SheetEntity,
+  readings: readonly ReadingEntity[],
+  page: PageEntity,
+  upload: UploadEntity,
+  read: ReadPage,
+): Promise<string> {
+  const open = new Set(['waiting', 'settled'].includes(sheet.state) ? readings.filter(isOpen).map((r) => r.key) : [])
+  const better = read.readings.filter((r) => r.state === 'clear' && open.has(r.key))
+  await putReadings(db, readRows(sheet.id, page.id, { ...read, readings: better }))
+  const text = `${upload.fileName} shows the same ink and joins the sheet; ${better.length} readings in doubt are clear in it`
+  await addTrailLine(db, {
+    actor: null,
+    action: 'joined',
+    subject: 'sheet',
+    subjectId: sheet.id,
+    text,
+    details: { keys: better.map((r) => r.key) },
+  })
+  return sheet.id
+}
+
+const readRows = (sheetId: string, pageId: string, read: ReadPage): ReadingRow[] =>
+  read.readings.map((r) => ({
+    ...r,
+    sheetId,
+    pageId,
+    readValue: r.value,
+    origin: read.origin === 'photo' ? 'ink' : 'spreadsheet',
+  }))
+
+const planRows = (sheetId: string, values: Record<string, string | number>): ReadingRow[] =>
+  Object.entries(values).map(([key, value]) => ({
+    sheetId,
+    key,
+    value,
+    readValue: value,
+    unit: null,
+    state: 'clear',
+    origin: 'plan',
+    candidates: [],
+    reasons: [],
+    pageId: null,
+    cellRef: null,
+  }))
+
+/** A person's word on the same reading stays: a new picture that reads the same does not ask again. */
+const settledAlike = (before: readonly ReadingEntity[], row: ReadingRow) =>
+  before.some((b) => b.key === row.key && b.settlement !== null && (b.value === row.value || b.readValue === row.value))

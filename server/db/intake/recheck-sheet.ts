@@ -1,0 +1,56 @@
+/** After any change of a reading: facts, doubts, counts and state follow from the readings, and are never set by hand. */
+import { judgeSheet } from '../../../shared/checks/judge-sheet.ts'
+import type { Finding } from '../../../shared/checks/rule.ts'
+import { findLayout } from '../../../shared/layouts/registry.ts'
+import type { SheetState } from '../../../shared/schemas/sheet.ts'
+import type { Db } from '../database.ts'
+import type { ReadingEntity } from '../entities/reading.ts'
+import { isOpenDoubt, listDoubts, putFindings } from '../repositories/doubt.ts'
+import { isOpen, listReadings, valuesOf } from '../repositories/reading.ts'
+import { findSheet, noteOnSheet } from '../repositories/sheet.ts'
+import { factsOf, namedOnSheet, registerFindings } from './sheet-facts.ts'
+
+const FOLLOWS_DOUBTS: readonly SheetState[] = ['arrived', 'being read', 'waiting', 'settled']
+
+export async function recheckSheet(db: Db, sheetId: string): Promise<void> {
+  const sheet = await findSheet(db, sheetId)
+  const layout = sheet?.layoutKey ? findLayout(sheet.layoutKey, sheet.layoutVersion ?? undefined) : null
+  if (!sheet || !layout) return
+  const readings = await listReadings(db, sheetId)
+  const values = valuesOf(readings)
+  const named = await namedOnSheet(db, values)
+  const facts = await factsOf(db, sheet, values, named)
+  const findings = [...registerFindings(values, named), ...judgeSheet(layout, values, facts).findings]
+  await putFindings(
+    db,
+    sheetId,
+    findings.filter((f) => !answeredByPerson(f, readings)),
+  )
+  const doubts = (await listDoubts(db, sheetId)).filter(isOpenDoubt)
+  const inDoubt = readings.filter(isOpen)
+  const openDoubts = doubts.length + inDoubt.length
+  await noteOnSheet(db, sheetId, {
+    facts: { ...facts },
+    openDoubts,
+    stops: doubts.filter((d) => d.severity === 'stop').length,
+    firstDoubt: doubts[0]?.text ?? firstReason(inDoubt, layout.cells),
+    ...(FOLLOWS_DOUBTS.includes(sheet.state) ? { state: openDoubts > 0 ? 'waiting' : 'settled' } : {}),
+  })
+}
+
+/** "Blank" is no longer a question where a person said: blank on purpose, or unreadable. */
+function answeredByPerson(finding: Finding, readings: readonly ReadingEntity[]): boolean {
+  if (finding.rule !== 'Q56' && finding.rule !== 'Q57') return false
+  return finding.cells.every((key) => {
+    const how = readings.find((r) => r.key === key)?.settlement
+    return how === 'blank on purpose' || how === 'unreadable'
+  })
+}
+
+function firstReason(inDoubt: readonly ReadingEntity[], cells: ReadonlyArray<{ key: string; label: string }>): string | null {
+  const first = inDoubt[0]
+  if (!first) return null
+  const label = cells.find((c) => c.key === first.key)?.label ?? first.key
+  const [one, two] = first.candidates
+  return first.reasons[0]?.text ?? (two ? `${label}: ${String(one?.value)} or ${String(two.value)}` : `${label}: cannot be read`)
+}
