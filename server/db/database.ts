@@ -13,10 +13,12 @@ import { TrailEntity } from './entities/trail.ts'
 import { PageEntity, UploadEntity } from './entities/upload.ts'
 import { UserEntity, UserLinkEntity } from './entities/user.ts'
 import { Book1764590000000 } from './migrations/0001-book.ts'
+import { RateLimits1764590100000 } from './migrations/0002-rate-limits.ts'
 import { SnakeNaming } from './naming.ts'
 
 /** A transaction, or the pool itself: what every repository function takes first. */
 export type Db = EntityManager
+export type { DataSource }
 
 const { builtins } = pg.types
 /** Numbers as numbers; dates as the text they are, since a Date would move them to the process's time zone. */
@@ -48,7 +50,7 @@ export function createDataSource(url: string, options: { poolSize?: number } = {
       MailEntity,
       TrailEntity,
     ],
-    migrations: [Book1764590000000],
+    migrations: [Book1764590000000, RateLimits1764590100000],
     namingStrategy: new SnakeNaming(),
     synchronize: false,
     poolSize: options.poolSize ?? 10,

@@ -4,10 +4,10 @@
  */
 import type { Request, Response } from 'express'
 import type PgBoss from 'pg-boss'
-import type { DataSource } from 'typeorm'
 import type { z } from 'zod'
 import type { Role, User } from '../../shared/schemas/user.ts'
 import type { Settings } from '../config.ts'
+import type { DataSource } from '../db/database.ts'
 import type { FileStore } from '../storage/store.ts'
 
 /** What the process has: handed in, so that tests hand in their own. */
@@ -48,6 +48,8 @@ export interface Route<A extends Access = Access, P = unknown, Q = unknown, B = 
 }
 
 /** Infers the input types of one route and forgets them again, so that routes of all shapes fit one table. */
-export function route<const A extends Access, P = unknown, Q = unknown, B = unknown, R = void>(definition: Route<A, P, Q, B, R>): Route {
+export function route<const A extends Access, P = unknown, Q = unknown, B = unknown, R = void>(
+  definition: Route<A, P, Q, B, R>,
+): Route {
   return definition as unknown as Route
 }

@@ -1,26 +1,46 @@
-/** The audit trail: lines are added in the transaction of the change they tell of, and nothing can take one out. */
+import type { User } from '../../../shared/schemas/user.ts'
 import type { Db } from '../database.ts'
-import { TrailEntity } from '../entities/trail.ts'
 
+/** Something that happened, to be kept for good. */
 export interface TrailLine {
-  /** null: the reader or a rule, not a person. */
-  actor: { id: string; name: string } | null
+  /** Who did it; null where the product acts by itself (a reading, a job). */
+  actor: Pick<User, 'id' | 'name'> | null
+  /** A verb of the product: settle, enter, send back, invite, sign in. */
   action: string
+  /** The noun it was done to: sheet, record, user, demonstration. */
   subject: string
   subjectId: string | null
-  /** The cell, where it is about one. */
+  /** The reading it touched. */
   key?: string | null
+  /** One plain sentence, with old and new value where there are two. */
   text: string
   details?: Record<string, unknown>
 }
 
-export async function writeTrail(db: Db, line: TrailLine): Promise<void> {
+/** Adds a line; it stands or falls with the caller's transaction. */
+export async function addTrailLine(db: Db, line: TrailLine): Promise<void> {
+  const { actor, action, subject, subjectId, key = null, text, details = {} } = line
   await db.query(
-    'INSERT INTO trail (actor_id, who, action, subject, subject_id, key, text, details) VALUES ($1, $2, $3, $4, $5, $6, $7, $8)',
-    [line.actor?.id ?? null, line.actor?.name ?? 'the reader', line.action, line.subject, line.subjectId, line.key ?? null, line.text, JSON.stringify(line.details ?? {})],
+    `INSERT INTO trail (actor_id, who, action, subject, subject_id, key, text, details) VALUES ($1, $2, $3, $4, $5, $6, $7, $8)`,
+    [actor?.id ?? null, actor?.name ?? 'Sheafbook', action, subject, subjectId, key, text, JSON.stringify(details)],
   )
 }
 
-/** Lines about one subject, oldest first. */
-export const listTrailOf = (db: Db, subjectId: string): Promise<TrailEntity[]> =>
-  db.find(TrailEntity, { where: { subjectId }, order: { id: 'ASC' } })
+export interface TrailRow {
+  id: number
+  at: Date
+  who: string
+  action: string
+  subject: string
+  subjectId: string | null
+  text: string
+}
+
+/** Newest first; `before` is the id of the last line seen. */
+export async function listTrail(db: Db, options: { before: number | null; limit: number }): Promise<TrailRow[]> {
+  return db.query(
+    `SELECT id, at, who, action, subject, subject_id AS "subjectId", text FROM trail
+     WHERE $1::bigint IS NULL OR id < $1 ORDER BY id DESC LIMIT $2`,
+    [options.before, options.limit],
+  )
+}
