@@ -1,0 +1,150 @@
+/** One whole photo: a trial, a printed sheet, a hand, a camera; and exactly what was written and where it lies. */
+
+import { printSheets } from '../../server/print/sheet-pdf.ts'
+import { boxesOf } from '../../shared/layouts/geometry.ts'
+import { isComb, type Layout } from '../../shared/layouts/layout.ts'
+import { makeSheetCode } from '../../shared/layouts/sheet-code.ts'
+import { makeGround } from './background.ts'
+import { aim, type Camera } from './camera.ts'
+import { develop, shine } from './develop.ts'
+import { type DigitPool, loadDigits } from './digits.ts'
+import { type InkLayer, newInk } from './ink.ts'
+import { type Conditions, drawConditions, type Level } from './levels.ts'
+import { mapLight } from './light.ts'
+import { renderPage } from './page-render.ts'
+import { joinPaper } from './paper.ts'
+import { planOf } from './plan.ts'
+import type { Chance } from './random.ts'
+import { drawPage, type Picture } from './raster.ts'
+import type { Scenario, Truth } from './scenario.ts'
+import { tillageScenario } from './scenario-tillage.ts'
+import { chooseSpoiled, makeWrongSum } from './spoil.ts'
+import { bendSheet, drawBend, type Surface } from './surface.ts'
+import { writeSheet } from './write-sheet.ts'
+import { makeWriter, type Writer } from './writer.ts'
+
+export interface PhotoRequest {
+  layout: Layout
+  level: Level
+  chance: Chance
+  digits: DigitPool
+  planned: boolean
+  /** Fixed values instead of drawn ones. */
+  scenario?: Scenario
+  sheetCode?: string
+  conditions?: Partial<Conditions>
+  writer?: Partial<Writer>
+}
+
+/** Corners of each cell in pixels of the photo, clockwise from its top left; multi-box cells as one outline. */
+export type PhotoMap = { cells: Record<string, Array<[number, number]>> }
+
+export interface Photo {
+  jpeg: Buffer
+  truth: Truth
+  map: PhotoMap
+}
+
+let spareInk: InkLayer | null = null
+function freshInk(layout: Layout): InkLayer {
+  spareInk ??= newInk(layout.page.width, layout.page.height)
+  spareInk.cover.fill(0)
+  return spareInk
+}
+
+/** Makes the photo of one filled sheet. */
+export async function makePhoto(request: PhotoRequest): Promise<Photo> {
+  const { layout, level, chance } = request
+  const conditions = { ...drawConditions(level, chance.fork('conditions')), ...request.conditions }
+  const writer = { ...makeWriter(chance.fork('writer'), conditions.careful), ...request.writer }
+  const scenario = request.scenario ?? drawScenario(layout, conditions, chance)
+  const sheetCode = request.sheetCode ?? makeSheetCode((below) => chance.whole(0, below - 1))
+  const { plan, planned } = request.planned ? planOf(layout, scenario) : { plan: null, planned: undefined }
+
+  const ink = freshInk(layout)
+  writeSheet({ ink, digits: loadDigits(request.digits), writer, chance: chance.fork('hand') }, layout, scenario)
+  const print = await renderPage(await printSheets([{ layout, sheetCode, plan }]), ink)
+
+  const surface = bendSheet(drawBend(chance.fork('bend'), conditions.curl_mm), layout.page)
+  const camera = aim(conditions.shot, surface, layout.page)
+  const tone = chance.fork('paper')
+  const shade = tone.between(232, 252)
+  const paper = joinPaper(
+    print,
+    ink,
+    writer,
+    [shade + tone.between(-3, 3), shade + tone.between(-3, 2), shade - tone.between(0, 9)],
+    tone.between(0.8, 1),
+    pixelsPerMm(camera, surface, layout) < 8,
+  )
+  const picture = await layGround(conditions, chance.fork('ground'))
+  drawPage(picture, paper, surface, camera, layout.page, conditions.lean, chance.between(0, 6.28))
+  const light = mapLight(conditions.light, picture.width, picture.height, chance.fork('light'))
+  shine(picture, light, conditions.light.white)
+  const jpeg = await develop(picture, conditions.optics, chance.fork('grain'))
+  const truth: Truth = {
+    layout: layout.key,
+    version: layout.version,
+    sheet: sheetCode,
+    level,
+    ...scenario,
+    ...(planned ? { planned } : {}),
+  }
+  return { jpeg, truth, map: mapCells(layout, surface, camera, scenario) }
+}
+
+function drawScenario(layout: Layout, conditions: Conditions, chance: Chance): Scenario {
+  const scenario = tillageScenario(chance.fork('scenario'))
+  const slips = chance.fork('slips')
+  if (slips.odds(conditions.wrongSum)) makeWrongSum(scenario, slips)
+  const count = Math.floor(conditions.spoiled + slips.unit())
+  chooseSpoiled(scenario, layout, count, slips)
+  return scenario
+}
+
+function pixelsPerMm(camera: Camera, surface: Surface, layout: Layout): number {
+  const [x, y] = [layout.page.width / 2, layout.page.height / 2]
+  const [a, b] = [camera.project(surface.at(x - 5, y - 5)), camera.project(surface.at(x + 5, y + 5))]
+  return Math.hypot(a[0] - b[0], a[1] - b[1]) / Math.hypot(10, 10)
+}
+
+async function layGround(conditions: Conditions, chance: Chance): Promise<Picture> {
+  const { width, height } = conditions.shot
+  const { default: sharp } = await import('sharp')
+  const [w, h] = [width >> 2, height >> 2]
+  const small = makeGround(conditions.ground, w, h, chance)
+  const rgb = await sharp(small, { raw: { width: w, height: h, channels: 3 } })
+    .resize(width, height, { kernel: 'linear' })
+    .raw()
+    .toBuffer()
+  return { width, height, rgb: new Uint8Array(rgb.buffer, rgb.byteOffset, rgb.byteLength) }
+}
+
+function mapCells(layout: Layout, surface: Surface, camera: Camera, scenario: Scenario): PhotoMap {
+  const cells: PhotoMap['cells'] = {}
+  const place = (x: number, y: number): [number, number] => {
+    const [px, py] = camera.project(surface.at(x, y))
+    return [Math.round(px * 100) / 100, Math.round(py * 100) / 100]
+  }
+  for (const cell of layout.cells) {
+    if (scenario.readings[cell.key] === undefined) continue
+    const boxes = boxesOf(cell)
+    const outline = (list: typeof boxes): Array<[number, number]> => {
+      const left = Math.min(...list.map((b) => b.x))
+      const top = Math.min(...list.map((b) => b.y))
+      const right = Math.max(...list.map((b) => b.x + b.width))
+      const low = Math.max(...list.map((b) => b.y + b.height))
+      return [place(left, top), place(right, top), place(right, low), place(left, low)]
+    }
+    cells[cell.key] = outline(boxes)
+    if (isComb(cell))
+      boxes.forEach((box, i) => {
+        cells[`${cell.key}#${i + 1}`] = outline([box])
+      })
+    else if (cell.kind === 'choice')
+      boxes.forEach((box) => {
+        cells[`${cell.key}#${box.option}`] = outline([box])
+      })
+  }
+  return { cells }
+}

@@ -1,0 +1,111 @@
+/** Fills a printed sheet by hand: the ink layer, and what exactly was written. */
+import { type Box, boxesOf } from '../../shared/layouts/geometry.ts'
+import { type ChoiceCell, type CombCell, isComb, type Layout, type TickCell } from '../../shared/layouts/layout.ts'
+import { boxDigits } from './boxes.ts'
+import type { Digits } from './digits.ts'
+import type { InkLayer } from './ink.ts'
+import type { Chance } from './random.ts'
+import type { Scenario } from './scenario.ts'
+import { drawTickMark, scribble, sign, strikeThrough, writeWords } from './strokes.ts'
+import { writeDigit } from './write-digit.ts'
+import type { Writer } from './writer.ts'
+
+export interface Desk {
+  ink: InkLayer
+  digits: Digits
+  writer: Writer
+  chance: Chance
+}
+
+/**
+ * Writes every cell of the scenario. A spoiled cell changes the scenario where its value goes with the ink: a comb crossed out
+ * and not written again holds nothing.
+ */
+export function writeSheet(desk: Desk, layout: Layout, scenario: Scenario): void {
+  const { writer, chance } = desk
+  for (const cell of layout.cells) {
+    const value = scenario.readings[cell.key]
+    if (value === undefined) continue
+    const spoiled = scenario.spoiled.includes(cell.key)
+    if (isComb(cell)) writeComb(desk, cell, scenario, spoiled)
+    else if (cell.kind === 'tick') {
+      writeTick(desk, cell, value === true, spoiled)
+      if (spoiled) scenario.readings[cell.key] = false
+    } else if (cell.kind === 'choice') writeChoice(desk, cell, value, spoiled)
+    else if (cell.kind === 'signature' && value === true) sign(desk.ink, boxesOf(cell)[0]!, writer.pen, chance)
+    else if (cell.kind === 'line' && chance.odds(0.35)) writeWords(desk.ink, boxesOf(cell)[0]!, writer.pen, chance)
+  }
+}
+
+function scaleOf(cell: CombCell, scenario: Scenario): number {
+  if (!cell.scale) return 1
+  const unit = scenario.readings[cell.scale.by]
+  return (typeof unit === 'string' && cell.scale.factors[unit]) || 1
+}
+
+function writeComb(desk: Desk, cell: CombCell, scenario: Scenario, spoiled: boolean): void {
+  const { ink, digits, writer, chance } = desk
+  const zero = writer.leading === 'zero' || (writer.leading === 'mixed' && chance.odds(0.4)) || cell.register !== undefined
+  const boxes = boxesOf(cell)
+  const written = boxDigits(cell, scenario.readings[cell.key]!, scaleOf(cell, scenario), zero)
+  const put = (box: Box, digit: number) => writeDigit(ink, box, digits.draw(digit, chance), writer, chance)
+  const fill = () =>
+    written.forEach((digit, i) => {
+      if (digit !== null) put(boxes[i]!, digit)
+    })
+  if (!spoiled) {
+    fill()
+    return
+  }
+  const inked = boxes.filter((_, i) => written[i] !== null)
+  spoilComb(desk, cell, inked, fill, put, scenario)
+}
+
+/** One way of going wrong in a comb. */
+function spoilComb(
+  { ink, writer, chance }: Desk,
+  cell: CombCell,
+  inked: readonly Box[],
+  fill: () => void,
+  put: (box: Box, digit: number) => void,
+  scenario: Scenario,
+): void {
+  const way = chance.pick(['struck', 'struck', 'struck', 'one struck', 'scribbled', 'two in a box', 'written over'] as const)
+  const one = chance.pick(inked)
+  fill()
+  if (way === 'struck') {
+    const last = inked[inked.length - 1]!
+    strikeThrough(ink, { ...inked[0]!, width: last.x + last.width - inked[0]!.x }, writer.pen, chance)
+    scenario.readings[cell.key] = null
+  } else if (way === 'one struck') {
+    strikeThrough(ink, one, writer.pen, chance)
+    scenario.readings[cell.key] = null
+  } else if (way === 'scribbled') {
+    scribble(ink, one, writer.pen, chance)
+    scenario.readings[cell.key] = null
+  } else if (way === 'two in a box') {
+    const half = { ...one, width: one.width * 0.55 }
+    put({ ...half, x: one.x + one.width * 0.45 }, chance.whole(0, 9))
+    scenario.readings[cell.key] = null
+  } else {
+    put(one, chance.whole(0, 9))
+    scenario.readings[cell.key] = null
+  }
+}
+
+function writeTick({ ink, writer, chance }: Desk, cell: TickCell, ticked: boolean, spoiled: boolean): void {
+  const box = boxesOf(cell)[0]!
+  if (ticked || spoiled) drawTickMark(ink, box, writer, chance)
+  if (spoiled && !ticked) scribble(ink, box, writer.pen, chance)
+  else if (spoiled) strikeThrough(ink, box, writer.pen, chance)
+}
+
+function writeChoice({ ink, writer, chance }: Desk, cell: ChoiceCell, value: unknown, spoiled: boolean): void {
+  const boxes = boxesOf(cell)
+  const chosen = boxes.find((b) => b.option === value)
+  if (chosen) drawTickMark(ink, chosen, writer, chance)
+  if (!spoiled) return
+  const other = chance.pick(boxes.filter((b) => b !== chosen))
+  drawTickMark(ink, other, writer, chance)
+  scribble(ink, other, writer.pen, chance)
+}
