@@ -1,0 +1,34 @@
+import { createBrowserRouter, type RouteObject } from 'react-router-dom'
+import { paths } from '../lib/paths.ts'
+import { Loading } from '../ui/says.tsx'
+import { Home } from './routes/home.tsx'
+import { officeRoutes } from './routes/office.tsx'
+import { NotFound, RouteError } from './routes/route-error.tsx'
+import { Shell } from './routes/shell.tsx'
+
+/** A page fails alone: the folio stays, and the other sections work. */
+const guarded = (routes: RouteObject[]): RouteObject[] =>
+  routes.map((route) => ({ errorElement: <RouteError />, ...route }) as RouteObject)
+
+/** Pages come in their own files when they are opened: a phone that sends photos does not carry the desk. */
+export const routes: RouteObject[] = [
+  {
+    errorElement: <RouteError />,
+    HydrateFallback: () => <Loading what="Opening the book" />,
+    children: [
+      { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in.tsx') },
+      { path: paths.forgotten.pattern, lazy: () => import('./routes/request-link.tsx') },
+      { path: paths.link.pattern, lazy: () => import('./routes/one-time-link.tsx') },
+      {
+        element: <Shell />,
+        children: guarded([
+          { path: paths.home.pattern, element: <Home /> },
+          ...officeRoutes,
+          { path: '*', element: <NotFound /> },
+        ]),
+      },
+    ],
+  },
+]
+
+export const createRouter = () => createBrowserRouter(routes)
