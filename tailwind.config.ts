@@ -10,6 +10,7 @@ export default {
     colors: {
       transparent: 'transparent',
       current: 'currentColor',
+      white: '#fff',
       paper: 'var(--paper)',
       leaf: 'var(--leaf)',
       board: 'var(--board)',
