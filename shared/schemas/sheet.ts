@@ -96,6 +96,8 @@ export const sheetRowSchema = z.object({
   stops: z.number().int(),
   /** The first thing that waits, as a sentence. */
   why: z.string().nullable(),
+  /** The demonstrator answered what was sent back. */
+  answered: z.boolean(),
   inHand: heldSchema,
   recordNumber: z.number().int().nullable(),
   version: z.number().int(),
@@ -154,13 +156,19 @@ export type SettleReading = z.infer<typeof settleReadingSchema>
 
 export const settleDoubtSchema = onVersion.extend({ doubtId: idSchema, why: whySchema.default('') })
 export type SettleDoubt = z.infer<typeof settleDoubtSchema>
+export const unsettleSchema = onVersion.extend({ key: z.string().max(60).optional(), doubtId: idSchema.optional() })
+export type Unsettle = z.infer<typeof unsettleSchema>
 export const sendBackSchema = onVersion.extend({
   reason: whySchema.min(3),
   cells: z.array(z.string().max(60)).max(100).default([]),
 })
 export type SendBack = z.infer<typeof sendBackSchema>
 export const setAsideSchema = onVersion.extend({ reason: whySchema.min(3) })
-export const enterSheetSchema = onVersion
+export type SetAside = z.infer<typeof setAsideSchema>
+/** Enter, or take up again what was set aside or sent back. */
+export const onVersionSchema = onVersion
+export const enteredSchema = z.object({ recordNumber: z.number().int(), version: z.number().int(), next: idSchema.nullable() })
+export type Entered = z.infer<typeof enteredSchema>
 /** A picture the reader could not place: four corners of the page in picture pixels (clockwise from the sheet's top left), or keyed beside it. */
 export const placeSheetSchema = onVersion.extend({
   layout: z.string().max(40),

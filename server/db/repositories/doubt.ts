@@ -10,6 +10,18 @@ import { DoubtEntity } from '../entities/reading.ts'
 export const listDoubts = (db: Db, sheetId: string): Promise<DoubtEntity[]> =>
   db.find(DoubtEntity, { where: { sheetId, standing: true }, order: { position: 'ASC' } })
 
+export const findDoubt = (db: Db, sheetId: string, id: string): Promise<DoubtEntity | null> =>
+  db.findOne(DoubtEntity, { where: { id, sheetId, standing: true } })
+
+/** Lets a doubt stand, or opens it again with null. */
+export async function settleDoubt(db: Db, id: string, settled: { settledBy: string; why: string | null } | null): Promise<void> {
+  await db.update(
+    DoubtEntity,
+    { id },
+    settled ? { ...settled, settledAt: () => 'now()' } : { settledBy: null, settledAt: null, why: null },
+  )
+}
+
 /** Brings the doubts in line with the findings: a doubt a person settled on the same numbers stays settled. */
 export async function putFindings(db: Db, sheetId: string, findings: readonly Finding[]): Promise<void> {
   const rows = new Map(

@@ -11,6 +11,9 @@ export type ReadingRow = Pick<
 export const listReadings = (db: Db, sheetId: string): Promise<ReadingEntity[]> =>
   db.find(ReadingEntity, { where: { sheetId }, order: { key: 'ASC' } })
 
+export const findReading = (db: Db, sheetId: string, key: string): Promise<ReadingEntity | null> =>
+  db.findOne(ReadingEntity, { where: { sheetId, key } })
+
 /** Replaces what the reader found; settled readings are the caller's to leave out. */
 export async function putReadings(db: Db, rows: readonly ReadingRow[]): Promise<void> {
   if (rows.length === 0) return
