@@ -3,6 +3,7 @@
  * where its placed neighbours say it is, each checked against them afterwards.
  */
 import type { Layout, LayoutCell } from '../../layouts/layout.ts'
+import type { BlackMark } from '../cells/black-level.ts'
 import { fitHomography, type Homography, invert, multiply, type Pair, project } from '../geometry/homography.ts'
 import type { FieldMap } from '../geometry/page-map.ts'
 import { type Anchor, type Displacement, displacementAt } from '../geometry/residual-field.ts'
@@ -31,6 +32,8 @@ export interface Alignment {
   foundShare: number
   /** Edge width of the squares, mm: how sharp the picture is. Null when no square was found. */
   edge_mm: number | null
+  /** How dark solid print is, where squares were found. */
+  blacks: BlackMark[]
 }
 
 /** A field's lines must be this alike to be believed: frames are pale, so noise lowers it, and nothing else on a page repeats them. */
@@ -62,8 +65,9 @@ function codeAnchors(pairs: readonly Pair[], homography: Homography): Mark[] {
 }
 
 /** Squares, nearest to what is known first. */
-function placeSquares(picture: Picture, layout: Layout, homography: Homography, anchors: Mark[]): number[] {
+function placeSquares(picture: Picture, layout: Layout, homography: Homography, anchors: Mark[]) {
   const edges: number[] = []
+  const blacks: BlackMark[] = []
   const waiting = layout.squares.map((s) => ({ ...s, cx: s.x + s.size / 2, cy: s.y + s.size / 2 }))
   while (waiting.length > 0) {
     waiting.sort((a, b) => nearest(anchors, { x: a.cx, y: a.cy }) - nearest(anchors, { x: b.cx, y: b.cy }))
@@ -73,9 +77,10 @@ function placeSquares(picture: Picture, layout: Layout, homography: Homography, 
     const fit = measureSquare(picture, { homography, center, displacement }, square, squareReach(nearest(anchors, center)))
     if (!fit) continue
     edges.push(fit.edge_mm)
+    blacks.push({ ...center, darkness: fit.inside })
     anchors.push({ key: 'square', ...center, dx: displacement.dx + fit.dx, dy: displacement.dy + fit.dy, weight: 1 })
   }
-  return edges
+  return { edges, blacks }
 }
 
 const isTick = (cell: LayoutCell) => cell.kind === 'tick' || cell.kind === 'choice'
@@ -203,7 +208,7 @@ export function alignPage(
   const pairs = codePairs.map(({ from, to }) => ({ from, to: { x: to.x * scale, y: to.y * scale } }))
   let homography = scaleHomography(start, scale)
   let anchors = codeAnchors(pairs, homography)
-  const edges = placeSquares(picture, layout, homography, anchors)
+  const { edges, blacks } = placeSquares(picture, layout, homography, anchors)
   if (pairs.length < 16) {
     const squares = anchors.filter((a) => a.key === 'square')
     const toPicture = (a: Mark) => ({ from: { x: a.x, y: a.y }, to: project(homography, a.x + a.dx, a.y + a.dy) })
@@ -257,5 +262,6 @@ export function alignPage(
     parts,
     foundShare: parts.length === 0 ? 0 : parts.filter((p) => p.found).length / parts.length,
     edge_mm: edges.length === 0 ? null : edges.sort((a, b) => a - b)[edges.length >> 1]!,
+    blacks,
   }
 }

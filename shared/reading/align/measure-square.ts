@@ -5,8 +5,8 @@ import { type Picture, samplePatch } from './patch.ts'
 export interface SquareFit {
   dx: number
   dy: number
-  /** Darkness inside less that of the brightest... darkest side outside: 0 to 1. */
-  contrast: number
+  /** Darkness inside, 0 to 1. */
+  inside: number
   /** Width of its edges from light to dark, mm: how sharp the picture is. */
   edge_mm: number
 }
@@ -42,7 +42,7 @@ export function measureSquare(
   const size = Math.round(square.size / STEP_MM)
   const ring = Math.round(RING_MM / STEP_MM)
   const gap = 1
-  let best = { contrast: 0, x: 0, y: 0 }
+  let best = { contrast: 0, inside: 0, x: 0, y: 0 }
   for (let y = ring + gap; y + size + ring + gap <= n; y++) {
     for (let x = ring + gap; x + size + ring + gap <= n; x++) {
       const inside = mean(x + 1, y + 1, x + size - 1, y + size - 1)
@@ -53,7 +53,7 @@ export function measureSquare(
         mean(x, y - gap - ring, x + size, y - gap),
         mean(x, y + size + gap, x + size, y + size + gap + ring),
       )
-      if (inside - outside > best.contrast) best = { contrast: inside - outside, x, y }
+      if (inside - outside > best.contrast) best = { contrast: inside - outside, inside, x, y }
     }
   }
   if (best.contrast < LEAST_CONTRAST) return null
@@ -63,7 +63,7 @@ export function measureSquare(
   return {
     dx: x.middle * STEP_MM - around - square.size / 2,
     dy: y.middle * STEP_MM - around - square.size / 2,
-    contrast: best.contrast,
+    inside: best.inside,
     edge_mm: ((x.width + y.width) / 2) * STEP_MM,
   }
 }

@@ -1,0 +1,55 @@
+/** Whether a picture is good enough, and if not, which advice helps. */
+import type { Alignment } from './align/align-page.ts'
+import { project } from './geometry/homography.ts'
+import { cornersMissing, type TakeAgain, takeAgain } from './locate/take-again.ts'
+import { type Grey, isInside } from './pixels/grey.ts'
+import { type PaperLevel, paperAt } from './pixels/paper.ts'
+
+/** A page with less of its fields found may be set wrongly as a whole. */
+export const LEAST_FOUND = 0.95
+/** A digit is 4 to 6 mm high: under this it is a blot. Pixels a millimetre. */
+export const LEAST_PX_PER_MM = 3.2
+/** Paper darker than this is noise and little else (0 to 255). */
+const DARK_PAPER = 45
+/** From black to white over so much of a millimetre, writing runs together. */
+const BLURRED_MM = 0.85
+/** Paper at the end of the scale: mirrored light. */
+const GLARED_PAPER = 250
+
+export interface PlacedPage {
+  picture: { grey: Grey; paper: PaperLevel }
+  scale: number
+  alignment: Alignment
+  corners: readonly number[]
+  pageCorners: ReadonlyArray<{ x: number; y: number }>
+}
+
+/** Null when the page may be read. */
+export function judgePlacing({ picture, scale, alignment, corners, pageCorners }: PlacedPage): TakeAgain | null {
+  if (alignment.foundShare >= LEAST_FOUND) return null
+  const missing = [0, 1, 2, 3].filter((c) => !corners.includes(c))
+  const lost = alignment.parts.filter((p) => !p.found)
+  const levels = alignment.parts.map((p) => {
+    const to = project(alignment.homography, p.center.x, p.center.y)
+    return { found: p.found, level: paperAt(picture.paper, to.x * scale, to.y * scale) }
+  })
+  const typical = levels.map((l) => l.level).sort((a, b) => a - b)[levels.length >> 1] ?? 0
+  if (typical < DARK_PAPER) return takeAgain('too dark')
+  const glared = levels.filter((l) => !l.found && l.level >= GLARED_PAPER).length
+  if (typical < GLARED_PAPER && glared > lost.length / 3) return takeAgain('glare')
+  if ((alignment.edge_mm ?? 0) > BLURRED_MM) return takeAgain('too blurred')
+  if (missing.length > 0) {
+    const full = { ...picture.grey, width: picture.grey.width / scale, height: picture.grey.height / scale }
+    return cornersMissing(
+      missing,
+      missing.some((c) => !isInside(full, pageCorners[c]!)),
+    )
+  }
+  return takeAgain('cannot place')
+}
+
+/** A picture without any readable code: dark, or simply without a sheet. */
+export function judgeNothingFound(paper: PaperLevel): TakeAgain {
+  const levels = Array.from(paper.level.data).sort((a, b) => a - b)
+  return takeAgain((levels[Math.floor(levels.length * 0.9)] ?? 0) < DARK_PAPER ? 'too dark' : 'no sheet')
+}

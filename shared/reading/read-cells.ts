@@ -1,0 +1,147 @@
+/** From a placed page to readings: every field cut through its own map, recognised, and weighed together. */
+import { type Box, boxesOf, cellBounds, unitOf } from '../layouts/geometry.ts'
+import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
+import type { Alignment, PlacedPart } from './align/align-page.ts'
+import type { Picture } from './align/patch.ts'
+import { blackAt } from './cells/black-level.ts'
+import { cutCell } from './cells/cut.ts'
+import { inkWithin, signedBy } from './cells/signed.ts'
+import { measureTick, tickDist } from './cells/ticks.ts'
+import { type BoxDist, boxDist, CELL_PX, type DigitNet, type TickDist } from './classes.ts'
+import { type FieldMap, fieldToPhoto } from './geometry/page-map.ts'
+import { displacementAt } from './geometry/residual-field.ts'
+import type { CellReading } from './sheet-reading.ts'
+import { weighSheet } from './weigh/sheet.ts'
+import type { Facts, Weighed } from './weigh/types.ts'
+
+interface Watch {
+  lap: (stage: string) => void
+}
+
+/** A field farther than this from its neighbours' word is shown to a person, whatever the net says. */
+const FIT_LIMIT_MM = 0.8
+
+interface PlacedBox {
+  box: Box
+  map: FieldMap
+}
+
+interface PlacedCell {
+  cell: LayoutCell
+  boxes: PlacedBox[]
+  /** Null where a box was not found on its own lines. */
+  fit_mm: number | null
+  hasFrame: boolean
+}
+
+export async function readCells(
+  picture: Picture,
+  alignment: Alignment,
+  layout: Layout,
+  planned: boolean,
+  net: DigitNet,
+  facts: Facts,
+  watch: Watch,
+): Promise<Map<string, CellReading>> {
+  const placed = placeCells(alignment, layout, planned)
+  const combs = placed.filter((p) => isComb(p.cell))
+  const boxes = combs.flatMap((p) => p.boxes)
+  const cells = new Float32Array(boxes.length * CELL_PX)
+  boxes.forEach(({ box, map }, i) => {
+    cutCell(picture, map, box, blackAt(alignment.blacks, box), cells, i)
+  })
+  watch.lap('cut')
+  const probabilities = await net.classify(cells, boxes.length)
+  watch.lap('net')
+  const combInk = new Map<string, BoxDist[]>()
+  let next = 0
+  for (const { cell, boxes: own } of combs)
+    combInk.set(
+      cell.key,
+      own.map(() => boxDist(probabilities, next++)),
+    )
+  const tickInk = new Map<string, TickDist[]>()
+  for (const { cell, boxes: own } of placed) {
+    if (cell.kind !== 'tick' && cell.kind !== 'choice') continue
+    tickInk.set(
+      cell.key,
+      own.map(({ box, map }) => tickDist(measureTick(picture, map, box, blackAt(alignment.blacks, box)))),
+    )
+  }
+  watch.lap('ticks')
+  const weighed = weighSheet(layout, { combs: combInk, ticks: tickInk }, facts)
+  watch.lap('weigh')
+  const readings = placed.map((p): [string, CellReading] => {
+    const own = weighed.get(p.cell.key) ?? seen(picture, alignment, p)
+    return [p.cell.key, withPlace(p, own)]
+  })
+  watch.lap('ticks')
+  return new Map(readings)
+}
+
+function placeCells(alignment: Alignment, layout: Layout, planned: boolean): PlacedCell[] {
+  const byKey = new Map<string, PlacedPart[]>()
+  for (const placed of alignment.parts) byKey.set(placed.part.key, [...(byKey.get(placed.part.key) ?? []), placed])
+  const { homography } = alignment
+  return layout.cells.flatMap((cell): PlacedCell[] => {
+    if (planned && 'planned' in cell && cell.planned) return []
+    const parts = byKey.get(cell.key)
+    if (parts) {
+      const boxes = parts.flatMap(({ part, center, displacement }) =>
+        part.boxes.map((box) => ({ box, map: { homography, center, displacement } })),
+      )
+      const fit_mm = parts.every((p) => p.found) ? Math.max(...parts.map((p) => p.fit_mm)) : null
+      return [{ cell, boxes, fit_mm, hasFrame: true }]
+    }
+    const boxes = boxesOf(cell).map((box) => {
+      const center = { x: box.x + box.width / 2, y: box.y + box.height / 2 }
+      return { box, map: { homography, center, displacement: displacementAt(alignment.anchors, center) } }
+    })
+    return [{ cell, boxes, fit_mm: null, hasFrame: false }]
+  })
+}
+
+/** Signatures are seen; lines of writing stay pictures. */
+function seen(picture: Picture, alignment: Alignment, { cell, boxes }: PlacedCell): Weighed {
+  const { box, map } = boxes[0]!
+  if (cell.kind !== 'signature') return { value: null, state: 'clear', candidates: [], reasons: [], posterior: 1 }
+  const { signed, sure } = signedBy(inkWithin(picture, map, box, blackAt(alignment.blacks, box)))
+  const reasons: Weighed['reasons'] = sure
+    ? []
+    : [{ rule: 'R06', text: `Whether ${cell.label} signed is not plain.`, cells: [cell.key] }]
+  return { value: signed, state: sure ? 'clear' : 'in doubt', candidates: [], reasons, posterior: sure ? 1 : 0.5 }
+}
+
+function withPlace({ cell, boxes, fit_mm, hasFrame }: PlacedCell, weighed: Weighed): CellReading {
+  const reading: CellReading = {
+    value: weighed.value,
+    unit: unitOf(cell),
+    state: weighed.state,
+    candidates: weighed.candidates,
+    reasons: [...weighed.reasons],
+    quad: quadOf(cell, boxes),
+    fit_mm,
+  }
+  if (hasFrame && (fit_mm === null || fit_mm > FIT_LIMIT_MM)) {
+    const how = fit_mm === null ? 'were not found' : `stand ${fit_mm.toFixed(1)} mm from where the boxes around put them`
+    reading.state = 'in doubt'
+    reading.reasons.push({ rule: 'R07', text: `The printed boxes of ${cell.label} ${how}.`, cells: [cell.key] })
+  }
+  return reading
+}
+
+const tenth = (px: number) => Math.round(px * 10) / 10
+
+function quadOf(cell: LayoutCell, boxes: readonly PlacedBox[]): Array<[number, number]> {
+  const bounds = cellBounds(cell)
+  const first = boxes[0]!.map
+  const last = boxes.at(-1)!.map
+  const right = bounds.x + bounds.width
+  const bottom = bounds.y + bounds.height
+  return [
+    fieldToPhoto(first, bounds.x, bounds.y),
+    fieldToPhoto(last, right, bounds.y),
+    fieldToPhoto(last, right, bottom),
+    fieldToPhoto(first, bounds.x, bottom),
+  ].map(({ x, y }) => [tenth(x), tenth(y)])
+}
