@@ -5,23 +5,41 @@ import { blankRules } from './blanks.ts'
 import { byHandRules } from './by-hand.ts'
 import { clockRules } from './clock.ts'
 import { type CheckContext, type CheckOptions, contextOf } from './context.ts'
+import { copyRules } from './copies.ts'
+import { dateRules } from './dates.ts'
 import { fittingRules } from './fitting.ts'
 import { fuelRules } from './fuel.ts'
+import { hourMeterRules } from './hour-meter.ts'
+import { instrumentRules } from './instrument.ts'
 import { jarRules } from './jar.ts'
+import { paceRules } from './pace.ts'
+import { plotRules } from './plot.ts'
 import type { Finding, Rule, Severity } from './rule.ts'
+import { soilRules } from './soil.ts'
+import { tyreRules } from './tyres.ts'
 
 /** Version of the set of rules that judged a record. Change it with any change of a rule or a default limit. */
 export const RULES_VERSION = '1.0.0'
 
 /** Every rule, by id. */
 export const RULES: readonly Rule[] = [
-  ...clockRules,
-  ...jarRules,
-  ...byHandRules,
-  ...fuelRules,
-  ...fittingRules,
-  ...blankRules,
-].sort((a, b) => a.id.localeCompare(b.id))
+  blankRules,
+  byHandRules,
+  clockRules,
+  copyRules,
+  dateRules,
+  fittingRules,
+  fuelRules,
+  hourMeterRules,
+  instrumentRules,
+  jarRules,
+  paceRules,
+  plotRules,
+  soilRules,
+  tyreRules,
+]
+  .flat()
+  .sort((a, b) => a.id.localeCompare(b.id))
 
 const WEIGHT: Record<Severity, number> = { stop: 0, doubt: 1, note: 2 }
 

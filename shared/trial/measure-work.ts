@@ -1,5 +1,5 @@
 /** Depth, width, speed, slip and time as measures. */
-import { timesOf } from './clock.ts'
+import { runOf, timesOf } from './clock.ts'
 import { type Known, known, lacking, type Measure } from './measure.ts'
 import { metres, seconds } from './quantity.ts'
 import { numberAt, type Readings, type Repeat, repeats } from './readings.ts'
@@ -130,7 +130,7 @@ export interface TimeMeasures {
 export function measureTimes(readings: Readings): TimeMeasures {
   const times = timesOf(readings)
   if (times === null) {
-    const none = lacking('blank', 'No time: start, end or a stop cannot be used.', ['t_start', 't_end'])
+    const none = noTime(readings)
     return { gross: none, fuel: none, field: none }
   }
   const clock = (pairs: number) => [{ name: 'clock', u: Math.sqrt(pairs) * stepDifferenceU(times.step_min) }]
@@ -139,4 +139,11 @@ export function measureTimes(readings: Readings): TimeMeasures {
     fuel: known(times.fuel_min, times.fuelCells, clock(1 + times.stopsOutOfFuel)),
     field: known(times.field_min, times.fieldCells, clock(1 + times.stopsOutOfField)),
   }
+}
+
+function noTime(readings: Readings): Measure {
+  const run = runOf(readings)
+  if (run.state === 'blank') return lacking('blank', 'No time: start or end is blank.', run.cells)
+  if (run.state === 'impossible') return lacking('impossible', 'No time: start and end contradict each other.', run.cells)
+  return lacking('impossible', 'No time: a stop with the engine off is half written, or longer than the run.', run.cells)
 }

@@ -1,0 +1,196 @@
+/** Depth, width and soil: what the tool left behind. */
+import { median, medianDeviation, variation_pct } from '../trial/stats.ts'
+import type { CheckContext } from './context.ts'
+import type { LimitName } from './limits.ts'
+import { type Found, found, type Rule } from './rule.ts'
+import { figure, rough } from './text.ts'
+
+const q23: Rule = {
+  id: 'Q23',
+  version: 1,
+  name: 'width and rated width',
+  severity: ['stop', 'doubt'],
+  cells: ['width_m'],
+  why: 'Overlap, gaps, or feet for metres [P].',
+  check: (ctx) => {
+    const { value: width, from } = ctx.results.width_mean_m
+    const rated = ctx.facts.ratedWidth_m ?? null
+    if (width === null || rated === null || rated <= 0) return []
+    const ratio = width / rated
+    const plough = ctx.facts.operation === 'plough'
+    const [low, high] = [
+      ctx.limit(plough ? 'plough_width_low' : 'width_low'),
+      ctx.limit(plough ? 'plough_width_high' : 'width_high'),
+    ]
+    if (ratio >= low && ratio <= high) return []
+    const severity = ratio > ctx.limit('width_stop_high') || ratio < ctx.limit('width_stop_low') ? 'stop' : 'doubt'
+    const feet = Math.abs(ratio * 0.3048 - 1) < 0.15 ? ' Feet for metres?' : ''
+    return [
+      found(
+        severity,
+        from,
+        `Mean width ${figure(width, 3)} m, rated ${figure(rated, 3)} m: ${figure(100 * ratio, 0)} % of it.${feet}`,
+        { width_m: width, rated_m: rated },
+      ),
+    ]
+  },
+}
+
+const q41: Rule = {
+  id: 'Q41',
+  version: 1,
+  name: 'spread of depth',
+  severity: ['doubt', 'note'],
+  cells: ['depth_cm'],
+  why: 'A slipped digit, or uneven work [P].',
+  check: (ctx) => {
+    const depths = ctx.all('depth_cm')
+    if (depths.length < 2) return []
+    const values = depths.map((d) => d.value)
+    const cv = variation_pct(values) ?? 0
+    const out: Found[] = []
+    if (cv > ctx.limit('depth_cv_note_pct'))
+      out.push(
+        found(
+          cv > ctx.limit('depth_cv_doubt_pct') ? 'doubt' : 'note',
+          depths.map((d) => d.key),
+          `The depths spread by ${rough(cv)} % of their mean.`,
+          { cv_pct: cv },
+        ),
+      )
+    const [middle, deviation] = [median(values), medianDeviation(values)]
+    const wild = deviation === 0 ? [] : depths.filter((d) => Math.abs(d.value - middle) > ctx.limit('depth_wild') * deviation)
+    return [
+      ...out,
+      ...wild.map((d) =>
+        found('doubt', [d.key], `${ctx.label(d.key)} ${d.value} cm stands far from the middle, ${figure(middle, 1)} cm.`, {
+          [d.key]: d.value,
+          median_cm: middle,
+        }),
+      ),
+    ]
+  },
+}
+
+const q42: Rule = {
+  id: 'Q42',
+  version: 1,
+  name: 'depth and tool',
+  severity: ['stop', 'doubt'],
+  cells: ['depth_cm'],
+  why: 'Deeper than tool or rule can reach.',
+  check: (ctx) => {
+    const reach = ctx.facts.ruleReach_cm ?? ctx.limit('rule_reach_cm')
+    const most = ctx.facts.maxDepth_cm ?? null
+    return ctx.all('depth_cm').flatMap(({ key, value }) => {
+      if (value > reach)
+        return [
+          found('stop', [key], `${ctx.label(key)} ${value} cm: the rule measures ${reach} cm.`, {
+            [key]: value,
+            reach_cm: reach,
+          }),
+        ]
+      if (most !== null && value > most)
+        return [
+          found('doubt', [key], `${ctx.label(key)} ${value} cm: the tool reaches ${most} cm.`, { [key]: value, tool_cm: most }),
+        ]
+      return []
+    })
+  },
+}
+
+const COUNTED: ReadonlyArray<{ stem: string; wanted: LimitName; word: string }> = [
+  { stem: 'depth_cm', wanted: 'depths_wanted', word: 'depths' },
+  { stem: 'width_m', wanted: 'widths_wanted', word: 'widths' },
+  { stem: 'dist_load_m', wanted: 'slips_wanted', word: 'ways in work' },
+  { stem: 'dist_noload_m', wanted: 'slips_wanted', word: 'ways without load' },
+]
+
+const q43: Rule = {
+  id: 'Q43',
+  version: 1,
+  name: 'too few readings',
+  severity: ['doubt', 'note'],
+  cells: COUNTED.map((c) => c.stem),
+  why: 'A mean of few says little about itself [P].',
+  check: (ctx) =>
+    COUNTED.flatMap(({ stem, wanted, word }) => {
+      const has = ctx.all(stem)
+      const want = ctx.limit(wanted)
+      if (has.length === 0 || has.length >= want) return []
+      return [
+        found(
+          has.length < want / 2 ? 'doubt' : 'note',
+          has.map((c) => c.key),
+          `${has.length} ${word}; ${want} are wanted.`,
+          { readings: has.length, wanted: want },
+        ),
+      ]
+    }),
+}
+
+const q44: Rule = {
+  id: 'Q44',
+  version: 1,
+  name: 'copied readings',
+  severity: ['doubt'],
+  cells: ['depth_cm'],
+  why: 'No field is that even: invented or copied [P].',
+  check: (ctx) => {
+    const depths = ctx.all('depth_cm')
+    const first = depths[0]?.value
+    if (first === undefined || depths.length < ctx.limit('copied_depths') || depths.some((d) => d.value !== first)) return []
+    return [
+      found(
+        'doubt',
+        depths.map((d) => d.key),
+        `All ${depths.length} depths are ${first} cm: measured each by itself?`,
+        { readings: depths.length, depth_cm: first },
+      ),
+    ]
+  },
+}
+
+const q50: Rule = {
+  id: 'Q50',
+  version: 1,
+  name: 'moisture masses',
+  severity: ['stop', 'doubt'],
+  cells: ['moist_can_g', 'moist_wet_g', 'moist_dry_g'],
+  why: 'Can, dry, wet in this order; water over dry soil (ASTM D2216, ISO 11465).',
+  check: (ctx) => ctx.all('moist_can_g').flatMap(({ n }) => moisture(ctx, n)),
+}
+
+function moisture(ctx: CheckContext, n: number): Found[] {
+  const keys = ['moist_can_g', 'moist_dry_g', 'moist_wet_g'].map((stem) => `${stem}[${n}]`)
+  const [can, dry, wet] = keys.map(ctx.number)
+  if (can == null || dry == null || wet == null) return []
+  const compared = { can_g: can, dry_g: dry, wet_g: wet }
+  if (!(can < dry && dry < wet))
+    return [found('stop', keys, `Can ${can} g, dry ${dry} g, wet ${wet} g: each must weigh more than the one before.`, compared)]
+  const water_pct = (100 * (wet - dry)) / (dry - can)
+  const out: Found[] = []
+  if (water_pct < ctx.limit('moisture_low_pct') || water_pct > ctx.limit('moisture_high_pct'))
+    out.push(
+      found(
+        'doubt',
+        keys,
+        `Soil water ${figure(water_pct, 1)} % of the dry soil; ${ctx.limit('moisture_low_pct')} to ${ctx.limit('moisture_high_pct')} % is usual.`,
+        { ...compared, water_pct },
+      ),
+    )
+  const written = ctx.number(`moist_written_pct[${n}]`)
+  const onWet = (100 * (wet - dry)) / (wet - can)
+  if (written !== null && Math.abs(written - onWet) <= 0.1 && Math.abs(written - water_pct) > 0.1)
+    out.push(
+      found(
+        'doubt',
+        [`moist_written_pct[${n}]`],
+        `Soil water by hand ${written} %, on the dry soil ${figure(water_pct, 1)} %: taken on the wet soil?`,
+        { written, computed: water_pct },
+      ),
+    )
+  return out
+}
+
+export const soilRules: readonly Rule[] = [q23, q41, q42, q43, q44, q50]
