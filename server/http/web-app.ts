@@ -14,7 +14,8 @@ export function webApp(webDir: string): Router {
   router.get('/{*splat}', (req, res, next) => {
     // A missing picture or script is missing; only addresses without an ending are pages.
     if (/\.\w+$/.test(req.path) || !existsSync(index)) return next()
-    res.set('Cache-Control', 'no-cache').sendFile(index)
+    // By root and name: a dot folder on the way there (.data) must not count as a hidden file.
+    res.set('Cache-Control', 'no-cache').sendFile('index.html', { root: resolve(webDir) })
   })
   return router
 }

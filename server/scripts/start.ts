@@ -6,11 +6,11 @@ import { join } from 'node:path'
 import { BadSettings, readSettings, type Settings } from '../config.ts'
 import { CannotStart } from '../postgres/cannot-start.ts'
 import { keepSecrets } from '../postgres/secrets.ts'
-import { answers } from './start/answers.ts'
 import { beginSeason } from './start/begin-season.ts'
 import { buildWeb, webIsBuilt } from './start/build-web.ts'
 import { openDatabase } from './start/database.ts'
 import { greet } from './start/greet.ts'
+import { isReady } from './start/is-ready.ts'
 import { startLocalMail } from './start/mail.ts'
 import { takeFolder } from './start/only-one.ts'
 import { choosePort } from './start/port.ts'
@@ -92,7 +92,7 @@ async function runProcesses(dataFolder: string, env: NodeJS.ProcessEnv, settings
 
 async function waitForServer(server: Supervised, worker: Supervised, port: number): Promise<void> {
   const deadline = Date.now() + READY_WITHIN_MS
-  while (!(await answers(port))) {
+  while (!(await isReady(port))) {
     const fallen = [server, worker].find((process) => process.falls() >= FALLS_BEFORE_GIVING_UP)
     if (fallen !== undefined) throw new CannotStart(`The ${fallen.name} does not start. Its log ends:\n${fallen.lastWords()}`, '')
     if (Date.now() > deadline)
