@@ -1,8 +1,8 @@
 /** Brings a database up to date: tables, the queue's own schema, and what the application's role may do. */
 import { JOBS } from '../../shared/jobs.ts'
 import { APP_ROLE } from '../postgres/roles.ts'
-import { createBoss, QUEUE_OPTIONS } from '../queue/boss.ts'
 import { createDataSource } from './database.ts'
+import { createBoss, QUEUE_OPTIONS } from './queue.ts'
 
 const quote = (name: string) => `"${name.replaceAll('"', '""')}"`
 
