@@ -1,0 +1,79 @@
+/** Pages of files: handed out one attempt at a time, and looked up for showing. */
+import type { UploadKind } from '../../../shared/schemas/upload.ts'
+import type { Db } from '../database.ts'
+import type { PageEntity } from '../entities/upload.ts'
+
+/** @returns the page's id */
+export async function insertPage(
+  db: Db,
+  page: { uploadId: string; number: number; block?: Record<string, unknown> },
+): Promise<string> {
+  const rows: Array<{ id: string }> = await db.query(
+    'INSERT INTO pages (upload_id, number, block) VALUES ($1, $2, $3) RETURNING id',
+    [page.uploadId, page.number, page.block ? JSON.stringify(page.block) : null],
+  )
+  return rows[0]!.id
+}
+
+/** A page in the hands of one attempt. Whatever it writes must name `attemptToken`: a later attempt takes it away. */
+export interface TakenPage {
+  id: string
+  number: number
+  attemptToken: string
+  /** Counts this one. */
+  attempts: number
+  block: Record<string, unknown> | null
+  placed: PageEntity['placed']
+  sheetId: string | null
+  uploadId: string
+  fileName: string
+  kind: UploadKind
+  storageKey: string | null
+}
+
+/**
+ * Takes a page for a new attempt, away from any attempt before it.
+ * @returns null when it is gone or was read to its end
+ */
+export async function takePage(db: Db, pageId: string): Promise<TakenPage | null> {
+  const [rows]: [TakenPage[], number] = await db.query(
+    `UPDATE pages p SET attempt_token = gen_random_uuid(), attempts = p.attempts + 1, state = 'being read'
+     FROM uploads u WHERE p.id = $1 AND u.id = p.upload_id AND p.state IN ('arrived', 'being read')
+     RETURNING p.id, p.number, p.attempt_token AS "attemptToken", p.attempts, p.block, p.placed, p.sheet_id AS "sheetId",
+       u.id AS "uploadId", u.file_name AS "fileName", u.kind, u.storage_key AS "storageKey"`,
+    [pageId],
+  )
+  const taken = rows[0] ?? null
+  if (taken) await db.query("UPDATE uploads SET state = 'being read' WHERE id = $1 AND state = 'arrived'", [taken.uploadId])
+  return taken
+}
+
+/** A page to be shown. */
+export interface ShownPage {
+  id: string
+  uploadedBy: string
+  sheetOwnerId: string | null
+  fileName: string
+  kind: UploadKind
+  storageKey: string | null
+  pictureKey: string | null
+}
+
+export async function findShownPage(db: Db, pageId: string): Promise<ShownPage | null> {
+  const rows: ShownPage[] = await db.query(
+    `SELECT p.id, u.uploaded_by AS "uploadedBy", s.owner_id AS "sheetOwnerId", u.file_name AS "fileName", u.kind,
+       u.storage_key AS "storageKey", p.picture_key AS "pictureKey"
+     FROM pages p JOIN uploads u ON u.id = p.upload_id LEFT JOIN sheets s ON s.id = p.sheet_id WHERE p.id = $1`,
+    [pageId],
+  )
+  return rows[0] ?? null
+}
+
+/** The pages of an upload that no attempt has finished. */
+export async function listOpenPages(db: Db, uploadId: string): Promise<string[]> {
+  const rows: Array<{ id: string }> = await db.query(
+    "SELECT id FROM pages WHERE upload_id = $1 AND state IN ('arrived', 'being read') ORDER BY number",
+    [uploadId],
+  )
+  return rows.map((row) => row.id)
+}
