@@ -1,0 +1,121 @@
+/** From posteriors to clear or in doubt, with reasons in plain words. */
+import type { TickCell } from '../../layouts/layout.ts'
+import type { TickDist } from '../classes.ts'
+import { CLEAR, CLEAR_BESIDE_A_WRONG_SUM, DIGIT_ALLOWED, GAP_DOUBT, TICK_CLEAR, VOID_DOUBT } from './thresholds.ts'
+import type { Candidate, Reason, ReasonRule, Value, Weighed, WrongSum } from './types.ts'
+import type { Option, Variable } from './variable.ts'
+
+const MOST_CANDIDATES = 5
+const SHOWN_FROM = 0.001
+
+const percent = (p: number) => (p >= 0.9995 ? 'over 99.9 %' : p < 0.001 ? 'under 0.1 %' : `${Number((p * 100).toFixed(1))} %`)
+const said = (value: Value) => (value === null ? 'blank' : String(value))
+
+/** @param posterior of the options, `other` last; null where the reading's group was not decided. */
+export function decideComb(variable: Variable, posterior: Float64Array | null, wrongSums: ReadonlyArray<WrongSum>): Weighed {
+  const p = posterior ?? Float64Array.from(variable.options.map((o) => o.weight))
+  const best = argMax(variable.options, (_, k) => p[k]!)
+  const byInk = argMax(variable.options, (o) => o.ink)
+  const value = variable.options[best]!
+  const inkBest = variable.options[byInk]!
+  const reasons: Reason[] = []
+  const add = (rule: ReasonRule, text: string, cells = [variable.key]) => reasons.push({ rule, text, cells })
+
+  if (variable.spoiled >= VOID_DOUBT) add('R01', `A box of ${variable.label} looks crossed out or written over.`)
+  if (variable.gap >= GAP_DOUBT) add('Q55', `${variable.label} seems to have an empty box between or after its digits.`)
+  if (posterior === null)
+    add('R05', `${variable.label} was not weighed against the sheet's sums: there were too many ways to read them.`)
+  // Plain ink whose sum does not hold is no question of reading: the wrong sum is the reason.
+  const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= CLEAR
+  if (value !== inkBest) {
+    add(
+      'R03',
+      `The ink of ${variable.label} reads ${said(inkBest.value)} (${percent(inkBest.ink)}); what else is known speaks for ${said(value.value)} (${percent(p[best]!)}).`,
+    )
+  } else if (!explained && (p[best]! < CLEAR || value.weakest < DIGIT_ALLOWED)) {
+    add('R02', unsure(variable, p))
+  }
+  for (const sum of wrongSums) {
+    if (sum.isResult) add('R04', wrongText(sum, value.value), sum.cells)
+    else if (value.ink < CLEAR_BESIDE_A_WRONG_SUM) add('R04', besideText(variable, sum, value), sum.cells)
+  }
+  return {
+    value: value.value,
+    state: reasons.length === 0 ? 'clear' : 'in doubt',
+    candidates: candidatesOf(variable.options, p),
+    reasons,
+    posterior: p[best]!,
+  }
+}
+
+function unsure(variable: Variable, p: ArrayLike<number>): string {
+  const likely = candidatesOf(variable.options, p).slice(0, 3)
+  return `${variable.label} reads ${likely.map((c) => `${said(c.value)} (${percent(c.p)})`).join(', ')}.`
+}
+
+const wrongText = (sum: WrongSum, value: Value): string =>
+  sum.fails
+    ? `${sum.labels.at(-1)} is written ${said(value)}, and that does not follow from ${list(sum.labels.slice(0, -1))}.`
+    : `${sum.labels.at(-1)} is written ${said(value)}; whether it follows from ${list(sum.labels.slice(0, -1))} is not sure.`
+
+const besideText = (variable: Variable, sum: WrongSum, value: Option): string =>
+  `${variable.label} reads ${said(value.value)} (${percent(value.ink)} by its ink), and the result ${sum.labels.at(-1)} does not follow from it.`
+
+const list = (labels: string[]) =>
+  labels.length > 4
+    ? `${labels[0]} to ${labels.at(-1)}`
+    : labels.length > 1
+      ? `${labels.slice(0, -1).join(', ')} and ${labels.at(-1)}`
+      : labels[0]
+
+/** One of a choice, or none; two ticked or a spoiled tick is in doubt. */
+export function decideChoice(variable: Variable, posterior: Float64Array | null): Weighed {
+  const p = posterior ?? Float64Array.from(variable.options.map((o) => o.weight))
+  const best = argMax(variable.options, (_, k) => p[k]!)
+  const byInk = argMax(variable.options, (o) => o.ink)
+  const value = variable.options[best]!
+  const sure = best === byInk && p[best]! >= TICK_CLEAR && value.ink >= TICK_CLEAR
+  const text = `${variable.label} has more than one option ticked, or a tick that is not plain.`
+  return {
+    value: value.value,
+    state: sure ? 'clear' : 'in doubt',
+    candidates: candidatesOf(variable.options, p),
+    reasons: sure ? [] : [{ rule: 'R06', text, cells: [variable.key] }],
+    posterior: p[best]!,
+  }
+}
+
+export function decideTick(cell: TickCell, tick: TickDist): Weighed {
+  const value = tick.ticked >= tick.empty
+  const p = Math.max(tick.ticked, tick.empty)
+  const sure = p >= TICK_CLEAR
+  const candidates = [
+    { value: true, p: tick.ticked, ink: tick.ticked },
+    { value: false, p: tick.empty, ink: tick.empty },
+  ].sort((a, b) => b.p - a.p)
+  const text = `Whether ${cell.label} is ticked is not plain.`
+  return {
+    value,
+    state: sure ? 'clear' : 'in doubt',
+    candidates,
+    reasons: sure ? [] : [{ rule: 'R06', text, cells: [cell.key] }],
+    posterior: p,
+  }
+}
+
+/** The likeliest values, and the one the ink alone favours even where knowledge speaks against it. */
+function candidatesOf(options: ReadonlyArray<Option>, p: ArrayLike<number>): Candidate[] {
+  const all = options.map((o, k) => ({ value: o.value, p: p[k]!, ink: o.ink }))
+  const byInk = all[argMax(options, (o) => o.ink)]!
+  const best = [...all].sort((a, b) => b.p - a.p).filter((c, k) => k === 0 || c.p >= SHOWN_FROM)
+  const shown = best.slice(0, MOST_CANDIDATES)
+  return shown.includes(byInk) ? shown : [...shown.slice(0, MOST_CANDIDATES - 1), byInk]
+}
+
+function argMax<T>(items: ReadonlyArray<T>, score: (item: T, k: number) => number): number {
+  let best = 0
+  items.forEach((item, k) => {
+    if (score(item, k) > score(items[best]!, best)) best = k
+  })
+  return best
+}

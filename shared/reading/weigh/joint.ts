@@ -1,0 +1,225 @@
+/**
+ * The joint weighing of all readings of a sheet. Readings and ties make a graph; where it is a tree, passing messages along it
+ * is exact. Where ties close a ring (clock orders that share start and end), some readings are held at each of their likely
+ * values in turn, the tree that is left is weighed, and the answers are added up by their weight: exact as well.
+ */
+import { type Budget, type ChainResult, NotDecided, runChain } from './chain.ts'
+import { MOST_LEFT_OUT } from './thresholds.ts'
+import type { Factor } from './ties/compile.ts'
+import type { Variable } from './variable.ts'
+
+/** Likely values a held reading is tried at; less likely ones keep the weight they have alone. */
+const HELD_FLOOR = 1e-4
+const MOST_COMBINATIONS = 400
+
+export interface JointResult {
+  /** For every reading the probability of its options, `other` last; null where its group was not decided. */
+  posteriors: Array<Float64Array | null>
+  /** Probability that the result of a tie holds, fails, or was not claimed; null where not decided. */
+  ties: Array<{ holds: number; fails: number } | null>
+}
+
+interface Group {
+  readings: number[]
+  factors: number[]
+  held: number[]
+}
+
+export function weighJointly(
+  variables: ReadonlyArray<Variable>,
+  factors: ReadonlyArray<Factor>,
+  budget: () => Budget,
+): JointResult {
+  const alone = variables.map((v) => Float64Array.from([...v.options.map((o) => o.weight), v.otherWeight]))
+  const result: JointResult = { posteriors: alone.map(normal), ties: factors.map(() => null) }
+  for (const group of groupsOf(variables.length, factors)) {
+    try {
+      weighGroup(group, variables, factors, alone, budget(), result)
+    } catch (error) {
+      if (!(error instanceof NotDecided)) throw error
+      for (const reading of group.readings) result.posteriors[reading] = null
+    }
+  }
+  return result
+}
+
+/** Groups of readings that hang together, each with the readings to hold so that no ring is left. */
+function groupsOf(count: number, factors: ReadonlyArray<Factor>): Group[] {
+  const whole = roots(count)
+  const tree = roots(count)
+  const held = new Set<number>()
+  for (const { readings } of factors) {
+    for (const reading of readings) whole.join(readings[0]!, reading)
+    let first: number | null = null
+    for (const reading of readings) {
+      if (held.has(reading)) continue
+      if (first === null) first = reading
+      else if (tree.find(first) === tree.find(reading)) held.add(reading)
+      else tree.join(first, reading)
+    }
+  }
+  const groups = new Map<number, Group>()
+  factors.forEach(({ readings }, f) => {
+    const root = whole.find(readings[0]!)
+    const group = groups.get(root) ?? { readings: [], factors: [], held: [] }
+    group.factors.push(f)
+    groups.set(root, group)
+  })
+  for (let reading = 0; reading < count; reading++) {
+    const group = groups.get(whole.find(reading))
+    group?.readings.push(reading)
+    if (held.has(reading)) group?.held.push(reading)
+  }
+  return [...groups.values()]
+}
+
+function roots(count: number) {
+  const parent = Array.from({ length: count }, (_, i) => i)
+  const find = (i: number): number => {
+    let root = i
+    while (parent[root] !== root) root = parent[root]!
+    parent[i] = root
+    return root
+  }
+  const join = (a: number, b: number): void => {
+    parent[find(a)] = find(b)
+  }
+  return { find, join }
+}
+
+function weighGroup(
+  group: Group,
+  variables: ReadonlyArray<Variable>,
+  factors: ReadonlyArray<Factor>,
+  alone: ReadonlyArray<Float64Array>,
+  budget: Budget,
+  result: JointResult,
+): void {
+  const sums = new Map(group.readings.map((r) => [r, new Float64Array(alone[r]!.length)]))
+  const tieSums = new Map(group.factors.map((f) => [f, { holds: 0, fails: 0, silent: 0 }]))
+  for (const weights of combinations(group.held, alone)) {
+    const tree = passMessages(group, variables, factors, weights, budget)
+    for (const [reading, belief] of tree.beliefs) addInto(sums.get(reading)!, belief, tree.weight)
+    for (const [f, t] of tree.ties) {
+      const into = tieSums.get(f)!
+      const scale = tree.weight / (t.holds + t.fails + t.silent || 1)
+      into.holds += t.holds * scale
+      into.fails += t.fails * scale
+      into.silent += t.silent * scale
+    }
+  }
+  for (const [reading, sum] of sums) result.posteriors[reading] = normal(sum)
+  for (const [f, t] of tieSums) {
+    const all = t.holds + t.fails + t.silent
+    result.ties[f] = all > 0 ? { holds: t.holds / all, fails: t.fails / all } : null
+  }
+}
+
+/** All ways to hold the readings to hold, as weights with a single option left to each. */
+function combinations(held: number[], alone: ReadonlyArray<Float64Array>): Float64Array[][] {
+  let out: Float64Array[][] = [[...alone]]
+  for (const reading of held) {
+    const weights = alone[reading]!
+    const top = Math.max(...weights)
+    const likely = [...weights.keys()].filter((k) => weights[k]! >= top * HELD_FLOOR)
+    if (out.length * likely.length > MOST_COMBINATIONS) throw new NotDecided()
+    out = out.flatMap((before) =>
+      likely.map((k) => {
+        const only = new Float64Array(weights.length)
+        only[k] = weights[k]!
+        return before.map((w, r) => (r === reading ? only : w))
+      }),
+    )
+  }
+  return out
+}
+
+interface Tree {
+  beliefs: Map<number, Float64Array>
+  ties: Map<number, { holds: number; fails: number; silent: number }>
+  /** Weight of everything this way of holding the held readings allows. */
+  weight: number
+}
+
+/** Sum-product on the tree that is left when held readings have one option. */
+function passMessages(
+  group: Group,
+  variables: ReadonlyArray<Variable>,
+  factors: ReadonlyArray<Factor>,
+  weights: ReadonlyArray<Float64Array>,
+  budget: Budget,
+): Tree {
+  const held = new Set(group.held)
+  const touching = new Map(group.readings.map((r) => [r, group.factors.filter((f) => factors[f]!.readings.includes(r))]))
+  const toReading = new Map<string, Float64Array>()
+  const toTie = new Map<string, Float64Array>()
+  const edge = (f: number, reading: number) => `${f} ${reading}`
+  /** A reading's weights with the messages of all its ties but one. */
+  const gather = (reading: number, but: number | null): Float64Array => {
+    const out = Float64Array.from(weights[reading]!)
+    if (held.has(reading)) return out
+    for (const f of touching.get(reading)!) {
+      const message = f === but ? undefined : toReading.get(edge(f, reading))
+      if (message) for (let k = 0; k < out.length; k++) out[k]! *= message[k]!
+    }
+    return out
+  }
+  const runs = new Map<number, ChainResult>()
+  // On a tree every message is right once it has crossed the longest path.
+  let waiting = new Set(group.factors)
+  for (let round = 0; round <= group.factors.length && waiting.size > 0; round++) {
+    const next = new Set<number>()
+    for (const f of waiting) {
+      const { readings, chain } = factors[f]!
+      const incoming = readings.map((r) => {
+        const message = normal(gather(r, f))
+        toTie.set(edge(f, r), message)
+        return { counts: countsOf(variables[r]!), weights: message }
+      })
+      const run = runChain(chain, incoming, budget)
+      if (run.leftOut > MOST_LEFT_OUT) throw new NotDecided()
+      runs.set(f, run)
+      readings.forEach((reading, at) => {
+        if (held.has(reading)) return
+        const message = normal(run.outgoing[at]!)
+        const before = toReading.get(edge(f, reading))
+        toReading.set(edge(f, reading), message)
+        if (before && same(before, message)) return
+        for (const other of touching.get(reading)!) if (other !== f) next.add(other)
+      })
+    }
+    waiting = next
+  }
+  // The weight of a forest from its messages: ties and readings multiplied, what both counted divided out.
+  let logWeight = 0
+  for (const [f, run] of runs) {
+    logWeight += Math.log(run.holds + run.fails + run.silent)
+    for (const r of factors[f]!.readings) {
+      if (!held.has(r)) logWeight -= Math.log(dot(toTie.get(edge(f, r))!, toReading.get(edge(f, r))!))
+    }
+  }
+  for (const r of group.readings) logWeight += Math.log(total(gather(r, null)))
+  const beliefs = new Map(group.readings.map((r) => [r, normal(gather(r, null))]))
+  return { beliefs, ties: runs, weight: Math.exp(logWeight) }
+}
+
+const countsOf = (variable: Variable): Array<number | null | undefined> => [...variable.options.map((o) => o.count), undefined]
+
+const total = (weights: ArrayLike<number>): number => {
+  let sum = 0
+  for (let k = 0; k < weights.length; k++) sum += weights[k]!
+  return sum
+}
+
+const dot = (a: Float64Array, b: Float64Array): number => a.reduce((sum, x, k) => sum + x * b[k]!, 0)
+
+function normal(weights: Float64Array): Float64Array {
+  const sum = total(weights)
+  return sum > 0 ? weights.map((w) => w / sum) : weights
+}
+
+const same = (a: Float64Array, b: Float64Array): boolean => a.every((x, k) => Math.abs(x - b[k]!) < 1e-12)
+
+function addInto(into: Float64Array, from: Float64Array, scale: number): void {
+  for (let k = 0; k < into.length; k++) into[k]! += from[k]! * scale
+}

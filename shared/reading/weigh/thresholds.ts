@@ -1,0 +1,65 @@
+/**
+ * Every number that decides between clear and in doubt, and every prior that no layout states. Measured effects are in
+ * DEVELOPERS.md (figures on reading).
+ */
+
+/** A reading is clear from this posterior on. */
+export const CLEAR = 0.995
+/** With a sum that does not hold, its parts must be this sure by their own ink: one of them may be what is wrong. */
+export const CLEAR_BESIDE_A_WRONG_SUM = 0.99
+/** A sum holds from this posterior on; below, the written result is in doubt. */
+export const SUM_HOLDS = 0.99
+/** Knowledge may choose only among digits at least this probable in their own box. */
+export const DIGIT_ALLOWED = 0.02
+/** A box this likely crossed out or written over puts its reading in doubt. */
+export const VOID_DOUBT = 0.1
+/** Ink this likely to leave a gap between digits puts the reading in doubt. */
+export const GAP_DOUBT = 0.02
+/** A tick or choice is clear from this posterior on. */
+export const TICK_CLEAR = 0.995
+
+/**
+ * The net is wrong now and then where it is surest (2 of 2,637 accepted cells in the trial build): this share of every box is
+ * spread over all classes, so that no digit is impossible and a sum can contradict a sure-looking one.
+ */
+export const NET_HUMILITY = 4e-4
+
+/** Writers' sums that do not hold, and over how many results such a slip spreads. */
+export const WRONG_SUM = 0.03
+export const WRONG_SUM_SPREAD = 100
+/** Over how many results an unreadable part leaves the result open. */
+export const UNKNOWN_SPREAD = 3000
+/** A result rounded roughly (within 1 % but not to its last place), among results that hold. */
+export const ROUGH_RESULT = 0.12
+export const ROUGH_SHARE = 0.01
+/** A result left blank although its parts are there. */
+export const RESULT_BLANK = 0.05
+
+/** Marks: share of readings on half a mark, and finer than the marks allow. */
+export const HALF_MARK = 0.08
+export const BROKEN_MARK = 0.03
+/** Weights of values that are unlikely, or impossible as a measurement yet possible as writing. */
+export const UNLIKELY = 0.05
+export const IMPOSSIBLE = 0.001
+/** A number that the register does not hold. */
+export const UNKNOWN_NUMBER = 0.02
+/** Clock times and pairs that stand against the expected order or distance. */
+export const LATE = 0.05
+export const REVERSED = 0.002
+export const APART = 0.02
+/** Boxes of a time or date that no clock or calendar knows. */
+export const IMPOSSIBLE_FORMAT = 0.003
+
+/** Patterns and states less likely than this beside the best are left out; what is left out is added up. */
+export const PATTERN_FLOOR = 1e-6
+export const STATE_FLOOR = 2e-8
+export const MOST_PATTERNS = 600
+/**
+ * A group is not decided where the bound on what was left out exceeds this, beside what was kept. It comes near only where a sum
+ * fails (its weight is then about WRONG_SUM / WRONG_SUM_SPREAD), and such a result is in doubt either way.
+ */
+export const MOST_LEFT_OUT = 0.5
+/** A group that needs more steps than this is not decided (some 60 ms); counted in steps, so that the answer is the same on any machine. */
+export const MOST_STEPS = 600_000
+/** The whole sheet's limit, for machines that stall. */
+export const SHEET_LIMIT_MS = 2_000
