@@ -1,0 +1,45 @@
+/** The figures as a table for people. */
+import type { PageScore } from './compare.ts'
+import type { LevelFigures } from './figures.ts'
+import type { Peers } from './peers.ts'
+
+const percent = (share: number | null, places = 2) => (share === null ? 'none' : `${(100 * share).toFixed(places)} %`)
+const span = ([low, high]: readonly number[], places = 2) => `${(100 * low!).toFixed(places)}–${(100 * high!).toFixed(places)} %`
+
+function kindLines(name: string, f: LevelFigures['ticks']): string[] {
+  const s = f.silentError
+  return [
+    `  ${name.padEnd(15)} doubt ${percent(f.doubtShare).padStart(8)}  (95 % by sheet ${span(f.doubtShareInterval)}; ${f.readings} readings)`,
+    `  ${''.padEnd(15)} silent ${`${s.wrong} of ${s.clear}`.padStart(10)} = ${percent(s.share, 3)}  (exact ${span([s.low, s.high], 3)}; by sheet ${span(s.bySheet, 3)})`,
+  ]
+}
+
+/** One level, eight to twelve lines. */
+export function levelLines(level: string, f: LevelFigures): string[] {
+  const stages = Object.entries(f.cpuMs.stages).map(([name, { p50, p95 }]) => `${name} ${Math.round(p50)}/${Math.round(p95)}`)
+  return [
+    `${level}: ${f.photos} simulated photos, to take again ${percent(f.takeAgainShare)} (exact ${span(f.takeAgainInterval)}) ${JSON.stringify(f.takeAgainCodes)}`,
+    ...kindLines('numbers, tied', f.numbers.tied),
+    ...kindLines('numbers, untied', f.numbers.untied),
+    ...kindLines('ticks', f.ticks),
+    `  caught          ${f.caught.hits} of ${f.caught.count} = ${percent(f.catchShare)}  (95 % ${span(f.catchInterval)})`,
+    `  blanks read as something ${f.blanksReadAsSomething.hits} of ${f.blanksReadAsSomething.count}`,
+    ...(f.placement_mm
+      ? [`  cells off by p50 ${f.placement_mm.p50}, p99 ${f.placement_mm.p99}, at most ${f.placement_mm.max} mm`]
+      : []),
+    `  CPU ms p50 ${Math.round(f.cpuMs.p50)}, p95 ${Math.round(f.cpuMs.p95)}; stages p50/p95: ${stages.join(', ')}`,
+  ]
+}
+
+export const mistakeLines = (pages: readonly PageScore[]): string[] =>
+  pages.flatMap((p) => p.mistakes).map((m) => `  ${m.file} ${m.key}: written ${String(m.written)}, read ${String(m.read)}`)
+
+export const peerLines = (peers: Peers): string[] => [
+  `bare JPEG decode p50 ${peers.jpegDecodeMsP50.toFixed(0)} ms CPU; whole page ${peers.readOverDecode.toFixed(2)} times that`,
+  ...(peers.tesseractCells > 0
+    ? [
+        `tesseract.js digit by digit on ${peers.tesseractCells} cells: ${peers.tesseractMsPerDigit!.toFixed(1)} ms a digit, ${percent(peers.tesseractWrongShare)} wrong`,
+        `this reader: ${peers.readerMsPerDigit!.toFixed(2)} ms a digit (whole page), ${percent(peers.readerWrongDigitShare, 4)} of the digits of clear readings wrong`,
+      ]
+    : []),
+]
