@@ -1,5 +1,7 @@
 /** What the database refused, told by the driver's code (PostgreSQL manual, appendix A), never by its wording. */
 
+import { UserError } from '../../shared/errors.ts'
+
 interface DriverError {
   code?: string
   constraint?: string
@@ -36,3 +38,17 @@ export function isDatabaseAway(error: unknown): boolean {
 
 /** No room on the database's disk. */
 export const isDatabaseFull = (error: unknown): boolean => driverErrorOf(error)?.code === '53100'
+
+/**
+ * Runs a write and turns a refusal by one of the named unique indexes into a conflict that names the field.
+ * @throws UserError `conflict`
+ */
+export async function orConflict<T>(write: Promise<T>, indexes: Record<string, { path: string; message: string }>): Promise<T> {
+  try {
+    return await write
+  } catch (cause) {
+    const issue = indexes[driverErrorOf(cause)?.constraint ?? '']
+    if (!issue || !isUniqueViolation(cause)) throw cause
+    throw new UserError('conflict', `${issue.message} Nothing was saved.`, { issues: [issue], cause })
+  }
+}

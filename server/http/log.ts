@@ -21,4 +21,4 @@ export function logRequests(logger: Logger) {
 }
 
 /** One-time links stand in the path. */
-const hideTokens = (url: string) => url.replace(/\?.*$/, '').replace(/(\/links\/).+$/, '$1…')
+const hideTokens = (url: string) => url.replace(/\?.*$/, '').replace(/(\/links?\/).+$/, '$1…')

@@ -1,7 +1,21 @@
 /** Every route there is. */
 import { healthRoutes } from '../features/health/health.routes.ts'
+import { mailRoutes } from '../features/mails/mails.routes.ts'
+import { recordRoutes } from '../features/records/records.routes.ts'
 import { sessionRoutes } from '../features/session/session.routes.ts'
+import { sheetRoutes } from '../features/sheets/sheets.routes.ts'
 import { trailRoutes } from '../features/trail/trail.routes.ts'
+import { passwordRoutes } from '../features/users/passwords.routes.ts'
+import { userRoutes } from '../features/users/users.routes.ts'
 import type { Route } from './route.ts'
 
-export const allRoutes: readonly Route[] = [...healthRoutes, ...sessionRoutes, ...trailRoutes]
+export const allRoutes: readonly Route[] = [
+  ...healthRoutes,
+  ...sessionRoutes,
+  ...passwordRoutes,
+  ...userRoutes,
+  ...sheetRoutes,
+  ...recordRoutes,
+  ...mailRoutes,
+  ...trailRoutes,
+]

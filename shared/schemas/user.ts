@@ -46,5 +46,13 @@ export const setPasswordSchema = z.object({ token: z.string().min(20).max(200), 
 /** The first admin has no invitation: the link printed by the start command carries the token. */
 export const firstAdminSchema = setPasswordSchema.extend({ name: nameSchema, email: emailSchema })
 
+/** What a one-time link is for; name and address of the person it was sent to, if there is one yet. */
+export const oneTimeLinkSchema = z.object({
+  kind: z.enum(['invitation', 'reset', 'first admin']),
+  name: z.string().nullable(),
+  email: z.string().nullable(),
+})
+export type OneTimeLink = z.infer<typeof oneTimeLinkSchema>
+
 export const sessionSchema = z.object({ user: userSchema })
 export type Session = z.infer<typeof sessionSchema>

@@ -1,5 +1,6 @@
 import type { Role, User } from '../../../shared/schemas/user.ts'
 import type { Db } from '../database.ts'
+import { orConflict } from '../driver-errors.ts'
 import { UserEntity } from '../entities/user.ts'
 
 /** What the outside may know of a row. */
@@ -50,10 +51,21 @@ export interface NewUser {
   passwordHash?: string | null
 }
 
-/** @throws the driver's unique violation on users_number_key or users_email_key */
+const TAKEN = {
+  users_number_key: { path: 'number', message: 'Somebody has this number already.' },
+  users_email_key: { path: 'email', message: 'Somebody has this address already.' },
+}
+
+/** @throws UserError `conflict` when number or address is taken */
 export async function addUser(db: Db, user: NewUser): Promise<User> {
-  const added = db.create(UserEntity, { active: true, ...user, passwordHash: user.passwordHash ?? null })
-  return toUser(await db.save(added))
+  const row = db.create(UserEntity, { active: true, ...user, passwordHash: user.passwordHash ?? null })
+  return toUser(await orConflict(db.save(row), TAKEN))
+}
+
+/** Active admins, locked until the transaction ends: two of them cannot disable each other at the same moment. */
+export async function lockActiveAdmins(db: Db): Promise<string[]> {
+  const rows = await db.query<{ id: string }[]>(`SELECT id FROM users WHERE role = 'admin' AND active ORDER BY id FOR UPDATE`)
+  return rows.map(({ id }) => id)
 }
 
 export async function changeUser(db: Db, id: string, change: { name?: string; role?: Role; active?: boolean }): Promise<void> {
