@@ -63,6 +63,14 @@ describe('a private cluster', () => {
     stranger.close()
   })
 
+  it('made with other secrets says which file is missing', async () => {
+    await start()
+    await running.cluster.stop()
+    const attempt = startPrivateDatabase({ dataDir: join(folder, 'pg'), secrets: drawSecrets() })
+    await expect(attempt).rejects.toThrow('it was made with another secrets.json')
+    expect(isAlive(running.cluster.pid)).toBe(false)
+  })
+
   it('lets nobody in without the password', async () => {
     const database = await start()
     const url = new URL(database.appUrl)
