@@ -2,6 +2,7 @@
 import { healthRoutes } from '../features/health/health.routes.ts'
 import { mailRoutes } from '../features/mails/mails.routes.ts'
 import { recordRoutes } from '../features/records/records.routes.ts'
+import { registerRoutes } from '../features/registers/registers.routes.ts'
 import { sessionRoutes } from '../features/session/session.routes.ts'
 import { sheetRoutes } from '../features/sheets/sheets.routes.ts'
 import { trailRoutes } from '../features/trail/trail.routes.ts'
@@ -14,6 +15,7 @@ export const allRoutes: readonly Route[] = [
   ...sessionRoutes,
   ...passwordRoutes,
   ...userRoutes,
+  ...registerRoutes,
   ...sheetRoutes,
   ...recordRoutes,
   ...mailRoutes,

@@ -17,7 +17,7 @@ export const resultSchema = z.object({
   formula: z.string(),
   assumes: z.array(z.string()),
   budget: z.array(z.record(z.string(), z.unknown())),
-  reason: z.object({ code: z.string(), text: z.string() }).nullable(),
+  reason: z.object({ code: z.string(), text: z.string(), rule: z.string().optional() }).nullable(),
 })
 export type ResultValue = z.infer<typeof resultSchema>
 export const resultsSchema = z.record(z.string(), resultSchema)
