@@ -23,6 +23,7 @@ export const routes: RouteObject[] = [
         element: <Shell />,
         children: guarded([
           { path: paths.home.pattern, element: <Home /> },
+          { path: paths.send.pattern, lazy: () => import('./routes/send.tsx') },
           ...officeRoutes,
           { path: '*', element: <NotFound /> },
         ]),

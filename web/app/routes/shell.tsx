@@ -1,6 +1,8 @@
 import { useQuery } from '@tanstack/react-query'
 import { Navigate, Outlet, ScrollRestoration, useLocation } from 'react-router-dom'
 import { sessionQueries } from '../../features/session/session.queries.ts'
+import { NotYetSentCount } from '../../features/uploads/components/not-yet-sent.tsx'
+import { useOutboxAtWork } from '../../features/uploads/use-outbox.ts'
 import { MeContext } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
 import { useOnline } from '../../lib/use-online.ts'
@@ -22,8 +24,10 @@ export function Shell() {
   return (
     <MeContext value={user}>
       <Folio home={HOME[user.role]} links={NAV[user.role]}>
+        <NotYetSentCount />
         <WhoIsHere user={user} />
       </Folio>
+      <OutboxAtWork userId={user.id} />
       <LineDown />
       <Outlet />
       <ScrollRestoration />
@@ -38,4 +42,9 @@ function LineDown() {
       The line is down: what you see may be old, and nothing more can be saved now. Photos are kept here and go when it is back.
     </p>
   )
+}
+
+function OutboxAtWork({ userId }: { userId: string }) {
+  useOutboxAtWork(userId)
+  return null
 }
