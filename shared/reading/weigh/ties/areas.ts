@@ -63,7 +63,9 @@ export function rateChain(
     return byUnit(unit, options, tie.squareMetres, (squareMetres) => {
       const hectares = ((area / 10 ** variables[1]!.places) * squareMetres) / HECTARE_M2
       const rate = ((amount / 10 ** variables[0]!.places) * tie.factor) / hectares
-      return rounded(written, rate * 10 ** variables[3]!.places, true)
+      // The area was rounded to its own last place before, or was not: both are right.
+      const places = 10 ** variables[3]!.places
+      return rounded(written, rate * places, true, (rate * places * 0.5) / area)
     })
   })
 }

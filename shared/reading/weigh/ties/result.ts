@@ -8,7 +8,7 @@ export interface Ending {
 }
 
 const FAILS: Ending = { holds: 0, fails: WRONG_SUM / WRONG_SUM_SPREAD, silent: 0 }
-export const HOLDS: Ending = { holds: 1 - WRONG_SUM, fails: 0, silent: 0 }
+const HOLDS: Ending = { holds: 1 - WRONG_SUM, fails: 0, silent: 0 }
 
 /** The result is blank: nothing was claimed. */
 export const NOT_WRITTEN: Ending = { holds: 0, fails: 0, silent: RESULT_BLANK }
@@ -19,11 +19,13 @@ export const exact = (holds: boolean): Ending => (holds ? HOLDS : FAILS)
 
 /**
  * A result with decimals, rounded to its last place or, rarely, only roughly.
- * @param written in its last places. @param computed the same unit, unrounded.
+ * @param written in its last places. @param computed the same unit, unrounded. @param slack how far `computed` may be off
+ * because one of its parts was rounded before.
  */
-export function rounded(written: number, computed: number, roughly: boolean): Ending {
+export function rounded(written: number, computed: number, roughly: boolean, slack = 0): Ending {
   const off = Math.abs(written - computed)
-  if (off <= 0.5 + 1e-9) return roughly ? { holds: (1 - WRONG_SUM) * (1 - ROUGH_RESULT), fails: 0, silent: 0 } : HOLDS
+  const close = roughly ? 1 - ROUGH_RESULT : 1
+  if (off <= 0.5 + slack + 1e-9) return { holds: ((1 - WRONG_SUM) * close) / (1 + 2 * slack), fails: 0, silent: 0 }
   if (!roughly) return FAILS
   const window = computed * ROUGH_SHARE
   if (off > Math.max(window, 1.5)) return FAILS
