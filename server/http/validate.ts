@@ -6,7 +6,7 @@ const NAMES: Record<Part, string> = { params: 'address', query: 'filter', body: 
 
 /**
  * Parses one part of a request.
- * @throws UserError `invalid` naming every field that was refused
+ * @throws UserError `invalid` naming every field that was refused; `version_needed` for a write that names no version
  */
 export function validate(part: Part, schema: z.ZodType | undefined, value: unknown): unknown {
   if (!schema) return undefined
@@ -14,6 +14,14 @@ export function validate(part: Part, schema: z.ZodType | undefined, value: unkno
   const parsed = schema.safeParse(value ?? {})
   if (parsed.success) return parsed.data
   const issues: Issue[] = parsed.error.issues.map(({ path, message }) => ({ path: path.join('.'), message }))
+  if (part === 'body' && lacksVersion(issues, value)) throw versionNeeded()
   const named = issues.map((i) => (i.path === '' ? i.message : `${i.path}: ${i.message}`)).join('; ')
   throw new UserError('invalid', `The ${NAMES[part]} cannot be used. ${named}.`, { issues })
 }
+
+/** A write that does not say which version it was made on would overwrite what it never saw. */
+const lacksVersion = (issues: Issue[], value: unknown) =>
+  issues.some(({ path }) => path === 'version') && (value as { version?: unknown } | undefined)?.version === undefined
+
+const versionNeeded = () =>
+  new UserError('version_needed', 'The write must name the version it was made on. Nothing was changed. Load it again first.')

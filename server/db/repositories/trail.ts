@@ -44,3 +44,11 @@ export async function listTrail(db: Db, options: { before: number | null; limit:
     [options.before, options.limit],
   )
 }
+
+/** Who last did something to it; null when nobody has. */
+export async function findLastActor(db: Db, subjectId: string): Promise<string | null> {
+  const [row] = await db.query<{ who: string }[]>('SELECT who FROM trail WHERE subject_id = $1 ORDER BY id DESC LIMIT 1', [
+    subjectId,
+  ])
+  return row?.who ?? null
+}
