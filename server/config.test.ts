@@ -20,6 +20,10 @@ describe('reading the settings', () => {
     for (const name of ['DATABASE_URL', 'PORT', 'SESSION_SECRET', 'LOG_LEVEL', 'S3_ACCESS_KEY_ID']) expect(read).toThrow(name)
   })
 
+  it('says what a number must be', () => {
+    expect(() => readSettings({ ...least, PORT: '70000' })).toThrow('PORT must be a whole number from 0 to 65535')
+  })
+
   it('says that a variable is missing rather than wrong', () => {
     expect(() => readSettings({ SESSION_SECRET: least.SESSION_SECRET })).toThrow('DATABASE_URL is missing')
   })

@@ -41,11 +41,12 @@ async function start(own: StartSettings): Promise<void> {
   stops.add(takeFolder(own.DATA_DIR))
   const secrets = keepSecrets(join(own.DATA_DIR, 'secrets.json'))
   const port = await choosePort(own.PORT)
-  const known = { ...defaults(own.DATA_DIR, port, secrets.session), ...present(process.env), PORT: String(port) }
-  // Bad settings are named before anything is installed or started.
-  readSettings({ DATABASE_URL: 'postgresql://private', ...known })
-
-  const webDir = readSettings({ DATABASE_URL: 'postgresql://private', ...known }).webDir
+  const known: Record<string, string | undefined> = {
+    ...defaults(own.DATA_DIR, port, secrets.session),
+    ...present(process.env),
+    PORT: String(port),
+  }
+  const webDir = known.WEB_DIR ?? join(own.DATA_DIR, 'web')
   const built = webIsBuilt(webDir) ? Promise.resolve() : step('Building the web app', () => buildWeb(webDir))
   built.catch(() => undefined)
   const database = await openDatabase(own, secrets)
@@ -60,7 +61,7 @@ async function start(own: StartSettings): Promise<void> {
   const season = await beginSeason(database, settings, { dataFolder: own.DATA_DIR, empty: own.empty })
   await built
   await runProcesses(own.DATA_DIR, env, settings)
-  await greet({ settings, season, dataFolder: own.DATA_DIR, databaseUrl: database.appUrl })
+  await greet(settings, season, own.DATA_DIR)
   say(`Started in ${seconds(begin)}. Ctrl-C stops everything.`)
 }
 
