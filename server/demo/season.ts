@@ -1,0 +1,61 @@
+/** What the demo season planned: the runs whose sheets came in as spreadsheet rows. Runs with a photographed sheet are in samples/. */
+import { createHash } from 'node:crypto'
+import { makeSheetCode } from '../../shared/layouts/sheet-code.ts'
+
+/** Numbers of the registers. */
+export interface DemoRun {
+  heldOn: string
+  place: number
+  demonstrator: number
+  tractor: number
+  implement: number
+  kit: number
+  plot: string
+  run: number
+  sheetCode: string
+}
+
+export const RUNS_A_TRIAL = 3
+
+/** Two tractors with the same implement on one day: what a comparison later needs. */
+const DAYS: ReadonlyArray<
+  readonly [
+    heldOn: string,
+    place: number,
+    demonstrator: number,
+    tractors: readonly [number, number],
+    implement: number,
+    kit: number,
+  ]
+> = [
+  ['2026-09-16', 1, 101, [11, 14], 21, 31],
+  ['2026-09-23', 2, 102, [12, 15], 22, 32],
+  ['2026-09-30', 4, 103, [11, 14], 23, 33],
+  ['2026-10-07', 5, 104, [12, 15], 24, 31],
+  ['2026-10-14', 3, 101, [13, 16], 22, 31],
+  ['2026-10-22', 6, 103, [13, 16], 25, 33],
+  ['2026-11-04', 2, 102, [11, 14], 21, 32],
+  ['2026-11-12', 5, 104, [13, 16], 26, 32],
+]
+
+/** The same code on every machine, with its check character. */
+function codeOf(seed: string): string {
+  let taken = 0
+  return makeSheetCode((below) => createHash('sha256').update(`demo season|${seed}|${taken++}`).digest().readUInt32BE() % below)
+}
+
+export const ROW_RUNS: readonly DemoRun[] = DAYS.flatMap(([heldOn, place, demonstrator, tractors, implement, kit]) =>
+  tractors.flatMap((tractor, t) =>
+    Array.from({ length: RUNS_A_TRIAL }, (_, i) => ({
+      heldOn,
+      place,
+      demonstrator,
+      tractor,
+      implement,
+      kit,
+      plot: t === 0 ? 'A, by the road' : 'B, by the ditch',
+      run: i + 1,
+      sheetCode: codeOf(`${heldOn}|${tractor}|${i + 1}`),
+    })),
+  ),
+)
