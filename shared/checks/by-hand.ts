@@ -1,4 +1,5 @@
 /** Arithmetic done by hand in the field, done again. */
+import { above } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
 import { figure, rough } from './text.ts'
@@ -18,10 +19,10 @@ const comparedOf = (w: Written) => ({ written: w.written, computed: w.computed, 
 /** Off from the recomputed figure: doubt or, when far off and no unit explains it, stop. */
 function offBy(ctx: CheckContext, w: Written, doubt_pct: number, stop_pct: number | null): Found[] {
   const off_pct = (100 * Math.abs(w.written - w.computed)) / Math.abs(w.computed)
-  if (off_pct <= doubt_pct + 1e-9) return []
+  if (!above(off_pct, doubt_pct)) return []
   const slip = slipOf(ctx, w)
   if (slip) return [found('doubt', w.cells, `${sides(ctx, w)}: ${slip.words}`, { ...comparedOf(w), explained_by: 'Q15' })]
-  const far = stop_pct !== null && off_pct > stop_pct
+  const far = stop_pct !== null && above(off_pct, stop_pct)
   return [found(far ? 'stop' : 'doubt', w.cells, `${sides(ctx, w)}: ${rough(off_pct)} % apart.`, comparedOf(w))]
 }
 
@@ -44,7 +45,7 @@ function meanByHand(key: string): Rule['check'] {
     const w = writtenFigure(ctx, key)
     if (w === null) return []
     const half = 0.5 * 10 ** -(ctx.cell(key).decimals ?? 0)
-    if (Math.abs(w.written - w.computed) <= half + 1e-9) return []
+    if (!above(Math.abs(w.written - w.computed), half)) return []
     return [found('doubt', w.cells, `${sides(ctx, w)}.`, { ...comparedOf(w), allowed: half })]
   }
 }

@@ -1,5 +1,7 @@
 /** Fuel figures against the engine and the trade. */
+
 import { standardUncertainty } from '../trial/measure.ts'
+import { above, below, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
 import { figure, rough } from './text.ts'
@@ -38,8 +40,8 @@ const q11: Rule = {
     const { fuel } = ctx
     if (!fuel.known || fuel.value <= 0) return []
     const U_pct = (200 * standardUncertainty(fuel.parts)) / fuel.value
-    if (U_pct <= ctx.limit('fuel_u_doubt_pct')) return []
-    const severity = U_pct > ctx.limit('fuel_u_stop_pct') ? 'stop' : 'doubt'
+    if (!above(U_pct, ctx.limit('fuel_u_doubt_pct'))) return []
+    const severity = above(U_pct, ctx.limit('fuel_u_stop_pct')) ? 'stop' : 'doubt'
     return [
       found(severity, ctx.fuelCells, `${fuel.value} mL burned is known to ± ${rough(U_pct)} %: too little for this jar.`, {
         fuel_ml: fuel.value,
@@ -68,8 +70,8 @@ const q29: Rule = {
     const [rate, power] = [ctx.results.l_per_h.value, ptoPower(ctx)]
     if (rate === null || power === null) return []
     const most = ctx.limit('fuel_cap_l_kwh') * power
-    if (rate <= most) return []
-    const severity = rate > ctx.limit('fuel_cap_stop_l_kwh') * power ? 'stop' : 'doubt'
+    if (!above(rate, most)) return []
+    const severity = above(rate, ctx.limit('fuel_cap_stop_l_kwh') * power) ? 'stop' : 'doubt'
     const returns = ['pump_return_in_jar', 'leakoff_return_in_jar'].filter((key) => ctx.readings[key] !== undefined)
     return [
       found(
@@ -93,7 +95,7 @@ const q30: Rule = {
     const [rate, power] = [ctx.results.l_per_h.value, ptoPower(ctx)]
     if (rate === null || power === null) return []
     const least = ctx.limit('fuel_floor_l_kwh') * power
-    if (rate >= least) return []
+    if (!below(rate, least)) return []
     const cock = ctx.readings.tank_cock_shut === undefined ? [] : ['tank_cock_shut']
     return [
       found(
@@ -124,9 +126,9 @@ const q32: Rule = {
     const ratio = value / usual
     const compared = { l_per_ha: value, usual_l_per_ha: usual }
     const told = `${figure(value, 1)} L/ha; ${figure(usual, 1)} is usual for this operation.`
-    if (ratio < ctx.limit('band_doubt_low') || ratio > ctx.limit('band_doubt_high'))
+    if (outside(ratio, ctx.limit('band_doubt_low'), ctx.limit('band_doubt_high')))
       return [found('doubt', ctx.results.l_per_ha.from, told, compared)]
-    if (ratio < ctx.limit('band_note_low') || ratio > ctx.limit('band_note_high'))
+    if (outside(ratio, ctx.limit('band_note_low'), ctx.limit('band_note_high')))
       return [found('note', ctx.results.l_per_ha.from, told, compared)]
     return []
   },

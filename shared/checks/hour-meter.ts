@@ -1,4 +1,5 @@
 /** The tractor's own clock against the watch, and against its last reading. */
+import { above, outside } from './compare.ts'
 import { found, type Rule } from './rule.ts'
 import { figure } from './text.ts'
 
@@ -24,10 +25,10 @@ const q18: Rule = {
     if (!ctx.times) return []
     const clock = ctx.times.fuel_min / 60
     const mechanical = ctx.facts.hourMeterKind === 'mechanical'
-    const outside = mechanical
-      ? run / clock < ctx.limit('hour_meter_mechanical_low') || run / clock > ctx.limit('hour_meter_mechanical_high')
-      : Math.abs(run - clock) > ctx.limit('hour_meter_base_h') + ctx.limit('hour_meter_share') * clock
-    if (!outside) return []
+    const differs = mechanical
+      ? outside(run / clock, ctx.limit('hour_meter_mechanical_low'), ctx.limit('hour_meter_mechanical_high'))
+      : above(Math.abs(run - clock), ctx.limit('hour_meter_base_h') + ctx.limit('hour_meter_share') * clock)
+    if (!differs) return []
     return [
       found(
         'doubt',

@@ -1,6 +1,8 @@
 /** Speed, slip and engine speed. */
+
 import type { Operation } from '../trial/facts.ts'
 import { variation_pct } from '../trial/stats.ts'
+import { above, below, outside } from './compare.ts'
 import { type Found, found, type Rule } from './rule.ts'
 import { figure, rough } from './text.ts'
 
@@ -19,13 +21,13 @@ const q20: Rule = {
       found(severity, slip.from, `Slip ${figure(s, 1)} %: ${why}`, { slip_pct: s }),
     ]
     const most = ctx.limit(ctx.facts.drive === '4WD' ? 'slip_doubt_4wd_pct' : 'slip_doubt_2wd_pct')
-    if (s < ctx.limit('slip_stop_low_pct')) return told('stop', 'a wheel under pull cannot gain way. Ways changed over?')
-    if (s > ctx.limit('slip_stop_high_pct'))
+    if (below(s, ctx.limit('slip_stop_low_pct'))) return told('stop', 'a wheel under pull cannot gain way. Ways changed over?')
+    if (above(s, ctx.limit('slip_stop_high_pct')))
       return told('stop', `over ${ctx.limit('slip_stop_high_pct')} % no work is done. A way misread?`)
-    if (s < 0) return told('doubt', 'under pull the way is shorter, not longer.')
-    if (s > most) return told('doubt', `over ${most} % is much for ${ctx.facts.drive ?? '2WD'}.`)
-    if (s < ctx.limit('slip_note_low_pct')) return told('note', 'hardly any pull.')
-    return s > ctx.limit('slip_note_high_pct')
+    if (below(s, 0)) return told('doubt', 'under pull the way is shorter, not longer.')
+    if (above(s, most)) return told('doubt', `over ${most} % is much for ${ctx.facts.drive ?? '2WD'}.`)
+    if (below(s, ctx.limit('slip_note_low_pct'))) return told('note', 'hardly any pull.')
+    return above(s, ctx.limit('slip_note_high_pct'))
       ? told('note', `over ${ctx.limit('slip_note_high_pct')} % is more than good work asks for.`)
       : []
   },
@@ -45,7 +47,7 @@ const q22: Rule = {
     const ways = ctx.all('dist_noload_m')
     if (turns === null || turns <= 0 || round === null || ways.length === 0) return []
     const each = meanOf(ways.map((w) => w.value)) / turns
-    if ((100 * Math.abs(each - round)) / round <= ctx.limit('roll_match_pct')) return []
+    if (!above((100 * Math.abs(each - round)) / round, ctx.limit('roll_match_pct'))) return []
     return [
       found(
         'doubt',
@@ -73,7 +75,7 @@ const q24: Rule = {
     const free = (geared * rpm) / ratedRpm
     const expected = free * (1 - (ctx.results.slip_pct.value ?? 0) / 100)
     const off = Math.abs(speed.value - expected) / expected
-    if (off <= ctx.limit('gear_speed_pct') / 100 && speed.value <= free * ctx.limit('no_slip_speed')) return []
+    if (!above(off, ctx.limit('gear_speed_pct') / 100) && !above(speed.value, free * ctx.limit('no_slip_speed'))) return []
     const cells = [...speed.from, 'rpm_load', ...['gear_range', 'gear'].filter((key) => ctx.readings[key] !== undefined)]
     return [
       found('doubt', cells, `${figure(speed.value)} km/h by the pegs, ${figure(expected)} km/h by gear, engine speed and slip.`, {
@@ -111,15 +113,15 @@ const q25: Rule = {
         high_km_h: high,
       }),
     ]
-    if (v < ctx.limit('speed_doubt_low_kmh') || v > ctx.limit('speed_doubt_high_kmh'))
+    if (outside(v, ctx.limit('speed_doubt_low_kmh'), ctx.limit('speed_doubt_high_kmh')))
       return told('doubt', ctx.limit('speed_doubt_low_kmh'), ctx.limit('speed_doubt_high_kmh'))
-    if (v < ctx.limit('speed_low_kmh') || v > ctx.limit('speed_high_kmh'))
+    if (outside(v, ctx.limit('speed_low_kmh'), ctx.limit('speed_high_kmh')))
       return told('note', ctx.limit('speed_low_kmh'), ctx.limit('speed_high_kmh'))
     const typical = ctx.facts.operation ? TYPICAL_KMH[ctx.facts.operation] : undefined
     if (!typical) return []
     const share = ctx.limit('speed_band_share')
     const [low, high] = [typical[0] * (1 - share), typical[1] * (1 + share)]
-    return v < low || v > high ? told('note', low, high) : []
+    return outside(v, low, high) ? told('note', low, high) : []
   },
 }
 
@@ -137,8 +139,8 @@ const q26: Rule = {
     const times = runs.map((r) => r.value)
     const cv = variation_pct(times)
     const out: Found[] = []
-    if (cv !== null && cv > ctx.limit('timed_cv_note_pct')) {
-      const severity = cv > ctx.limit('timed_cv_doubt_pct') ? 'doubt' : 'note'
+    if (cv !== null && above(cv, ctx.limit('timed_cv_note_pct'))) {
+      const severity = above(cv, ctx.limit('timed_cv_doubt_pct')) ? 'doubt' : 'note'
       out.push(found(severity, keys, `The times ${times.join(', ')} s lie ${rough(cv)} % apart.`, { cv_pct: cv }))
     }
     if (runs.length < 3)
@@ -166,7 +168,7 @@ const q53: Rule = {
         out.push(
           found('doubt', ['rpm_noload', 'rpm_load'], `${loaded} r/min in work, ${free} without load: changed over?`, compared),
         )
-      else if (droop > ctx.limit('droop_pct'))
+      else if (above(droop, ctx.limit('droop_pct')))
         out.push(
           found(
             'doubt',
@@ -177,7 +179,7 @@ const q53: Rule = {
         )
     }
     const off = pto === null ? 0 : Math.min(Math.abs(pto - 540) / 540, Math.abs(pto - 1000) / 1000)
-    if (pto !== null && 100 * off > ctx.limit('pto_rpm_pct'))
+    if (pto !== null && above(100 * off, ctx.limit('pto_rpm_pct')))
       out.push(found('doubt', ['pto_rpm'], `PTO ${pto} r/min is neither 540 nor 1000.`, { pto_rpm: pto }))
     return out
   },

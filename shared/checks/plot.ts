@@ -1,6 +1,8 @@
 /** The plot against itself, its passes, and the rate of work. */
+
 import { quadrilateralByAc, quadrilateralByBd, smallestAngle_deg, triangleArea } from '../trial/area.ts'
 import { metres } from '../trial/quantity.ts'
+import { above, below } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
 import { figure } from './text.ts'
@@ -22,9 +24,9 @@ const q35: Rule = {
         tfc_ha_h: ctx.results.tfc_ha_h.value ?? 0,
       }),
     ]
-    if (fe > 100) return told('stop', 'area, time, speed or rated width cannot all be right.')
-    if (fe > ctx.limit('efficiency_doubt_pct')) return told('doubt', 'hardly a turn in it.')
-    return fe < ctx.limit('efficiency_note_pct') ? told('note', 'small plots with short runs reach 50 to 80 %.') : []
+    if (above(fe, 100)) return told('stop', 'area, time, speed or rated width cannot all be right.')
+    if (above(fe, ctx.limit('efficiency_doubt_pct'))) return told('doubt', 'hardly a turn in it.')
+    return below(fe, ctx.limit('efficiency_note_pct')) ? told('note', 'small plots with short runs reach 50 to 80 %.') : []
   },
 }
 
@@ -41,10 +43,10 @@ const q36: Rule = {
     if (!area.known || passes === null || width.value === null || pass_m === null || shape === 'strips') return []
     const swath = passes * width.value * pass_m
     const off = (100 * Math.abs(swath - area.value)) / area.value
-    if (off <= ctx.limit('swath_note_pct')) return []
+    if (!above(off, ctx.limit('swath_note_pct'))) return []
     return [
       found(
-        off > ctx.limit('swath_doubt_pct') ? 'doubt' : 'note',
+        above(off, ctx.limit('swath_doubt_pct')) ? 'doubt' : 'note',
         ['pass_count', ...width.from, ...area.cells],
         `${passes} passes of ${figure(width.value, 3)} m over ${figure(pass_m, 1)} m make ${figure(swath, 0)} m², the sides ${figure(area.value, 0)} m²: ${figure(off, 0)} % apart.`,
         { passes_m2: swath, sides_m2: area.value },
@@ -109,7 +111,7 @@ const q37: Rule = {
 function thin(ctx: CheckContext, corners: Corner[]): Found[] {
   return corners.flatMap(({ keys, lengths: [a, b, c] }) => {
     const angle = smallestAngle_deg(metres(a), metres(b), metres(c))
-    if (angle === null || angle >= ctx.limit('thin_angle_deg')) return []
+    if (angle === null || !below(angle, ctx.limit('thin_angle_deg'))) return []
     return [
       found(
         'note',
@@ -129,7 +131,7 @@ function diagonals(ctx: CheckContext): Found[] {
   if (ctx.plot.shape === 'rectangle') {
     const square = Math.hypot(ab, bc)
     return [['diag_ac_m', ac] as const, ['diag_bd_m', bd] as const].flatMap(([key, d]) => {
-      if (d === null || (100 * Math.abs(d - square)) / square <= most) return []
+      if (d === null || !above((100 * Math.abs(d - square)) / square, most)) return []
       return [
         found(
           'doubt',
@@ -145,7 +147,7 @@ function diagonals(ctx: CheckContext): Found[] {
   const [byAc, byBd] = [quadrilateralByAc(sides, metres(ac)), quadrilateralByBd(sides, metres(bd))]
   if (byAc === null || byBd === null) return []
   const off = (200 * Math.abs(byAc - byBd)) / (byAc + byBd)
-  if (off <= most) return []
+  if (!above(off, most)) return []
   return [
     found(
       'doubt',

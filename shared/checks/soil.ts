@@ -1,5 +1,7 @@
 /** Depth, width and soil: what the tool left behind. */
+
 import { median, medianDeviation, variation_pct } from '../trial/stats.ts'
+import { above, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import type { LimitName } from './limits.ts'
 import { type Found, found, type Rule } from './rule.ts'
@@ -22,8 +24,8 @@ const q23: Rule = {
       ctx.limit(plough ? 'plough_width_low' : 'width_low'),
       ctx.limit(plough ? 'plough_width_high' : 'width_high'),
     ]
-    if (ratio >= low && ratio <= high) return []
-    const severity = ratio > ctx.limit('width_stop_high') || ratio < ctx.limit('width_stop_low') ? 'stop' : 'doubt'
+    if (!outside(ratio, low, high)) return []
+    const severity = outside(ratio, ctx.limit('width_stop_low'), ctx.limit('width_stop_high')) ? 'stop' : 'doubt'
     const feet = Math.abs(ratio * 0.3048 - 1) < 0.15 ? ' Feet for metres?' : ''
     return [
       found(
@@ -49,17 +51,18 @@ const q41: Rule = {
     const values = depths.map((d) => d.value)
     const cv = variation_pct(values) ?? 0
     const out: Found[] = []
-    if (cv > ctx.limit('depth_cv_note_pct'))
+    if (above(cv, ctx.limit('depth_cv_note_pct')))
       out.push(
         found(
-          cv > ctx.limit('depth_cv_doubt_pct') ? 'doubt' : 'note',
+          above(cv, ctx.limit('depth_cv_doubt_pct')) ? 'doubt' : 'note',
           depths.map((d) => d.key),
           `The depths spread by ${rough(cv)} % of their mean.`,
           { cv_pct: cv },
         ),
       )
     const [middle, deviation] = [median(values), medianDeviation(values)]
-    const wild = deviation === 0 ? [] : depths.filter((d) => Math.abs(d.value - middle) > ctx.limit('depth_wild') * deviation)
+    const wild =
+      deviation === 0 ? [] : depths.filter((d) => above(Math.abs(d.value - middle), ctx.limit('depth_wild') * deviation))
     return [
       ...out,
       ...wild.map((d) =>
@@ -170,7 +173,7 @@ function moisture(ctx: CheckContext, n: number): Found[] {
     return [found('stop', keys, `Can ${can} g, dry ${dry} g, wet ${wet} g: each must weigh more than the one before.`, compared)]
   const water_pct = (100 * (wet - dry)) / (dry - can)
   const out: Found[] = []
-  if (water_pct < ctx.limit('moisture_low_pct') || water_pct > ctx.limit('moisture_high_pct'))
+  if (outside(water_pct, ctx.limit('moisture_low_pct'), ctx.limit('moisture_high_pct')))
     out.push(
       found(
         'doubt',

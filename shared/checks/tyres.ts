@@ -1,5 +1,7 @@
 /** Tyre pressures: left against right, and against what tyres carry. */
+
 import { convert, quantity } from '../trial/quantity.ts'
+import { above, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
 import { figure } from './text.ts'
@@ -28,8 +30,8 @@ const q27: Rule = {
       const [l, r] = [ctx.number(left), ctx.number(right)]
       if (l === null || r === null || l + r <= 0) return []
       const off = (200 * Math.abs(l - r)) / (l + r)
-      if (off <= ctx.limit('tyre_pair_doubt_pct')) return []
-      const unsafe = off > ctx.limit('tyre_pair_unsafe_pct')
+      if (!above(off, ctx.limit('tyre_pair_doubt_pct'))) return []
+      const unsafe = above(off, ctx.limit('tyre_pair_unsafe_pct'))
       const text = `Tyres ${name}: ${l} left, ${r} right${unitWords(ctx)}, ${figure(off, 0)} % apart.${unsafe ? ' Do not drive on: check both cold, by the load table of the maker.' : ''}`
       return [found('doubt', [left, right], text, { [left]: l, [right]: r, ...(unsafe ? { safety: 'tyres' } : {}) })]
     }),
@@ -67,7 +69,7 @@ const q28: Rule = {
         const [low, high] = usual(ctx, axle.name)
         const compared = { [key]: value, kpa, low_kpa: low, high_kpa: high }
         const told = `${ctx.label(key)} ${value}${unitWords(ctx)}${unit === 'kPa' ? '' : ` (${figure(kpa, 0)} kPa)`}`
-        if (kpa < HARD_KPA[0] || kpa > HARD_KPA[1])
+        if (outside(kpa, HARD_KPA[0], HARD_KPA[1]))
           return [
             found(
               'stop',
@@ -76,7 +78,7 @@ const q28: Rule = {
               compared,
             ),
           ]
-        return kpa < low || kpa > high
+        return outside(kpa, low, high)
           ? [found('doubt', [key], `${told}; ${figure(low, 0)} to ${figure(high, 0)} kPa is usual there.`, compared)]
           : []
       }),
