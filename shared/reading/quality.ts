@@ -7,6 +7,8 @@ import { type PaperLevel, paperAt } from './pixels/paper.ts'
 
 /** A page with less of its fields found may be set wrongly as a whole. */
 export const LEAST_FOUND = 0.95
+/** Combs that look no better in their places than one box to the side may all be one box off. */
+const LEAST_AHEAD = 0.15
 /** A digit is 4 to 6 mm high: under this it is a blot. Pixels a millimetre. */
 export const LEAST_PX_PER_MM = 3.2
 /** Paper darker than this is noise and little else (0 to 255). */
@@ -26,7 +28,7 @@ export interface PlacedPage {
 
 /** Null when the page may be read. */
 export function judgePlacing({ picture, scale, alignment, corners, pageCorners }: PlacedPage): TakeAgain | null {
-  if (alignment.foundShare >= LEAST_FOUND) return null
+  if (alignment.foundShare >= LEAST_FOUND && alignment.ahead >= LEAST_AHEAD) return null
   const missing = [0, 1, 2, 3].filter((c) => !corners.includes(c))
   const lost = alignment.parts.filter((p) => !p.found)
   const levels = alignment.parts.map((p) => {

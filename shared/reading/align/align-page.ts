@@ -9,9 +9,12 @@ import type { FieldMap } from '../geometry/page-map.ts'
 import { type Anchor, type Displacement, displacementAt } from '../geometry/residual-field.ts'
 import type { Point } from '../pixels/grey.ts'
 import { type FieldPart, fieldParts } from './field-lines.ts'
+import { frameContrast } from './lines.ts'
 import { fieldPatch, measureParts, type PartFit } from './measure-part.ts'
 import { measureSquare } from './measure-square.ts'
+import { measureTickPlace } from './measure-tick.ts'
 import type { Picture } from './patch.ts'
+import { traceRules } from './trace-rules.ts'
 
 export interface PlacedPart {
   part: FieldPart
@@ -34,25 +37,37 @@ export interface Alignment {
   edge_mm: number | null
   /** How dark solid print is, where squares were found. */
   blacks: BlackMark[]
+  /** How much more alike combs are in their places than one box to the side (median): 0 where nothing tells them apart. */
+  ahead: number
 }
 
 /** A field's lines must be this alike to be believed: frames are pale, so noise lowers it, and nothing else on a page repeats them. */
-const LEAST_SUPPORT = { comb: 0.55, tick: 0.5 } as const
-/** How much more alike a comb must be in its place than one box to the side. */
-const LEAST_AHEAD = 0.08
+const LEAST_SUPPORT = { comb: 0.4, tick: 0.33 } as const
+/** A comb must be at least as alike in its place as one box to the side; that all of a page are surely so is judged together. */
+const LEAST_AHEAD = 0
 /** How far from its neighbours' word a field is looked for, mm: more, the farther they are. */
 const combReach = (distance_mm: number) => Math.min(2.4, 0.7 + 0.05 * distance_mm)
 const squareReach = (distance_mm: number) => Math.min(7, 1.2 + 0.075 * distance_mm)
-const TICK_REACH_MM = 0.7
+const TICK_REACH_MM = 0.9
+/** Fields refused or not found are looked for again, from neighbours that are surer by then. */
+const SECOND_LOOKS = 2
 /** Disagreement with the neighbours that is refused, mm: at least this, or some times the page's usual one. */
 const DISAGREE_MM = 0.55
+/** A field whose own lines leave no doubt may differ so far, mm: paper folds; it is still far from the next box. */
+const DISAGREE_PLAIN_MM = 1.8
+const PLAIN = { support: 0.65, ahead: 0.25 } as const
 
 interface Mark extends Anchor {
   key: string
+  /** Its own lines leave no doubt where it is. */
+  plain?: boolean
+  spread_mm?: number
+  ahead?: number
 }
 
 const scaleHomography = (h: Homography, scale: number): Homography => multiply([scale, 0, 0, 0, scale, 0, 0, 0, 1], h)
 
+const median = (values: number[]) => values.sort((a, b) => a - b)[values.length >> 1] ?? 0
 const distance = (a: Point, b: Point) => Math.hypot(a.x - b.x, a.y - b.y)
 const nearest = (anchors: readonly Anchor[], p: Point) => anchors.reduce((least, a) => Math.min(least, distance(a, p)), 1e9)
 
@@ -96,6 +111,10 @@ const isGood = (fit: PartFit, tick: boolean): boolean => {
   return fit.supportX >= least && fit.supportY >= least && (tick || fit.ahead >= LEAST_AHEAD)
 }
 
+interface FramedPicture extends Picture {
+  frameContrast: number
+}
+
 interface Placing {
   parts: FieldPart[]
   tick: boolean
@@ -112,18 +131,28 @@ function markOf(part: FieldPart, map: FieldMap, fit: PartFit, weight: number): M
   const d = map.displacement
   const dx = d.dx + d.dxx * (u + fit.dx) + d.dxy * (v + fit.dy) + fit.dx
   const dy = d.dy + d.dyx * (u + fit.dx) + d.dyy * (v + fit.dy) + fit.dy
-  return { key: anchorKey(part), x: center.x, y: center.y, dx, dy, weight }
+  const plain = Math.min(fit.supportX, fit.supportY) >= PLAIN.support && fit.ahead >= PLAIN.ahead
+  const { spread_mm, ahead } = fit
+  return { key: anchorKey(part), x: center.x, y: center.y, dx, dy, weight, plain, spread_mm, ahead }
 }
 
-function place(picture: Picture, homography: Homography, anchors: readonly Mark[], placing: Placing, reach_mm: number): Mark[] {
+function place(
+  picture: FramedPicture,
+  homography: Homography,
+  anchors: readonly Mark[],
+  placing: Placing,
+  reach_mm: number,
+): Mark[] {
   const own = new Set(placing.parts.map(anchorKey))
   const map = {
     homography,
     center: placing.center,
     displacement: displacementAt(anchors, placing.center, (a) => own.has((a as Mark).key)),
   }
-  const patch = fieldPatch(picture, map, placing.parts[0]!.field, reach_mm)
-  return measureParts(patch, placing.parts, reach_mm).flatMap((fit, i) =>
+  const fits = placing.tick
+    ? placing.parts.map((part) => measureTickPlace(picture, map, part, reach_mm))
+    : measureParts(fieldPatch(picture, map, placing.parts[0]!.field, reach_mm), placing.parts, reach_mm, picture.frameContrast)
+  return fits.flatMap((fit, i) =>
     isGood(fit, placing.tick) ? [markOf(placing.parts[i]!, map, fit, placing.tick ? 0.4 : 1)] : [],
   )
 }
@@ -142,21 +171,22 @@ function disagreement(anchors: readonly Mark[], mark: Mark): number {
 }
 
 /** Takes out the worst anchor again and again while it disagrees with its neighbours. */
-function refuseOutliers(anchors: Mark[]): { anchors: Mark[]; refused: Mark[] } {
+function refuseOutliers(anchors: Mark[]): Mark[] {
   let kept = anchors
-  const refused: Mark[] = []
   for (let round = 0; round < 6; round++) {
-    const off = kept.map((mark) => (mark.key === 'code' ? 0 : disagreement(kept, mark)))
+    const off = kept.map((mark) => (mark.key === 'code' || mark.key === 'rule' ? 0 : disagreement(kept, mark)))
     const usual = [...off].sort((a, b) => a - b)[kept.length >> 1] ?? 0
     const limit = Math.max(DISAGREE_MM, 4 * usual)
     const worst = new Set(
-      kept.filter((mark, i) => off[i]! > limit && !kept.some((o, j) => off[j]! > off[i]! && distance(o, mark) < 22)),
+      kept.filter((mark, i) => {
+        if (off[i]! <= (mark.plain ? DISAGREE_PLAIN_MM : limit)) return false
+        return !kept.some((o, j) => off[j]! > off[i]! && distance(o, mark) < 22)
+      }),
     )
     if (worst.size === 0) break
-    refused.push(...worst)
     kept = kept.filter((mark) => !worst.has(mark))
   }
-  return { anchors: kept, refused }
+  return kept
 }
 
 function placings(layout: Layout, planned: boolean): Placing[] {
@@ -174,7 +204,7 @@ function placings(layout: Layout, planned: boolean): Placing[] {
   })
 }
 
-function placeOutwards(picture: Picture, homography: Homography, anchors: Mark[], waiting: Placing[]): void {
+function placeOutwards(picture: FramedPicture, homography: Homography, anchors: Mark[], waiting: Placing[]): void {
   const left = [...waiting]
   const near = new Map(left.map((p) => [p, nearest(anchors, p.center)]))
   while (left.length > 0) {
@@ -219,27 +249,32 @@ export function alignPage(
       homography = better
     }
   }
+  const edge_mm = edges.length === 0 ? null : edges.sort((a, b) => a - b)[edges.length >> 1]!
+  const framed = { ...picture, frameContrast: frameContrast(edge_mm) }
+  anchors.push(...traceRules(picture, layout, homography, anchors).map((a) => ({ ...a, key: 'rule' })))
   const all = placings(layout, planned)
   placeOutwards(
-    picture,
+    framed,
     homography,
     anchors,
     all.filter((p) => !p.tick),
   )
-  anchors = refuseOutliers(anchors).anchors
-  const missing = (p: Placing) => p.parts.some((part) => !anchors.some((a) => a.key === anchorKey(part)))
-  for (const placing of all.filter((p) => !p.tick && missing(p))) {
-    const keys = new Set(placing.parts.map(anchorKey))
-    const marks = place(picture, homography, anchors, placing, 0.8)
-    anchors = [...anchors.filter((a) => !keys.has(a.key)), ...marks]
+  const lacks = (p: Placing) => p.parts.some((part) => !anchors.some((a) => a.key === anchorKey(part)))
+  for (let round = 0; round < SECOND_LOOKS; round++) {
+    anchors = refuseOutliers(anchors)
+    const again = all.filter((p) => !p.tick && lacks(p))
+    if (again.length === 0) break
+    const keys = new Set(again.flatMap((p) => p.parts.map(anchorKey)))
+    anchors = anchors.filter((a) => !keys.has(a.key))
+    placeOutwards(framed, homography, anchors, again)
   }
   placeOutwards(
-    picture,
+    framed,
     homography,
     anchors,
     all.filter((p) => p.tick),
   )
-  anchors = refuseOutliers(anchors).anchors
+  anchors = refuseOutliers(anchors)
   const byKey = new Map(anchors.map((a) => [a.key, a]))
   const parts = all
     .flatMap((p) => p.parts)
@@ -253,15 +288,18 @@ export function alignPage(
         center,
         displacement: { ...displacement, dx: mark.dx, dy: mark.dy },
         found: true,
-        fit_mm: disagreement(anchors, mark),
+        fit_mm: mark.plain ? Math.max(0, mark.spread_mm ?? 0) : disagreement(anchors, mark),
       }
     })
   return {
     homography: scaleHomography(homography, 1 / scale),
-    anchors: anchors.map(({ x, y, dx, dy, weight }) => ({ x, y, dx, dy, weight })),
+    anchors: anchors.map(({ x, y, dx, dy, weight, onlyDown }) =>
+      onlyDown ? { x, y, dx, dy, weight, onlyDown } : { x, y, dx, dy, weight },
+    ),
     parts,
     foundShare: parts.length === 0 ? 0 : parts.filter((p) => p.found).length / parts.length,
-    edge_mm: edges.length === 0 ? null : edges.sort((a, b) => a - b)[edges.length >> 1]!,
+    edge_mm,
     blacks,
+    ahead: median(anchors.flatMap((a) => (a.ahead === undefined || a.ahead === 1 ? [] : [a.ahead]))),
   }
 }

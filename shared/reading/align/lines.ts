@@ -14,10 +14,18 @@ export interface Profile {
   /** Left end of the first sample, mm. */
   start_mm: number
   step_mm: number
+  /** Contrast that a pale frame keeps in this picture: a vote's greatest weight. */
+  full: number
 }
 
-/** Contrast that a pale frame keeps in a sharp picture; a vote's greatest weight. */
-const FULL_VOTE = 0.13
+/**
+ * Contrast of a frame 0.22 mm wide and 0.3 dark, by how blurred the page's black edges are (20 to 80 % of the way, mm): the
+ * line's share of a Gaussian of that width. A little less than all of it is a full vote.
+ */
+export function frameContrast(edge_mm: number | null): number {
+  const sigma = Math.max(0.1, (edge_mm ?? 0.3) / 1.68)
+  return Math.max(0.03, 0.9 * 0.3 * Math.tanh((0.22 * 0.4) / sigma))
+}
 /** A dark or bright accident next to a line may not cost more than this share of a vote. */
 const AGAINST = 0.5
 /** White is looked for this far beside a line, mm. */
@@ -31,17 +39,17 @@ const at = ({ values, start_mm, step_mm }: Profile, mm: number): number => {
 }
 
 /** One line's vote for a shift: 1 for a printed frame, 0 for nothing, below 0 for a bright line between dark ones. */
-function vote(profile: Profile, line: Line, shift_mm: number): number {
+export function voteOf(profile: Profile, line: Line, shift_mm: number): number {
   const middle = (line.from + line.to) / 2 + shift_mm
   const half = (line.to - line.from) / 2 + BESIDE_MM
   const contrast = at(profile, middle) - Math.max(0, Math.min(at(profile, middle - half), at(profile, middle + half)))
   const worse = at(profile, middle) - Math.max(at(profile, middle - half), at(profile, middle + half))
-  return Math.min(1, Math.max(-AGAINST, (0.4 * contrast + 0.6 * worse) / FULL_VOTE))
+  return Math.min(1, Math.max(-AGAINST, (0.4 * contrast + 0.6 * worse) / profile.full))
 }
 
 /** The mean vote of all lines for one shift. */
 export const support = (profile: Profile, lines: readonly Line[], shift_mm: number): number =>
-  lines.reduce((sum, line) => sum + vote(profile, line, shift_mm), 0) / lines.length
+  lines.reduce((sum, line) => sum + voteOf(profile, line, shift_mm), 0) / lines.length
 
 export interface Match {
   /** Measured minus expected, mm. */
@@ -53,7 +61,7 @@ export interface Match {
 }
 
 /** Where one line is near a shift: the centre of what rises over its surroundings, or null. */
-function centre(profile: Profile, line: Line, shift_mm: number): number | null {
+export function centreOf(profile: Profile, line: Line, shift_mm: number): number | null {
   const { values, start_mm, step_mm } = profile
   const from = line.from + shift_mm - BESIDE_MM
   const to = line.to + shift_mm + BESIDE_MM
@@ -92,7 +100,7 @@ export function matchLines(profile: Profile, lines: readonly Line[], reach_mm: n
     }
   }
   const voted = lines
-    .map((line) => ({ centre: centre(profile, line, coarse), vote: vote(profile, line, coarse) }))
+    .map((line) => ({ centre: centreOf(profile, line, coarse), vote: voteOf(profile, line, coarse) }))
     .filter((l): l is { centre: number; vote: number } => l.centre !== null && l.vote > 0.25 && Math.abs(l.centre - coarse) < 0.4)
   const centres = voted.map((l) => l.centre).sort((a, b) => a - b)
   const supported = support(profile, lines, coarse)

@@ -1,6 +1,7 @@
-/** Where a field's printed lines really are: measured on profiles that writing hardly disturbs. */
+/** Where a comb's printed lines really are: measured on profiles that writing hardly disturbs. */
 import type { FieldMap } from '../geometry/page-map.ts'
 import type { FieldPart } from './field-lines.ts'
+import { matchLevel } from './level-match.ts'
 import { matchLines, type Profile, support } from './lines.ts'
 import { lineProfile, type Patch, type Picture, samplePatch } from './patch.ts'
 
@@ -26,56 +27,57 @@ const SHARE = 0.62
 const INSET_MM = 0.75
 /** A part may stand this far from where the whole field says, mm. */
 const PART_REACH_MM = 0.7
+const PART_LEVEL_REACH_MM = 0.35
 
 /** The patch of a whole field with room for the search. */
 export function fieldPatch(picture: Picture, map: FieldMap, field: FieldPart['field'], reach_mm: number): Patch {
   const side = reach_mm + 1.6
-  const above = reach_mm + 1
+  const above = reach_mm + 1.9
   const area = { x: field.x - side, y: field.y - above, width: field.width + 2 * side, height: field.height + 2 * above }
   return samplePatch(picture, map, area, STEP_MM)
 }
 
-const insideBoxes = (parts: readonly FieldPart[], shift: number) => (mm: number) =>
-  parts.some(({ boxes }) => boxes.some((box) => mm - shift > box.x + INSET_MM && mm - shift < box.x + box.width - INSET_MM))
-
-function rowsOf(patch: Patch, parts: readonly FieldPart[], shift: number): Profile {
-  const values = lineProfile(patch, 'rows', -1e9, 1e9, SHARE, CLIP, insideBoxes(parts, shift))
-  return { values, start_mm: patch.y, step_mm: patch.step_mm }
+/** Darkness by column, over the rows inside the boxes once they are shifted by `down`. */
+function columnsOf(patch: Patch, field: FieldPart['field'], down: number, full: number): Profile {
+  const values = lineProfile(patch, 'columns', field.y + down + INSET_MM, field.y + down + field.height - INSET_MM, SHARE, CLIP)
+  return { values, start_mm: patch.x, step_mm: patch.step_mm, full }
 }
 
 /**
- * Measures the parts of one field on one patch: first the whole field together, which fixes which box is which, then each part
- * within a little of it.
+ * Measures the parts of one comb on one patch: first the whole comb, which fixes which box is which, then each part within a
+ * little of it. `full`: contrast of a frame in this picture.
  */
-export function measureParts(patch: Patch, parts: readonly FieldPart[], reach_mm: number): PartFit[] {
+export function measureParts(patch: Patch, parts: readonly FieldPart[], reach_mm: number, full: number): PartFit[] {
   const first = parts[0]
   if (!first) return []
-  const { field } = first
-  const down = matchLines(rowsOf(patch, parts, 0), first.level, reach_mm)
-  const from = field.y + down.shift_mm + INSET_MM
-  const to = field.y + down.shift_mm + field.height - INSET_MM
-  const columns = {
-    values: lineProfile(patch, 'columns', from, to, SHARE, CLIP),
-    start_mm: patch.x,
-    step_mm: patch.step_mm,
-  }
+  const { field, pitch_mm } = first
+  const rough = matchLines(columnsOf(patch, field, 0, full), first.whole, reach_mm)
+  const down = matchLevel(patch, parts, rough.shift_mm, reach_mm, full)
+  const columns = columnsOf(patch, field, down.shift_mm, full)
   const whole = matchLines(columns, first.whole, reach_mm)
   const along = whole.shift_mm
-  const { pitch_mm } = first
   const beside =
     pitch_mm === null
       ? 0
       : Math.max(support(columns, first.whole, along - pitch_mm), support(columns, first.whole, along + pitch_mm))
+  const ahead = whole.support - beside
+  if (parts.length === 1) {
+    const spread_mm = Math.max(whole.spread_mm, down.spread_mm)
+    return [{ dx: along, dy: down.shift_mm, supportX: whole.support, supportY: down.support, ahead, spread_mm }]
+  }
   const near = Math.min(PART_REACH_MM, reach_mm)
+  const middle = field.x + field.width / 2
   return parts.map((part) => {
-    const x = parts.length === 1 ? whole : matchLines(columns, part.upright, near, along)
-    const y = matchLines(rowsOf(patch, [part], x.shift_mm), part.level, near, down.shift_mm)
+    const x = matchLines(columns, part.upright, near, along)
+    const own = (part.boxes[0]!.x + part.boxes.at(-1)!.x + part.boxes.at(-1)!.width) / 2 - middle
+    const around = { shift_mm: down.shift_mm + down.lean * own, lean: down.lean }
+    const y = matchLevel(patch, [part], x.shift_mm, PART_LEVEL_REACH_MM, full, around, [0])
     return {
       dx: x.shift_mm,
       dy: y.shift_mm,
       supportX: x.support,
       supportY: y.support,
-      ahead: whole.support - beside,
+      ahead,
       spread_mm: Math.max(x.spread_mm, y.spread_mm),
     }
   })

@@ -1,0 +1,153 @@
+/**
+ * How high a comb stands, and how much it leans: every box votes with its upper and lower frame, the two bars with their ends.
+ * Shift and lean are sought together, since a curled page leans and a long comb then has no sharp rows of its own.
+ */
+import { BOX } from '../../layouts/layout.ts'
+import type { FieldPart } from './field-lines.ts'
+import { centreOf, type Line, type Profile, voteOf } from './lines.ts'
+import { lineProfile, type Patch } from './patch.ts'
+
+export interface LevelMatch {
+  /** Measured minus expected at the middle of the boxes, mm. */
+  shift_mm: number
+  /** Rise along the comb, mm a mm. */
+  lean: number
+  support: number
+  spread_mm: number
+}
+
+interface Voter {
+  /** Where along the comb, from its middle, mm. */
+  along: number
+  profile: Profile
+  lines: readonly Line[]
+  edges: ReadonlyArray<{ at: number; darkBelow: boolean }>
+}
+
+/** Kept off a box's corners, where lines cross. */
+const INSET_MM = 0.75
+/** A line of a single box is seen on few samples: less than this share may be writing. */
+const SHARE = 0.6
+const CLIP = 0.42
+/** Contrast of a bar's end that is a full vote. */
+const BAR_CONTRAST = 0.3
+/** What is compared on both sides of a bar's end, mm. */
+const BAR_SIDE_MM = 0.55
+
+/** Leans beside the one that neighbours give. */
+const LEANS = [0, 0.006, -0.006, 0.012, -0.012, 0.02, -0.02, 0.03, -0.03, 0.045, -0.045, 0.06, -0.06]
+
+function boxVoters(patch: Patch, part: FieldPart, dx: number, middle: number, full: number): Voter[] {
+  return part.boxes.map((box) => ({
+    along: box.x + box.width / 2 - middle,
+    profile: {
+      values: lineProfile(patch, 'rows', box.x + dx + INSET_MM, box.x + box.width + dx - INSET_MM, SHARE, CLIP),
+      start_mm: patch.y,
+      step_mm: patch.step_mm,
+      full,
+    },
+    lines: part.level,
+    edges: [],
+  }))
+}
+
+function barVoter(patch: Patch, from: number, top: number, bottom: number, dx: number, middle: number): Voter {
+  const profile = {
+    values: lineProfile(patch, 'rows', from + dx + 0.1, from + BOX.bar + dx - 0.1, 0.5, 0.8),
+    start_mm: patch.y,
+    step_mm: patch.step_mm,
+    full: BAR_CONTRAST,
+  }
+  const edges = [
+    { at: top, darkBelow: true },
+    { at: bottom, darkBelow: false },
+  ]
+  return { along: from + BOX.bar / 2 - middle, profile, lines: [], edges }
+}
+
+function mean({ values, start_mm, step_mm }: Profile, from: number, to: number): number {
+  const first = Math.max(0, Math.round((from - start_mm) / step_mm))
+  const last = Math.min(values.length, Math.round((to - start_mm) / step_mm))
+  if (last <= first) return 0
+  let sum = 0
+  for (let i = first; i < last; i++) sum += values[i]!
+  return sum / (last - first)
+}
+
+function edgeVote(profile: Profile, at: number, darkBelow: boolean): number {
+  const below = mean(profile, at, at + BAR_SIDE_MM)
+  const above = mean(profile, at - BAR_SIDE_MM, at)
+  return Math.max(-0.5, Math.min(1, (darkBelow ? below - above : above - below) / profile.full))
+}
+
+function supportAt(voters: readonly Voter[], shift: number, lean: number): number {
+  let sum = 0
+  let count = 0
+  for (const { along, profile, lines, edges } of voters) {
+    const by = shift + lean * along
+    for (const line of lines) sum += voteOf(profile, line, by)
+    for (const edge of edges) sum += edgeVote(profile, edge.at + by, edge.darkBelow)
+    count += lines.length + edges.length
+  }
+  return count === 0 ? 0 : sum / count
+}
+
+/** `withBars`: which of the comb's bars stand beside this part. */
+export function matchLevel(
+  patch: Patch,
+  parts: readonly FieldPart[],
+  dx: number,
+  reach_mm: number,
+  full: number,
+  around: { shift_mm: number; lean: number } = { shift_mm: 0, lean: 0 },
+  leans: readonly number[] = LEANS,
+): LevelMatch {
+  const first = parts[0]!.boxes[0]!
+  const last = parts.at(-1)!.boxes.at(-1)!
+  const middle = (first.x + last.x + last.width) / 2
+  const { field } = parts[0]!
+  const voters = parts.flatMap((part) => boxVoters(patch, part, dx, middle, full))
+  if (Math.abs(first.x - field.x) < 0.1) {
+    const rise = BOX.barRise
+    voters.push(barVoter(patch, field.x - BOX.bar, field.y - rise, field.y + field.height + rise, dx, middle))
+  }
+  const end = field.x + field.width
+  if (Math.abs(last.x + last.width - end) < 0.1) voters.push(barVoter(patch, end, field.y, field.y + field.height, dx, middle))
+
+  let best = { support: -1, shift: around.shift_mm, lean: around.lean }
+  const step = patch.step_mm / 2
+  const steps = Math.ceil(reach_mm / step)
+  for (const bend of leans) {
+    const lean = around.lean + bend
+    for (let k = -steps; k <= steps; k++) {
+      const shift = around.shift_mm + k * step
+      const support = supportAt(voters, shift, lean)
+      const value = support - 0.02 * Math.abs(k * step) - Math.abs(bend)
+      if (value > best.support - 0.02 * Math.abs(best.shift - around.shift_mm) - Math.abs(best.lean - around.lean)) {
+        best = { support, shift, lean }
+      }
+    }
+  }
+  return refine(voters, best)
+}
+
+/** The median of what single lines say, about the best shift. */
+function refine(
+  voters: readonly Voter[],
+  { support, shift, lean }: { support: number; shift: number; lean: number },
+): LevelMatch {
+  const centres: number[] = []
+  for (const { along, profile, lines } of voters) {
+    for (const line of lines) {
+      const by = shift + lean * along
+      const centre = centreOf(profile, line, by)
+      if (centre !== null && voteOf(profile, line, by) > 0.25 && Math.abs(centre - by) < 0.4) centres.push(centre - by)
+    }
+  }
+  if (centres.length === 0) return { shift_mm: shift, lean, support, spread_mm: Number.NaN }
+  centres.sort((a, b) => a - b)
+  const n = centres.length
+  const middle = n % 2 ? centres[n >> 1]! : (centres[n / 2 - 1]! + centres[n / 2]!) / 2
+  const off = centres.map((c) => Math.abs(c - middle)).sort((a, b) => a - b)
+  return { shift_mm: shift + middle, lean, support, spread_mm: off[n >> 1]! }
+}

@@ -1,0 +1,129 @@
+/**
+ * Follows the dark rules that run across the page at the head of each section: they show how the paper waves between its edges,
+ * where no mark stands, before any field is looked for.
+ */
+import type { Layout } from '../../layouts/layout.ts'
+import type { Homography } from '../geometry/homography.ts'
+import { type Anchor, displacementAt } from '../geometry/residual-field.ts'
+import { type Picture, samplePatch } from './patch.ts'
+
+/** Section rules are printed from the left to the right margin, this far from the page's edges, mm. */
+const MARGIN_MM = 14
+/** The rule under the head of every sheet, between the upper codes. */
+const HEAD_RULE = { y: 14.4, left: 31, right: 180 } as const
+const STEP_MM = 0.16
+/** A window is short enough to be straight, and long enough to hold more than one letter or stroke, mm. */
+const WINDOW_MM = 4
+/** From one window to the next, a rule turns no more than this, mm. */
+const TURN_MM = 0.45
+const FIRST_REACH_MM = 1.6
+/** Darkness over the paper beside it that a rule keeps along a window. */
+const LEAST_CONTRAST = 0.16
+/** Windows without a rule after which a trace ends. */
+const MOST_GAPS = 3
+/** Traces from both sides that part by more than this do not follow the same line, mm. */
+const MEET_MM = 0.4
+
+interface Step {
+  x: number
+  dy: number
+}
+
+/** Height of the darkest row (over most of its length) near an expected one; null where there is none. */
+function lineNear(picture: Picture, homography: Homography, at: Anchor, lean: number, reach_mm: number): number | null {
+  const half = reach_mm + 0.7
+  const displacement = { dx: at.dx, dy: at.dy, dxx: 0, dxy: 0, dyx: lean, dyy: 0 }
+  const area = { x: at.x - WINDOW_MM / 2, y: at.y - half, width: WINDOW_MM, height: 2 * half }
+  const { rows, columns, darkness } = samplePatch(picture, { homography, center: at, displacement }, area, STEP_MM)
+  const row = new Float32Array(rows)
+  const values = new Float32Array(columns)
+  for (let y = 0; y < rows; y++) {
+    for (let x = 0; x < columns; x++) values[x] = darkness[y * columns + x]!
+    values.sort()
+    // Dark over three quarters of the window: letters and strokes are not.
+    row[y] = values[columns >> 2]!
+  }
+  const beside = Math.round(0.7 / STEP_MM)
+  let best = { contrast: LEAST_CONTRAST, y: -1 }
+  for (let y = beside; y < rows - beside; y++) {
+    const own = (row[y - 1]! + 2 * row[y]! + row[y + 1]!) / 4
+    const contrast = own - Math.max(row[y - beside]!, row[y + beside]!)
+    if (contrast > best.contrast) best = { contrast, y }
+  }
+  if (best.y < 0) return null
+  let sum = 0
+  let moment = 0
+  for (let y = best.y - beside + 1; y < best.y + beside; y++) {
+    const rise = Math.max(0, row[y]! - 0.05)
+    sum += rise
+    moment += rise * y
+  }
+  return at.dy + (moment / sum + 0.5) * STEP_MM - half
+}
+
+function trace(
+  picture: Picture,
+  homography: Homography,
+  anchors: readonly Anchor[],
+  y: number,
+  from: number,
+  to: number,
+): Step[] {
+  const direction = Math.sign(to - from)
+  const steps: Step[] = []
+  let gaps = 0
+  let lean = 0
+  let last: Step | null = null
+  for (let x = from + (direction * WINDOW_MM) / 2; direction * (to - x) > 0; x += direction * WINDOW_MM) {
+    const guess = displacementAt(anchors, { x, y })
+    const expected: number = last ? last.dy + lean * (x - last.x) : guess.dy
+    const reach = last ? TURN_MM * (1 + gaps) : FIRST_REACH_MM
+    const at = { x, y, dx: guess.dx, dy: expected, weight: 1 }
+    const dy = lineNear(picture, homography, at, last ? lean : guess.dyx, reach)
+    if (dy === null) {
+      if (++gaps > MOST_GAPS) break
+      continue
+    }
+    if (last) lean = 0.4 * lean + (0.6 * (dy - last.dy)) / (x - last.x)
+    else lean = guess.dyx
+    gaps = 0
+    last = { x, dy }
+    steps.push(last)
+  }
+  return steps
+}
+
+/** Heights of the rule under the head and of all section rules, where both traces agree or only one came by. */
+export function traceRules(picture: Picture, layout: Layout, homography: Homography, anchors: readonly Anchor[]): Anchor[] {
+  const sections = layout.sections.map(({ y }) => ({ y, left: MARGIN_MM, right: layout.page.width - MARGIN_MM }))
+  return [HEAD_RULE, ...sections].flatMap(({ y, left, right }) => {
+    const forth = trace(picture, homography, anchors, y, left, right)
+    const back = trace(picture, homography, anchors, y, right, left)
+    return merge(forth, back).map(({ x, dy }) => {
+      const { dx } = displacementAt(anchors, { x, y })
+      return { x, y, dx, dy, weight: 0.3, onlyDown: true as const }
+    })
+  })
+}
+
+/** Height of a trace between its steps; null outside or across a gap. */
+function heightAt(steps: readonly Step[], x: number): number | null {
+  for (let i = 1; i < steps.length; i++) {
+    const [a, b] = [steps[i - 1]!, steps[i]!]
+    const share = (x - a.x) / (b.x - a.x)
+    if (share >= 0 && share <= 1 && Math.abs(b.x - a.x) <= 2 * WINDOW_MM) return a.dy + share * (b.dy - a.dy)
+  }
+  return null
+}
+
+function merge(forth: readonly Step[], back: readonly Step[]): Step[] {
+  const both = [
+    ...forth.map((s) => ({ s, other: heightAt(back, s.x) })),
+    ...back.map((s) => ({ s, other: heightAt(forth, s.x) })),
+  ]
+  const agreed = both.filter(({ s, other }) => other !== null && Math.abs(other - s.dy) < MEET_MM).map(({ s }) => s)
+  const parted = both.filter(({ s, other }) => other !== null && Math.abs(other - s.dy) >= MEET_MM).length
+  // A trace that no other contradicts stands; where two part, each is believed near its own edge only.
+  if (parted === 0) return both.map(({ s }) => s)
+  return agreed.length > 2 * parted ? agreed : [...forth.slice(0, 3), ...back.slice(0, 3)]
+}
