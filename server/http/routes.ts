@@ -1,4 +1,5 @@
 /** Every route there is. */
+import { demonstrationRoutes } from '../features/demonstrations/demonstrations.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
 import { mailRoutes } from '../features/mails/mails.routes.ts'
 import { recordRoutes } from '../features/records/records.routes.ts'
@@ -6,6 +7,7 @@ import { registerRoutes } from '../features/registers/registers.routes.ts'
 import { sessionRoutes } from '../features/session/session.routes.ts'
 import { sheetRoutes } from '../features/sheets/sheets.routes.ts'
 import { trailRoutes } from '../features/trail/trail.routes.ts'
+import { uploadRoutes } from '../features/uploads/uploads.routes.ts'
 import { passwordRoutes } from '../features/users/passwords.routes.ts'
 import { userRoutes } from '../features/users/users.routes.ts'
 import type { Route } from './route.ts'
@@ -16,6 +18,8 @@ export const allRoutes: readonly Route[] = [
   ...passwordRoutes,
   ...userRoutes,
   ...registerRoutes,
+  ...uploadRoutes,
+  ...demonstrationRoutes,
   ...sheetRoutes,
   ...recordRoutes,
   ...mailRoutes,

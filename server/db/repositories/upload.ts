@@ -146,3 +146,11 @@ function toPage(row: PageRow): Upload['pages'][number] {
         : { id: row.sheetId, code: row.code, state: row.sheetState, openDoubts: Number(row.openDoubts) },
   }
 }
+
+/** Whose sheet a file is to answer; null when there is no such sheet. */
+export async function findSheetOwner(db: Db, sheetId: string): Promise<{ ownerId: string | null } | null> {
+  const rows: Array<{ ownerId: string | null }> = await db.query('SELECT owner_id AS "ownerId" FROM sheets WHERE id = $1', [
+    sheetId,
+  ])
+  return rows[0] ?? null
+}

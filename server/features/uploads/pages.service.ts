@@ -1,0 +1,43 @@
+/** Pages as pictures: the flattened one for the desk, and the file as it came. */
+import type { Readable } from 'node:stream'
+import { UserError } from '../../../shared/errors.ts'
+import type { UploadKind } from '../../../shared/schemas/upload.ts'
+import type { User } from '../../../shared/schemas/user.ts'
+import { findShownPage, type ShownPage } from '../../db/repositories/page.ts'
+import type { Deps } from '../../http/route.ts'
+
+const TYPES: Record<UploadKind, string> = {
+  jpeg: 'image/jpeg',
+  png: 'image/png',
+  webp: 'image/webp',
+  heic: 'image/heic',
+  tiff: 'image/tiff',
+  pdf: 'application/pdf',
+  xlsx: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+  csv: 'text/csv; charset=utf-8',
+}
+
+/** @throws UserError not_found, also for a demonstrator who neither sent the file nor owns its sheet */
+async function getShownPage(deps: Deps, actor: User, pageId: string): Promise<ShownPage> {
+  const page = await findShownPage(deps.source.manager, pageId)
+  const own = page && (page.uploadedBy === actor.id || page.sheetOwnerId === actor.id)
+  if (page && (actor.role !== 'demonstrator' || own)) return page
+  throw new UserError('not_found', 'There is no such page.')
+}
+
+/** The flattened page as JPEG. The key changes with every reading, so it stands for the content. */
+export async function openPicture(deps: Deps, actor: User, pageId: string): Promise<{ stream: Readable; key: string }> {
+  const { pictureKey } = await getShownPage(deps, actor, pageId)
+  if (pictureKey === null) throw new UserError('not_found', 'This page has no flattened picture. Its original can be opened.')
+  return { stream: await deps.files.stream(pictureKey), key: pictureKey }
+}
+
+export async function openOriginal(
+  deps: Deps,
+  actor: User,
+  pageId: string,
+): Promise<{ stream: Readable; type: string; fileName: string }> {
+  const page = await getShownPage(deps, actor, pageId)
+  if (page.storageKey === null) throw new UserError('gone', 'The original of this page is not kept any more.')
+  return { stream: await deps.files.stream(page.storageKey), type: TYPES[page.kind], fileName: page.fileName }
+}
