@@ -27,11 +27,11 @@ export function makeGround(kind: Ground, width: number, height: number, chance: 
 }
 
 const TINTS: Record<Ground, { dark: number[]; light: number[] }> = {
-  wood: { dark: [74, 48, 30], light: [172, 128, 84] },
-  soil: { dark: [44, 34, 26], light: [142, 112, 84] },
-  dark: { dark: [18, 18, 20], light: [62, 60, 60] },
+  wood: { dark: [92, 66, 46], light: [186, 148, 108] },
+  soil: { dark: [66, 52, 42], light: [158, 132, 106] },
+  dark: { dark: [26, 26, 28], light: [78, 76, 76] },
   bright: { dark: [186, 186, 182], light: [232, 232, 228] },
-  metal: { dark: [96, 60, 30], light: [214, 140, 62] },
+  metal: { dark: [104, 64, 34], light: [206, 128, 58] },
   cloth: { dark: [40, 54, 84], light: [104, 122, 150] },
 }
 

@@ -1,7 +1,7 @@
 /** From the scene to the file: light, blur, grain, the phone's sharpening, JPEG. */
 import sharp from 'sharp'
 import { LIGHT_CELL, type LightMap } from './light.ts'
-import { NOISE_MASK, SOFT, WHITE } from './noise.ts'
+import { NOISE_SIDE, SOFT, WHITE } from './noise.ts'
 import type { Chance } from './random.ts'
 import type { Picture } from './raster.ts'
 
@@ -16,6 +16,8 @@ export interface Optics {
   /** Sharpening strength of the phone, 0 none. */
   sharpen: number
   jpegQuality: number
+  /** Stored lying, with a tag that says so, as phones held upright store their pictures. */
+  storedLying: boolean
 }
 
 /** Multiplies by the light, in place. */
@@ -72,20 +74,36 @@ export function shakeKernel(length: number, angle: number): { side: number; weig
   return { side, weights }
 }
 
+/** Grain is stronger where it is bright, alike among neighbours, and a little different in each colour. */
 function addGrain(rgb: Uint8Array, width: number, grain: number, chance: Chance): void {
   if (grain <= 0) return
-  let at = chance.whole(0, NOISE_MASK)
-  for (let i = 0; i < rgb.length; i += 3) {
-    if (i % (3 * width) === 0) at = chance.whole(0, NOISE_MASK)
-    const k = (at + i / 3) & NOISE_MASK
-    const level = rgb[i + 1]!
-    const strength = grain * (0.55 + level / 280)
-    const luma = strength * (0.5 * WHITE[k]! + 0.75 * SOFT[(k * 3 + 11) & NOISE_MASK]!)
-    for (let c = 0; c < 3; c += 1) {
-      const value = rgb[i + c]! + luma + 0.35 * strength * SOFT[(k + 7919 * (c + 1)) & NOISE_MASK]!
-      rgb[i + c] = value < 0 ? 0 : Math.min(value, 255)
+  const mask = NOISE_SIDE - 1
+  const height = rgb.length / 3 / width
+  const [ox, oy] = [chance.whole(0, mask), chance.whole(0, mask)]
+  // Two tables repeat every 512 dots; a shift that grows from tile to tile keeps the eye from seeing it.
+  for (let y = 0; y < height; y += 1) {
+    const drift = (y >> 9) * 173
+    const fine = ((y + oy) & mask) * NOISE_SIDE
+    const soft = ((y + 3 * oy + 101) & mask) * NOISE_SIDE
+    let i = 3 * y * width
+    for (let x = 0; x < width; x += 1, i += 3) {
+      const column = x + drift + (x >> 9) * 59
+      const strength = grain * (0.55 + rgb[i + 1]! / 280)
+      const k = soft + ((column + 2 * ox) & mask)
+      const luma = strength * (0.5 * WHITE[fine + ((column + ox) & mask)]! + 0.75 * SOFT[k]!)
+      const tint = 0.35 * strength
+      put(rgb, i, luma + tint * SOFT[(k + 40_009) & LAST]!)
+      put(rgb, i + 1, luma)
+      put(rgb, i + 2, luma + tint * SOFT[(k + 90_017) & LAST]!)
     }
   }
+}
+
+const LAST = NOISE_SIDE * NOISE_SIDE - 1
+
+function put(rgb: Uint8Array, i: number, add: number): void {
+  const value = rgb[i]! + add
+  rgb[i] = value < 0 ? 0 : value > 255 ? 255 : value + 0.5
 }
 
 /** Blurs, grains, sharpens and compresses. */
@@ -99,5 +117,6 @@ export async function develop(picture: Picture, optics: Optics, chance: Chance):
   addGrain(data, picture.width, optics.grain, chance)
   let out = sharp(data, { raw })
   if (optics.sharpen > 0) out = out.sharpen({ sigma: 1, m1: optics.sharpen * 0.5, m2: optics.sharpen })
+  if (optics.storedLying) out = out.rotate(-90).withMetadata({ orientation: 6 })
   return out.jpeg({ quality: optics.jpegQuality, chromaSubsampling: '4:2:0' }).toBuffer()
 }

@@ -6,6 +6,10 @@ import { thin } from './thin.ts'
 
 /** Enlargement before tracing: a stroke is then 8 to 14 pixels wide, enough for a smooth middle line. */
 const ENLARGE = 4
+/** Neighbourhood that tells a stroke from a blot: 4 pixels of the set wide and high. */
+const REACH = 8
+/** Share of the neighbourhood that is ink above which a loop has run full: its middle line would be another digit. */
+const BLOT = 0.8
 
 export interface Glyph {
   /** Enlarged grey picture, 0 to 1, `side` pixels wide and high. */
@@ -21,6 +25,8 @@ export interface Glyph {
   line: Float32Array
   /** How thick the hand pressed at each point of the line against its own mean, 1 = mean. */
   press: Float32Array
+  /** The middle line may not stand for the digit: a loop has run full of ink. */
+  blotted: boolean
   /** Mean stroke width in enlarged pixels. */
   stroke: number
 }
@@ -93,8 +99,8 @@ function smooth(points: ReadonlyArray<readonly [number, number]>): Array<[number
 /** Ink within a few pixels: what a wide stroke has more of than a thin one. */
 function massAround(grey: Float32Array, side: number, x: number, y: number): number {
   let mass = 0
-  for (let v = Math.max(0, y - 5); v <= Math.min(side - 1, y + 5); v += 1) {
-    for (let u = Math.max(0, x - 5); u <= Math.min(side - 1, x + 5); u += 1) mass += grey[v * side + u]!
+  for (let v = Math.max(0, y - REACH); v <= Math.min(side - 1, y + REACH); v += 1) {
+    for (let u = Math.max(0, x - REACH); u <= Math.min(side - 1, x + REACH); u += 1) mass += grey[v * side + u]!
   }
   return mass
 }
@@ -125,5 +131,15 @@ export function glyphOf(pixels: Uint8Array, from: number): Glyph {
   const usual = thickness.reduce((sum, v) => sum + v, 0) / (thickness.length || 1) || 1
   const area = grey.reduce((sum, v) => sum + v, 0)
   const press = Float32Array.from(thickness, (v) => v / usual)
-  return { side, grey, bounds, slant, centre: { x: cx, y: cy }, line, press, stroke: area / (traced.length || 1) }
+  return {
+    side,
+    grey,
+    bounds,
+    slant,
+    centre: { x: cx, y: cy },
+    line,
+    press,
+    blotted: Math.max(...thickness) > BLOT * (2 * REACH + 1) ** 2,
+    stroke: area / (traced.length || 1),
+  }
 }

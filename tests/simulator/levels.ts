@@ -7,7 +7,10 @@ import { GROUNDS, type Ground } from './background.ts'
 import type { Shot } from './camera.ts'
 import type { Optics } from './develop.ts'
 import type { LightPlan } from './light.ts'
+import type { LostCorner } from './obstacles.ts'
 import type { Chance } from './random.ts'
+import { drawScanPlan, type ScanPlan } from './scan.ts'
+import type { Dirt } from './stains.ts'
 
 export const LEVELS = ['easy', 'ordinary', 'hard'] as const
 export type Level = (typeof LEVELS)[number]
@@ -23,6 +26,11 @@ export interface Conditions {
   lean: number
   /** How much the writer keeps to the boxes, 0 to 1. */
   careful: number
+  /** Scanned flat instead of photographed. */
+  scan: ScanPlan | null
+  dirt: Dirt | null
+  thumb: boolean
+  lost: LostCorner | null
   /** Cells spoiled, wrong sums: expected numbers. */
   spoiled: number
   wrongSum: number
@@ -47,6 +55,10 @@ interface Ranges {
   careful: readonly [number, number]
   megapixels: readonly number[]
   cutCorner: number
+  scanned: number
+  dirt: number
+  thumb: number
+  foldedCorner: number
 }
 
 const RANGES: Record<Level, Ranges> = {
@@ -69,6 +81,10 @@ const RANGES: Record<Level, Ranges> = {
     careful: [0.75, 1],
     megapixels: [12],
     cutCorner: 0,
+    scanned: 0.25,
+    dirt: 0.04,
+    thumb: 0,
+    foldedCorner: 0,
   },
   ordinary: {
     tilt: 0.11,
@@ -89,6 +105,10 @@ const RANGES: Record<Level, Ranges> = {
     careful: [0.45, 0.95],
     megapixels: [12],
     cutCorner: 0,
+    scanned: 0.04,
+    dirt: 0.15,
+    thumb: 0.02,
+    foldedCorner: 0.01,
   },
   hard: {
     tilt: 0.22,
@@ -108,7 +128,11 @@ const RANGES: Record<Level, Ranges> = {
     curl: [5, 18],
     careful: [0.25, 0.85],
     megapixels: [12, 12, 8],
-    cutCorner: 0.1,
+    cutCorner: 0.08,
+    scanned: 0,
+    dirt: 0.25,
+    thumb: 0.06,
+    foldedCorner: 0.05,
   },
 }
 
@@ -156,11 +180,18 @@ export function drawConditions(level: Level, chance: Chance): Conditions {
       grain: range(r.grain),
       sharpen: chance.odds(0.6) ? chance.between(0.3, 1.2) : 0,
       jpegQuality: Math.round(range(r.quality)),
+      storedLying: chance.odds(0.15),
     },
     ground: chance.pick(GROUNDS),
     curl_mm: range(r.curl),
     lean: chance.between(0.15, 0.6),
     careful: range(r.careful),
+    scan: chance.odds(r.scanned) ? drawScanPlan(chance.fork('scan')) : null,
+    dirt: chance.odds(r.dirt) ? chance.pick(['coffee', 'mud', 'mud', 'oil'] as const) : null,
+    thumb: chance.odds(r.thumb),
+    lost: chance.odds(r.foldedCorner)
+      ? { corner: chance.pick([0, 1, 2, 3] as const), legs: [chance.between(14, 34), chance.between(14, 34)], folded: true }
+      : null,
     spoiled: 1.3,
     wrongSum: 0.16,
   }

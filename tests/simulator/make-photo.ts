@@ -11,14 +11,18 @@ import { type DigitPool, loadDigits } from './digits.ts'
 import { type InkLayer, newInk } from './ink.ts'
 import { type Conditions, drawConditions, type Level } from './levels.ts'
 import { mapLight } from './light.ts'
+import { drawFlap, holdWithThumb, lostPart } from './obstacles.ts'
 import { renderPage } from './page-render.ts'
-import { joinPaper } from './paper.ts'
+import { castShadow } from './page-shadow.ts'
+import { joinPaper, type Paper } from './paper.ts'
 import { planOf } from './plan.ts'
 import type { Chance } from './random.ts'
 import { drawPage, type Picture } from './raster.ts'
+import { FLAT, scan } from './scan.ts'
 import type { Scenario, Truth } from './scenario.ts'
 import { tillageScenario } from './scenario-tillage.ts'
 import { chooseSpoiled, makeWrongSum } from './spoil.ts'
+import { soil } from './stains.ts'
 import { bendSheet, drawBend, type Surface } from './surface.ts'
 import { writeSheet } from './write-sheet.ts'
 import { makeWriter, type Writer } from './writer.ts'
@@ -65,23 +69,16 @@ export async function makePhoto(request: PhotoRequest): Promise<Photo> {
   writeSheet({ ink, digits: loadDigits(request.digits), writer, chance: chance.fork('hand') }, layout, scenario)
   const print = await renderPage(await printSheets([{ layout, sheetCode, plan }]), ink)
 
-  const surface = bendSheet(drawBend(chance.fork('bend'), conditions.curl_mm), layout.page)
-  const camera = aim(conditions.shot, surface, layout.page)
-  const tone = chance.fork('paper')
-  const shade = tone.between(232, 252)
-  const paper = joinPaper(
-    print,
-    ink,
-    writer,
-    [shade + tone.between(-3, 3), shade + tone.between(-3, 2), shade - tone.between(0, 9)],
-    tone.between(0.8, 1),
-    pixelsPerMm(camera, surface, layout) < 8,
-  )
-  const picture = await layGround(conditions, chance.fork('ground'))
-  drawPage(picture, paper, surface, camera, layout.page, conditions.lean, chance.between(0, 6.28))
-  const light = mapLight(conditions.light, picture.width, picture.height, chance.fork('light'))
-  shine(picture, light, conditions.light.white)
-  const jpeg = await develop(picture, conditions.optics, chance.fork('grain'))
+  const joined = (coarse: boolean) => {
+    const paper = joinPaper(print, ink, writer, paperWhite(chance.fork('paper')), chance.fork('toner').between(0.8, 1), coarse)
+    if (conditions.dirt) paper.stain = soil(conditions.dirt, layout.page, chance.fork('dirt'))
+    if (conditions.lost) paper.lost = lostPart(conditions.lost, layout.page, paper.dotsPerMm)
+    return paper
+  }
+  const taken = conditions.scan
+    ? { ...(await scan(conditions.scan, joined(conditions.scan.dpi < 250), layout.page, chance.fork('grain'))), surface: FLAT }
+    : await photograph(conditions, joined, layout, chance)
+  const { jpeg, camera, surface } = taken
   const truth: Truth = {
     layout: layout.key,
     version: layout.version,
@@ -91,6 +88,26 @@ export async function makePhoto(request: PhotoRequest): Promise<Photo> {
     ...(planned ? { planned } : {}),
   }
   return { jpeg, truth, map: mapCells(layout, surface, camera, scenario) }
+}
+
+/** Copier paper is a little blue or a little yellow, never quite white. */
+function paperWhite(chance: Chance): readonly [number, number, number] {
+  const white = chance.between(232, 252)
+  return [white + chance.between(-3, 3), white + chance.between(-3, 2), white - chance.between(0, 9)]
+}
+
+async function photograph(conditions: Conditions, joined: (coarse: boolean) => Paper, layout: Layout, chance: Chance) {
+  const { page } = layout
+  const surface = bendSheet(drawBend(chance.fork('bend'), conditions.curl_mm), page)
+  const camera = aim(conditions.shot, surface, page)
+  const paper = joined(pixelsPerMm(camera, surface, layout) < 8)
+  const picture = await layGround(conditions, chance.fork('ground'))
+  castShadow(picture, surface, camera, page, chance.fork('page shadow'))
+  drawPage(picture, paper, surface, camera, page, conditions.lean, chance.between(0, 6.28))
+  if (conditions.lost?.folded) drawFlap(picture, camera, surface, page, conditions.lost)
+  if (conditions.thumb) holdWithThumb(picture, camera, surface, page, chance.fork('thumb'))
+  shine(picture, mapLight(conditions.light, picture.width, picture.height, chance.fork('light')), conditions.light.white)
+  return { jpeg: await develop(picture, conditions.optics, chance.fork('grain')), camera, surface }
 }
 
 function drawScenario(layout: Layout, conditions: Conditions, chance: Chance): Scenario {

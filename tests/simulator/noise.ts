@@ -1,19 +1,18 @@
 /** Tables of chance numbers, and smooth noise made of them: made once, read at random offsets. */
 import { chanceOf } from './random.ts'
 
-const SIZE = 1 << 18
+/** The tables are squares of this side. */
+export const NOISE_SIDE = 512
+const SIZE = NOISE_SIDE * NOISE_SIDE
 const chance = chanceOf('noise tables')
 
+/** Averages each value of the square table with its neighbours, across and down, keeping the spread. */
 function soften(white: Float32Array): Float32Array {
   const out = new Float32Array(SIZE)
   for (let i = 0; i < SIZE; i += 1) {
-    const [before, here, next, after] = [
-      white[(i - 1) & (SIZE - 1)]!,
-      white[i]!,
-      white[(i + 1) & (SIZE - 1)]!,
-      white[(i + 2) & (SIZE - 1)]!,
-    ]
-    out[i] = (before + 2 * here + next + after) / 2.65
+    let sum = 2 * white[i]!
+    for (const step of [1, -1, NOISE_SIDE, -NOISE_SIDE]) sum += white[(i + step) & (SIZE - 1)]!
+    out[i] = sum / Math.sqrt(8)
   }
   return out
 }
@@ -22,7 +21,6 @@ function soften(white: Float32Array): Float32Array {
 export const WHITE = Float32Array.from({ length: SIZE }, () => chance.normal(0, 1))
 /** The same with neighbours alike, as a phone's noise filter leaves it. */
 export const SOFT = soften(WHITE)
-export const NOISE_MASK = SIZE - 1
 
 const LATTICE = 256
 const lattice = Float32Array.from({ length: LATTICE * LATTICE }, () => chance.unit())

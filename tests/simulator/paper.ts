@@ -1,6 +1,7 @@
 /** The written page as the camera meets it: print, ink, paper colour and dirt, at one dot size or a coarser one. */
 import type { InkLayer } from './ink.ts'
 import type { Print } from './page-render.ts'
+import type { Stain } from './stains.ts'
 import type { Writer } from './writer.ts'
 
 export interface Paper {
@@ -13,6 +14,9 @@ export interface Paper {
   ink: readonly [number, number, number]
   /** White of the paper, 0 to 255. */
   white: readonly [number, number, number]
+  stain: Stain | null
+  /** A corner that is not there: dots with p * u + q * v + r < 0 are left out. */
+  lost: readonly [number, number, number] | null
 }
 
 function halve(source: Uint8Array, width: number, height: number): Uint8Array {
@@ -42,7 +46,7 @@ export function joinPaper(
   const [r, g, b] = writer.colour
   const faint = Uint8Array.from({ length: 256 }, (_, v) => Math.round(255 - (255 - v) * toner))
   const grey = print.grey.map((v) => faint[v]!)
-  const base = { ink: [r / 255, g / 255, b / 255] as const, white }
+  const base = { ink: [r / 255, g / 255, b / 255] as const, white, stain: null, lost: null }
   if (!coarse) return { ...base, width: print.width, height: print.height, dotsPerMm: 300 / 25.4, print: grey, cover: ink.cover }
   return {
     ...base,

@@ -1,6 +1,7 @@
 /** Draws the bent, written page into the picture, triangle by triangle of a fine net over the sheet. */
 import type { Camera } from './camera.ts'
 import type { Paper } from './paper.ts'
+import { STAIN_DOTS_PER_MM, type Stain } from './stains.ts'
 import type { Surface } from './surface.ts'
 
 const NET_MM = 3
@@ -70,6 +71,7 @@ function fillTriangle(picture: Picture, paper: Paper, a: Knot, b: Knot, c: Knot)
   const [ux, uy] = gradient((k) => k.u)
   const [vx, vy] = gradient((k) => k.v)
   const [sx, sy] = gradient((k) => k.shade)
+  const { lost } = paper
   for (let y = top; y <= low; y += 1) {
     let left = Number.POSITIVE_INFINITY
     let right = Number.NEGATIVE_INFINITY
@@ -91,7 +93,7 @@ function fillTriangle(picture: Picture, paper: Paper, a: Knot, b: Knot, c: Knot)
     let v = a.v + vx * (from - a.x) + vy * dy
     let shade = a.shade + sx * (from - a.x) + sy * dy
     for (let x = from; x <= to; x += 1) {
-      putDot(picture, 3 * (y * picture.width + x), paper, u, v, shade)
+      if (!lost || lost[0] * u + lost[1] * v + lost[2] >= 0) putDot(picture, 3 * (y * picture.width + x), paper, u, v, shade)
       u += ux
       v += vx
       shade += sx
@@ -115,9 +117,24 @@ function putDot(picture: Picture, at: number, paper: Paper, u: number, v: number
   const inkTop = cover[i]! + s * (cover[i + 1]! - cover[i]!)
   const inkLow = cover[j]! + s * (cover[j + 1]! - cover[j]!)
   const covered = (inkTop + t * (inkLow - inkTop)) / 255
+  const dirt = paper.stain
+    ? stainAt(paper.stain, (cu * STAIN_DOTS_PER_MM) / paper.dotsPerMm, (cv * STAIN_DOTS_PER_MM) / paper.dotsPerMm)
+    : 0
   const rgb = picture.rgb
   for (let c = 0; c < 3; c += 1) {
-    const out = white[c]! * value * (1 - covered * (1 - ink[c]!))
+    const left = dirt > 0 ? 1 - dirt * (1 - paper.stain!.tint[c]!) : 1
+    const out = white[c]! * value * (1 - covered * (1 - ink[c]!)) * left
     rgb[at + c] = Math.min(out, 255)
   }
+}
+
+/** Strength of the dirt between four dots of its layer, 0 to 1. */
+function stainAt(stain: Stain, x: number, y: number): number {
+  const x0 = x | 0
+  const y0 = y | 0
+  const i = y0 * stain.width + x0
+  const { layer, width } = stain
+  const top = layer[i]! + (x - x0) * (layer[i + 1]! - layer[i]!)
+  const low = layer[i + width]! + (x - x0) * (layer[i + width + 1]! - layer[i + width]!)
+  return (top + (y - y0) * (low - top)) / 255
 }

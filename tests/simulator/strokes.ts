@@ -33,6 +33,14 @@ export function drawTickMark(ink: InkLayer, box: Box, writer: Writer, chance: Ch
   }
 }
 
+/** The short bar many hands put through a 7. */
+export function crossSeven(ink: InkLayer, box: Box, pen: Pen, chance: Chance): void {
+  const y = box.y + box.height * chance.between(0.48, 0.56)
+  const x = box.x + box.width * 0.5
+  const half = box.width * chance.between(0.14, 0.24)
+  draw(ink, [jitter(chance, x - half, y + 0.15, 0.1), jitter(chance, x + half, y - 0.15, 0.1)], pen, chance)
+}
+
 /** One or two straight lines through the boxes: the printed way to correct. */
 export function strikeThrough(ink: InkLayer, box: Box, pen: Pen, chance: Chance): void {
   const lines = chance.odds(0.35) ? 2 : 1

@@ -82,6 +82,6 @@ function writeGrey(ink: InkLayer, glyph: Glyph, place: Placing, writer: Writer):
 /** Writes a digit in a box the way this writer does. */
 export function writeDigit(ink: InkLayer, box: Box, glyph: Glyph, writer: Writer, chance: Chance): void {
   const place = placeIn(box, glyph, writer, chance)
-  if (writer.stroke === 'traced') writeTraced(ink, glyph, place, writer, chance)
+  if (writer.stroke === 'traced' && !glyph.blotted) writeTraced(ink, glyph, place, writer, chance)
   else writeGrey(ink, glyph, place, writer)
 }

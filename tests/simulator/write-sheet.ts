@@ -1,12 +1,12 @@
 /** Fills a printed sheet by hand: the ink layer, and what exactly was written. */
-import { type Box, boxesOf } from '../../shared/layouts/geometry.ts'
+import { type Box, boxesOf, cellBounds } from '../../shared/layouts/geometry.ts'
 import { type ChoiceCell, type CombCell, isComb, type Layout, type TickCell } from '../../shared/layouts/layout.ts'
 import { boxDigits } from './boxes.ts'
 import type { Digits } from './digits.ts'
 import type { InkLayer } from './ink.ts'
 import type { Chance } from './random.ts'
 import type { Scenario } from './scenario.ts'
-import { drawTickMark, scribble, sign, strikeThrough, writeWords } from './strokes.ts'
+import { crossSeven, drawTickMark, scribble, sign, strikeThrough, writeWords } from './strokes.ts'
 import { writeDigit } from './write-digit.ts'
 import type { Writer } from './writer.ts'
 
@@ -27,7 +27,7 @@ export function writeSheet(desk: Desk, layout: Layout, scenario: Scenario): void
     const value = scenario.readings[cell.key]
     if (value === undefined) continue
     const spoiled = scenario.spoiled.includes(cell.key)
-    if (isComb(cell)) writeComb(desk, cell, scenario, spoiled)
+    if (isComb(cell)) writeComb(desk, layout, cell, scenario, spoiled)
     else if (cell.kind === 'tick') {
       writeTick(desk, cell, value === true, spoiled)
       if (spoiled) scenario.readings[cell.key] = false
@@ -43,12 +43,15 @@ function scaleOf(cell: CombCell, scenario: Scenario): number {
   return (typeof unit === 'string' && cell.scale.factors[unit]) || 1
 }
 
-function writeComb(desk: Desk, cell: CombCell, scenario: Scenario, spoiled: boolean): void {
+function writeComb(desk: Desk, layout: Layout, cell: CombCell, scenario: Scenario, spoiled: boolean): void {
   const { ink, digits, writer, chance } = desk
   const zero = writer.leading === 'zero' || (writer.leading === 'mixed' && chance.odds(0.4)) || cell.register !== undefined
   const boxes = boxesOf(cell)
   const written = boxDigits(cell, scenario.readings[cell.key]!, scaleOf(cell, scenario), zero)
-  const put = (box: Box, digit: number) => writeDigit(ink, box, digits.draw(digit, chance), writer, chance)
+  const put = (box: Box, digit: number) => {
+    writeDigit(ink, box, digits.draw(digit, chance), writer, chance)
+    if (digit === 7 && writer.crossesSevens) crossSeven(ink, box, writer.pen, chance)
+  }
   const fill = () =>
     written.forEach((digit, i) => {
       if (digit !== null) put(boxes[i]!, digit)
@@ -58,7 +61,28 @@ function writeComb(desk: Desk, cell: CombCell, scenario: Scenario, spoiled: bool
     return
   }
   const inked = boxes.filter((_, i) => written[i] !== null)
-  spoilComb(desk, cell, inked, fill, put, scenario)
+  const beside = besideBoxes(layout, cell)
+  const correct =
+    beside &&
+    (() =>
+      written.forEach((digit, i) => {
+        if (digit !== null) put(beside[i]!, digit)
+      }))
+  spoilComb(desk, cell, inked, fill, put, correct, scenario)
+}
+
+/** Room right of a comb for the value written again, a little smaller, or null where another cell or a mark stands there. */
+function besideBoxes(layout: Layout, cell: CombCell): Box[] | null {
+  const own = cellBounds(cell)
+  const width = own.width * 0.8
+  const room = { x: own.x + own.width + 1.6, y: own.y - 0.4, width, height: own.height + 0.8 }
+  const taken = [...layout.cells.map(cellBounds), ...layout.squares.map((s) => ({ ...s, width: s.size, height: s.size }))]
+  const meets = (b: Box) =>
+    b.x - 3 < room.x + room.width && b.x + b.width > room.x && b.y < room.y + room.height && b.y + b.height > room.y
+  if (room.x + room.width > layout.page.width - 8 || taken.some((b) => meets(b))) return null
+  const boxes = boxesOf(cell)
+  const step = width / boxes.length
+  return boxes.map((b, i) => ({ ...b, x: room.x + i * step, width: step }))
 }
 
 /** One way of going wrong in a comb. */
@@ -68,6 +92,7 @@ function spoilComb(
   inked: readonly Box[],
   fill: () => void,
   put: (box: Box, digit: number) => void,
+  correct: (() => void) | null,
   scenario: Scenario,
 ): void {
   const way = chance.pick(['struck', 'struck', 'struck', 'one struck', 'scribbled', 'two in a box', 'written over'] as const)
@@ -76,7 +101,8 @@ function spoilComb(
   if (way === 'struck') {
     const last = inked[inked.length - 1]!
     strikeThrough(ink, { ...inked[0]!, width: last.x + last.width - inked[0]!.x }, writer.pen, chance)
-    scenario.readings[cell.key] = null
+    if (!(correct && chance.odds(0.6))) scenario.readings[cell.key] = null
+    else correct()
   } else if (way === 'one struck') {
     strikeThrough(ink, one, writer.pen, chance)
     scenario.readings[cell.key] = null

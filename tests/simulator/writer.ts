@@ -25,6 +25,8 @@ export interface Writer {
   stray_mm: number
   /** Writes 0 in leading boxes, leaves them empty, or now this, now that. */
   leading: 'zero' | 'blank' | 'mixed'
+  /** Puts a bar through a 7. */
+  crossesSevens: boolean
   tick: 'check' | 'cross' | 'slash' | 'flourish'
   /** Chance that a digit or tick leaves its box. */
   slips: number
@@ -59,6 +61,7 @@ export function makeWriter(chance: Chance, careful: number, pencil = chance.odds
     shift: [chance.normal(0, 0.2), chance.normal(0.05, 0.3)],
     stray_mm: 0.12 + 0.28 * (1 - careful),
     leading: chance.pick(['zero', 'blank', 'blank', 'mixed'] as const),
+    crossesSevens: chance.odds(0.1),
     tick: chance.pick(['check', 'check', 'check', 'cross', 'slash', 'flourish'] as const),
     slips: 0.03 * (1 - careful),
   }
