@@ -4,6 +4,7 @@ import { pathToFileURL } from 'node:url'
 import type { Settings } from '../../config.ts'
 import { createFileStore, type FileStore } from '../../storage/store.ts'
 import type { Database } from './database.ts'
+import { migrateFor } from './migrate-for.ts'
 import { say, step } from './say.ts'
 import { type DemoSignIn, findSeason, keepSeason, type Season } from './season.ts'
 
@@ -28,7 +29,8 @@ export async function beginSeason(
     await database.private?.remake()
     if (settings.store.kind === 'folder') rmSync(settings.store.dir, { recursive: true, force: true })
   }
-  await migrateDatabase(database.ownerUrl)
+  if (database.ownerUrl === undefined) say('MIGRATE_DATABASE_URL is not set: the database is taken to be up to date.')
+  else await migrateFor(database.ownerUrl, database.appUrl)
   if (database.private === undefined) return null
   if (found?.loaded === true) {
     if (options.empty && found.kind === 'demo')
@@ -40,15 +42,6 @@ export async function beginSeason(
     : await loadDemo(database.appUrl, settings, dataFolder)
   keepSeason(dataFolder, season)
   return season
-}
-
-async function migrateDatabase(ownerUrl: string | undefined): Promise<void> {
-  if (ownerUrl === undefined) {
-    say('MIGRATE_DATABASE_URL is not set: the database is taken to be up to date.')
-    return
-  }
-  const { migrate } = await import('../../db/migrate.ts')
-  await step('Bringing the database up to date', () => migrate(ownerUrl))
 }
 
 async function loadDemo(databaseUrl: string, settings: Settings, dataFolder: string): Promise<Season> {

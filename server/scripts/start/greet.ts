@@ -17,8 +17,9 @@ export async function greet(settings: Settings, season: Season | null, dataFolde
 }
 
 function signInLines(signIns: DemoSignIn[]): string[] {
-  const role = Math.max(0, ...signIns.map((one) => one.role.length))
-  const email = Math.max(0, ...signIns.map((one) => one.email.length))
+  if (signIns.length === 0) return []
+  const role = Math.max(...signIns.map((one) => one.role.length))
+  const email = Math.max(...signIns.map((one) => one.email.length))
   return [
     'Sign in to the demo season as',
     ...signIns.map((one) => `  ${one.role.padEnd(role)}  ${one.email.padEnd(email)}  ${one.password}`),

@@ -51,7 +51,7 @@ export function supervise(options: {
   return {
     name: options.name,
     falls: () => falls.inARow,
-    lastWords: () => readFileSync(options.logFile, 'utf8').trim().split('\n').slice(-6).join('\n'),
+    lastWords: () => readFileSync(options.logFile, 'utf8').trim().split('\n').slice(-15).join('\n'),
     async stop() {
       stopping = true
       clearTimeout(timer)
