@@ -1,6 +1,7 @@
 /** Every route there is. */
 import { demonstrationRoutes } from '../features/demonstrations/demonstrations.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
+import { layoutRoutes } from '../features/layouts/layouts.routes.ts'
 import { mailRoutes } from '../features/mails/mails.routes.ts'
 import { recordRoutes } from '../features/records/records.routes.ts'
 import { registerRoutes } from '../features/registers/registers.routes.ts'
@@ -20,6 +21,7 @@ export const allRoutes: readonly Route[] = [
   ...registerRoutes,
   ...uploadRoutes,
   ...demonstrationRoutes,
+  ...layoutRoutes,
   ...sheetRoutes,
   ...recordRoutes,
   ...mailRoutes,
