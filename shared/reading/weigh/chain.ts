@@ -5,7 +5,8 @@
  */
 import { STATE_FLOOR } from './thresholds.ts'
 
-export type State = number | string
+/** A number, a name, or an object that is the same one for the same state. */
+export type State = number | string | object
 
 /** What a tie needs, for readings in a fixed order. Count: a number, null for a blank, undefined for anything unreadable. */
 export interface Chain {

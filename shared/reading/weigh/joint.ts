@@ -9,7 +9,7 @@ import type { Factor } from './ties/compile.ts'
 import type { Variable } from './variable.ts'
 
 /** Likely values a held reading is tried at; less likely ones keep the weight they have alone. */
-const HELD_FLOOR = 1e-4
+const HELD_FLOOR = 3e-4
 const MOST_COMBINATIONS = 400
 
 export interface JointResult {
@@ -23,6 +23,8 @@ interface Group {
   readings: number[]
   factors: number[]
   held: number[]
+  /** Its ties from the leaves to the root of every tree that is left. */
+  order: number[]
 }
 
 export function weighJointly(
@@ -61,7 +63,7 @@ function groupsOf(count: number, factors: ReadonlyArray<Factor>): Group[] {
   const groups = new Map<number, Group>()
   factors.forEach(({ readings }, f) => {
     const root = whole.find(readings[0]!)
-    const group = groups.get(root) ?? { readings: [], factors: [], held: [] }
+    const group = groups.get(root) ?? { readings: [], factors: [], held: [], order: [] }
     group.factors.push(f)
     groups.set(root, group)
   })
@@ -70,7 +72,29 @@ function groupsOf(count: number, factors: ReadonlyArray<Factor>): Group[] {
     group?.readings.push(reading)
     if (held.has(reading)) group?.held.push(reading)
   }
+  for (const group of groups.values()) group.order = leavesFirst(group, factors, held)
   return [...groups.values()]
+}
+
+/** Ties in breadth-first order from a root of each tree, turned round. */
+function leavesFirst(group: Group, factors: ReadonlyArray<Factor>, held: ReadonlySet<number>): number[] {
+  const order: number[] = []
+  const seen = new Set<number>()
+  for (const root of group.factors) {
+    if (seen.has(root)) continue
+    seen.add(root)
+    const queue = [root]
+    for (let at = 0; at < queue.length; at++) {
+      const free = new Set(factors[queue[at]!]!.readings.filter((r) => !held.has(r)))
+      for (const f of group.factors) {
+        if (seen.has(f) || !factors[f]!.readings.some((r) => free.has(r))) continue
+        seen.add(f)
+        queue.push(f)
+      }
+    }
+    order.push(...queue)
+  }
+  return order.reverse()
 }
 
 function roots(count: number) {
@@ -150,6 +174,7 @@ function passMessages(
   budget: Budget,
 ): Tree {
   const held = new Set(group.held)
+  const counts = new Map(group.readings.map((r) => [r, countsOf(variables[r]!)]))
   const touching = new Map(group.readings.map((r) => [r, group.factors.filter((f) => factors[f]!.readings.includes(r))]))
   const toReading = new Map<string, Float64Array>()
   const toTie = new Map<string, Float64Array>()
@@ -165,31 +190,23 @@ function passMessages(
     return out
   }
   const runs = new Map<number, ChainResult>()
-  // On a tree every message is right once it has crossed the longest path.
-  let waiting = new Set(group.factors)
-  for (let round = 0; round <= group.factors.length && waiting.size > 0; round++) {
-    const next = new Set<number>()
-    for (const f of waiting) {
-      const { readings, chain } = factors[f]!
-      const incoming = readings.map((r) => {
-        const message = normal(gather(r, f))
-        toTie.set(edge(f, r), message)
-        return { counts: countsOf(variables[r]!), weights: message }
-      })
-      const run = runChain(chain, incoming, budget)
-      if (run.leftOut > MOST_LEFT_OUT) throw new NotDecided()
-      runs.set(f, run)
-      readings.forEach((reading, at) => {
-        if (held.has(reading)) return
-        const message = normal(run.outgoing[at]!)
-        const before = toReading.get(edge(f, reading))
-        toReading.set(edge(f, reading), message)
-        if (before && same(before, message)) return
-        for (const other of touching.get(reading)!) if (other !== f) next.add(other)
-      })
-    }
-    waiting = next
+  const weigh = (f: number): void => {
+    const { readings, chain } = factors[f]!
+    const incoming = readings.map((r) => {
+      const message = normal(gather(r, f))
+      toTie.set(edge(f, r), message)
+      return { counts: counts.get(r)!, weights: message }
+    })
+    const run = runChain(chain, incoming, budget)
+    if (run.leftOut > MOST_LEFT_OUT) throw new NotDecided()
+    runs.set(f, run)
+    readings.forEach((reading, at) => {
+      if (!held.has(reading)) toReading.set(edge(f, reading), normal(run.outgoing[at]!))
+    })
   }
+  // Towards the root and back: on a tree every message is then right.
+  for (const f of group.order) weigh(f)
+  for (const f of [...group.order].reverse().slice(1)) weigh(f)
   // The weight of a forest from its messages: ties and readings multiplied, what both counted divided out.
   let logWeight = 0
   for (const [f, run] of runs) {
@@ -217,8 +234,6 @@ function normal(weights: Float64Array): Float64Array {
   const sum = total(weights)
   return sum > 0 ? weights.map((w) => w / sum) : weights
 }
-
-const same = (a: Float64Array, b: Float64Array): boolean => a.every((x, k) => Math.abs(x - b[k]!) < 1e-12)
 
 function addInto(into: Float64Array, from: Float64Array, scale: number): void {
   for (let k = 0; k < into.length; k++) into[k]! += from[k]! * scale

@@ -52,13 +52,14 @@ export const IMPOSSIBLE_FORMAT = 0.003
 
 /** Patterns and states less likely than this beside the best are left out; what is left out is added up. */
 export const PATTERN_FLOOR = 1e-6
-export const STATE_FLOOR = 2e-8
+export const STATE_FLOOR = 1e-6
 export const MOST_PATTERNS = 600
 /**
- * A group is not decided where the bound on what was left out exceeds this, beside what was kept. It comes near only where a sum
- * fails (its weight is then about WRONG_SUM / WRONG_SUM_SPREAD), and such a result is in doubt either way.
+ * A group is not decided where the weight left out exceeds what was kept. It comes near only where a sum fails (its weight is then
+ * about WRONG_SUM / WRONG_SUM_SPREAD; of the ways left out one in WRONG_SUM_SPREAD or so would hold), and such a result is in
+ * doubt either way.
  */
-export const MOST_LEFT_OUT = 0.5
+export const MOST_LEFT_OUT = 1
 /** A group that needs more steps than this is not decided (some 60 ms); counted in steps, so that the answer is the same on any machine. */
 export const MOST_STEPS = 600_000
 /** The whole sheet's limit, for machines that stall. */

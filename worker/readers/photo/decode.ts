@@ -1,13 +1,16 @@
-/** From a picture file to grey pixels, once a page. */
+/** From a picture file to pixels, once a page. */
 import { UserError } from '../../../shared/errors.ts'
 import { FILE_LIMITS } from '../../../shared/limits.ts'
-import type { Grey } from '../../../shared/reading/pixels/grey.ts'
+import type { Raster } from './raster.ts'
 
 const loadSharp = async () => {
   const { default: sharp } = await import('sharp')
   // The cache only grows: each page is seen once.
   sharp.cache(false)
   sharp.concurrency(1)
+  // A stranger's file is never handed to a loader that is not needed.
+  sharp.block({ operation: ['VipsForeignLoad'] })
+  sharp.unblock({ operation: ['VipsForeignLoadJpeg', 'VipsForeignLoadPng', 'VipsForeignLoadWebp', 'VipsForeignLoadTiff'] })
   return sharp
 }
 let loading: ReturnType<typeof loadSharp> | undefined
@@ -17,23 +20,38 @@ export const sharpOnce = () => {
   return loading
 }
 
-/**
- * Decodes JPEG, PNG, WebP or one page of a TIFF, turned upright as its camera noted.
- * @throws UserError too_large or not_accepted: what is wrong with the file, and what to do.
- */
-export async function decodeGrey(bytes: Uint8Array, page = 0): Promise<Grey> {
-  if (bytes.byteLength > FILE_LIMITS.photo_bytes) {
-    throw new UserError('too_large', 'The picture is larger than 25 MB. Nothing was kept of it. Send it in a lower quality.')
-  }
+const OPEN = { limitInputPixels: FILE_LIMITS.photo_pixels, failOn: 'truncated' } as const
+
+/** How many pages a JPEG, PNG, WebP or TIFF file holds. */
+export async function countImagePages(bytes: Uint8Array): Promise<number> {
   const sharp = await sharpOnce()
   try {
-    const { data, info } = await sharp(bytes, { limitInputPixels: FILE_LIMITS.photo_pixels, failOn: 'truncated', page })
+    const { pages, format } = await sharp(bytes, OPEN).metadata()
+    return format === 'tiff' ? Math.min(pages ?? 1, FILE_LIMITS.pdf_pages) : 1
+  } catch (cause) {
+    throw pictureError(cause)
+  }
+}
+
+/**
+ * Decodes JPEG, PNG, WebP or one page (from 0) of a TIFF, turned upright as its camera noted.
+ * @throws UserError too_large or not_accepted: what is wrong with the file, and what to do.
+ */
+export async function decodeImage(bytes: Uint8Array, page: number, colour: boolean): Promise<Raster> {
+  const sharp = await sharpOnce()
+  try {
+    const upright = sharp(bytes, { ...OPEN, page })
       .autoOrient()
       .flatten({ background: '#ffffff' })
-      .greyscale()
-      .raw()
-      .toBuffer({ resolveWithObject: true })
-    return { width: info.width, height: info.height, data: new Uint8Array(data.buffer, data.byteOffset, data.byteLength) }
+    const wanted = colour ? upright.toColourspace('srgb') : upright.greyscale()
+    const { data, info } = await wanted.raw().toBuffer({ resolveWithObject: true })
+    const channels = info.channels === 1 || info.channels === 3 ? info.channels : 4
+    return {
+      width: info.width,
+      height: info.height,
+      channels,
+      data: new Uint8Array(data.buffer, data.byteOffset, data.byteLength),
+    }
   } catch (cause) {
     throw pictureError(cause)
   }
@@ -43,6 +61,13 @@ export function pictureError(cause: unknown): UserError {
   const message = cause instanceof Error ? cause.message : String(cause)
   if (/pixel limit/i.test(message)) {
     return new UserError('too_large', 'The picture has more than 50 million pixels. Send it in a smaller size.', { cause })
+  }
+  if (/unsupported image format|blocked/i.test(message)) {
+    return new UserError(
+      'wrong_kind',
+      'This is not a picture or PDF that can be read. Send JPEG, PNG, WebP, TIFF, HEIC or PDF.',
+      { cause },
+    )
   }
   return new UserError('not_accepted', 'The picture is damaged or incomplete. Take it again, or send the original file.', {
     cause,

@@ -1,35 +1,10 @@
-/** Area and rate by hand: the state is the list of counts so far, as few readings are tied and each has few options. */
+/** Area and rate by hand. */
 import { HECTARE_M2, type Tie } from '../../../layouts/tie.ts'
 import { fourSidedArea_m2 } from '../area.ts'
 import type { Chain } from '../chain.ts'
 import type { Variable } from '../variable.ts'
 import { type Ending, exact, NOT_WRITTEN, rounded, UNKNOWN } from './result.ts'
-
-type Counts = Array<number | null | undefined>
-
-/** A chain that keeps every count and judges them together at the end. */
-function tupleChain(length: number, judge: (counts: Counts) => Ending): Chain {
-  const endings = new Map<string, Ending>()
-  return {
-    start: '',
-    step(state, _at, count, to) {
-      to.weight = 1
-      to.state = `${state}${count === undefined ? '?' : count === null ? '-' : count};`
-    },
-    end(state) {
-      const key = String(state)
-      const known = endings.get(key)
-      if (known) return known
-      const counts = key
-        .split(';')
-        .slice(0, length)
-        .map((part) => (part === '?' ? undefined : part === '-' ? null : Number(part)))
-      const ending = judge(counts)
-      endings.set(key, ending)
-      return ending
-    },
-  }
-}
+import { tupleChain } from './tuple.ts'
 
 /** Readings in the order sides, diagonal, unit, equals. `options` are the unit's in the order of its counts. */
 export function areaChain(
@@ -37,7 +12,7 @@ export function areaChain(
   variables: ReadonlyArray<Variable>,
   options: ReadonlyArray<string>,
 ): Chain {
-  return tupleChain(variables.length, (counts) => {
+  return tupleChain((counts) => {
     const metres = counts.slice(0, 5).map((count, i) => (typeof count === 'number' ? count / 10 ** variables[i]!.places : count))
     const written = counts[6]
     if (written === null) return NOT_WRITTEN
@@ -57,7 +32,7 @@ export function rateChain(
   variables: ReadonlyArray<Variable>,
   options: ReadonlyArray<string>,
 ): Chain {
-  return tupleChain(variables.length, ([amount, area, unit, written]) => {
+  return tupleChain(([amount, area, unit, written]) => {
     if (written === null) return NOT_WRITTEN
     if (typeof amount !== 'number' || typeof area !== 'number' || typeof written !== 'number' || area === 0) return UNKNOWN
     return byUnit(unit, options, tie.squareMetres, (squareMetres) => {

@@ -3,6 +3,7 @@ import type { Tie } from '../../../layouts/tie.ts'
 import type { Chain, State } from '../chain.ts'
 import { APART, LATE, REVERSED } from '../thresholds.ts'
 import type { Variable } from '../variable.ts'
+import { tupleChain } from './tuple.ts'
 
 const DAY_MIN = 1440
 const LONGEST_RUN_MIN = 720
@@ -56,20 +57,14 @@ export function nearChain(tie: Extract<Tie, { kind: 'near' }>, variables: Readon
  */
 export function elapsedChain(variables: ReadonlyArray<Variable>): Chain {
   const unit = variables.map((v) => 10 ** v.places)
-  return {
-    start: '',
-    step(state, at, count, to) {
-      to.state = `${state}${typeof count === 'number' ? count / unit[at]! : '?'};`
-      to.weight = 1
-    },
-    end(state) {
-      const [less, greater, start, end] = String(state).split(';').map(Number) as [number, number, number, number]
-      const rise_h = greater - less
-      const run_h = ((end - start + DAY_MIN) % DAY_MIN) / 60
-      if (!Number.isFinite(rise_h + run_h)) return { holds: 0, fails: 0, silent: APART }
-      if (Math.abs(rise_h - run_h) <= 0.1 + 0.05 * run_h + 1e-9) return SILENT
-      const mechanical = rise_h >= 0.5 * run_h - 0.1 && rise_h <= 1.15 * run_h + 0.1
-      return { holds: 0, fails: 0, silent: mechanical ? 0.3 : APART / 2 }
-    },
-  }
+  const says = (silent: number) => ({ holds: 0, fails: 0, silent })
+  return tupleChain((counts) => {
+    const [less, greater, start, end] = counts.map((count, at) => (typeof count === 'number' ? count / unit[at]! : Number.NaN))
+    const rise_h = greater! - less!
+    const run_h = ((end! - start! + DAY_MIN) % DAY_MIN) / 60
+    if (!Number.isFinite(rise_h + run_h)) return says(APART)
+    if (Math.abs(rise_h - run_h) <= 0.1 + 0.05 * run_h + 1e-9) return SILENT
+    const mechanical = rise_h >= 0.5 * run_h - 0.1 && rise_h <= 1.15 * run_h + 0.1
+    return says(mechanical ? 0.3 : APART / 2)
+  })
 }
