@@ -43,7 +43,7 @@ export const tillageTies: ReadonlyArray<Tie> = [
   {
     kind: 'near',
     keys: ['fuel_temp_start_c', ...numbered('topup_temp_c', 3), 'fuel_temp_end_c'],
-    amount: 15,
+    amount: 25,
   },
 
   // Jar marked each 200 mL, jug each 100 mL; half a mark may be judged (rules Q06, Q07). Depths are written to half centimetres.
@@ -51,5 +51,5 @@ export const tillageTies: ReadonlyArray<Tie> = [
   { kind: 'marks', keys: numbered('topup_ml', 3), step: 100, half: 50 },
   { kind: 'marks', keys: ['fuel_used_written_ml'], step: 100, half: 50 },
   { kind: 'marks', keys: numbered('depth_cm', 10), step: 0.5 },
-  { kind: 'marks', keys: ['rpm_noload', 'rpm_load'], step: 50, half: 10 },
+  { kind: 'marks', keys: ['rpm_noload', 'rpm_load'], step: 10 },
 ]
