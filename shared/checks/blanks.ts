@@ -4,7 +4,7 @@ import type { Boxes, CheckContext } from './context.ts'
 import { AIR_TICKS, CIRCUIT_TICKS } from './fitting.ts'
 import type { LimitName } from './limits.ts'
 import { type Found, found, type Rule, type Severity } from './rule.ts'
-import { listed } from './text.ts'
+import { inside, listed, numbersListed } from './text.ts'
 
 /** Without these there is no result, or no knowing which trial it is. */
 const STOPPING = new Set<string>([
@@ -22,8 +22,18 @@ const QUAD = ['side_cd_m', 'side_da_m']
 
 const blank = (ctx: CheckContext, key: string) => ctx.readings[key] === null
 const filled = (ctx: CheckContext, key: string) => ctx.readings[key] !== null && ctx.readings[key] !== undefined
+/** "Depth 2 and 7": cells of one stem told by their numbers; others by their names. */
+function names(ctx: CheckContext, keys: readonly string[]): string {
+  const stems = new Set(keys.map((key) => stemOf(key).stem))
+  const numbers = keys.flatMap((key) => stemOf(key).n ?? [])
+  const first = keys[0]
+  if (first === undefined || stems.size > 1 || numbers.length < 2)
+    return listed(keys.map((key, i) => (i === 0 ? ctx.label(key) : inside(ctx.label(key)))))
+  return ctx.label(first).replace(/\d+/, numbersListed(numbers))
+}
+
 const told = (ctx: CheckContext, severity: Severity, keys: string[], why: string): Found =>
-  found(severity, keys, `${listed(keys.map(ctx.label))} ${keys.length > 1 ? 'are' : 'is'} blank${why}.`, { blank: keys.length })
+  found(severity, keys, `${names(ctx, keys)} left blank${why}.`, { blank: keys.length })
 
 /** Cells another rule asks for: signatures and consent, and the units of written numbers. */
 const ELSEWHERE = ['sign_', 'consent_', 'area_unit', 'tyre_p_unit']
@@ -53,7 +63,7 @@ function conditional(ctx: CheckContext): Found[] {
     const [t, temp] = [key.replace('_ml', '_t'), key.replace('_ml', '_temp_c')]
     if (blank(ctx, key) && (filled(ctx, t) || filled(ctx, temp)))
       out.push(
-        found('stop', [key, t], `${ctx.label(t)} is written, its mL are blank: no fuel figure without them.`, {
+        found('stop', [key, t], `${ctx.label(t)} is written, its mL left blank: no fuel figure without them.`, {
           [t]: ctx.text(t) ?? '',
         }),
       )
@@ -67,7 +77,7 @@ function conditional(ctx: CheckContext): Found[] {
         found(
           stop.engineOff ? 'stop' : 'doubt',
           [...missing, ...(stop.engineOff ? ['t_start', 't_end'] : [])],
-          `${listed(missing.map(ctx.label))} ${missing.length > 1 ? 'are' : 'is'} blank: how long was the stop?`,
+          `${names(ctx, missing)} left blank: how long was the stop?`,
           { stop: stop.n },
         ),
       )

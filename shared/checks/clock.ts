@@ -1,8 +1,9 @@
 /** Clock readings: their order, midnight, and what the time was spent on. */
 import { clockMinutes, clockText, type Run, sinceStart } from '../trial/clock.ts'
+import { stemOf } from './cells.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
-import { figure, inside } from './text.ts'
+import { figure, leading } from './text.ts'
 
 interface Moment {
   key: string
@@ -11,6 +12,15 @@ interface Moment {
 }
 
 type KnownRun = Extract<Run, { state: 'known' }>
+
+/** How a clock reading is spoken of. */
+const SPOKEN: Readonly<Record<string, string>> = {
+  t_start: 'the start',
+  t_end: 'the end',
+  jar_start_t: 'the first jar reading',
+  jar_end_t: 'the last jar reading',
+}
+const spoken = ({ key, clock }: Moment) => `${SPOKEN[key] ?? `top-up ${stemOf(key).n}`} at ${clock}`
 
 function moment(ctx: CheckContext, run: KnownRun, key: string): Moment[] {
   const clock = ctx.text(key)
@@ -71,12 +81,10 @@ function outOfOrder(ctx: CheckContext, run: KnownRun): Found[] {
     const before = line[i - 1]
     if (!before || before.at < next.at) return []
     return [
-      found(
-        'stop',
-        [before.key, next.key],
-        `${ctx.label(next.key)} ${next.clock} does not come after ${inside(ctx.label(before.key))} ${before.clock}.`,
-        { [before.key]: before.clock, [next.key]: next.clock },
-      ),
+      found('stop', [before.key, next.key], `${leading(spoken(next))} does not come after ${spoken(before)}.`, {
+        [before.key]: before.clock,
+        [next.key]: next.clock,
+      }),
     ]
   })
 }
@@ -249,7 +257,7 @@ const r05: Rule = {
       found(
         'doubt',
         [key, m.key],
-        `${ctx.label(m.key)} ${m.clock}, ${inside(ctx.label(key))} ${ctx.text(key)}: more than ${slack} min apart.`,
+        `${leading(spoken(m))}, ${spoken({ key, at: 0, clock: ctx.text(key) ?? '' })}: more than ${slack} min apart.`,
         { [key]: ctx.text(key) ?? '', [m.key]: m.clock },
       )
     return [...late.map((m) => told('t_start', m)), ...early.map((m) => told('t_end', m))]

@@ -53,7 +53,7 @@ export function contextOf(readings: Readings, handedFacts: Facts, options: Check
   const facts = factsWithReadings(readings, handedFacts)
   const run = runOf(readings)
   const fuel = measureFuel(readings, facts)
-  const label = (key: string) => leading(options.labels?.[key] ?? labelOf(key))
+  const label = (key: string) => leading((CELLS[stemOf(key).stem]?.told ? undefined : options.labels?.[key]) ?? labelOf(key))
   return {
     readings,
     facts,

@@ -1,5 +1,6 @@
 /** The fitting of the jar and the check list: what was not ticked. */
 import type { CheckContext } from './context.ts'
+import { dayNumber } from './dates.ts'
 import { found, type Rule } from './rule.ts'
 import { figure } from './text.ts'
 
@@ -91,7 +92,7 @@ const r04: Rule = {
   check: (ctx) => {
     const checked = ctx.facts.kitCheckedOn ?? null
     const day = ctx.text('trial_date') ?? ctx.facts.today ?? null
-    if (checked === null || day === null) return []
+    if (checked === null || day === null || dayNumber(checked) === null || dayNumber(day) === null) return []
     const months = monthsBetween(checked, day)
     const most = ctx.limit('kit_check_months')
     // Twelve months to the day are still twelve.

@@ -1,4 +1,5 @@
 /** Readings outside what their instrument shows, or what is usual. Cells with a rule of their own are left to it. */
+import { isUsable } from '../trial/readings.ts'
 import { stemOf } from './cells.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
@@ -82,4 +83,25 @@ const r02: Rule = {
   },
 }
 
-export const instrumentRules: readonly Rule[] = [r01, r02]
+/** Cells that hold a number: they have a unit, decimals or limits. */
+const isNumeric = (ctx: CheckContext, key: string) => {
+  const { unit, decimals, hard } = ctx.cell(key)
+  return unit !== undefined || decimals !== undefined || hard !== undefined || /^tyre_p_.[lr]$/.test(key)
+}
+
+const r07: Rule = {
+  id: 'R07',
+  version: 1,
+  name: 'no number',
+  severity: ['stop'],
+  cells: [],
+  why: 'Words, or a number beyond any instrument, where a number belongs.',
+  check: (ctx) =>
+    Object.entries(ctx.readings).flatMap(([key, value]) => {
+      if (value === undefined || value === null || isUsable(value)) return []
+      if (typeof value !== 'number' && !isNumeric(ctx, key)) return []
+      return [found('stop', [key], `${ctx.label(key)} reads "${value}": a number is needed.`, { [key]: String(value) })]
+    }),
+}
+
+export const instrumentRules: readonly Rule[] = [r01, r02, r07]

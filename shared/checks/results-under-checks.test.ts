@@ -83,9 +83,13 @@ describe('findings', () => {
   })
 
   it('speak with the words of the layout', () => {
-    const { findings } = resultsUnderChecks(buildReadings({ jar_end_ml: 2050, fuel_used_written_ml: 3750 }), buildFacts(), {
-      labels: { jar_end_ml: 'jar at the end' },
-    })
+    const { findings } = resultsUnderChecks(
+      buildReadings({ jar_end_ml: 2050, fuel_used_written_ml: 3750, l_per_ha_written: 13.89 }),
+      buildFacts(),
+      {
+        labels: { jar_end_ml: 'jar at the end' },
+      },
+    )
     expect(findings.map((f) => f.text)).toEqual(["Jar at the end 2050 mL is finer than the jar's marks of 200 mL."])
   })
 

@@ -22,3 +22,10 @@ export const inside = (label: string): string =>
 
 /** The first letter large, for a label that begins a sentence. */
 export const leading = (label: string): string => label.charAt(0).toUpperCase() + label.slice(1)
+
+/** Numbers of repeated cells: "2 and 7", "1 to 10". */
+export function numbersListed(numbers: readonly number[]): string {
+  const [first, last] = [numbers[0], numbers.at(-1)]
+  const inRow = first !== undefined && last !== undefined && numbers.length > 2 && last - first === numbers.length - 1
+  return inRow ? `${first} to ${last}` : listed(numbers)
+}

@@ -67,7 +67,7 @@ export function derive(inputs: readonly Measure[], compute: (...values: number[]
     known_.push(input)
   }
   const values = known_.map((m) => m.value)
-  const value = compute(...values)
+  const value = finiteOrNaN(values, compute)
   const cells = distinct(known_.flatMap((m) => m.cells))
   if (!Number.isFinite(value))
     return { known: false, reason: { code: 'impossible', text: 'The readings give no finite figure.' }, cells }
@@ -75,13 +75,29 @@ export function derive(inputs: readonly Measure[], compute: (...values: number[]
     const slope = slopeAt(values, i, compute)
     return m.parts.map((part) => ({ name: part.name, u: Math.abs(slope) * part.u }))
   })
+  if (!parts.every((part) => Number.isFinite(part.u)))
+    return { known: false, reason: { code: 'impossible', text: 'The readings give no finite figure.' }, cells }
   return known(value, cells, gathered(parts), distinct(known_.flatMap((m) => m.assumes)))
+}
+
+/** A formula refuses what has no figure (a division by nought) with a RangeError: here that is an answer. Other errors are bugs. */
+function finiteOrNaN(values: readonly number[], compute: (...values: number[]) => number): number {
+  try {
+    return compute(...values)
+  } catch (error) {
+    if (error instanceof RangeError) return Number.NaN
+    throw error
+  }
 }
 
 function slopeAt(values: readonly number[], i: number, compute: (...values: number[]) => number): number {
   const x = values[i] ?? 0
   // The step that balances cut-off and rounding for a central difference.
   const step = Math.cbrt(Number.EPSILON) * Math.max(Math.abs(x), 1e-3)
-  const at = (shift: number) => compute(...values.map((v, j) => (j === i ? v + shift : v)))
+  const at = (shift: number) =>
+    finiteOrNaN(
+      values.map((v, j) => (j === i ? v + shift : v)),
+      compute,
+    )
   return (at(step) - at(-step)) / (2 * step)
 }

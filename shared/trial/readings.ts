@@ -9,10 +9,17 @@ export interface Repeat {
   value: number
 }
 
-/** The number in a cell; null when absent, blank, or not a number. */
+/** Beyond any instrument and any hand: a spreadsheet cell may still hold it, and no formula is asked about it. */
+const LARGEST = 1e9
+
+/** A number formulas and rules can work with. */
+export const isUsable = (value: ReadingValue | undefined): value is number =>
+  typeof value === 'number' && Math.abs(value) <= LARGEST
+
+/** The number in a cell; null when absent, blank, or not a usable number (rule R07 tells of those). */
 export function numberAt(readings: Readings, key: string): number | null {
   const value = readings[key]
-  return typeof value === 'number' && Number.isFinite(value) ? value : null
+  return isUsable(value) ? value : null
 }
 
 /** The text in a cell; null when absent, blank, or not text. */

@@ -67,6 +67,18 @@ export function resultOf(key: ResultKey, measure: Measure, formula: string = RES
   const base = { key, label: RESULTS[key].label, unit: RESULTS[key].unit, k: COVERAGE_K, from: measure.cells, formula }
   if (!measure.known) return { ...base, value: null, u: null, U: null, assumes: [], budget: [], reason: measure.reason }
   const u = measure.parts.length > 0 ? standardUncertainty(measure.parts) : null
+  // A spreadsheet cell may hold 1e300: its square is no figure any more.
+  if (!Number.isFinite(measure.value) || !Number.isFinite(u ?? 0)) {
+    return {
+      ...base,
+      value: null,
+      u: null,
+      U: null,
+      assumes: [],
+      budget: [],
+      reason: { code: 'impossible', text: 'The readings give no finite figure.' },
+    }
+  }
   const budget = [...measure.parts].sort((a, b) => b.u - a.u)
   return {
     ...base,
