@@ -1,8 +1,8 @@
 /** Brings a database up to date: tables, the queue's own schema, and what the application's role may do. */
-import { JOBS } from '../../shared/jobs.ts'
+import { JOBS, type JobName } from '../../shared/jobs.ts'
 import { APP_ROLE } from '../postgres/roles.ts'
 import { createDataSource } from './database.ts'
-import { createBoss, QUEUE_OPTIONS } from './queue.ts'
+import { createBoss, failedQueue, queueOptions } from './queue.ts'
 
 const quote = (name: string) => `"${name.replaceAll('"', '""')}"`
 
@@ -13,9 +13,13 @@ const quote = (name: string) => `"${name.replaceAll('"', '""')}"`
 export async function migrate(ownerUrl: string, appRole: string = APP_ROLE): Promise<void> {
   const boss = createBoss(ownerUrl, { owner: true })
   await boss.start()
-  for (const name of Object.keys(JOBS)) {
-    await boss.createQueue(`${name}-failed`, { name: `${name}-failed`, policy: 'standard' })
-    await boss.createQueue(name, { name, policy: 'standard', deadLetter: `${name}-failed`, ...QUEUE_OPTIONS })
+  for (const name of Object.keys(JOBS) as JobName[]) {
+    const failed = failedQueue(name)
+    const options = { name, policy: 'standard', deadLetter: failed, ...queueOptions(name) } as const
+    await boss.createQueue(failed, { name: failed, policy: 'standard' })
+    await boss.createQueue(name, options)
+    // A queue made by an earlier version keeps its old options unless told.
+    await boss.updateQueue(name, options)
   }
   await boss.stop({ graceful: true, wait: true })
   const source = await createDataSource(ownerUrl, { poolSize: 1 }).initialize()

@@ -5,18 +5,27 @@ import type { Db } from './database.ts'
 
 /**
  * A page takes about a second; a job still running after 30 s is lost, and the maintenance tick gives it to another worker.
- * Together with the tick that keeps a killed worker's page away for at most 45 s. After three deaths the page is given up.
+ * After three deaths the page is given up. A mail waits for its server: nine attempts, the last four to nine hours after the first.
  */
 export const QUEUE_OPTIONS = { retryLimit: 2, retryDelay: 1, expireInSeconds: 30, retentionDays: 14 } as const
-export const MAINTENANCE_S = 10
+const MAIL_OPTIONS = { ...QUEUE_OPTIONS, retryLimit: 8, retryDelay: 60, retryBackoff: true } as const
+export const queueOptions = (name: JobName) => (name === 'mail-send' ? MAIL_OPTIONS : QUEUE_OPTIONS)
+/** Where a job goes whose attempts are used up: its handler says so to whoever waits. */
+export const failedQueue = <N extends JobName>(name: N) => `${name}-failed` as const
 
-export function createBoss(url: string, options: { owner?: boolean } = {}): PgBoss {
+/**
+ * A tick that comes a moment early is skipped by the queue, so the next one counts: a killed worker's page is away for at most
+ * expiry + 2 ticks + retry delay + one look at the queue (0.5 s), which must stay within 45 s.
+ */
+export const MAINTENANCE_S = 5
+
+export function createBoss(url: string, options: { owner?: boolean; maintenance_s?: number } = {}): PgBoss {
   return new PgBoss({
     connectionString: url,
     migrate: options.owner ?? false,
     supervise: !options.owner,
     schedule: false,
-    maintenanceIntervalSeconds: MAINTENANCE_S,
+    maintenanceIntervalSeconds: options.maintenance_s ?? MAINTENANCE_S,
     max: 4,
   })
 }

@@ -29,6 +29,8 @@ export interface TakenPage {
   fileName: string
   kind: UploadKind
   storageKey: string | null
+  /** Of an earlier reading. */
+  pictureKey: string | null
 }
 
 /**
@@ -40,7 +42,7 @@ export async function takePage(db: Db, pageId: string): Promise<TakenPage | null
     `UPDATE pages p SET attempt_token = gen_random_uuid(), attempts = p.attempts + 1, state = 'being read'
      FROM uploads u WHERE p.id = $1 AND u.id = p.upload_id AND p.state IN ('arrived', 'being read')
      RETURNING p.id, p.number, p.attempt_token AS "attemptToken", p.attempts, p.block, p.placed, p.sheet_id AS "sheetId",
-       u.id AS "uploadId", u.file_name AS "fileName", u.kind, u.storage_key AS "storageKey"`,
+       u.id AS "uploadId", u.file_name AS "fileName", u.kind, u.storage_key AS "storageKey", p.picture_key AS "pictureKey"`,
     [pageId],
   )
   const taken = rows[0] ?? null
@@ -69,11 +71,21 @@ export async function findShownPage(db: Db, pageId: string): Promise<ShownPage |
   return rows[0] ?? null
 }
 
-/** The pages of an upload that no attempt has finished. */
-export async function listOpenPages(db: Db, uploadId: string): Promise<string[]> {
-  const rows: Array<{ id: string }> = await db.query(
-    "SELECT id FROM pages WHERE upload_id = $1 AND state IN ('arrived', 'being read') ORDER BY number",
+/** Is the page still in the hands of this attempt? */
+export async function holdsPage(db: Db, page: Pick<TakenPage, 'id' | 'attemptToken'>): Promise<boolean> {
+  const rows: unknown[] = await db.query('SELECT 1 FROM pages WHERE id = $1 AND attempt_token = $2', [page.id, page.attemptToken])
+  return rows.length === 1
+}
+
+/**
+ * Locks an upload whose pages are to be made.
+ * @returns false when it is gone, refused or has its pages already
+ */
+export async function lockForSplitting(db: Db, uploadId: string): Promise<boolean> {
+  const rows: Array<{ pages: number }> = await db.query(
+    `SELECT (SELECT count(*) FROM pages WHERE upload_id = u.id) AS pages FROM uploads u
+     WHERE id = $1 AND state IN ('arrived', 'being read') FOR UPDATE`,
     [uploadId],
   )
-  return rows.map((row) => row.id)
+  return rows[0] !== undefined && Number(rows[0].pages) === 0
 }

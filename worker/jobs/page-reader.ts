@@ -1,0 +1,26 @@
+/** What the page job asks of the photo reader: the real one stands in read-photo.ts, tests hand in a fake. */
+import type { PageEntity } from '../../server/db/entities/upload.ts'
+import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
+import type { UploadKind } from '../../shared/schemas/upload.ts'
+
+export interface PagePicture {
+  bytes: Uint8Array
+  fileName: string
+  kind: UploadKind
+  /** From 1. */
+  page: number
+  /** Where a clerk placed the page by hand. */
+  placed: PageEntity['placed']
+}
+
+export interface ReadPicture {
+  outcome: PageOutcome
+  /** The flattened page as JPEG, when it could be placed. */
+  picture: Uint8Array | null
+}
+
+export interface PageReader {
+  /** An unreadable picture is an outcome; what is thrown is a fault, and the page is tried again. */
+  read(picture: PagePicture, signal: AbortSignal): Promise<ReadPicture>
+  close(): Promise<void>
+}
