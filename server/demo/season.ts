@@ -18,16 +18,16 @@ export interface DemoRun {
 export const RUNS_A_TRIAL = 3
 
 /** Two tractors with the same implement on one day: what a comparison later needs. */
-const DAYS: ReadonlyArray<
-  readonly [
-    heldOn: string,
-    place: number,
-    demonstrator: number,
-    tractors: readonly [number, number],
-    implement: number,
-    kit: number,
-  ]
-> = [
+type Day = readonly [
+  heldOn: string,
+  place: number,
+  demonstrator: number,
+  tractors: readonly [number, number],
+  implement: number,
+  kit: number,
+]
+
+const DAYS: readonly Day[] = [
   ['2026-09-16', 1, 101, [11, 14], 21, 31],
   ['2026-09-23', 2, 102, [12, 15], 22, 32],
   ['2026-09-30', 4, 103, [11, 14], 23, 33],
@@ -44,18 +44,24 @@ function codeOf(seed: string): string {
   return makeSheetCode((below) => createHash('sha256').update(`demo season|${seed}|${taken++}`).digest().readUInt32BE() % below)
 }
 
-export const ROW_RUNS: readonly DemoRun[] = DAYS.flatMap(([heldOn, place, demonstrator, tractors, implement, kit]) =>
-  tractors.flatMap((tractor, t) =>
-    Array.from({ length: RUNS_A_TRIAL }, (_, i) => ({
-      heldOn,
-      place,
-      demonstrator,
-      tractor,
-      implement,
-      kit,
-      plot: t === 0 ? 'A, by the road' : 'B, by the ditch',
-      run: i + 1,
-      sheetCode: codeOf(`${heldOn}|${tractor}|${i + 1}`),
-    })),
-  ),
-)
+const runsOf = (days: readonly Day[]): DemoRun[] =>
+  days.flatMap(([heldOn, place, demonstrator, tractors, implement, kit]) =>
+    tractors.flatMap((tractor, t) =>
+      Array.from({ length: RUNS_A_TRIAL }, (_, i) => ({
+        heldOn,
+        place,
+        demonstrator,
+        tractor,
+        implement,
+        kit,
+        plot: t === 0 ? 'A, by the road' : 'B, by the ditch',
+        run: i + 1,
+        sheetCode: codeOf(`${heldOn}|${tractor}|${i + 1}`),
+      })),
+    ),
+  )
+
+/** Runs whose rows came in clean and were entered. */
+export const ROW_RUNS: readonly DemoRun[] = runsOf(DAYS)
+/** Runs whose rows have something wrong with them: they wait at the desk. */
+export const TROUBLE_RUNS: readonly DemoRun[] = runsOf([['2026-11-19', 4, 103, [12, 15], 23, 33]])

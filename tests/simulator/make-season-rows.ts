@@ -4,7 +4,7 @@
  */
 import { mkdir, writeFile } from 'node:fs/promises'
 import { IMPLEMENTS, KITS, TRACTORS } from '../../server/demo/registers.ts'
-import { type DemoRun, ROW_RUNS } from '../../server/demo/season.ts'
+import { type DemoRun, ROW_RUNS, TROUBLE_RUNS } from '../../server/demo/season.ts'
 import { csvLine } from '../../server/print/csv-text.ts'
 import { judgeSheet } from '../../shared/checks/judge-sheet.ts'
 import { csvHeading, FORM_HEAD, formRows } from '../../shared/layouts/form.ts'
@@ -70,17 +70,37 @@ function rowOf(run: DemoRun): Record<string, Written> {
   throw new Error(`no draw of ${run.sheetCode} passes the rules after ${TRIES} tries`)
 }
 
+/** One thing wrong with each, as it comes from the field. */
+const TROUBLES: ReadonlyArray<(r: Record<string, Written>) => Record<string, Written>> = [
+  (r) => ({ area_written: Math.round(Number(r.area_written) * (r.area_unit === 'acre' ? 0.404686 : 2.471054) * 1000) / 1000 }),
+  () => ({ vent_open: false }),
+  (r) => ({ fuel_used_written_ml: Number(r.fuel_used_written_ml) + 400 }),
+  (r) => ({
+    tyre_p_rl: Math.round(Number(r.tyre_p_rl) * 0.7 * 100) / 100,
+    depth_mean_written_cm: Number(r.depth_mean_written_cm) + 1,
+  }),
+  () => ({ tyre_p_unit: null, soil_class: null }),
+  (r) => ({ jar_start_ml: Number(r.jar_end_ml), jar_end_ml: Number(r.jar_start_ml) }),
+]
+
 const rows = formRows(tillage1)
 const written = (value: Written | undefined) =>
   value === undefined || value === null ? '' : value === true ? 'yes' : value === false ? 'no' : value
-const lines = ROW_RUNS.map((run) => {
-  const values = rowOf(run)
-  return csvLine([tillage1.key, tillage1.version, '.', run.sheetCode, ...rows.map((r) => written(values[r.key]))])
-})
+const heading = csvLine([
+  FORM_HEAD.layout,
+  FORM_HEAD.version,
+  FORM_HEAD.decimalMark,
+  FORM_HEAD.sheetCode,
+  ...rows.map(csvHeading),
+])
+const lineOf = (run: DemoRun, values: Record<string, Written>) =>
+  csvLine([tillage1.key, tillage1.version, '.', run.sheetCode, ...rows.map((r) => written(values[r.key]))])
+
 await mkdir('samples/season', { recursive: true })
-await writeFile(
-  'samples/season/rows.csv',
-  csvLine([FORM_HEAD.layout, FORM_HEAD.version, FORM_HEAD.decimalMark, FORM_HEAD.sheetCode, ...rows.map(csvHeading)]) +
-    lines.join(''),
-)
-process.stdout.write(`samples/season/rows.csv: ${lines.length} runs\n`)
+await writeFile('samples/season/rows.csv', heading + ROW_RUNS.map((run) => lineOf(run, rowOf(run))).join(''))
+const troubled = TROUBLE_RUNS.map((run, i) => {
+  const values = rowOf(run)
+  return lineOf(run, { ...values, ...TROUBLES[i % TROUBLES.length]!(values) })
+})
+await writeFile('samples/season/trouble.csv', heading + troubled.join(''))
+process.stdout.write(`samples/season: ${ROW_RUNS.length} runs, ${troubled.length} with trouble\n`)
