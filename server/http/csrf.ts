@@ -19,8 +19,7 @@ export function refuseForeignWrites(publicUrl: string) {
     const from = req.get('origin')
     const foreign = (site !== undefined && site !== 'same-origin') || (from !== undefined && !ours(req, from))
     if (foreign) throw new UserError('not_allowed', 'A page of another site sent this. Nothing was changed.')
-    if (req.get('x-sheafbook') === undefined)
-      throw new UserError('not_allowed', 'Writes need the header X-Sheafbook. Nothing was changed.')
+    if (!req.get('x-sheafbook')) throw new UserError('not_allowed', 'Writes need the header X-Sheafbook. Nothing was changed.')
     next()
   }
 }
