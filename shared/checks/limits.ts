@@ -53,6 +53,7 @@ export const LIMITS = {
   fuel_cap_l_kwh: limit(0.316 * 1.05, 'L/kWh', '[F] full load of D497.7, and 5 %'),
   fuel_cap_stop_l_kwh: limit(0.423, 'L/kWh', '[F] full load of D497.4'),
   fuel_floor_l_kwh: limit(0.05, 'L/kWh', '[P] near idle'),
+  load_model_pct: limit(35, '%', '[P] the model is rough'),
   band_note_low: limit(0.65, '', '[F] Iowa State A3-27: about a third either way'),
   band_note_high: limit(1.35, '', '[F] Iowa State A3-27'),
   band_doubt_low: limit(0.4, '', '[P]'),

@@ -9,6 +9,7 @@ import { copyRules } from './copies.ts'
 import { dateRules } from './dates.ts'
 import { fittingRules } from './fitting.ts'
 import { fuelRules } from './fuel.ts'
+import { fuelLoadRules } from './fuel-load.ts'
 import { hourMeterRules } from './hour-meter.ts'
 import { instrumentRules } from './instrument.ts'
 import { jarRules } from './jar.ts'
@@ -30,6 +31,7 @@ export const RULES: readonly Rule[] = [
   dateRules,
   fittingRules,
   fuelRules,
+  fuelLoadRules,
   hourMeterRules,
   instrumentRules,
   jarRules,

@@ -161,4 +161,12 @@ export const FUEL_CASES: readonly Case[] = [
     sheet({ fuel_temp_start_c: null, fuel_temp_end_c: null, 'topup_temp_c[1]': null }, { airTemp_c: 36 }),
     sheet({ fuel_temp_start_c: null, fuel_temp_end_c: null, 'topup_temp_c[1]': null }, { airTemp_c: 35 }),
   ),
+  // E14: 4.83 L/h by the model; 35 % more is 6.52 L/h, 3800 mL in 34.97 min.
+  row(
+    'Q31',
+    'note',
+    sheet({ t_end: '09:44', jar_end_t: '09:44' }),
+    sheet({ t_end: '09:46', jar_end_t: '09:46' }),
+    'by draft and throttle',
+  ),
 ]
