@@ -19,7 +19,7 @@ export const MACHINES: readonly Machine[] = [
   { implement_id: 21, width_m: 0.9, depth_cm: [14, 19], speed_kmh: [3.8, 5.2], fuel_l_ha: [14, 20] },
   { implement_id: 22, width_m: 1.2, depth_cm: [14, 20], speed_kmh: [4, 5.5], fuel_l_ha: [14, 20] },
   { implement_id: 23, width_m: 2.2, depth_cm: [7, 13], speed_kmh: [4.5, 6.5], fuel_l_ha: [7, 11] },
-  { implement_id: 24, width_m: 2, depth_cm: [7, 12], speed_kmh: [4.5, 6.5], fuel_l_ha: [7, 11] },
+  { implement_id: 24, width_m: 2, depth_cm: [7, 12], speed_kmh: [4.5, 6.5], fuel_l_ha: [5, 8] },
   { implement_id: 25, width_m: 1.6, depth_cm: [8, 14], speed_kmh: [2.4, 4], fuel_l_ha: [11, 17] },
   { implement_id: 26, width_m: 1, depth_cm: [32, 46], speed_kmh: [3, 4.4], fuel_l_ha: [16, 24] },
 ]
@@ -45,6 +45,8 @@ export interface TillageOptions {
   /** Register numbers and date the plan or the demonstration season gives; random ones otherwise. */
   head?: Record<string, Written>
   machine?: Machine
+  /** true: enough is burned that the jar's marks do not swamp the figure. */
+  worthwhile?: boolean
 }
 
 const mean = (values: readonly number[]) => values.reduce((sum, v) => sum + v, 0) / values.length
@@ -62,10 +64,13 @@ function headOf(chance: Chance, machine: Machine): Record<string, Written> {
   }
 }
 
-/** A rectangle, or now and then a plot of four unlike sides with its diagonals. Area in m². */
-function plotOf(chance: Chance) {
-  const length = toPlaces(chance.between(42, 110), 1)
-  const breadth = toPlaces(chance.between(22, 58), 1)
+/** A rectangle, or now and then a plot of four unlike sides with its diagonals; passes run along A-B. Areas in m². */
+function plotOf(chance: Chance, least_m2: number) {
+  let length = chance.between(42, 110)
+  let breadth = length * chance.between(0.4, 0.78)
+  const grow = Math.max(1, Math.sqrt(least_m2 / (length * breadth)))
+  length = toPlaces(length * grow, 1)
+  breadth = toPlaces(breadth * grow, 1)
   if (chance.odds(0.75)) {
     const readings = { side_ab_m: length, side_bc_m: breadth, side_cd_m: null, side_da_m: null, diag_ac_m: null, diag_bd_m: null }
     return { readings, area_m2: length * breadth, length, breadth }
@@ -98,64 +103,83 @@ function plotOf(chance: Chance) {
   }
 }
 
-/** Jar levels to the mark, top-ups so that the jar never falls below half a litre. */
-function fuelOf(chance: Chance, need_ml: number) {
-  const halfMarks = chance.odds(0.3)
-  const step = halfMarks ? 100 : 200
-  const start = 5000 - step * chance.whole(0, halfMarks ? 9 : 5)
-  const topups: number[] = []
-  let used = step * Math.max(4, Math.round(need_ml / step))
-  while (start + topups.reduce((a, b) => a + b, 0) - used < 600 && topups.length < 3) {
-    topups.push(chance.odds(0.7) ? 1000 : 100 * chance.whole(4, 9))
+interface FuelLog {
+  start: number
+  /** Filled in, and when, as a share of the run. */
+  topups: Array<{ ml: number; at: number }>
+  end: number
+  used: number
+}
+
+/** Levels to the mark; top-ups so that the jar neither runs over nor falls below 600 mL. */
+function fuelOf(chance: Chance, need_ml: number): FuelLog {
+  const step = chance.odds(0.3) ? 100 : 200
+  const used = step * Math.max(4, Math.round(need_ml / step))
+  const fill = () => (chance.odds(0.7) ? 1000 : step === 100 ? 100 * chance.whole(4, 9) : 200 * chance.whole(2, 4))
+  const fillings: number[] = chance.odds(0.35) ? [fill()] : []
+  for (;;) {
+    const topups = fillings.map((ml, i) => ({ ml, at: (i + 1) / (fillings.length + 1.2) }))
+    let filled = 0
+    const highest = [5000 - step * chance.whole(0, 4)]
+    for (const { ml, at } of topups) {
+      filled += ml
+      highest.push(4850 - filled + used * at)
+    }
+    const start = Math.floor(Math.min(...highest) / step) * step
+    const end = start + filled - used
+    if (end >= 600 || fillings.length === 3) return { start, topups, end, used }
+    fillings.push(1000)
   }
-  if (topups.length === 0 && chance.odds(0.4)) topups.push(chance.odds(0.6) ? 1000 : 100 * chance.whole(3, 9))
-  const filled = topups.reduce((a, b) => a + b, 0)
-  let end = Math.floor((start + filled - used) / step) * step
-  end = Math.max(600, Math.min(5000, end))
-  used = start + filled - end
-  return { start, topups, end, used }
 }
 
 /** Values for every cell of the tillage sheet. */
 export function tillageScenario(chance: Chance, options: TillageOptions = {}): Scenario {
   const machine = options.machine ?? chance.pick(MACHINES)
   const head = options.head ?? headOf(chance.fork('head'), machine)
-  const plot = plotOf(chance.fork('plot'))
   const maybe = (share: number, value: Written): Written => (chance.odds(share) ? value : null)
 
   const rate = chance.between(...machine.fuel_l_ha)
-  const fuel = fuelOf(chance.fork('fuel'), Math.min(6800, (rate * plot.area_m2) / 10))
+  const plot = plotOf(chance.fork('plot'), options.worthwhile ? (2.4 / rate) * 10_000 : 0)
+  const fuel = fuelOf(chance.fork('fuel'), Math.min(6000, (rate * plot.area_m2) / 10))
   const speed = chance.between(...machine.speed_kmh)
-  const capacity_ha_h = (machine.width_m * speed * chance.between(0.68, 0.86)) / 10
-  const run_min = Math.max(18, Math.round((plot.area_m2 / 10_000 / capacity_ha_h) * 60))
+  const capacity_ha_h = (machine.width_m * speed * chance.between(0.66, 0.8)) / 10
+  const run_min = Math.max(20, Math.round((plot.area_m2 / 10_000 / capacity_ha_h) * 60))
   const start_min = chance.whole(7 * 60, 14 * 60 + 30)
-  const stops = Math.min(3, fuel.topups.length + (chance.odds(0.3) ? 1 : 0))
-  const stopLengths = Array.from({ length: stops }, () => chance.whole(2, 9))
-  const end_min = start_min + run_min + stopLengths.reduce((a, b) => a + b, 0)
+  const end_min = start_min + run_min
+  const atMinute = (share: number) => Math.round(start_min + run_min * share)
+  const stopsAt = fuel.topups.map(({ at }) => atMinute(at))
+  if (stopsAt.length < 3 && chance.odds(0.3)) stopsAt.push(atMinute(0.9))
+  const longest = Math.max(2, Math.min(7, Math.floor(run_min * 0.05)))
+  const stops = stopsAt.map((from) => {
+    const to = Math.min(end_min - 1, from + chance.whole(2, longest))
+    return { from, to, off: chance.odds(0.7) }
+  })
+  const off_min = stops.reduce((sum, { from, to, off }) => sum + (off ? to - from : 0), 0)
 
   const hour0 = toPlaces(chance.between(80, chance.odds(0.2) ? 14_000 : 4200), 1)
   const tyreUnit = chance.pick(['psi', 'kPa', 'bar', 'kgf/cm2'] as const)
   const tyres = tyreValues(chance.fork('tyres'), tyreUnit)
 
   const target = chance.between(...machine.depth_cm)
-  const depths = Array.from({ length: 10 }, () => Math.round(chance.normal(target, target * 0.05) * 2) / 2)
+  const near = (value: number, spread: number) => value + Math.max(-1.7, Math.min(1.7, chance.normal(0, 1))) * spread
+  const depths = Array.from({ length: 10 }, () => Math.round(near(target, target * 0.045) * 2) / 2)
   const width = machine.width_m * chance.between(0.93, 1.02)
   const widths = Array.from({ length: 5 }, () => toPlaces(chance.normal(width, 0.018 * machine.width_m), 2))
   const acres = chance.odds(0.25)
   const litres = fuel.used / 1000
-  const rpm = 50 * chance.whole(32, 46)
+  const rpm = 50 * chance.whole(32, 43)
   const lap = 20 / (speed / 3.6)
-  const turns = chance.odds(0.8) ? 10 : chance.pick([5, 8, 12, 20])
-  const rolled = turns * chance.between(3.6, 4.5)
-  const slipped = 1 - chance.between(0.06, 0.16)
+  const turns = chance.odds(0.8) ? 10 : chance.pick([5, 8, 12])
+  const rolled = turns * chance.between(3.9, 4.45)
+  const slipped = 1 - chance.between(0.05, 0.145)
   const soil = chance.pick(['fine', 'medium', 'coarse'])
 
   const readings: Record<string, Written> = {
     ...head,
-    ...Object.fromEntries(CHECKS.map((key) => [key, !chance.odds(0.025)])),
+    ...Object.fromEntries(CHECKS.map((key) => [key, options.worthwhile || !chance.odds(0.006)])),
     fuel_method: chance.odds(0.8) ? 'D' : 'L',
     hour_meter_start: hour0,
-    hour_meter_end: toPlaces(hour0 + (end_min - start_min) / 60 + chance.between(-0.04, 0.04), 1),
+    hour_meter_end: toPlaces(hour0 + (run_min - off_min) / 60, 1),
     gear_range: chance.pick(['L', 'M', 'H']),
     gear: chance.whole(1, 4),
     warmup_min: chance.whole(15, 30),
@@ -190,9 +214,9 @@ export function tillageScenario(chance: Chance, options: TillageOptions = {}): S
     closed_at: maybe(0.6, clock(end_min + chance.whole(26, 45))),
     circuit_restored_by: null,
     remarks: null,
-    sign_demonstrator: !chance.odds(0.02),
-    sign_operator: !chance.odds(0.03),
-    sign_farmer: !chance.odds(0.04),
+    sign_demonstrator: options.worthwhile || !chance.odds(0.02),
+    sign_operator: options.worthwhile || !chance.odds(0.03),
+    sign_farmer: options.worthwhile || !chance.odds(0.04),
     sign_witness: chance.odds(0.4),
   }
   depths.forEach((v, i) => {
@@ -207,17 +231,15 @@ export function tillageScenario(chance: Chance, options: TillageOptions = {}): S
     readings[`dist_load_m[${n}]`] = toPlaces(rolled * slipped + chance.normal(0, 0.12), 2)
     readings[`dist_noload_m[${n}]`] = toPlaces(rolled + chance.normal(0, 0.1), 2)
   }
-  const topped = fuel.topups.map((_, i) => Math.round(start_min + (run_min * (i + 1)) / (fuel.topups.length + 1.2)))
-  const atStop = Array.from({ length: stops }, (_, i) => topped[i] ?? Math.round(start_min + run_min * 0.93))
   for (let n = 1; n <= 3; n += 1) {
-    const ml = fuel.topups[n - 1]
-    readings[`topup_ml[${n}]`] = ml ?? null
-    readings[`topup_t[${n}]`] = ml === undefined ? null : clock(topped[n - 1]!)
-    readings[`topup_temp_c[${n}]`] = ml === undefined ? null : maybe(0.6, chance.whole(26, 40))
-    const from = atStop[n - 1]
-    readings[`stop_from[${n}]`] = from === undefined ? null : clock(from)
-    readings[`stop_to[${n}]`] = from === undefined ? null : clock(from + stopLengths[n - 1]!)
-    readings[`stop_engine_off[${n}]`] = from !== undefined && chance.odds(0.7)
+    const topup = fuel.topups[n - 1]
+    readings[`topup_ml[${n}]`] = topup?.ml ?? null
+    readings[`topup_t[${n}]`] = topup ? clock(atMinute(topup.at)) : null
+    readings[`topup_temp_c[${n}]`] = topup ? maybe(0.6, chance.whole(26, 34)) : null
+    const stop = stops[n - 1]
+    readings[`stop_from[${n}]`] = stop ? clock(stop.from) : null
+    readings[`stop_to[${n}]`] = stop ? clock(stop.to) : null
+    readings[`stop_engine_off[${n}]`] = stop?.off ?? false
   }
   return { readings, spoiled: [], wrongSum: [] }
 }
@@ -228,11 +250,11 @@ function tyreValues(chance: Chance, unit: 'psi' | 'kPa' | 'bar' | 'kgf/cm2'): Re
   const step = { psi: 1, kPa: 5, bar: 0.05, 'kgf/cm2': 0.05 }[unit]
   const places = step < 1 ? 2 : 0
   const one = (kpa: number) => toPlaces(Math.round((kpa * perKpa) / step) * step, places)
-  const [front, rear] = [chance.between(155, 240), chance.between(90, 150)]
+  const [front, rear] = [chance.between(155, 195), chance.between(95, 150)]
   return {
-    tyre_p_fl: one(front + chance.normal(0, 4)),
-    tyre_p_fr: one(front + chance.normal(0, 4)),
-    tyre_p_rl: one(rear + chance.normal(0, 3)),
-    tyre_p_rr: one(rear + chance.normal(0, 3)),
+    tyre_p_fl: one(front + chance.normal(0, 2.5)),
+    tyre_p_fr: one(front + chance.normal(0, 2.5)),
+    tyre_p_rl: one(rear + chance.normal(0, 1.5)),
+    tyre_p_rr: one(rear + chance.normal(0, 1.5)),
   }
 }
