@@ -1,0 +1,153 @@
+/** A database with somebody in it, pages to read, and workers to read them. */
+import { randomUUID } from 'node:crypto'
+import { pino } from 'pino'
+import type { DataSource } from '../../server/db/database.ts'
+import { openDatabase } from '../../server/db/database.ts'
+import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
+import { sendJob } from '../../server/db/queue.ts'
+import { insertPage } from '../../server/db/repositories/page.ts'
+import { insertUpload } from '../../server/db/repositories/upload.ts'
+import { createBoss } from '../../server/queue/boss.ts'
+import type { FileStore } from '../../server/storage/store.ts'
+import type { JobName } from '../../shared/jobs.ts'
+import { makeSheetCode } from '../../shared/layouts/sheet-code.ts'
+import type { JobHandler } from '../../worker/jobs/job-handler.ts'
+import { startWorker, type Worker } from '../../worker/start-worker.ts'
+import { createUser } from '../builders/user.ts'
+import { createTestDatabase, type TestDatabase } from '../support/database.ts'
+import { waitFor } from '../support/wait-for.ts'
+
+export const silent = pino({ level: 'silent' })
+
+export interface Setting {
+  database: TestDatabase
+  source: DataSource
+  boss: ReturnType<typeof createBoss>
+  userId: string
+  /** Shortens what a killed worker costs, so that a test need not wait 40 s. */
+  expireAfter(seconds: number): Promise<void>
+  /** A picture that arrived, with its page and its job. */
+  addPage(fileName: string): Promise<string>
+  pageOf(pageId: string): Promise<{ state: string; attempts: number; sheetId: string | null; pictureKey: string | null }>
+  waitForState(pageId: string, state: string, deadline_ms?: number): Promise<void>
+  start(handlers: (source: DataSource, boss: ReturnType<typeof createBoss>) => JobHandler[]): Promise<Worker>
+  close(): Promise<void>
+}
+
+export async function createSetting(): Promise<Setting> {
+  const database = await createTestDatabase()
+  const source = await openDatabase(database.url, { poolSize: 4 })
+  const boss = createBoss(database.url)
+  boss.on('error', () => undefined)
+  await boss.start()
+  const { id: userId } = await createUser(source.manager)
+  const workers: Worker[] = []
+  const pageOf: Setting['pageOf'] = async (pageId) => {
+    const rows = await source.query(
+      'SELECT state, attempts, sheet_id AS "sheetId", picture_key AS "pictureKey" FROM pages WHERE id = $1',
+      [pageId],
+    )
+    return rows[0]
+  }
+  return {
+    database,
+    source,
+    boss,
+    userId,
+    pageOf,
+    expireAfter: (seconds) => source.query('UPDATE pgboss.queue SET expire_seconds = $1', [seconds]),
+    addPage: (fileName) =>
+      source.transaction(async (db) => {
+        const uploadId = await insertUpload(db, {
+          uploadedBy: userId,
+          fileName,
+          kind: 'jpeg',
+          bytes: 3,
+          sha256: randomUUID(),
+          storageKey: `uploads/${randomUUID()}`,
+          state: 'arrived',
+          reason: null,
+          forSheetId: null,
+        })
+        const pageId = await insertPage(db, { uploadId, number: 1 })
+        await sendJob(boss, db, 'page-read', { pageId })
+        return pageId
+      }),
+    waitForState: async (pageId, state, deadline_ms = 20_000) => {
+      await waitFor(async () => (await pageOf(pageId)).state === state, { what: `the page to be ${state}`, deadline_ms })
+    },
+    start: async (handlers) => {
+      const worker = await startWorker(
+        { databaseUrl: database.url, log: silent, maintenance_s: 1, handlers: (c) => handlers(c.source, c.boss) },
+        new AbortController().signal,
+      )
+      workers.push(worker!)
+      return worker!
+    },
+    close: async () => {
+      await Promise.all(workers.map((worker) => worker.stop(0)))
+      await boss.stop({ graceful: false, wait: true })
+      await source.destroy()
+      await database.close()
+    },
+  }
+}
+
+/** What a sheet read from ink comes to: enough for the intake, with a code of its own. */
+export const readOutcome = (jar_start_ml = 4800): PageOutcome => ({
+  kind: 'read',
+  layout: 'tillage',
+  layoutVersion: 1,
+  planned: false,
+  sheetCode: makeSheetCode((below) => Math.floor(Math.random() * below)),
+  origin: 'photo',
+  readings: [
+    { key: 'jar_start_ml', value: jar_start_ml, unit: 'mL', state: 'clear', candidates: [], reasons: [], cellRef: null },
+  ],
+})
+
+/** A handler for the jobs a test is not about: none of them may come. */
+export const noneOf = (...names: JobName[]): JobHandler[] =>
+  names.map((name) => ({
+    name,
+    handle: async () => {
+      throw new Error(`no ${name} was expected`)
+    },
+    giveUp: async () => undefined,
+  }))
+
+/** Files in memory. */
+export function memoryStore(): FileStore & { kept: Map<string, Uint8Array> } {
+  const kept = new Map<string, Uint8Array>()
+  return {
+    kept,
+    put: async (key, bytes) => void kept.set(key, bytes),
+    get: async (key) => Buffer.from(kept.get(key) ?? 'jpg'),
+    stream: async () => {
+      throw new Error('not in these tests')
+    },
+    exists: async (key) => kept.has(key),
+    remove: async (key) => void kept.delete(key),
+  }
+}
+
+/** A door that opens when told, for reading that takes as long as the test says. */
+export function gate() {
+  let open: () => void = () => undefined
+  let arrive: () => void = () => undefined
+  const opened = new Promise<void>((resolve) => {
+    open = resolve
+  })
+  const arrived = new Promise<void>((resolve) => {
+    arrive = resolve
+  })
+  return {
+    open,
+    /** Resolves when somebody stands before it. */
+    arrived,
+    pass: () => {
+      arrive()
+      return opened
+    },
+  }
+}
