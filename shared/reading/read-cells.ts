@@ -4,10 +4,11 @@ import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
 import type { Alignment, PlacedPart } from './align/align-page.ts'
 import type { Picture } from './align/patch.ts'
 import { blackAt } from './cells/black-level.ts'
-import { cutCell } from './cells/cut.ts'
+import { cutCell, samplesFor } from './cells/cut.ts'
 import { inkWithin, signedBy } from './cells/signed.ts'
 import { measureTick, tickDist } from './cells/ticks.ts'
 import { type BoxDist, boxDist, CELL_PX, type DigitNet, type TickDist } from './classes.ts'
+import { scaleAt } from './geometry/homography.ts'
 import { type FieldMap, fieldToPhoto } from './geometry/page-map.ts'
 import { displacementAt } from './geometry/residual-field.ts'
 import type { CellReading } from './sheet-reading.ts'
@@ -47,8 +48,9 @@ export async function readCells(
   const combs = placed.filter((p) => isComb(p.cell))
   const boxes = combs.flatMap((p) => p.boxes)
   const cells = new Float32Array(boxes.length * CELL_PX)
+  const over = samplesFor(scaleAt(alignment.homography, layout.page.width / 2, layout.page.height / 2))
   boxes.forEach(({ box, map }, i) => {
-    cutCell(picture, map, box, blackAt(alignment.blacks, box), cells, i)
+    cutCell(picture, map, box, blackAt(alignment.blacks, box), over, cells, i)
   })
   watch.lap('cut')
   const probabilities = await net.classify(cells, boxes.length)

@@ -64,16 +64,17 @@ export function measureTickPlace(picture: Picture, map: FieldMap, part: FieldPar
   const margin = AROUND_MM + steps * STEP_MM
   const side = TICK.size + 2 * margin
   const patch = samplePatch(picture, map, { x: box.x - margin, y: box.y - margin, width: side, height: side }, STEP_MM)
-  const likeness = new Float32Array((2 * steps + 1) ** 2)
+  const at = (dx: number, dy: number) => likenessAt(patch.darkness, patch.columns, dx + steps, dy + steps)
   let best = { value: -2, dx: 0, dy: 0 }
-  for (let dy = -steps; dy <= steps; dy++) {
-    for (let dx = -steps; dx <= steps; dx++) {
-      const value = likenessAt(patch.darkness, patch.columns, dx + steps, dy + steps)
-      likeness[(dy + steps) * (2 * steps + 1) + dx + steps] = value
-      if (value > best.value && Math.abs(dx) < steps && Math.abs(dy) < steps) best = { value, dx, dy }
-    }
+  const look = (dx: number, dy: number) => {
+    if (Math.max(Math.abs(dx), Math.abs(dy)) >= steps) return
+    const value = at(dx, dy)
+    if (value > best.value) best = { value, dx, dy }
   }
-  const at = (dx: number, dy: number) => likeness[(dy + steps) * (2 * steps + 1) + dx + steps]!
+  // Every second place first: the corner is wide enough to be seen from beside.
+  for (let dy = 2 - steps; dy < steps; dy += 2) for (let dx = 2 - steps; dx < steps; dx += 2) look(dx, dy)
+  const { dx: nearX, dy: nearY } = best
+  for (let dy = -1; dy <= 1; dy++) for (let dx = -1; dx <= 1; dx++) if (dx !== 0 || dy !== 0) look(nearX + dx, nearY + dy)
   const fine = (before: number, after: number) => {
     const bend = before - 2 * best.value + after
     return bend < -1e-9 ? Math.max(-0.5, Math.min(0.5, (0.5 * (before - after)) / bend)) : 0

@@ -99,9 +99,9 @@ export function traceRules(picture: Picture, layout: Layout, homography: Homogra
   return [HEAD_RULE, ...sections].flatMap(({ y, left, right }) => {
     const forth = trace(picture, homography, anchors, y, left, right)
     const back = trace(picture, homography, anchors, y, right, left)
-    return merge(forth, back).map(({ x, dy }) => {
+    return thin(merge(forth, back)).map(({ x, dy }) => {
       const { dx } = displacementAt(anchors, { x, y })
-      return { x, y, dx, dy, weight: 0.3, onlyDown: true as const }
+      return { x, y, dx, dy, weight: 0.5, onlyDown: true as const }
     })
   })
 }
@@ -114,6 +114,18 @@ function heightAt(steps: readonly Step[], x: number): number | null {
     if (share >= 0 && share <= 1 && Math.abs(b.x - a.x) <= 2 * WINDOW_MM) return a.dy + share * (b.dy - a.dy)
   }
   return null
+}
+
+/** Fewer steps say as much. */
+function thin(steps: Step[]): Step[] {
+  let last = Number.NEGATIVE_INFINITY
+  return steps
+    .sort((a, b) => a.x - b.x)
+    .filter(({ x }) => {
+      if (x - last < WINDOW_MM) return false
+      last = x
+      return true
+    })
 }
 
 function merge(forth: readonly Step[], back: readonly Step[]): Step[] {

@@ -5,9 +5,6 @@ import { samplePatch } from '../align/patch.ts'
 import { CELL_HEIGHT_PX, CELL_PX, CELL_PX_PER_MM, CELL_WIDTH_PX } from '../classes.ts'
 import type { FieldMap } from '../geometry/page-map.ts'
 
-/** Samples along each side of a cell's pixel. */
-const OVER = 2
-
 /** The area of a cell on the layout, mm, centred on its box. */
 export function cellArea(box: Box) {
   const width = CELL_WIDTH_PX / CELL_PX_PER_MM
@@ -15,7 +12,7 @@ export function cellArea(box: Box) {
   return { x: box.x + (box.width - width) / 2, y: box.y + (box.height - height) / 2, width, height }
 }
 
-/** Means of OVER x OVER samples. What lies outside the picture counts as paper. */
+/** Means of `over` x `over` samples. What lies outside the picture counts as paper. */
 export function shrink(
   { columns, rows, darkness }: Patch,
   over: number,
@@ -39,7 +36,21 @@ export function shrink(
   }
 }
 
-/** One cell into `cells` at its place. `black`: darkness of solid print nearby, 0 to 1. */
-export function cutCell(picture: Picture, map: FieldMap, box: Box, black: number, cells: Float32Array, index: number): void {
-  shrink(samplePatch(picture, map, cellArea(box), 1 / (CELL_PX_PER_MM * OVER)), OVER, cells, index * CELL_PX, black)
+/**
+ * One cell into `cells` at its place. `black`: darkness of solid print nearby, 0 to 1. `over`: samples along each side of a
+ * cell's pixel, so many that no photo pixel is passed over.
+ */
+export function cutCell(
+  picture: Picture,
+  map: FieldMap,
+  box: Box,
+  black: number,
+  over: number,
+  cells: Float32Array,
+  index: number,
+): void {
+  shrink(samplePatch(picture, map, cellArea(box), 1 / (CELL_PX_PER_MM * over)), over, cells, index * CELL_PX, black)
 }
+
+/** 1 where the picture is hardly finer than the cell, else 2. */
+export const samplesFor = (px_per_mm: number): number => (px_per_mm > 1.4 * CELL_PX_PER_MM ? 2 : 1)

@@ -3,7 +3,6 @@
  * Moving least squares with a local affine: near anchors weigh most, so waves are followed that a polynomial cannot follow.
  */
 import type { Point } from '../pixels/grey.ts'
-import { solve } from './linear.ts'
 
 export interface Anchor {
   /** Place on the layout, mm. */
@@ -32,56 +31,67 @@ const NEAR_MM = 9
 /** Draws slopes to zero where anchors do not fix them. */
 const SLOPE_RIDGE_MM2 = 6
 
-/** Sums of one moving least squares: weights, places, and the values wanted. */
-class LocalFit {
-  private s = 0
-  private sx = 0
-  private sy = 0
-  private sxx = 0
-  private sxy = 0
-  private syy = 0
-  private v = 0
-  private vx = 0
-  private vy = 0
+/** Anchors farther than this weigh nothing beside near ones; they are asked only where there are too few near ones. */
+const FAR_MM = 55
+const FEW = 12
 
-  add(w: number, x: number, y: number, value: number): void {
-    this.s += w
-    this.sx += w * x
-    this.sy += w * y
-    this.sxx += w * x * x
-    this.sxy += w * x * y
-    this.syy += w * y * y
-    this.v += w * value
-    this.vx += w * x * value
-    this.vy += w * y * value
-  }
+/** Solves for value and both slopes at the middle from weighted sums. */
+function solveAt(s: number, x: number, y: number, xx: number, xy: number, yy: number, v: number, vx: number, vy: number) {
+  if (s === 0) return [0, 0, 0] as const
+  const k = 1 / s
+  const [mx, my, mv] = [x * k, y * k, v * k]
+  // Centred on the weighted middle, slopes stand alone.
+  const a = xx * k - mx * mx + SLOPE_RIDGE_MM2
+  const b = xy * k - mx * my
+  const c = yy * k - my * my + SLOPE_RIDGE_MM2
+  const p = vx * k - mv * mx
+  const q = vy * k - mv * my
+  const det = a * c - b * b
+  const slopeX = (p * c - q * b) / det
+  const slopeY = (q * a - p * b) / det
+  return [mv - slopeX * mx - slopeY * my, slopeX, slopeY] as const
+}
 
-  /** Value and both slopes at the middle. */
-  solve(): ArrayLike<number> {
-    if (this.s === 0) return [0, 0, 0]
-    const k = 1 / this.s
-    const [mx, my] = [this.sx * k, this.sy * k]
-    const xx = this.sxx * k + SLOPE_RIDGE_MM2
-    const yy = this.syy * k + SLOPE_RIDGE_MM2
-    const matrix = Float64Array.of(1, mx, my, mx, xx, this.sxy * k, my, this.sxy * k, yy)
-    return solve(matrix, Float64Array.of(this.v * k, this.vx * k, this.vy * k)) ?? [this.v * k, 0, 0]
+function fitNear(anchors: readonly Anchor[], at: Point, skip: ((anchor: Anchor) => boolean) | undefined, far2: number) {
+  let [s, sx, sy, sxx, sxy, syy, u, ux, uy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
+  let [t, tx, ty, txx, txy, tyy, v, vx, vy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
+  let across = 0
+  for (const anchor of anchors) {
+    const x = anchor.x - at.x
+    const y = anchor.y - at.y
+    const distance2 = x * x + y * y
+    if (distance2 > far2 || skip?.(anchor)) continue
+    const spread = distance2 + NEAR_MM * NEAR_MM
+    const w = anchor.weight / (spread * spread)
+    const [wx, wy] = [w * x, w * y]
+    t += w
+    tx += wx
+    ty += wy
+    txx += wx * x
+    txy += wx * y
+    tyy += wy * y
+    v += w * anchor.dy
+    vx += wx * anchor.dy
+    vy += wy * anchor.dy
+    if (anchor.onlyDown) continue
+    across++
+    s += w
+    sx += wx
+    sy += wy
+    sxx += wx * x
+    sxy += wx * y
+    syy += wy * y
+    u += w * anchor.dx
+    ux += wx * anchor.dx
+    uy += wy * anchor.dx
   }
+  const [dx, dxx, dxy] = solveAt(s, sx, sy, sxx, sxy, syy, u, ux, uy)
+  const [dy, dyx, dyy] = solveAt(t, tx, ty, txx, txy, tyy, v, vx, vy)
+  return { across, displacement: { dx, dxx, dxy, dy, dyx, dyy } }
 }
 
 /** The displacement expected at a place; `skip` leaves anchors out (to check one against its neighbours). */
 export function displacementAt(anchors: readonly Anchor[], at: Point, skip?: (anchor: Anchor) => boolean): Displacement {
-  const across = new LocalFit()
-  const down = new LocalFit()
-  for (const anchor of anchors) {
-    if (skip?.(anchor)) continue
-    const x = anchor.x - at.x
-    const y = anchor.y - at.y
-    const far = x * x + y * y + NEAR_MM * NEAR_MM
-    const w = anchor.weight / (far * far)
-    if (!anchor.onlyDown) across.add(w, x, y, anchor.dx)
-    down.add(w, x, y, anchor.dy)
-  }
-  const a = across.solve()
-  const b = down.solve()
-  return { dx: a[0]!, dxx: a[1]!, dxy: a[2]!, dy: b[0]!, dyx: b[1]!, dyy: b[2]! }
+  const near = fitNear(anchors, at, skip, FAR_MM * FAR_MM)
+  return near.across >= FEW ? near.displacement : fitNear(anchors, at, skip, Number.POSITIVE_INFINITY).displacement
 }

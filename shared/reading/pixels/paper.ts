@@ -43,8 +43,23 @@ function blockLevels(grey: Grey, block_px: number): Grey {
 function fillSolid(level: Grey): Grey {
   const out = Uint8Array.from(level.data)
   const around: number[] = []
-  for (let y = 0; y < level.height; y++) {
-    for (let x = 0; x < level.width; x++) {
+  const { width, height, data } = level
+  const brightest = (x: number, y: number) => {
+    const [left, right] = [Math.max(0, x - 2), Math.min(width - 1, x + 2)]
+    const [above, below] = [Math.max(0, y - 2) * width, Math.min(height - 1, y + 2) * width]
+    const row = y * width
+    return Math.max(
+      data[row + left]!,
+      data[row + right]!,
+      data[above + x]!,
+      data[below + x]!,
+      data[above + left]!,
+      data[below + right]!,
+    )
+  }
+  for (let y = 0; y < height; y++) {
+    for (let x = 0; x < width; x++) {
+      if (data[y * width + x]! >= NO_PAPER * brightest(x, y)) continue
       around.length = 0
       for (let v = Math.max(0, y - 2); v <= Math.min(level.height - 1, y + 2); v++) {
         for (let u = Math.max(0, x - 2); u <= Math.min(level.width - 1, x + 2); u++) around.push(level.data[v * level.width + u]!)
