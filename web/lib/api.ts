@@ -58,7 +58,9 @@ export const api = {
     call('PUT', path, { body, ...(answer ? { answer } : {}) }),
   patch: <S extends z.ZodType>(path: string, body: unknown, answer?: S) =>
     call('PATCH', path, { body, ...(answer ? { answer } : {}) }),
-  delete: (path: string) => call('DELETE', path),
+  delete: async (path: string): Promise<void> => {
+    await call('DELETE', path)
+  },
 }
 
 /** A path with its query; undefined and empty values are left out. */

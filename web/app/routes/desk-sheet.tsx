@@ -1,0 +1,93 @@
+import { useQuery } from '@tanstack/react-query'
+import { Link, useNavigate, useParams } from 'react-router-dom'
+import { findLayout } from '../../../shared/layouts/registry.ts'
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
+import type { Sheet } from '../../../shared/schemas/sheet.ts'
+import { DeskSheet } from '../../features/desk/components/desk-sheet.tsx'
+import { PlacePicture } from '../../features/desk/components/place-picture.tsx'
+import { deskQueries, usePlace, useTakeUp } from '../../features/desk/desk.queries.ts'
+import { useMe } from '../../lib/me.ts'
+import { paths } from '../../lib/paths.ts'
+import { Button } from '../../ui/button.tsx'
+import { Page } from '../../ui/page.tsx'
+import { ErrorState, Loading } from '../../ui/says.tsx'
+
+export function Component() {
+  const { id = '' } = useParams()
+  const me = useMe()
+  const navigate = useNavigate()
+  const sheet = useQuery(deskQueries.detail(id))
+  if (sheet.error && !sheet.data) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
+  if (!sheet.data) return <Loading what="Taking the sheet in hand" />
+  const { state, layout: key, layoutVersion } = sheet.data
+  const layout = key ? findLayout(key, layoutVersion ?? undefined) : null
+  if (state === 'being read' || state === 'arrived')
+    return <Loading what="The sheet is being read again by its corners. A few seconds." />
+  if (state === 'unreadable' || !layout) return <Placing sheet={sheet.data} />
+  if (state === 'sent back' || state === 'set aside' || state === 'entered' || state === 'printed')
+    return <Away sheet={sheet.data} />
+  return (
+    <DeskSheet
+      key={id}
+      sheet={sheet.data}
+      layout={layout}
+      me={me}
+      back={
+        <Link className="word" to={paths.desk.to()}>
+          List
+        </Link>
+      }
+      onLeave={(next) => navigate(next ? paths.deskSheet.to(next) : paths.desk.to())}
+    />
+  )
+}
+
+const nameOf = (sheet: Sheet) => (sheet.code ? formatSheetCode(sheet.code) : 'Sheet without a code')
+
+function Placing({ sheet }: { sheet: Sheet }) {
+  const place = usePlace(sheet.id)
+  return (
+    <Page title={nameOf(sheet)} over={nameOf(sheet)} sentence="Where is the sheet in this picture?" aside={<BackToList />}>
+      <PlacePicture sheet={sheet} busy={place.isPending} error={place.error} onPlace={place.mutate} />
+    </Page>
+  )
+}
+
+const SAID: Partial<Record<Sheet['state'], string>> = {
+  'sent back': 'It was sent back and waits for the field.',
+  'set aside': 'It was set aside.',
+  entered: 'It is entered in the trial book.',
+  printed: 'It is printed; no picture of it has come yet.',
+}
+
+/** A sheet that is not at the desk: why, and the way back to it. */
+function Away({ sheet }: { sheet: Sheet }) {
+  const takeUp = useTakeUp(sheet.id)
+  const reason = sheet.state === 'sent back' ? sheet.sentBackReason : sheet.reason
+  return (
+    <Page title={nameOf(sheet)} over={nameOf(sheet)} sentence={SAID[sheet.state] ?? sheet.state} aside={<BackToList />}>
+      <div className="px-margin py-3">
+        {reason && <p className="text-2 text-pen">“{reason}”</p>}
+        {takeUp.error && <ErrorState error={takeUp.error} />}
+        <div className="mt-2 flex gap-3">
+          {(sheet.state === 'sent back' || sheet.state === 'set aside') && (
+            <Button onClick={() => takeUp.mutate({ version: sheet.version })} disabled={takeUp.isPending}>
+              Take it up again
+            </Button>
+          )}
+          {sheet.recordNumber !== null && (
+            <Link className="word self-center" to={paths.record.to(sheet.recordNumber)}>
+              Record {sheet.recordNumber}
+            </Link>
+          )}
+        </div>
+      </div>
+    </Page>
+  )
+}
+
+const BackToList = () => (
+  <Link className="word" to={paths.desk.to()}>
+    Back to the list
+  </Link>
+)

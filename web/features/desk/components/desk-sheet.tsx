@@ -1,0 +1,84 @@
+import { type ReactNode, useRef } from 'react'
+import type { Layout } from '../../../../shared/layouts/layout.ts'
+import type { Sheet } from '../../../../shared/schemas/sheet.ts'
+import type { User } from '../../../../shared/schemas/user.ts'
+import { useKeys } from '../../../lib/use-keys.ts'
+import { Foot } from '../../../ui/foot.tsx'
+import { useEnter, useSendBack, useSetAside } from '../desk.queries.ts'
+import { deskFootKeys, deskKeyMap } from '../desk-keys.ts'
+import { judgeWith } from '../model/desk-view.ts'
+import { stripOf } from '../model/strip.ts'
+import { typedValue } from '../model/typed-value.ts'
+import { useDesk } from '../use-desk.ts'
+import { type DeskActs, useDeskActs } from '../use-desk-acts.ts'
+import { useHold } from '../use-hold.ts'
+import { DeskStrip } from './desk-strip.tsx'
+import { Margin } from './margin.tsx'
+import { PagePane } from './page-pane.tsx'
+import { ResultsStrip } from './results-strip.tsx'
+
+interface DeskSheetProps {
+  sheet: Sheet
+  layout: Layout
+  me: User
+  back: ReactNode
+  /** Where to go when the sheet leaves the desk: to the next one, or to the list. */
+  onLeave: (next: string | null) => void
+}
+
+/** One sheet at the desk. Made for a keyboard and a wide screen; on a narrow one the margin comes first. */
+export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) {
+  const desk = useDesk(sheet, layout, me.name)
+  const acts = useDeskActs(desk)
+  const held = useHold(sheet.id, true)
+  const crop = useRef<HTMLElement>(null)
+  const [sendBack, setAside, enter] = [useSendBack(sheet.id), useSetAside(sheet.id), useEnter(sheet.id)]
+  const { version } = sheet
+
+  const leave = { onSuccess: () => onLeave(null), onError: (error: Error) => acts.say(error.message) }
+  const entering = () => {
+    const reason = acts.notYet()
+    if (reason) acts.say(reason)
+    else enter.mutate({ version }, { onSuccess: ({ next }) => onLeave(next), onError: (error) => acts.say(error.message) })
+  }
+  useKeys(deskKeyMap(desk, acts, { entering, leave: () => onLeave(null) }))
+
+  const page = sheet.pages.find((p) => p.flattened)
+  const picture = page ? `/api/pages/${page.id}/picture` : null
+  const figures = stripOf(desk.view.results, desk.items)
+  return (
+    <div className="flex grow flex-col lg:h-[calc(100dvh-44px)] lg:min-h-[560px] lg:grow-0">
+      <DeskStrip desk={desk} held={held} back={back} />
+      <main id="work" tabIndex={-1} className="grid min-h-0 grow lg:grid-cols-[minmax(0,1fr)_minmax(380px,30%)]">
+        <PagePane desk={desk} picture={picture} crop={crop} />
+        <div className="min-h-0 max-lg:order-first lg:flex lg:flex-col">
+          <Margin
+            desk={desk}
+            acts={acts}
+            picture={picture}
+            crop={crop}
+            onSendBack={(reason) => sendBack.mutate({ version, reason, cells: [...(desk.item?.cells ?? [])] }, leave)}
+            onSetAside={(reason) => setAside.mutate({ version, reason }, leave)}
+          />
+        </div>
+      </main>
+      <ResultsStrip figures={figures} other={otherFigures(desk, acts)} />
+      <Foot keys={deskFootKeys(desk, acts, entering)} />
+    </div>
+  )
+}
+
+/** What the value being typed, or the second of what may be taken, would make of the results. */
+function otherFigures(desk: ReturnType<typeof useDesk>, acts: DeskActs) {
+  const { cell, reading, proposal, mode } = acts
+  if (!cell || !reading) return null
+  const typed = mode.kind === 'type' ? typedValue(cell, mode.text, desk.view.values) : null
+  const other =
+    typed && typed.problem === null
+      ? typed.value
+      : mode.kind === 'why'
+        ? mode.value
+        : proposal?.offers.find((offer) => offer.value !== reading.value && offer.byInk !== null)?.value
+  if (other === undefined) return null
+  return { words: String(other), figures: stripOf(judgeWith(desk.view, desk.layout, cell.key, other).results, desk.items) }
+}

@@ -1,0 +1,40 @@
+import type { ReactNode } from 'react'
+import { formatSheetCode } from '../../../../shared/layouts/sheet-code.ts'
+import { clockOf } from '../../../lib/time.ts'
+import { counted } from '../../../lib/words.ts'
+import { Tally } from '../../../ui/tally.tsx'
+import { openOf } from '../model/desk-items.ts'
+import type { Desk } from '../use-desk.ts'
+
+/** The strip over the sheet: which one it is, how far its doubts are, and whether all is saved. */
+export function DeskStrip({ desk, held, back }: { desk: Desk; held: string | null; back: ReactNode }) {
+  const { sheet, items } = desk
+  const open = openOf(items).length
+  const what = [sheet.tractor, sheet.implement].filter(Boolean).join(', ')
+  const where = [sheet.place, sheet.runNumber ? `run ${sheet.runNumber}` : null].filter(Boolean).join(', ')
+  return (
+    <div className="flex flex-wrap items-center gap-x-3 border-b border-line bg-board px-margin py-0.5">
+      {back}
+      <span className="figures font-[700]">{sheet.code ? formatSheetCode(sheet.code) : 'without a code'}</span>
+      {what && <span>{what}</span>}
+      {where && <span>{where}</span>}
+      {sheet.demonstrator && <span>from {sheet.demonstrator}</span>}
+      <span className="ml-auto flex flex-wrap items-center gap-x-3">
+        {held ? <strong>{held}</strong> : <span>in your hand</span>}
+        <Tally settled={items.length - open} waiting={open} inHand={open > 0} />
+        <span>
+          <strong className="figures">{items.length - open}</strong> settled <strong className="figures">{open}</strong> wait
+        </span>
+        <span role="status" className="w-[126px] text-right">
+          <Saved desk={desk} />
+        </span>
+      </span>
+    </div>
+  )
+}
+
+function Saved({ desk }: { desk: Desk }) {
+  const { ops, savedAt, trouble } = desk.saved
+  if (ops.length > 0) return trouble ? `not saved: ${counted(ops.length, 'cell')}` : 'saving'
+  return savedAt ? `all saved ${clockOf(savedAt)}` : ''
+}

@@ -1,0 +1,154 @@
+import type { ReactNode, RefObject } from 'react'
+import { formatValue } from '../../../../shared/layouts/cell-value.ts'
+import { KeyCap } from '../../../ui/foot.tsx'
+import { LETTERS, openOf } from '../model/desk-items.ts'
+import type { Desk } from '../use-desk.ts'
+import type { DeskActs } from '../use-desk-acts.ts'
+import { CropOrOrigin } from './crop-or-origin.tsx'
+import { MarginAsks } from './margin-asks.tsx'
+import { OffersTable } from './offers-table.tsx'
+import { OtherDoubts } from './other-doubts.tsx'
+import { TroubleNote } from './trouble-note.tsx'
+
+interface MarginProps {
+  desk: Desk
+  acts: DeskActs
+  picture: string | null
+  crop: RefObject<HTMLElement | null>
+  /** Acts on the whole sheet that need a reason. */
+  onSendBack: (reason: string) => void
+  onSetAside: (reason: string) => void
+}
+
+/** Beside the sheet: the doubt in hand in one sentence, its ink enlarged, what may be taken, and the other doubts. */
+export function Margin(props: MarginProps) {
+  const { desk, acts, picture, crop } = props
+  const { item, items } = desk
+  return (
+    <section
+      aria-label="The doubt in hand"
+      className="min-h-0 overflow-y-auto border-l-[3px] border-double border-line pb-2 max-lg:border-l-0"
+    >
+      <div className="px-3 pt-2 lg:min-h-[240px]">
+        <TroubleNote desk={desk} />
+        <p className="label flex flex-wrap justify-between gap-x-2">
+          <span>
+            {item ? (
+              <>
+                <strong className="text-ink">
+                  Doubt {item.number} of {items.length}
+                </strong>{' '}
+                on this sheet
+              </>
+            ) : (
+              `${items.length - openOf(items).length} of ${items.length} doubts settled`
+            )}
+          </span>
+          {item?.doubt && <span>rule {item.doubt.rule}</span>}
+        </p>
+        <div aria-live="polite">
+          <Headline desk={desk} acts={acts} />
+        </div>
+        {acts.says && (
+          <p role="status" className="mt-1 border-l-[3px] border-ink pl-1 font-[650]">
+            {acts.says}
+          </p>
+        )}
+      </div>
+      <CropOrOrigin desk={desk} acts={acts} picture={picture} boxRef={crop} />
+      <div className="px-3 pt-1">
+        {acts.mode.kind === 'look' ? (
+          <>
+            {acts.proposal && <OffersTable desk={desk} proposal={acts.proposal} onTake={acts.take} />}
+            {item?.doubt && !desk.key && <NamedCells desk={desk} onTake={(n) => acts.takeNumber(n)} />}
+          </>
+        ) : (
+          <MarginAsks {...props} />
+        )}
+        <h2 className="mt-3 mb-0.5 text-[15px]">All doubts</h2>
+        <OtherDoubts desk={desk} />
+      </div>
+    </section>
+  )
+}
+
+function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
+  const { item, items } = desk
+  if (item) {
+    return (
+      <>
+        <h1 className="mt-0.5 text-5 leading-[36px]">
+          {acts.cell && !item.reading ? `${item.label}: ${acts.cell.label}` : item.label}
+        </h1>
+        <p className="mt-0.5 text-2 leading-[27px]">{item.text}</p>
+        {acts.proposal?.split && item.reading && (
+          <p className="mt-0.5 text-2">The ink favours one value, the sums another. You choose.</p>
+        )}
+        {item.reading && item.cells.length > 0 && <Letters desk={desk} />}
+      </>
+    )
+  }
+  if (acts.cell) {
+    return (
+      <>
+        <h1 className="mt-0.5 text-5 leading-[36px]">{acts.cell.label}</h1>
+        <p className="text-2">Nobody doubts it. It may be corrected all the same.</p>
+      </>
+    )
+  }
+  const done = items.length > 0 ? 'Every doubt is settled.' : 'Nothing is in doubt here.'
+  return (
+    <>
+      <h1 className="mt-0.5 text-5 leading-[36px]">Ready to enter</h1>
+      <p className="text-2">{done} Shift Enter puts it into the trial book.</p>
+    </>
+  )
+}
+
+/** The other cells the sentence is about, as lettered on the sheet. */
+function Letters({ desk }: { desk: Desk }) {
+  return (
+    <ul className="mt-0.5 flex flex-wrap gap-x-2">
+      {(desk.item?.cells ?? []).map((key, i) => (
+        <li key={key}>
+          <Letter>{LETTERS[i]}</Letter> <CellValue desk={desk} cellKey={key} />
+        </li>
+      ))}
+    </ul>
+  )
+}
+
+/** For a doubt of a rule: its cells, any of which can be taken in hand and corrected. */
+function NamedCells({ desk, onTake }: { desk: Desk; onTake: (n: number) => void }) {
+  return (
+    <ul aria-label="Cells the rule compares" className="border-t-[1.5px] border-ink">
+      {(desk.item?.cells ?? []).map((key, i) => (
+        <li key={key} className="border-b border-feint">
+          <button type="button" className="flex min-h-[36px] w-full items-baseline gap-1 text-left" onClick={() => onTake(i + 1)}>
+            {i < 9 && <KeyCap>{i + 1}</KeyCap>}
+            <Letter>{LETTERS[i]}</Letter>
+            <CellValue desk={desk} cellKey={key} />
+          </button>
+        </li>
+      ))}
+    </ul>
+  )
+}
+
+const Letter = ({ children }: { children: ReactNode }) => (
+  <span className="bg-ink px-0.5 text-1 font-[700] text-white">{children}</span>
+)
+
+function CellValue({ desk, cellKey }: { desk: Desk; cellKey: string }) {
+  const cell = desk.layout.cells.find((c) => c.key === cellKey)
+  const reading = desk.view.readings.get(cellKey)
+  return (
+    <span>
+      {cell?.label ?? cellKey}{' '}
+      <span className={`figures ${reading?.origin === 'person' ? 'text-pen' : ''}`}>
+        {formatValue(cell, reading?.value ?? null)}
+      </span>{' '}
+      {reading?.unit}
+    </span>
+  )
+}

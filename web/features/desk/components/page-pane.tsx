@@ -1,0 +1,79 @@
+import { type RefObject, useLayoutEffect, useRef } from 'react'
+import { formatValue } from '../../../../shared/layouts/cell-value.ts'
+import { cellBounds } from '../../../../shared/layouts/geometry.ts'
+import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
+import type { Reading } from '../../../../shared/schemas/sheet.ts'
+import type { Desk } from '../use-desk.ts'
+import { SheetMarks } from './sheet-marks.tsx'
+
+interface PagePaneProps {
+  desk: Desk
+  /** Address of the flattened page; null where there is none and the form itself is drawn. */
+  picture: string | null
+  /** Stands in the margin at the height the row in hand is brought to, so that the band runs straight across. */
+  crop: RefObject<HTMLElement | null>
+}
+
+/** The sheet itself is the form: the picture with its values over their ink. */
+export function PagePane({ desk, picture, crop }: PagePaneProps) {
+  const { layout, key, item } = desk
+  const pane = useRef<HTMLElement>(null)
+  const inHand = layout.cells.find((c) => c.key === (key ?? item?.cells[0]))
+  const row_mm = inHand ? cellBounds(inHand).y + cellBounds(inHand).height + 3.2 : null
+
+  useLayoutEffect(() => {
+    const box = pane.current
+    const leaf = box?.firstElementChild
+    if (!box || !leaf || row_mm === null) return
+    const scale = leaf.clientHeight / layout.page.height
+    const wanted_px = crop.current
+      ? crop.current.getBoundingClientRect().bottom - box.getBoundingClientRect().top
+      : box.clientHeight / 2
+    box.scrollTop = (leaf as HTMLElement).offsetTop + row_mm * scale - Math.min(wanted_px, box.clientHeight - 60)
+  }, [row_mm, crop, layout])
+
+  return (
+    <section
+      ref={pane}
+      aria-label="The sheet"
+      tabIndex={-1}
+      className="relative min-h-0 overflow-y-auto bg-board lg:py-[32vh] lg:pl-1"
+    >
+      <div className="relative bg-leaf" style={{ aspectRatio: `${layout.page.width} / ${layout.page.height}` }}>
+        {picture && <img src={picture} alt="The sheet, flattened" className="absolute inset-0 h-full w-full" />}
+        <SheetMarks desk={desk} inBox={picture === null} />
+        {layout.cells.map((cell) => (
+          <CellButton key={cell.key} cell={cell} desk={desk} />
+        ))}
+      </div>
+    </section>
+  )
+}
+
+/** Takes a cell in hand with the mouse; with the keyboard the same is "/" and its name. */
+function CellButton({ cell, desk }: { cell: LayoutCell; desk: Desk }) {
+  const reading = desk.view.readings.get(cell.key)
+  if (!reading || (desk.sheet.planned && isComb(cell) && cell.planned)) return null
+  const { width, height } = desk.layout.page
+  const bounds = cellBounds(cell)
+  const percent = (mm: number, of: number) => `${(100 * mm) / of}%`
+  const doubt = desk.items.find((item) => item.reading?.key === cell.key)
+  return (
+    <button
+      type="button"
+      tabIndex={-1}
+      aria-label={`${cell.label}: ${saidOf(cell, reading)}`}
+      onClick={() => (doubt ? desk.go(doubt.id) : desk.takeCell(cell.key))}
+      className="absolute hover:outline-2 hover:outline-ink hover:outline-solid"
+      style={{
+        left: percent(bounds.x, width),
+        top: percent(bounds.y, height),
+        width: percent(bounds.width, width),
+        height: percent(bounds.height, height),
+      }}
+    />
+  )
+}
+
+const saidOf = (cell: LayoutCell, reading: Reading) =>
+  `${formatValue(cell, reading.value)}${reading.unit ? ` ${reading.unit}` : ''}, ${reading.settlement ?? reading.state}`

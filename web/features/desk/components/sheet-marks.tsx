@@ -1,0 +1,115 @@
+import { cellBounds } from '../../../../shared/layouts/geometry.ts'
+import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
+import { type DeskItem, LETTERS } from '../model/desk-items.ts'
+import type { Desk } from '../use-desk.ts'
+import { CellMark } from './cell-mark.tsx'
+import { SheetDrawing } from './sheet-drawing.tsx'
+
+/** Everything that lies over the page, in millimetres of the page. Decoration: the same is said in words in the margin. */
+export function SheetMarks({ desk, inBox }: { desk: Desk; inBox: boolean }) {
+  const { layout, sheet, view, items, item, key } = desk
+  const cells = new Map(layout.cells.map((c) => [c.key, c]))
+  const inHand = key ? cells.get(key) : undefined
+  const lettered = (item?.cells ?? []).flatMap((k, i) => {
+    const cell = cells.get(k)
+    return cell && k !== key ? [{ cell, letter: LETTERS[i] ?? '' }] : []
+  })
+  const { width, height } = layout.page
+  return (
+    <svg aria-hidden="true" viewBox={`0 0 ${width} ${height}`} className="pointer-events-none absolute inset-0 h-full w-full">
+      <defs>
+        <pattern id="hatch" width="1.1" height="1.1" patternUnits="userSpaceOnUse" patternTransform="rotate(45)">
+          <path d="M0.2 0V1.1" stroke="var(--ink)" strokeWidth="0.38" />
+        </pattern>
+      </defs>
+      {inBox && <SheetDrawing layout={layout} planned={sheet.planned} />}
+      {inHand && <RowInHand cell={inHand} page={layout.page} />}
+      {layout.cells.map((cell) => {
+        const reading = view.readings.get(cell.key)
+        if (!reading || (sheet.planned && isComb(cell) && cell.planned)) return null
+        return <CellMark key={cell.key} cell={cell} reading={reading} values={view.values} inBox={inBox} />
+      })}
+      {items.map((one) => (
+        <DoubtTab key={one.id} item={one} cells={cells} held={one.id === item?.id} />
+      ))}
+      {lettered.map(({ cell, letter }) => (
+        <Lettered key={cell.key} cell={cell} letter={letter} />
+      ))}
+      {inHand && <HandFrame cell={inHand} />}
+    </svg>
+  )
+}
+
+type Cells = ReadonlyMap<string, LayoutCell>
+
+/** The straw row behind the cell in hand; the ink shows through it. */
+function RowInHand({ cell, page }: { cell: LayoutCell; page: { width: number } }) {
+  const { x, y, width, height } = cellBounds(cell)
+  const low = y + height + 3.2
+  return (
+    <>
+      <rect
+        x="0"
+        y={y - 1.6}
+        width={page.width}
+        height={height + 4.8}
+        fill="var(--straw-pale)"
+        style={{ mixBlendMode: 'multiply' }}
+      />
+      <path d={`M0 ${y - 1.6}H${page.width}M0 ${low}H${page.width}`} stroke="var(--ink)" strokeWidth="0.25" />
+      <rect
+        x={x + width}
+        y={low - 0.7}
+        width={page.width - x - width}
+        height="1.4"
+        fill="var(--straw)"
+        stroke="var(--ink)"
+        strokeWidth="0.25"
+      />
+    </>
+  )
+}
+
+function HandFrame({ cell }: { cell: LayoutCell }) {
+  const { x, y, width, height } = cellBounds(cell)
+  return <rect x={x - 1} y={y - 1} width={width + 2} height={height + 2} fill="none" stroke="var(--ink)" strokeWidth="0.9" />
+}
+
+/** A hatched tab at the left end, numbered in order of work. */
+function DoubtTab({ item, cells, held }: { item: DeskItem; cells: Cells; held: boolean }) {
+  const cell = cells.get(item.reading?.key ?? item.cells[0] ?? '')
+  if (!cell || !item.open || (held && item.reading)) return null
+  const { x, y, height } = cellBounds(cell)
+  const number = String(item.number)
+  return (
+    <g>
+      <rect x={x - 2.6} y={y} width="2.4" height={height} fill="var(--leaf)" />
+      <rect x={x - 2.6} y={y} width="2.4" height={height} fill="url(#hatch)" stroke="var(--ink)" strokeWidth="0.3" />
+      <rect
+        x={x - 2.6}
+        y={y - 3.6}
+        width={1.6 + number.length * 1.6}
+        height="3.6"
+        fill="var(--leaf)"
+        stroke="var(--ink)"
+        strokeWidth="0.3"
+      />
+      <text x={x - 1.8} y={y - 0.9} fontSize="2.8" fontWeight="700" className="figures" fill="var(--ink)">
+        {number}
+      </text>
+    </g>
+  )
+}
+
+function Lettered({ cell, letter }: { cell: LayoutCell; letter: string }) {
+  const { x, y, width, height } = cellBounds(cell)
+  return (
+    <g>
+      <rect x={x - 0.6} y={y - 0.6} width={width + 1.2} height={height + 1.2} fill="none" stroke="var(--ink)" strokeWidth="0.5" />
+      <rect x={x + width - 0.6} y={y - 1.2} width="3.2" height="3.6" fill="var(--ink)" />
+      <text x={x + width + 1} y={y + 1.6} fontSize="2.8" fontWeight="700" textAnchor="middle" fill="#fff">
+        {letter}
+      </text>
+    </g>
+  )
+}
