@@ -117,6 +117,13 @@ export const ACCESS: Record<string, Rule> = {
     body: (own) => ({ ...own.plan, version: STALE }),
     butAnswers: [412],
   },
+  'POST /demonstrations/:id/withdraw-consent': {
+    may: PLANNERS,
+    object: true,
+    path: (own) => `/demonstrations/${own.demonstrationId}/withdraw-consent`,
+    body: () => ({ reason: 'asked for by telephone' }),
+    butAnswers: [409],
+  },
   'GET /demonstrations/:id/sheets.pdf': demonstrationFile('sheets.pdf'),
   'GET /sheets/:id/sheet.pdf': { may: SENDERS, object: true, path: (own) => `/sheets/${own.printedSheetId}/sheet.pdf` },
 

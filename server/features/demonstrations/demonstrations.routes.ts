@@ -4,6 +4,7 @@ import { idSchema } from '../../../shared/schemas/user.ts'
 import { listDemonstrations } from '../../db/repositories/demonstration.ts'
 import { type Route, route } from '../../http/route.ts'
 import { sendFile } from '../../http/send-file.ts'
+import { withdrawConsent } from './consent.service.ts'
 import { planDemonstration, replanDemonstration } from './demonstrations.service.ts'
 import { getDemonstration } from './get-demonstration.ts'
 import { printPlanned } from './print-sheets.service.ts'
@@ -63,6 +64,16 @@ export const demonstrationRoutes: Route[] = [
     body: saveDemonstrationSchema.extend({ version: z.number().int() }),
     response: demonstrationSchema,
     handle: ({ deps, actor, params, body }) => replanDemonstration(deps, actor, params.id, body),
+  }),
+  route({
+    method: 'post',
+    path: '/demonstrations/:id/withdraw-consent',
+    summary: 'Erase the farmer, and blank their place in every stored picture',
+    access: PLANNERS,
+    params,
+    body: z.object({ reason: z.string().trim().min(3).max(500) }),
+    response: demonstrationSchema,
+    handle: ({ deps, actor, params, body }) => withdrawConsent(deps, actor, params.id, body.reason),
   }),
   route({
     method: 'get',

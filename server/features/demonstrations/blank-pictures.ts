@@ -1,0 +1,97 @@
+/** Takes a person out of every stored picture of a demonstration's sheets. */
+import { randomUUID } from 'node:crypto'
+import { findLayout } from '../../../shared/layouts/registry.ts'
+import type { UploadKind } from '../../../shared/schemas/upload.ts'
+import type { Db } from '../../db/database.ts'
+import {
+  type KeptFile,
+  type KeptPage,
+  listKeptFiles,
+  replaceOriginal,
+  replacePicture,
+} from '../../db/repositories/kept-picture.ts'
+import type { Deps } from '../../http/route.ts'
+import { blankAreas } from '../../print/blank-areas.ts'
+import { picturesAsPdf } from '../../print/pictures-pdf.ts'
+import type { FileStore } from '../../storage/store.ts'
+
+const SPREADSHEETS: readonly UploadKind[] = ['xlsx', 'csv']
+
+/** What was done, for the trail. */
+export interface Blanked {
+  pages: number
+  /** Originals that were replaced by their flattened, blanked pages. */
+  replaced: number
+  /** Pictures that could not be placed on a layout, and were removed whole. */
+  removed: number
+  /** Writes the rows; what they named before goes once they are written. */
+  write(db: Db): Promise<void>
+  /** Keys nobody names any more. */
+  stale: string[]
+}
+
+/**
+ * Covers the personal areas. The old files are overwritten before any row changes: whatever fails after that, nobody is shown
+ * any more, and doing it again ends the work. New keys are given besides, since browsers keep a picture under its key.
+ */
+export async function blankPictures(deps: Pick<Deps, 'source' | 'files'>, demonstrationId: string): Promise<Blanked> {
+  const files = (await listKeptFiles(deps.source.manager, demonstrationId)).filter(({ kind }) => !SPREADSHEETS.includes(kind))
+  const steps: ((db: Db) => Promise<void>)[] = []
+  const done: Blanked = { pages: 0, replaced: 0, removed: 0, stale: [], write: (db) => inTurn(steps, db) }
+  for (const file of files) {
+    const kept: Buffer[] = []
+    for (const page of file.pages) {
+      const picture = page.concerned ? await blankPage(deps.files, page, steps, done) : await pictureOf(deps.files, page)
+      if (picture) kept.push(picture)
+    }
+    steps.push(await replaceFile(deps.files, file, kept))
+    done.replaced += 1
+    done.stale.push(file.storageKey)
+  }
+  return done
+}
+
+async function inTurn(steps: readonly ((db: Db) => Promise<void>)[], db: Db): Promise<void> {
+  for (const step of steps) await step(db)
+}
+
+const pictureOf = async (store: FileStore, page: KeptPage) => (page.pictureKey ? store.get(page.pictureKey) : null)
+
+async function blankPage(
+  store: FileStore,
+  page: KeptPage,
+  steps: ((db: Db) => Promise<void>)[],
+  done: Blanked,
+): Promise<Buffer | null> {
+  const layout = page.layout && findLayout(page.layout.key, page.layout.version)
+  const before = await pictureOf(store, page)
+  if (page.pictureKey) done.stale.push(page.pictureKey)
+  if (!layout || !before) {
+    done.removed += 1
+    if (page.pictureKey) await store.remove(page.pictureKey)
+    steps.push((db) => replacePicture(db, page.id, null))
+    return null
+  }
+  const blanked = await blankAreas(before, layout)
+  const key = `pictures/${page.id}/${randomUUID()}`
+  await store.put(key, blanked)
+  if (page.pictureKey) await store.put(page.pictureKey, blanked)
+  steps.push((db) => replacePicture(db, page.id, key))
+  done.pages += 1
+  return blanked
+}
+
+/** The original becomes its own flattened pages: a JPEG, or a PDF where there are several. */
+async function replaceFile(store: FileStore, file: KeptFile, kept: readonly Buffer[]): Promise<(db: Db) => Promise<void>> {
+  const [first] = kept
+  if (!first) {
+    await store.remove(file.storageKey)
+    return (db) => replaceOriginal(db, file.id, null)
+  }
+  const bytes = kept.length === 1 ? first : await picturesAsPdf('Blanked pages', kept)
+  const kind: UploadKind = kept.length === 1 ? 'jpeg' : 'pdf'
+  const storageKey = `uploads/${randomUUID()}`
+  await store.put(storageKey, bytes)
+  await store.put(file.storageKey, bytes)
+  return (db) => replaceOriginal(db, file.id, { kind, storageKey, bytes: bytes.length })
+}
