@@ -1,10 +1,10 @@
 /** Fuel figures against the engine and the trade. */
 
 import { standardUncertainty } from '../trial/measure.ts'
-import { above, outside } from './compare.ts'
+import { above } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
-import { figure, rough } from './text.ts'
+import { figure, rough, valued } from './text.ts'
 
 const BALANCE = ['jar_start_ml', 'topup_ml', 'jar_end_ml']
 
@@ -19,9 +19,9 @@ const q09: Rule = {
     if (!ctx.fuel.known || ctx.fuel.value > 0) return []
     const [start, end] = [ctx.number('jar_start_ml') ?? 0, ctx.number('jar_end_ml') ?? 0]
     const swapped = ctx.fuel.value + 2 * (end - start)
-    const advice = swapped > 0 ? `Changed over, the two jar levels give ${swapped} mL.` : 'Is a top-up missing?'
+    const advice = swapped > 0 ? `Changed over, the two jar levels give ${figure(swapped, 0)} mL.` : 'Is a top-up missing?'
     return [
-      found('stop', ctx.fuelCells, `The jar gives ${ctx.fuel.value} mL used. ${advice}`, {
+      found('stop', ctx.fuelCells, `The jar gives ${figure(ctx.fuel.value, 0)} mL used. ${advice}`, {
         fuel_ml: ctx.fuel.value,
         swapped_ml: swapped,
       }),
@@ -117,7 +117,7 @@ const q48: Rule = {
           found(
             'doubt',
             [key],
-            `${ctx.label(key)} ${value} °C: over ${most} °C stop, let it cool, and look for hot return fuel.`,
+            `${valued(ctx.label(key), `${value} °C`)}: over ${most} °C stop, let it cool, and look for hot return fuel.`,
             { [key]: value, most_c: most, safety: 'hot fuel' },
           ),
         )

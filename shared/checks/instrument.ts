@@ -3,6 +3,7 @@ import { isUsable } from '../trial/readings.ts'
 import { stemOf } from './cells.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
+import { valued } from './text.ts'
 
 /** Jar and jug (Q04, Q07), tyres (Q28): their limits come from registers. */
 const OWN_RULE = [
@@ -40,7 +41,7 @@ function outside(
 
 const said = (ctx: CheckContext, key: string, value: number) => {
   const { unit } = ctx.cell(key)
-  return `${ctx.label(key)} ${value}${unit ? ` ${unit}` : ''}`
+  return valued(ctx.label(key), `${value}${unit ? ` ${unit}` : ''}`)
 }
 const unitOf = (ctx: CheckContext, key: string) => {
   const { unit } = ctx.cell(key)

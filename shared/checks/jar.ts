@@ -3,7 +3,7 @@ import { sinceStart } from '../trial/clock.ts'
 import { levelsBeforeTopups } from '../trial/measure-fuel.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
-import { figure, inside } from './text.ts'
+import { figure, inside, valued } from './text.ts'
 
 const LEVELS = ['jar_start_ml', 'jar_end_ml'] as const
 
@@ -30,7 +30,7 @@ const q04: Rule = {
     levels(ctx)
       .filter(({ value }) => value < 0 || value > ctx.kit.jarCapacity_ml)
       .map(({ key, value }) =>
-        found('stop', [key], `${ctx.label(key)} ${value} mL: the jar holds ${ctx.kit.jarCapacity_ml} mL.`, {
+        found('stop', [key], `${valued(ctx.label(key), `${value} mL`)}: the jar holds ${ctx.kit.jarCapacity_ml} mL.`, {
           [key]: value,
           capacity_ml: ctx.kit.jarCapacity_ml,
         }),
@@ -70,8 +70,12 @@ const q06: Rule = {
       if (value % mark === 0) return []
       const compared = { [key]: value, mark_ml: mark }
       if (value % mark === mark / 2)
-        return [found('note', [key], `${ctx.label(key)} ${value} mL stands half-way between marks of ${mark} mL.`, compared)]
-      return [found('doubt', [key], `${ctx.label(key)} ${value} mL is finer than the jar's marks of ${mark} mL.`, compared)]
+        return [
+          found('note', [key], `${valued(ctx.label(key), `${value} mL`)} stands half-way between marks of ${mark} mL.`, compared),
+        ]
+      return [
+        found('doubt', [key], `${valued(ctx.label(key), `${value} mL`)} is finer than the jar's marks of ${mark} mL.`, compared),
+      ]
     }),
 }
 
@@ -87,7 +91,7 @@ const q07: Rule = {
       const { jugMark_ml: mark, jugCapacity_ml: most } = ctx.kit
       if (value > most)
         return [
-          found('stop', [key], `${ctx.label(key)} ${value} mL: the jug holds ${most}. Write each filling by itself.`, {
+          found('stop', [key], `${valued(ctx.label(key), `${value} mL`)}: the jug holds ${most}. Write each filling by itself.`, {
             [key]: value,
             capacity_ml: most,
           }),
@@ -96,9 +100,16 @@ const q07: Rule = {
       const compared = { [key]: value, mark_ml: mark }
       if (value % mark === mark / 2)
         return [
-          found('note', [key], `${ctx.label(key)} ${value} mL stands half-way between the jug's marks of ${mark} mL.`, compared),
+          found(
+            'note',
+            [key],
+            `${valued(ctx.label(key), `${value} mL`)} stands half-way between the jug's marks of ${mark} mL.`,
+            compared,
+          ),
         ]
-      return [found('doubt', [key], `${ctx.label(key)} ${value} mL is finer than the jug's marks of ${mark} mL.`, compared)]
+      return [
+        found('doubt', [key], `${valued(ctx.label(key), `${value} mL`)} is finer than the jug's marks of ${mark} mL.`, compared),
+      ]
     }),
 }
 
@@ -114,7 +125,7 @@ const q10: Rule = {
     const written = levels(ctx)
       .filter(({ value }) => value >= 0 && value < least)
       .map(({ key, value }) =>
-        found('doubt', [key], `${ctx.label(key)} ${value} mL: under ${least} mL the outlet draws air.`, {
+        found('doubt', [key], `${valued(ctx.label(key), `${value} mL`)}: under ${least} mL the outlet draws air.`, {
           [key]: value,
           least_ml: least,
         }),

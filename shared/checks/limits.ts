@@ -12,6 +12,8 @@ const limit = (value: number, unit: string, source: string): Limit => ({ value, 
 
 export const LIMITS = {
   clock_slack_min: limit(5, 'min', '[P] jar read within 5 min of start and end'),
+  run_low_min: limit(20, 'min', '[P]'),
+  run_high_min: limit(240, 'min', '[P]'),
   late_days: limit(30, 'd', '[P]'),
   kit_check_months: limit(12, 'months', '[P]'),
   jar_lowest_ml: limit(500, 'mL', '[P] the outlet uncovers and air is drawn'),

@@ -18,6 +18,7 @@ import { plotRules } from './plot.ts'
 import type { Finding, Rule, Severity } from './rule.ts'
 import { soilRules } from './soil.ts'
 import { tyreRules } from './tyres.ts'
+import { workTimeRules } from './work-time.ts'
 
 /** Version of the set of rules that judged a record. Change it with any change of a rule or a default limit. */
 export const RULES_VERSION = '1.0.0'
@@ -39,6 +40,7 @@ export const RULES: readonly Rule[] = [
   plotRules,
   soilRules,
   tyreRules,
+  workTimeRules,
 ]
   .flat()
   .sort((a, b) => a.id.localeCompare(b.id))

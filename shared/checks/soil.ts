@@ -1,11 +1,12 @@
 /** Depth, width and soil: what the tool left behind. */
 
+import type { Operation } from '../trial/facts.ts'
 import { median, medianDeviation, variation_pct } from '../trial/stats.ts'
 import { above, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import type { LimitName } from './limits.ts'
 import { type Found, found, type Rule } from './rule.ts'
-import { figure, rough } from './text.ts'
+import { figure, listed, rough, valued } from './text.ts'
 
 const q23: Rule = {
   id: 'Q23',
@@ -66,10 +67,15 @@ const q41: Rule = {
     return [
       ...out,
       ...wild.map((d) =>
-        found('doubt', [d.key], `${ctx.label(d.key)} ${d.value} cm stands far from the middle, ${figure(middle, 1)} cm.`, {
-          [d.key]: d.value,
-          median_cm: middle,
-        }),
+        found(
+          'doubt',
+          [d.key],
+          `${valued(ctx.label(d.key), `${d.value} cm`)} stands far from the middle, ${figure(middle, 1)} cm.`,
+          {
+            [d.key]: d.value,
+            median_cm: middle,
+          },
+        ),
       ),
     ]
   },
@@ -88,17 +94,54 @@ const q42: Rule = {
     return ctx.all('depth_cm').flatMap(({ key, value }) => {
       if (value > reach)
         return [
-          found('stop', [key], `${ctx.label(key)} ${value} cm: the rule measures ${reach} cm.`, {
+          found('stop', [key], `${valued(ctx.label(key), `${value} cm`)}: the rule measures ${reach} cm.`, {
             [key]: value,
             reach_cm: reach,
           }),
         ]
       if (most !== null && value > most)
         return [
-          found('doubt', [key], `${ctx.label(key)} ${value} cm: the tool reaches ${most} cm.`, { [key]: value, tool_cm: most }),
+          found('doubt', [key], `${valued(ctx.label(key), `${value} cm`)}: the tool reaches ${most} cm.`, {
+            [key]: value,
+            tool_cm: most,
+          }),
         ]
       return []
     })
+  },
+}
+
+/** Working depths, cm, by operation [P]. */
+const USUAL_CM: Readonly<Record<Operation, readonly [number, number]>> = {
+  harrow: [5, 15],
+  cultivator: [5, 15],
+  rotary_tiller: [5, 18],
+  plough: [12, 30],
+  disc: [5, 20],
+  subsoiler: [30, 60],
+}
+
+const r08: Rule = {
+  id: 'R08',
+  version: 1,
+  name: 'depth of the operation',
+  severity: ['doubt'],
+  cells: ['depth_cm'],
+  why: 'Each tool has its depth [P].',
+  check: (ctx) => {
+    const { operation } = ctx.facts
+    if (!operation) return []
+    const [low, high] = USUAL_CM[operation]
+    const off = ctx.all('depth_cm').filter((d) => outside(d.value, low, high))
+    if (off.length === 0) return []
+    return [
+      found(
+        'doubt',
+        off.map((d) => d.key),
+        `${listed(off.map((d) => `${d.value} cm`))} deep; ${low} to ${high} cm is usual for this operation.`,
+        { readings: off.length, low_cm: low, high_cm: high },
+      ),
+    ]
   },
 }
 
@@ -196,4 +239,4 @@ function moisture(ctx: CheckContext, n: number): Found[] {
   return out
 }
 
-export const soilRules: readonly Rule[] = [q23, q41, q42, q43, q44, q50]
+export const soilRules: readonly Rule[] = [q23, q41, q42, q43, q44, q50, r08]

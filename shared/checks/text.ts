@@ -1,7 +1,7 @@
 /** Numbers and lists as the sentences of the rules say them. */
 
 /** At most `decimals` decimals, without trailing zeros; no digits are added. */
-export const figure = (value: number, decimals = 2): string => String(Number(value.toFixed(decimals)))
+export const figure = (value: number, decimals = 2): string => String(Number(value.toFixed(decimals)) || 0).replace('-', '−')
 
 /** Three figures, whatever the size. */
 export function rough(value: number): string {
@@ -29,3 +29,6 @@ export function numbersListed(numbers: readonly number[]): string {
   const inRow = first !== undefined && last !== undefined && numbers.length > 2 && last - first === numbers.length - 1
   return inRow ? `${first} to ${last}` : listed(numbers)
 }
+
+/** A label with its value; brackets keep "Depth 4" and "19 cm" apart. */
+export const valued = (label: string, value: string): string => (/\d$/.test(label) ? `${label} (${value})` : `${label} ${value}`)

@@ -32,7 +32,7 @@ const q27: Rule = {
       const off = (200 * Math.abs(l - r)) / (l + r)
       if (!above(off, ctx.limit('tyre_pair_doubt_pct'))) return []
       const unsafe = above(off, ctx.limit('tyre_pair_unsafe_pct'))
-      const text = `Tyres ${name}: ${l} left, ${r} right${unitWords(ctx)}, ${figure(off, 0)} % apart.${unsafe ? ' Do not drive on: check both cold, by the load table of the maker.' : ''}`
+      const text = `Tyres ${name}: ${l}${unitWords(ctx)} left, ${r}${unitWords(ctx)} right, ${figure(off, 0)} % apart.${unsafe ? ' Do not drive on: check both cold, by the load table of the maker.' : ''}`
       return [found('doubt', [left, right], text, { [left]: l, [right]: r, ...(unsafe ? { safety: 'tyres' } : {}) })]
     }),
 }

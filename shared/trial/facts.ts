@@ -50,7 +50,7 @@ export interface Facts {
   photoTakenOn?: string | null
   /** How far the photo was taken from the place, km. */
   photoDistance_km?: number | null
-  /** How far this place is from the one of another sheet that day is in `otherSheets`. */
+  /** Sheets this one may repeat or clash with: the same code, day, tractor or demonstrator. */
   otherSheets?: readonly OtherSheet[] | null
 }
 
@@ -65,6 +65,7 @@ export interface OtherSheet {
   start?: string | null
   end?: string | null
   imageHash?: string | null
+  /** From this sheet's place to that one's. */
   distance_km?: number | null
   readings?: Readings | null
 }

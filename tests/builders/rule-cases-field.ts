@@ -28,7 +28,13 @@ export const FIELD_CASES: readonly Case[] = [
   row('Q26', 'note', sheet(times(15, 16.5, 16.6)), sheet(times(15.5, 16.5, 16.6))),
   row('Q26', 'doubt', sheet(times(13.5, 16.5, 16.6)), sheet(times(14, 16.5, 16.6))),
   row('Q26', 'note', sheet(times(16.4, 16.1)), sheet(times(16.4, 16.1, 16.6)), '2 timed runs'),
-  row('Q27', 'doubt', sheet({ tyre_p_fl: 31, tyre_p_fr: 28 }), sheet({ tyre_p_fl: 30, tyre_p_fr: 28 }), '31 left, 28 right psi'),
+  row(
+    'Q27',
+    'doubt',
+    sheet({ tyre_p_fl: 31, tyre_p_fr: 28 }),
+    sheet({ tyre_p_fl: 30, tyre_p_fr: 28 }),
+    '31 psi left, 28 psi right',
+  ),
   row('Q27', 'doubt', sheet({ tyre_p_rl: 21, tyre_p_rr: 16 }), sheet({}), 'Do not drive on'),
   row('Q28', 'doubt', sheet({ tyre_p_rl: 27, tyre_p_rr: 27 }), sheet({ tyre_p_rl: 26, tyre_p_rr: 26 }), '(186 kPa)'),
   row('Q28', 'doubt', sheet({ tyre_p_fl: 21, tyre_p_fr: 21 }), sheet({ tyre_p_fl: 21, tyre_p_fr: 21 }, { drive: '4WD' })),
@@ -110,4 +116,12 @@ export const FIELD_CASES: readonly Case[] = [
   row('Q53', 'doubt', sheet({ rpm_load: 1710 }), sheet({ rpm_load: 1700 }), 'changed over?'),
   row('Q53', 'doubt', sheet({ rpm_load: 1444 }), sheet({ rpm_load: 1445 })),
   row('Q53', 'doubt', sheet({ pto_rpm: 595 }), sheet({ pto_rpm: 594 })),
+  row('R08', 'doubt', sheet({ 'depth_cm[3]': 11.5 }), sheet({ 'depth_cm[3]': 12 }), '12 to 30 cm'),
+  row(
+    'R09',
+    'doubt',
+    sheet({ t_end: '09:29', jar_end_t: '09:29', 'topup_t[1]': '09:20' }),
+    sheet({ t_end: '09:30', jar_end_t: '09:30', 'topup_t[1]': '09:20' }),
+    '20 to 240 min',
+  ),
 ]
