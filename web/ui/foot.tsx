@@ -23,7 +23,7 @@ export function Foot({ keys = [], note }: { keys?: FootKey[]; note?: ReactNode }
   if (keys.length === 0 && !note) return null
   return (
     <footer className="sticky bottom-0 z-20 flex flex-wrap items-center gap-x-3 border-t-[3px] border-ink bg-board px-margin py-1 text-[14px] print:hidden max-sm:static">
-      <ul className="flex flex-wrap items-center gap-x-3 gap-y-0.5" aria-label="Keys of this page">
+      <ul className="flex flex-wrap items-center gap-x-2 gap-y-0.5" aria-label="Keys of this page">
         {keys.map((key) => (
           <li key={key.keys + key.does}>{key.press ? <PressedKey {...key} /> : <KeyWords {...key} />}</li>
         ))}
@@ -44,7 +44,7 @@ function KeyWords({ keys, does }: FootKey) {
 
 function PressedKey(key: FootKey) {
   return (
-    <button type="button" className="min-h-[26px] px-0.5 disabled:opacity-60" onClick={key.press} disabled={key.off ?? false}>
+    <button type="button" className="min-h-[26px] disabled:opacity-60" onClick={key.press} disabled={key.off ?? false}>
       <KeyWords {...key} />
     </button>
   )

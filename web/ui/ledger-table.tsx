@@ -96,7 +96,7 @@ function LedgerRow<Row>({ row, columns, held, quiet, onRow }: LedgerRowProps<Row
       {columns.map((column) => (
         <td
           key={column.key}
-          className={`h-[30px] px-1 align-baseline first:pl-margin last:pr-margin ${column.figures ? 'figures text-right whitespace-nowrap' : ''} ${column.tight ? 'whitespace-nowrap' : ''}`}
+          className={`h-[30px] px-1 align-middle first:pl-margin last:pr-margin ${column.figures ? 'figures text-right whitespace-nowrap' : ''} ${column.tight ? 'whitespace-nowrap' : ''}`}
         >
           {column.cell(row)}
         </td>

@@ -60,7 +60,7 @@ export function Component() {
             onKeyDown={(event) => {
               if (event.key === 'Escape' || event.key === 'Enter') event.currentTarget.blur()
             }}
-            className="figures min-h-[36px] w-[216px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen"
+            className="figures min-h-[36px] w-[216px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen placeholder:text-graphite"
           />
         </label>
       }

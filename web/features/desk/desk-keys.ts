@@ -38,8 +38,7 @@ export function deskFootKeys(desk: Desk, acts: DeskActs, entering: () => void): 
   const always: FootKey[] = [
     { keys: 's', does: 'send back', press: () => acts.setMode({ kind: 'send back' }) },
     { keys: 'a', does: 'set aside', press: () => acts.setMode({ kind: 'set aside' }) },
-    { keys: '/', does: 'find a cell', press: () => acts.setMode({ kind: 'find' }) },
-    { keys: 'Shift Enter', does: 'enter the sheet, next', press: entering },
+    { keys: 'Shift Enter', does: 'enter, next', press: entering },
     { keys: 'Ctrl z', does: 'undo', press: acts.undo },
     { keys: '?', does: 'all keys', press: () => acts.setMode({ kind: 'keys' }) },
   ]

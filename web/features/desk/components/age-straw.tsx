@@ -58,6 +58,7 @@ export function AgeStraw({ arrivedAt, from, now, held }: { arrivedAt: string; fr
         const at = placeOf(day.getTime(), from, now)
         return <path key={day.getTime()} d={`M${at + 0.5} 0V30`} stroke="var(--feint)" strokeWidth="1" />
       })}
+      <path d={`M${AGE_PX - 1} 0V30`} strokeWidth="2" />
       {held ? (
         <rect x={x + EAR_PX - 4} y="11" width={AGE_PX - x - EAR_PX + 3} height="8" fill="var(--straw)" />
       ) : (

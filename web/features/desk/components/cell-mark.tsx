@@ -32,7 +32,7 @@ function CombDigits({ cell, reading, values, inBox }: CellMarkProps) {
   const boxes = boxesOf(cell)
   const characters = boxCharacters(cell, reading.value, values)
   const size = inBox ? 5.2 : 2.9
-  const drop = inBox ? 5.5 : 8.1
+  const drop = inBox ? 5.5 : 8
   if (!characters) {
     return (
       <text x={boxes[0]?.x} y={(boxes[0]?.y ?? 0) + drop} fontSize={size} className="figures">

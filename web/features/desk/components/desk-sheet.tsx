@@ -9,12 +9,13 @@ import { deskFootKeys, deskKeyMap } from '../desk-keys.ts'
 import { judgeWith } from '../model/desk-view.ts'
 import { stripOf } from '../model/strip.ts'
 import { typedValue } from '../model/typed-value.ts'
+import { useAlignedRow } from '../use-aligned-row.ts'
 import { useDesk } from '../use-desk.ts'
 import { type DeskActs, useDeskActs } from '../use-desk-acts.ts'
 import { useHold } from '../use-hold.ts'
 import { DeskStrip } from './desk-strip.tsx'
 import { Margin } from './margin.tsx'
-import { PagePane } from './page-pane.tsx'
+import { PagePane, rowInHand } from './page-pane.tsx'
 import { ResultsStrip } from './results-strip.tsx'
 
 interface DeskSheetProps {
@@ -32,6 +33,8 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
   const acts = useDeskActs(desk)
   const held = useHold(sheet.id, true)
   const crop = useRef<HTMLElement>(null)
+  const pane = useRef<HTMLElement>(null)
+  useAlignedRow({ pane, crop, share: rowInHand(desk) })
   const [sendBack, setAside, enter] = [useSendBack(sheet.id), useSetAside(sheet.id), useEnter(sheet.id)]
   const { version } = sheet
 
@@ -49,8 +52,12 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
   return (
     <div className="flex grow flex-col lg:h-[calc(100dvh-44px)] lg:min-h-[560px] lg:grow-0">
       <DeskStrip desk={desk} held={held} back={back} />
-      <main id="work" tabIndex={-1} className="grid min-h-0 grow lg:grid-cols-[minmax(0,1fr)_minmax(380px,30%)]">
-        <PagePane desk={desk} picture={picture} crop={crop} />
+      <main
+        id="work"
+        tabIndex={-1}
+        className="grid min-h-0 grow lg:grid-cols-[minmax(0,1fr)_minmax(380px,30%)] lg:grid-rows-[minmax(0,1fr)]"
+      >
+        <PagePane desk={desk} picture={picture} pane={pane} />
         <div className="min-h-0 max-lg:order-first lg:flex lg:flex-col">
           <Margin
             desk={desk}

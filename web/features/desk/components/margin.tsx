@@ -27,9 +27,9 @@ export function Margin(props: MarginProps) {
   return (
     <section
       aria-label="The doubt in hand"
-      className="min-h-0 overflow-y-auto border-l-[3px] border-double border-line pb-2 max-lg:border-l-0"
+      className="min-h-0 grow overflow-y-auto border-l-[3px] border-double border-line pb-2 max-lg:border-l-0"
     >
-      <div className="px-3 pt-2 lg:min-h-[240px]">
+      <div className="px-3 pt-2 lg:min-h-[198px]">
         <TroubleNote desk={desk} />
         <p className="label flex flex-wrap justify-between gap-x-2">
           <span>

@@ -1,43 +1,27 @@
-import { type RefObject, useLayoutEffect, useRef } from 'react'
+import type { RefObject } from 'react'
 import { formatValue } from '../../../../shared/layouts/cell-value.ts'
 import { cellBounds } from '../../../../shared/layouts/geometry.ts'
 import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
 import type { Reading } from '../../../../shared/schemas/sheet.ts'
 import type { Desk } from '../use-desk.ts'
-import { SheetMarks } from './sheet-marks.tsx'
+import { rowOf, SheetMarks } from './sheet-marks.tsx'
 
 interface PagePaneProps {
   desk: Desk
   /** Address of the flattened page; null where there is none and the form itself is drawn. */
   picture: string | null
-  /** Stands in the margin at the height the row in hand is brought to, so that the band runs straight across. */
-  crop: RefObject<HTMLElement | null>
+  pane: RefObject<HTMLElement | null>
 }
 
 /** The sheet itself is the form: the picture with its values over their ink. */
-export function PagePane({ desk, picture, crop }: PagePaneProps) {
-  const { layout, key, item } = desk
-  const pane = useRef<HTMLElement>(null)
-  const inHand = layout.cells.find((c) => c.key === (key ?? item?.cells[0]))
-  const row_mm = inHand ? cellBounds(inHand).y + cellBounds(inHand).height + 3.2 : null
-
-  useLayoutEffect(() => {
-    const box = pane.current
-    const leaf = box?.firstElementChild
-    if (!box || !leaf || row_mm === null) return
-    const scale = leaf.clientHeight / layout.page.height
-    const wanted_px = crop.current
-      ? crop.current.getBoundingClientRect().bottom - box.getBoundingClientRect().top
-      : box.clientHeight / 2
-    box.scrollTop = (leaf as HTMLElement).offsetTop + row_mm * scale - Math.min(wanted_px, box.clientHeight - 60)
-  }, [row_mm, crop, layout])
-
+export function PagePane({ desk, picture, pane }: PagePaneProps) {
+  const { layout } = desk
   return (
     <section
       ref={pane}
       aria-label="The sheet"
       tabIndex={-1}
-      className="relative min-h-0 overflow-y-auto bg-board lg:py-[32vh] lg:pl-1"
+      className="relative min-h-0 overflow-y-auto bg-board lg:py-[50vh] lg:pl-1"
     >
       <div className="relative bg-leaf" style={{ aspectRatio: `${layout.page.width} / ${layout.page.height}` }}>
         {picture && <img src={picture} alt="The sheet, flattened" className="absolute inset-0 h-full w-full" />}
@@ -48,6 +32,12 @@ export function PagePane({ desk, picture, crop }: PagePaneProps) {
       </div>
     </section>
   )
+}
+
+/** Lower edge of the row in hand on the page, as a share of the page's height. */
+export function rowInHand({ layout, key, item }: Desk): number | null {
+  const cell = layout.cells.find((c) => c.key === (key ?? item?.cells[0]))
+  return cell ? rowOf(cell).low / layout.page.height : null
 }
 
 /** Takes a cell in hand with the mouse; with the keyboard the same is "/" and its name. */

@@ -49,7 +49,7 @@ export function PlacePicture({ sheet, busy, error, onPlace }: PlacePictureProps)
             label="Layout"
             value={layoutAt}
             onChange={(event) => setLayoutAt(event.target.value)}
-            options={LAYOUTS.map((l, i) => ({ value: String(i), words: `${l.title}, version ${l.version}` }))}
+            options={LAYOUTS.map((l, i) => ({ value: String(i), words: `${l.key}, version ${l.version}` }))}
           />
           <Field
             label="Sheet code"

@@ -17,7 +17,10 @@ export function ResultsStrip({ figures, other }: ResultsStripProps) {
       {figures.map((figure, i) => (
         <div key={figure.key} className="border-l border-line px-2 py-1 first:border-l-0 max-sm:border-b">
           <p className="label flex flex-wrap justify-between gap-x-2">
-            <span>{figure.words}</span>
+            <span>
+              {figure.words}
+              {figure.value !== null && !figure.firm && ', not firm yet'}
+            </span>
             <OtherFigure figure={figure} other={other?.figures[i] ?? null} words={other?.words ?? ''} />
           </p>
           {figure.value === null ? (
@@ -27,7 +30,6 @@ export function ResultsStrip({ figures, other }: ResultsStripProps) {
               <span className="figures text-4">{figure.value}</span>
               <span>{figure.unit}</span>
               <PlusMinus U={figure.U} firm={figure.firm} />
-              {!figure.firm && <span className="label">not firm yet</span>}
             </p>
           )}
         </div>

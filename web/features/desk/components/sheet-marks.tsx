@@ -42,26 +42,26 @@ export function SheetMarks({ desk, inBox }: { desk: Desk; inBox: boolean }) {
 
 type Cells = ReadonlyMap<string, LayoutCell>
 
-/** The straw row behind the cell in hand; the ink shows through it. */
+/** The strip of the page a cell's row takes, mm: no higher than the rows of the fuel ledger stand apart. */
+export function rowOf(cell: LayoutCell): { top: number; low: number } {
+  const { y, height } = cellBounds(cell)
+  return { top: y - 0.9, low: y + height + 1.5 }
+}
+
+/** The straw row behind the cell in hand, and the band from it to the margin; the ink shows through. */
 function RowInHand({ cell, page }: { cell: LayoutCell; page: { width: number } }) {
-  const { x, y, width, height } = cellBounds(cell)
-  const low = y + height + 3.2
+  const { x, width } = cellBounds(cell)
+  const { top, low } = rowOf(cell)
+  const right = x + width + 1.2
   return (
     <>
+      <rect x="0" y={top} width={page.width} height={low - top} fill="var(--straw-pale)" style={{ mixBlendMode: 'multiply' }} />
+      <path d={`M0 ${top}H${page.width}M0 ${low}H${page.width}`} stroke="var(--ink)" strokeWidth="0.25" />
       <rect
-        x="0"
-        y={y - 1.6}
-        width={page.width}
-        height={height + 4.8}
-        fill="var(--straw-pale)"
-        style={{ mixBlendMode: 'multiply' }}
-      />
-      <path d={`M0 ${y - 1.6}H${page.width}M0 ${low}H${page.width}`} stroke="var(--ink)" strokeWidth="0.25" />
-      <rect
-        x={x + width}
-        y={low - 0.7}
-        width={page.width - x - width}
-        height="1.4"
+        x={right}
+        y={low - 1.2}
+        width={page.width - right + 1}
+        height="1.2"
         fill="var(--straw)"
         stroke="var(--ink)"
         strokeWidth="0.25"

@@ -45,8 +45,7 @@ function FileOutcome({ upload, sheetLink }: { upload: Upload; sheetLink: SheetLi
         <ul>
           {upload.pages.map((page) => (
             <li key={page.id} className="flex flex-wrap items-baseline gap-x-2">
-              {upload.pages.length > 1 && <span className="figures w-[66px] text-graphite">page {page.number}</span>}
-              <Said outcome={outcomeOfPage(page)} />
+              <Said outcome={outcomeOfPage(page)} page={upload.pages.length > 1 ? page.number : null} />
               {page.sheet && page.state === 'read' && (
                 <span className="ml-auto">
                   {sheetLink({
@@ -63,9 +62,10 @@ function FileOutcome({ upload, sheetLink }: { upload: Upload; sheetLink: SheetLi
   )
 }
 
-function Said({ outcome }: { outcome: Outcome }) {
+function Said({ outcome, page = null }: { outcome: Outcome; page?: number | null }) {
   return (
     <p className={outcome.takeAgain ? 'border-l-[3px] border-ink pl-1 text-2' : 'text-2'}>
+      {page !== null && <span className="text-graphite">Page {page}: </span>}
       <Glyph name={outcome.glyph} /> <strong>{outcome.head}</strong> {outcome.says}
     </p>
   )
