@@ -51,6 +51,8 @@ export const readingSchema = z.object({
   candidates: z.array(candidateSchema),
   /** Why the reader doubts it, in plain sentences. Rules add their own as doubts. */
   reasons: z.array(z.object({ rule: z.string(), text: z.string(), cells: z.array(z.string()) })),
+  /** The page whose picture shows its ink; null where a person or the plan gave it. */
+  pageId: idSchema.nullable(),
   /** The spreadsheet cell it came from, such as "Sheet!C14". */
   cellRef: z.string().nullable(),
   settlement: settlementSchema.nullable(),

@@ -55,6 +55,7 @@ export const toReading = (row: ReadingEntity, names: ReadonlyMap<string, string>
   origin: row.origin,
   candidates: row.candidates,
   reasons: row.reasons,
+  pageId: row.pageId,
   cellRef: row.cellRef,
   settlement: row.settlement as Reading['settlement'],
   settledBy: row.settledBy ? (names.get(row.settledBy) ?? null) : null,
