@@ -3,7 +3,7 @@
  * Each step says what it does; what fails says what happened and what to do.
  */
 import { join } from 'node:path'
-import { BadSettings, readSettings, type Settings } from '../config.ts'
+import { BadSettings, readSettings } from '../config.ts'
 import { CannotStart } from '../postgres/cannot-start.ts'
 import { keepSecrets } from '../postgres/secrets.ts'
 import { beginSeason } from './start/begin-season.ts'
@@ -58,9 +58,18 @@ async function start(own: StartSettings): Promise<void> {
   // The processes that serve people cannot change tables.
   env.MIGRATE_DATABASE_URL = undefined
   const settings = readSettings(env)
-  const season = await beginSeason(database, settings, { dataFolder: own.DATA_DIR, empty: own.empty })
+  const run = (name: 'server' | 'worker') => {
+    const process = supervise({ name, script: `${name}/main.ts`, env, logFile: join(own.DATA_DIR, `${name}.log`), say })
+    stops.add(process.stop)
+    return process
+  }
+  const season = await beginSeason(database, settings, {
+    dataFolder: own.DATA_DIR,
+    empty: own.empty,
+    startWorker: () => run('worker'),
+  })
   await built
-  await runProcesses(own.DATA_DIR, env, settings)
+  await step('Starting the server and a worker', () => waitForServer(run('server'), run('worker'), settings.port))
   await greet(settings, season, own.DATA_DIR)
   say(`Started in ${seconds(begin)}. Ctrl-C stops everything.`)
 }
@@ -76,19 +85,6 @@ function defaults(dataFolder: string, port: number, sessionSecret: string): Reco
 
 function present(env: NodeJS.ProcessEnv): Record<string, string | undefined> {
   return Object.fromEntries(Object.entries(env).filter(([, value]) => value !== undefined && value.trim() !== ''))
-}
-
-async function runProcesses(dataFolder: string, env: NodeJS.ProcessEnv, settings: Settings): Promise<void> {
-  const run = (name: string, script: string) => {
-    const process = supervise({ name, script, env, logFile: join(dataFolder, `${name}.log`), say })
-    stops.add(process.stop)
-    return process
-  }
-  await step('Starting the server and a worker', async () => {
-    const server = run('server', 'server/main.ts')
-    const worker = run('worker', 'worker/main.ts')
-    await waitForServer(server, worker, settings.port)
-  })
 }
 
 async function waitForServer(server: Supervised, worker: Supervised, port: number): Promise<void> {

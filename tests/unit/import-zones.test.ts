@@ -83,7 +83,7 @@ describe('the zones of the house', () => {
 
 function lint(folder: string): Set<string> {
   const biome = resolve('node_modules/@biomejs/biome/bin/biome')
-  const options = { cwd: folder, encoding: 'utf8', stdio: ['ignore', 'pipe', 'ignore'] } as const
+  const options = { cwd: folder, encoding: 'utf8', stdio: 'pipe' } as const
   const report = failing(() =>
     execFileSync(process.execPath, [biome, 'lint', '.', '--reporter=json', '--max-diagnostics=none'], options),
   )
