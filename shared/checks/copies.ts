@@ -1,7 +1,9 @@
 /** This sheet against other sheets. */
 import { clockMinutes } from '../trial/clock.ts'
 import type { OtherSheet } from '../trial/facts.ts'
-import { median, medianDeviation } from '../trial/stats.ts'
+import { grubbsCritical, grubbsDistance, robustZ } from '../trial/outliers.ts'
+import { mean, median } from '../trial/stats.ts'
+import { above } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { dayNumber } from './dates.ts'
 import { type Found, found, type Rule } from './rule.ts'
@@ -101,29 +103,57 @@ const q46: Rule = {
     }),
 }
 
-const q52: Rule = {
-  id: 'Q52',
+/** This run among earlier ones with the same tractor, implement, gear and soil. */
+function amongPeers(ctx: CheckContext, least: number): { value: number; all: number[]; from: string[] } | null {
+  const { value, from } = ctx.results.l_per_ha
+  const peers = ctx.facts.peers_l_per_ha ?? []
+  return value === null || peers.length + 1 < least ? null : { value, all: [...peers, value], from }
+}
+
+const q51: Rule = {
+  id: 'Q51',
   version: 1,
-  name: 'far from its like',
+  name: 'outlier by Grubbs',
   severity: ['doubt'],
   cells: ['jar_start_ml', 'jar_end_ml', 'side_ab_m', 'side_bc_m'],
-  why: 'Robust z over 3.5 among runs of the same tractor, implement, gear and soil (Iglewicz and Hoaglin [M]).',
+  why: 'Further from the mean of its like than chance allows at 1 % (NIST e-Handbook 1.3.5.17.1).',
   check: (ctx) => {
-    const { value, from } = ctx.results.l_per_ha
-    const all = value === null ? [] : [...(ctx.facts.peers_l_per_ha ?? []), value]
-    if (value === null || all.length < 5) return []
-    const [middle, deviation] = [median(all), medianDeviation(all)]
-    if (deviation === 0) return []
-    const z = (0.6745 * (value - middle)) / deviation
-    if (Math.abs(z) <= ctx.limit('robust_z')) return []
+    const run = amongPeers(ctx, 6)
+    const G = run === null ? null : grubbsDistance(run.value, run.all)
+    if (run === null || G === null) return []
+    const most = grubbsCritical(run.all.length, ctx.limit('grubbs_alpha'))
+    if (!above(G, most)) return []
     return [
-      found('doubt', from, `${figure(value, 1)} L/ha; the middle of ${all.length} such runs is ${figure(middle, 1)}.`, {
-        l_per_ha: value,
-        median_l_per_ha: middle,
-        z,
-      }),
+      found(
+        'doubt',
+        run.from,
+        `${figure(run.value, 1)} L/ha; the mean of ${run.all.length} such runs is ${figure(mean(run.all), 1)}, ${figure(G)} deviations away where ${figure(most)} are allowed.`,
+        { l_per_ha: run.value, grubbs: G, critical: most },
+      ),
     ]
   },
 }
 
-export const copyRules: readonly Rule[] = [q45, q46, q52]
+const q52: Rule = {
+  id: 'Q52',
+  version: 1,
+  name: 'outlier by the median',
+  severity: ['doubt'],
+  cells: ['jar_start_ml', 'jar_end_ml', 'side_ab_m', 'side_bc_m'],
+  why: 'Far from the middle of its like, though two wild ones hide each other from a mean (Iglewicz and Hoaglin [M]).',
+  check: (ctx) => {
+    const run = amongPeers(ctx, 5)
+    const z = run === null ? null : robustZ(run.value, run.all)
+    if (run === null || z === null || !above(Math.abs(z), ctx.limit('robust_z'))) return []
+    return [
+      found(
+        'doubt',
+        run.from,
+        `${figure(run.value, 1)} L/ha; the middle of ${run.all.length} such runs is ${figure(median(run.all), 1)}.`,
+        { l_per_ha: run.value, median_l_per_ha: median(run.all), z },
+      ),
+    ]
+  },
+}
+
+export const copyRules: readonly Rule[] = [q45, q46, q51, q52]

@@ -88,6 +88,7 @@ export const LIMITS = {
   temp_hot_c: limit(65, '°C', '[P]'),
   temp_needed_air_c: limit(35, '°C', '[P]'),
   temp_needed_min: limit(60, 'min', '[P]'),
+  grubbs_alpha: limit(0.01, '', '[P] two-sided'),
   robust_z: limit(3.5, '', '[M] Iglewicz and Hoaglin'),
   droop_pct: limit(15, '%', '[P]'),
   pto_rpm_pct: limit(10, '%', '[P]'),

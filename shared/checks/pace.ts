@@ -25,7 +25,7 @@ const q20: Rule = {
     if (above(s, ctx.limit('slip_stop_high_pct')))
       return told('stop', `over ${ctx.limit('slip_stop_high_pct')} % no work is done. A way misread?`)
     if (below(s, 0)) return told('doubt', 'under pull the way is shorter, not longer.')
-    if (above(s, most)) return told('doubt', `over ${most} % is much for ${ctx.facts.drive ?? '2WD'}.`)
+    if (above(s, most)) return told('doubt', `over ${most} % is much for ${ctx.facts.drive ?? 'any drive'}.`)
     if (below(s, ctx.limit('slip_note_low_pct'))) return told('note', 'hardly any pull.')
     return above(s, ctx.limit('slip_note_high_pct'))
       ? told('note', `over ${ctx.limit('slip_note_high_pct')} % is more than good work asks for.`)

@@ -1,6 +1,7 @@
 /** Depth, width and soil: what the tool left behind. */
 
 import type { Operation } from '../trial/facts.ts'
+import { soilWater_pct, waterOfWetSoil_pct } from '../trial/moisture.ts'
 import { median, medianDeviation, variation_pct } from '../trial/stats.ts'
 import { above, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
@@ -214,7 +215,7 @@ function moisture(ctx: CheckContext, n: number): Found[] {
   const compared = { can_g: can, dry_g: dry, wet_g: wet }
   if (!(can < dry && dry < wet))
     return [found('stop', keys, `Can ${can} g, dry ${dry} g, wet ${wet} g: each must weigh more than the one before.`, compared)]
-  const water_pct = (100 * (wet - dry)) / (dry - can)
+  const water_pct = soilWater_pct(can, wet, dry)
   const out: Found[] = []
   if (outside(water_pct, ctx.limit('moisture_low_pct'), ctx.limit('moisture_high_pct')))
     out.push(
@@ -226,7 +227,7 @@ function moisture(ctx: CheckContext, n: number): Found[] {
       ),
     )
   const written = ctx.number(`moist_written_pct[${n}]`)
-  const onWet = (100 * (wet - dry)) / (wet - can)
+  const onWet = waterOfWetSoil_pct(can, wet, dry)
   if (written !== null && Math.abs(written - onWet) <= 0.1 && Math.abs(written - water_pct) > 0.1)
     out.push(
       found(

@@ -77,4 +77,12 @@ export const SHEET_CASES: readonly Case[] = [
     'longer than 12 h',
   ),
   row('R07', 'stop', sheet({ jar_end_ml: 'two' }), sheet({ jar_end_ml: 2000 }), 'a number is needed'),
+  // n = 6: 1.972817 deviations at 1 %. One of six further off than that; and the same with peers that spread.
+  row(
+    'Q51',
+    'doubt',
+    given({ peers_l_per_ha: [10, 10.2, 10.4, 10.1, 10.3] }),
+    given({ peers_l_per_ha: [10, 10.2, 12.4, 12.1, 10.3] }),
+    '6 such runs',
+  ),
 ]
