@@ -3,8 +3,6 @@
  * still needs to know (a sum, a count, the last time), and the weights of equal states are added up. A forward and a backward
  * pass give the weight of every option of every reading under the tie.
  */
-import { STATE_FLOOR } from './thresholds.ts'
-
 /** A number, a name, or an object that is the same one for the same state. */
 export type State = number | string | object
 
@@ -36,6 +34,8 @@ export interface ChainResult {
 /** Counts steps across one sheet, so that a hopeless group ends as "not decided" and not as a wait. */
 export interface Budget {
   steps: number
+  /** States and options below this share of the best are left out. */
+  floor: number
   expired(): boolean
 }
 
@@ -51,7 +51,7 @@ export function runChain(chain: Chain, readings: ReadonlyArray<Incoming>, budget
     const from = forward[at]!
     const next = new Map<State, number>()
     const order = orders[at]!
-    const least = largest(from) * (reading.weights[order[0]!] ?? 0) * STATE_FLOOR
+    const least = largest(from) * (reading.weights[order[0]!] ?? 0) * budget.floor
     leasts.push(least)
     for (const [state, weight] of from) {
       let rest = 1

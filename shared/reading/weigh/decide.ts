@@ -8,6 +8,12 @@ import type { Option, Variable } from './variable.ts'
 const MOST_CANDIDATES = 5
 const SHOWN_FROM = 0.001
 
+/** Whether what is known favours another value than the ink alone. */
+export function isReadAgainstInk(variable: Variable, posterior: Float64Array | null): boolean {
+  if (!posterior) return false
+  return argMax(variable.options, (_, k) => posterior[k]!) !== argMax(variable.options, (o) => o.ink)
+}
+
 const percent = (p: number) => (p >= 0.9995 ? 'over 99.9 %' : p < 0.001 ? 'under 0.1 %' : `${Number((p * 100).toFixed(1))} %`)
 const said = (value: Value) => (value === null ? 'blank' : String(value))
 

@@ -4,12 +4,10 @@
  * values in turn, the tree that is left is weighed, and the answers are added up by their weight: exact as well.
  */
 import { type Budget, type ChainResult, NotDecided, runChain } from './chain.ts'
-import { MOST_LEFT_OUT } from './thresholds.ts'
+import { MOST_LEFT_OUT, PRECISIONS } from './thresholds.ts'
 import type { Factor } from './ties/compile.ts'
 import type { Variable } from './variable.ts'
 
-/** Likely values a held reading is tried at; less likely ones keep the weight they have alone. */
-const HELD_FLOOR = 3e-4
 const MOST_COMBINATIONS = 400
 
 export interface JointResult {
@@ -30,17 +28,21 @@ interface Group {
 export function weighJointly(
   variables: ReadonlyArray<Variable>,
   factors: ReadonlyArray<Factor>,
-  budget: () => Budget,
+  budget: () => Omit<Budget, 'floor'>,
 ): JointResult {
   const alone = variables.map((v) => Float64Array.from([...v.options.map((o) => o.weight), v.otherWeight]))
   const result: JointResult = { posteriors: alone.map(normal), ties: factors.map(() => null) }
   for (const group of groupsOf(variables.length, factors)) {
-    try {
-      weighGroup(group, variables, factors, alone, budget(), result)
-    } catch (error) {
-      if (!(error instanceof NotDecided)) throw error
-      for (const reading of group.readings) result.posteriors[reading] = null
-    }
+    const decided = PRECISIONS.some(({ state, held }) => {
+      try {
+        weighGroup(group, variables, factors, alone, { ...budget(), floor: state }, held, result)
+        return true
+      } catch (error) {
+        if (!(error instanceof NotDecided)) throw error
+        return false
+      }
+    })
+    if (!decided) for (const reading of group.readings) result.posteriors[reading] = null
   }
   return result
 }
@@ -117,11 +119,12 @@ function weighGroup(
   factors: ReadonlyArray<Factor>,
   alone: ReadonlyArray<Float64Array>,
   budget: Budget,
+  heldFloor: number,
   result: JointResult,
 ): void {
   const sums = new Map(group.readings.map((r) => [r, new Float64Array(alone[r]!.length)]))
   const tieSums = new Map(group.factors.map((f) => [f, { holds: 0, fails: 0, silent: 0 }]))
-  for (const weights of combinations(group.held, alone)) {
+  for (const weights of combinations(group.held, alone, heldFloor)) {
     const tree = passMessages(group, variables, factors, weights, budget)
     for (const [reading, belief] of tree.beliefs) addInto(sums.get(reading)!, belief, tree.weight)
     for (const [f, t] of tree.ties) {
@@ -140,12 +143,12 @@ function weighGroup(
 }
 
 /** All ways to hold the readings to hold, as weights with a single option left to each. */
-function combinations(held: number[], alone: ReadonlyArray<Float64Array>): Float64Array[][] {
+function combinations(held: number[], alone: ReadonlyArray<Float64Array>, floor: number): Float64Array[][] {
   let out: Float64Array[][] = [[...alone]]
   for (const reading of held) {
     const weights = alone[reading]!
     const top = Math.max(...weights)
-    const likely = [...weights.keys()].filter((k) => weights[k]! >= top * HELD_FLOOR)
+    const likely = [...weights.keys()].filter((k) => weights[k]! >= top * floor)
     if (out.length * likely.length > MOST_COMBINATIONS) throw new NotDecided()
     out = out.flatMap((before) =>
       likely.map((k) => {

@@ -1,6 +1,6 @@
 /** All ways of reading a comb of boxes, with their ink: numbers right-aligned, leading boxes blank or 0, decimals filled. */
 import { BLANK, type BoxDist, CLASS_COUNT, VOID } from '../classes.ts'
-import { MOST_PATTERNS, NET_HUMILITY, PATTERN_FLOOR } from './thresholds.ts'
+import { MOST_PATTERNS, NET_HUMILITY, PATTERN_FLOOR, VOID_RARER } from './thresholds.ts'
 
 export type CombKind = 'digits' | 'time' | 'date'
 
@@ -16,8 +16,10 @@ export interface Patterns {
   allBlank: number
   /** Probability of digits with a gap or an empty decimal box. */
   gap: number
-  /** Probability that at least one box is spoiled. */
+  /** Probability that at least one box is spoiled, at the share of spoiled boxes on real sheets. */
   spoiled: number
+  /** The same at the share the net was trained with: the alarm for a person, deliberately easy to set off. */
+  spoiledAlarm: number
   /** Probability of allowed patterns that were left out. */
   leftOut: number
 }
@@ -32,9 +34,14 @@ function emptiness(format: string, kind: CombKind): boolean[] {
   return boxes.map((_, n) => n < whole - (point < 0 ? 1 : 0))
 }
 
-/** A box's distribution with a little of it spread over all classes. */
+/** A box's distribution at the real share of spoiled boxes, with a little of it spread over all classes. */
 function humble(box: BoxDist): number[] {
-  return Array.from({ length: CLASS_COUNT }, (_, k) => (1 - NET_HUMILITY) * (box[k] ?? 0) + NET_HUMILITY / CLASS_COUNT)
+  const spoiled = box[VOID] ?? 0
+  const sum = 1 - spoiled + spoiled * VOID_RARER
+  return Array.from({ length: CLASS_COUNT }, (_, k) => {
+    const share = ((box[k] ?? 0) * (k === VOID ? VOID_RARER : 1)) / sum
+    return (1 - NET_HUMILITY) * share + NET_HUMILITY / CLASS_COUNT
+  })
 }
 
 /** @param boxes one distribution a box, in writing order; their number must fit the format. */
@@ -59,6 +66,7 @@ export function patternsOf(boxes: ReadonlyArray<BoxDist>, format: string, kind: 
     allBlank,
     gap: Math.max(0, whole - allowed - allBlank),
     spoiled: 1 - whole,
+    spoiledAlarm: 1 - boxes.reduce((all, box) => all * (1 - (box[VOID] ?? 0)), 1),
     leftOut: Math.max(0, allowed - sum),
   }
 }

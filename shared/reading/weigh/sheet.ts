@@ -3,7 +3,7 @@ import { type ChoiceCell, type CombCell, isComb, type LayoutCell, type TickCell 
 import type { Tie } from '../../layouts/tie.ts'
 import type { BoxDist, TickDist } from '../classes.ts'
 import type { Budget } from './chain.ts'
-import { decideChoice, decideComb, decideTick } from './decide.ts'
+import { decideChoice, decideComb, decideTick, isReadAgainstInk } from './decide.ts'
 import { weighJointly } from './joint.ts'
 import { scaled } from './scale.ts'
 import { MOST_STEPS, SHEET_LIMIT_MS, SUM_HOLDS } from './thresholds.ts'
@@ -37,9 +37,10 @@ export function weighSheet(
   ]
   const factors = compileTies(layout.ties, variables)
   const until = now() + SHEET_LIMIT_MS
-  const budget = (): Budget => ({ steps: MOST_STEPS, expired: () => now() > until })
+  const budget = (): Omit<Budget, 'floor'> => ({ steps: MOST_STEPS, expired: () => now() > until })
   const joint = weighJointly(variables, factors, budget)
 
+  const against = variables.map((variable, i) => isReadAgainstInk(variable, joint.posteriors[i]!))
   const out = new Map<string, Weighed>()
   variables.forEach((variable, i) => {
     const posterior = joint.posteriors[i]!
@@ -48,7 +49,7 @@ export function weighSheet(
       return
     }
     const failing = factors.flatMap((factor, f) =>
-      factor.readings.includes(i) ? wrongSum(factor, joint.ties[f], variables, i) : [],
+      factor.readings.includes(i) ? wrongSum(factor, joint.ties[f], variables, i, against) : [],
     )
     out.set(variable.key, decideComb(variable, posterior, failing))
   })
@@ -64,10 +65,14 @@ function wrongSum(
   odds: { holds: number; fails: number } | null | undefined,
   variables: ReadonlyArray<Variable>,
   reading: number,
+  against: readonly boolean[],
 ): WrongSum[] {
   if (factor.result === null || !odds) return []
   const claimed = odds.holds + odds.fails
-  if (claimed < 0.5 || odds.holds / claimed >= SUM_HOLDS) return []
+  if (claimed < 0.5) return []
+  // A sum that holds only with a part read against its ink does not vouch for the result: the writer's slip looks the same.
+  const vouched = factor.result !== reading || !factor.readings.some((r) => against[r])
+  if (odds.holds / claimed >= SUM_HOLDS && vouched) return []
   const own = factor.readings.map((r) => variables[r]!)
   return [
     {

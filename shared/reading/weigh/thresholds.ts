@@ -11,7 +11,9 @@ export const CLEAR_BESIDE_A_WRONG_SUM = 0.99
 export const SUM_HOLDS = 0.99
 /** Knowledge may choose only among digits at least this probable in their own box. */
 export const DIGIT_ALLOWED = 0.02
-/** A box this likely crossed out or written over puts its reading in doubt. */
+/** Spoiled boxes are rarer on sheets (about 1 in 100) than in training (1 in 7): their share is weighed down by this. */
+export const VOID_RARER = 0.1
+/** A reading with a box this likely crossed out or written over, by the net's own share, is in doubt. */
 export const VOID_DOUBT = 0.1
 /** Ink this likely to leave a gap between digits puts the reading in doubt. */
 export const GAP_DOUBT = 0.02
@@ -50,9 +52,16 @@ export const APART = 0.02
 /** Boxes of a time or date that no clock or calendar knows. */
 export const IMPOSSIBLE_FORMAT = 0.003
 
-/** Patterns and states less likely than this beside the best are left out; what is left out is added up. */
+/** Patterns of a comb less likely than this beside the best are left out; what is left out is added up. */
 export const PATTERN_FLOOR = 1e-6
-export const STATE_FLOOR = 1e-6
+/**
+ * What joint weighing leaves out beside the best: states of a tie, and values a held reading is tried at. The second, coarser
+ * pair is for groups too open for the first.
+ */
+export const PRECISIONS = [
+  { state: 1e-6, held: 3e-4 },
+  { state: 1e-4, held: 5e-3 },
+] as const
 export const MOST_PATTERNS = 600
 /**
  * A group is not decided where the weight left out exceeds what was kept. It comes near only where a sum fails (its weight is then

@@ -28,6 +28,7 @@ export interface Variable {
   /** Weight and ink of everything that is not an option: gaps, spoiled boxes, what was left out. */
   otherWeight: number
   gap: number
+  /** The alarm for a spoiled box. */
   spoiled: number
 }
 
@@ -67,7 +68,8 @@ export function combVariable(cell: CombCell, boxes: ReadonlyArray<BoxDist>, ties
     options: [...options, blank],
     otherWeight: other,
     gap: patterns.gap,
-    spoiled: patterns.spoiled,
+    spoiled: patterns.spoiledAlarm,
+    inkLess: patterns.gap + patterns.spoiled,
   })
 }
 
@@ -87,11 +89,13 @@ export function choiceVariable(cell: ChoiceCell, ticks: ReadonlyArray<TickDist>)
     otherWeight: Math.max(0, 1 - sum),
     gap: 0,
     spoiled,
+    inkLess: spoiled,
   })
 }
 
-function normalised(variable: Variable): Variable {
-  const inkSum = variable.options.reduce((all, o) => all + o.ink, 0) + variable.gap + variable.spoiled
+/** @param inkLess ink that is no option. */
+function normalised({ inkLess, ...variable }: Variable & { inkLess: number }): Variable {
+  const inkSum = variable.options.reduce((all, o) => all + o.ink, 0) + inkLess
   const weightSum = variable.options.reduce((all, o) => all + o.weight, 0) + variable.otherWeight
   for (const option of variable.options) {
     option.ink /= inkSum
