@@ -1,0 +1,118 @@
+import { useQuery } from '@tanstack/react-query'
+import { Link, useParams, useSearchParams } from 'react-router-dom'
+import { findLayout } from '../../../shared/layouts/registry.ts'
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
+import type { TrialRecord } from '../../../shared/schemas/record.ts'
+import { bookQueries, useChallenge } from '../../features/book/book.queries.ts'
+import { Budget } from '../../features/record/components/budget.tsx'
+import { ChallengeForm } from '../../features/record/components/challenge-form.tsx'
+import { Depths } from '../../features/record/components/depths.tsx'
+import { FiguresTable } from '../../features/record/components/figures-table.tsx'
+import { Headline } from '../../features/record/components/headline.tsx'
+import { RecordHistory } from '../../features/record/components/record-history.tsx'
+import { RecordNotes } from '../../features/record/components/record-notes.tsx'
+import { sourcesOf } from '../../features/record/record-model.ts'
+import { useMe } from '../../lib/me.ts'
+import { paths } from '../../lib/paths.ts'
+import { dateText } from '../../lib/time.ts'
+import { Glyph } from '../../ui/glyphs.tsx'
+import { Page } from '../../ui/page.tsx'
+import { ErrorState, Loading } from '../../ui/says.tsx'
+
+export function Component() {
+  const number = Number(useParams().number)
+  const version = useSearchParams()[0].get('version')
+  const record = useQuery(bookQueries.detail(number, version ? Number(version) : undefined))
+  const title = `Record ${String(number).padStart(4, '0')}`
+  if (record.error) {
+    return (
+      <Page title={title}>
+        <ErrorState error={record.error} again={() => record.refetch()} />
+      </Page>
+    )
+  }
+  if (!record.data) {
+    return (
+      <Page title={title}>
+        <Loading what="Opening the record" />
+      </Page>
+    )
+  }
+  return <RecordPage key={record.data.version} record={record.data} title={title} />
+}
+
+function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
+  const me = useMe()
+  const challenge = useChallenge(record.number)
+  const layout = findLayout(record.layout, record.layoutVersion)
+  const where = [record.place.name, record.trialDate ? dateText(record.trialDate) : ''].filter(Boolean).join(', ')
+  if (!layout) return <Page title={title}>The layout {record.layout} is not known to this page.</Page>
+  const sources = sourcesOf(record, layout)
+  const mayChallenge = (me.role === 'analyst' || me.role === 'admin') && record.state === 'entered'
+  return (
+    <Page
+      title={title}
+      over={<Entered record={record} title={title} />}
+      sentence={`${record.tractor.name} with ${record.implement.name}, ${where}`}
+    >
+      {record.challenge && (
+        <p className="border-b border-line bg-straw-pale px-margin py-1">
+          <Glyph name="challenged" /> Challenged by {record.challenge.by}: “{record.challenge.reason}”
+        </p>
+      )}
+      <Headline sources={sources} />
+      <div className="grid grid-cols-[minmax(0,7fr)_minmax(0,5fr)] border-t border-line max-lg:grid-cols-1">
+        <div className="border-r-[3px] border-double border-line max-lg:border-r-0">
+          <FiguresTable sources={sources} />
+          <Depths sources={sources} />
+        </div>
+        <div>
+          <Budget sources={sources} />
+          <RecordNotes record={record} layout={layout} />
+          <RecordHistory history={record.history} />
+          {mayChallenge && (
+            <ChallengeForm
+              pending={challenge.isPending}
+              error={challenge.error}
+              onChallenge={(reason) => challenge.mutate(reason)}
+            />
+          )}
+        </div>
+      </div>
+    </Page>
+  )
+}
+
+function Entered({ record, title }: { record: TrialRecord; title: string }) {
+  const me = useMe()
+  const sheet = record.sheetCode ? formatSheetCode(record.sheetCode) : 'without a code'
+  const sheetPath =
+    me.role === 'demonstrator'
+      ? paths.mySheet.to(record.sheetId)
+      : me.role === 'analyst'
+        ? null
+        : paths.deskSheet.to(record.sheetId)
+  const others = record.versions.filter((v) => v.version !== record.version)
+  return (
+    <>
+      {title}, version {record.version} <Glyph name="entered" /> entered {dateText(record.enteredAt)} by {record.enteredBy}, from
+      sheet{' '}
+      {sheetPath ? (
+        <Link className="word figures" to={sheetPath}>
+          {sheet}
+        </Link>
+      ) : (
+        <span className="figures">{sheet}</span>
+      )}
+      ; rules {record.rulesVersion}, formulas {record.formulaVersion}
+      {others.map((v) => (
+        <span key={v.version}>
+          {' · '}
+          <Link className="word" to={paths.record.to(record.number, v.version)}>
+            version {v.version}
+          </Link>
+        </span>
+      ))}
+    </>
+  )
+}

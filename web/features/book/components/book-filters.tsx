@@ -1,0 +1,89 @@
+import { useQuery } from '@tanstack/react-query'
+import { useId } from 'react'
+import { z } from 'zod'
+import { OPERATIONS, REGISTERS } from '../../../../shared/schemas/register.ts'
+import { api } from '../../../lib/api.ts'
+import type { BookFilters } from '../book.queries.ts'
+
+interface Choice {
+  value: string
+  words: string
+}
+
+const named = (name: 'tractors' | 'implements' | 'places') => ({
+  queryKey: ['registers', name, 'choices'] as const,
+  queryFn: async ({ signal }: { signal: AbortSignal }): Promise<Choice[]> => {
+    const rows = await api.get(`/registers/${name}`, z.array(REGISTERS[name].row), signal)
+    return rows.map((row) => ({ value: row.id, words: row.name }))
+  },
+})
+
+const words = (text: string): Choice => ({ value: text, words: text.replaceAll('_', ' ') })
+
+/** The filters stand in the address: a view can be sent to a colleague as it is. */
+export function BookFilterBar({
+  filters,
+  onChange,
+}: {
+  filters: BookFilters
+  onChange: (name: keyof BookFilters, value: string) => void
+}) {
+  const tractors = useQuery(named('tractors'))
+  const tools = useQuery(named('implements'))
+  const places = useQuery(named('places'))
+  const set = (name: keyof BookFilters) => (value: string) => onChange(name, value)
+  return (
+    <search className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5">
+      <Pick label="tractor" value={filters.tractor} choices={tractors.data ?? []} onPick={set('tractor')} />
+      <Pick label="implement" value={filters.implement} choices={tools.data ?? []} onPick={set('implement')} />
+      <Pick label="operation" value={filters.operation} choices={OPERATIONS.map(words)} onPick={set('operation')} />
+      <Pick label="place" value={filters.place} choices={places.data ?? []} onPick={set('place')} />
+      <Pick label="soil" value={filters.soil} choices={['fine', 'medium', 'coarse'].map(words)} onPick={set('soil')} />
+      <Day label="from" value={filters.from} onPick={set('from')} />
+      <Day label="to" value={filters.to} onPick={set('to')} />
+    </search>
+  )
+}
+
+const LOOK = 'min-h-[36px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen'
+
+function Pick({
+  label,
+  value,
+  choices,
+  onPick,
+}: {
+  label: string
+  value: string
+  choices: readonly Choice[]
+  onPick: (value: string) => void
+}) {
+  const id = useId()
+  return (
+    <div className="flex flex-col">
+      <label htmlFor={id} className="label">
+        {label}
+      </label>
+      <select id={id} className={LOOK} value={value} onChange={(event) => onPick(event.target.value)}>
+        <option value="">all</option>
+        {choices.map((c) => (
+          <option key={c.value} value={c.value}>
+            {c.words}
+          </option>
+        ))}
+      </select>
+    </div>
+  )
+}
+
+function Day({ label, value, onPick }: { label: string; value: string; onPick: (value: string) => void }) {
+  const id = useId()
+  return (
+    <div className="flex flex-col">
+      <label htmlFor={id} className="label">
+        {label}
+      </label>
+      <input id={id} type="date" className={`${LOOK} figures`} value={value} onChange={(event) => onPick(event.target.value)} />
+    </div>
+  )
+}

@@ -1,0 +1,77 @@
+import { Link } from 'react-router-dom'
+import { formatSheetCode } from '../../../../shared/layouts/sheet-code.ts'
+import type { RecordRow } from '../../../../shared/schemas/record.ts'
+import { RESULTS, type ResultKey } from '../../../../shared/trial/result.ts'
+import { paths } from '../../../lib/paths.ts'
+import { dateText } from '../../../lib/time.ts'
+import { Glyph } from '../../../ui/glyphs.tsx'
+import { type LedgerColumn, LedgerTable } from '../../../ui/ledger-table.tsx'
+import { Figure } from './figure.tsx'
+
+/** The figures a row shows, with the depth and the soil moved beside the fuel: shallow work is no saving. */
+const SHOWN: ReadonlyArray<readonly [ResultKey, string]> = [
+  ['l_per_ha', 'fuel'],
+  ['l_per_h', 'fuel rate'],
+  ['depth_mean_cm', 'depth'],
+  ['ml_per_m3', 'per soil moved'],
+  ['efc_ha_h', 'work rate'],
+  ['slip_pct', 'slip'],
+]
+
+const figures: LedgerColumn<RecordRow>[] = SHOWN.map(([key, words]) => ({
+  key,
+  head: (
+    <>
+      {words} <span className="figures font-normal">{RESULTS[key].unit}</span>
+    </>
+  ),
+  figures: true,
+  cell: (row) => <Figure result={row.results[key]} />,
+}))
+
+const columns: LedgerColumn<RecordRow>[] = [
+  {
+    key: 'number',
+    head: 'record',
+    tight: true,
+    cell: (row) => (
+      <Link to={paths.record.to(row.number)} className="word figures">
+        {String(row.number).padStart(4, '0')}
+      </Link>
+    ),
+  },
+  { key: 'date', head: 'date', tight: true, cell: (row) => (row.trialDate ? dateText(row.trialDate) : '–') },
+  {
+    key: 'tractor',
+    head: 'tractor and implement',
+    cell: (row) => `${row.tractor.name || 'unknown tractor'}, ${row.implement.name || 'unknown implement'}`,
+  },
+  { key: 'place', head: 'place', cell: (row) => row.place.name || '–' },
+  ...figures,
+  {
+    key: 'sheet',
+    head: 'sheet',
+    tight: true,
+    cell: (row) => (
+      <>
+        <span className="figures">{row.sheetCode ? formatSheetCode(row.sheetCode) : 'no code'}</span>
+        {row.state === 'challenged' && (
+          <span className="ml-1">
+            <Glyph name="challenged" /> challenged
+          </span>
+        )}
+      </>
+    ),
+  },
+]
+
+export function BookTable({ records }: { records: readonly RecordRow[] }) {
+  return (
+    <LedgerTable
+      caption="Records of the trial book, newest first, each figure with its uncertainty U, k = 2"
+      columns={columns}
+      groups={[{ key: 'all', rows: records }]}
+      rowKey={(row) => String(row.number)}
+    />
+  )
+}
