@@ -11,9 +11,11 @@ import { trailRoutes } from '../features/trail/trail.routes.ts'
 import { uploadRoutes } from '../features/uploads/uploads.routes.ts'
 import { passwordRoutes } from '../features/users/passwords.routes.ts'
 import { userRoutes } from '../features/users/users.routes.ts'
+import { openapiRoute } from './openapi.ts'
 import type { Route } from './route.ts'
 
-export const allRoutes: readonly Route[] = [
+/** Each feature lists its own. */
+const routes: readonly Route[] = [
   ...healthRoutes,
   ...sessionRoutes,
   ...passwordRoutes,
@@ -27,3 +29,5 @@ export const allRoutes: readonly Route[] = [
   ...mailRoutes,
   ...trailRoutes,
 ]
+
+export const allRoutes: readonly Route[] = [...routes, openapiRoute(routes)]

@@ -77,6 +77,7 @@ const layoutFile = (ending: string): Rule => ({ may: 'signed in', path: () => `/
 
 export const ACCESS: Record<string, Rule> = {
   'GET /health': { may: 'anyone' },
+  'GET /openapi.json': { may: 'anyone' },
   'POST /session': { may: 'anyone', body: (_own, common) => common.signIn },
   'GET /session': { may: 'signed in' },
   'DELETE /session': { may: 'anyone' },

@@ -26,12 +26,18 @@ export interface TestServer {
   close(): Promise<void>
 }
 
-/** Call it in `beforeAll`, and `close` in `afterAll`. `env` overrides settings by their names. */
-export async function startTestServer(env: Record<string, string> = {}): Promise<TestServer> {
+/**
+ * Call it in `beforeAll`, and `close` in `afterAll`. `env` overrides settings by their names; `through` may put something
+ * between the server and its database.
+ */
+export async function startTestServer(
+  env: Record<string, string> = {},
+  through: (databaseUrl: string) => Promise<string> = async (url) => url,
+): Promise<TestServer> {
   const database = await createTestDatabase()
   const folder = await mkdtemp(join(tmpdir(), 'sheafbook-files-'))
   const settings = readSettings({
-    DATABASE_URL: database.url,
+    DATABASE_URL: await through(database.url),
     SESSION_SECRET: 'a secret that signs the cookies of tests only',
     STORAGE_DIR: folder,
     WEB_DIR: join(folder, 'web'),
