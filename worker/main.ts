@@ -2,11 +2,13 @@
 import { pino } from 'pino'
 import { BadSettings, readWorkerSettings, type WorkerSettings } from '../server/config.ts'
 import { isDatabaseAway } from '../server/db/driver-errors.ts'
+import { listKnownNumbers } from '../server/db/repositories/known-numbers.ts'
 import { createMailer } from '../server/mail/mailer.ts'
 import { createFileStore } from '../server/storage/store.ts'
 import { runParser } from './child/run-parser.ts'
 import { mailSendJob } from './jobs/mail-send.job.ts'
 import { pageReadJob } from './jobs/page-read.job.ts'
+import type { PageReader } from './jobs/page-reader.ts'
 import { createPageReader } from './jobs/read-photo.ts'
 import { uploadSplitJob } from './jobs/upload-split.job.ts'
 import { startWorker } from './start-worker.ts'
@@ -19,18 +21,21 @@ async function run(settings: WorkerSettings): Promise<void> {
   const log = pino({ level: settings.logLevel, name: 'worker' })
   const files = createFileStore(settings.store)
   const mailer = createMailer(settings.smtpUrl, settings.mailFrom)
-  const reader = createPageReader()
   const stop = new AbortController()
+  let reader: PageReader | undefined
   const starting = startWorker(
     {
       databaseUrl: settings.databaseUrl,
       poolSize: settings.databasePool,
       log,
-      handlers: ({ source, boss }) => [
-        uploadSplitJob({ source, boss, files, parse: runParser }),
-        pageReadJob({ source, files, reader }),
-        mailSendJob({ source, mailer }),
-      ],
+      handlers: ({ source, boss }) => {
+        reader = createPageReader(() => listKnownNumbers(source.manager))
+        return [
+          uploadSplitJob({ source, boss, files, parse: runParser }),
+          pageReadJob({ source, files, reader }),
+          mailSendJob({ source, mailer }),
+        ]
+      },
     },
     stop.signal,
   )
@@ -42,7 +47,7 @@ async function run(settings: WorkerSettings): Promise<void> {
     stop.abort()
     const worker = await starting.catch(() => null)
     await worker?.stop(PATIENCE_MS)
-    await reader.close()
+    await reader?.close()
     mailer.close()
     log.info('stopped')
     process.exit(code)

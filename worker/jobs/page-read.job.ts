@@ -47,8 +47,8 @@ async function read(deps: PageReadDeps, page: TakenPage, signal: AbortSignal): P
   if (page.block) return { outcome: readBlock(page.block), picture: null }
   if (page.storageKey === null) throw new Error(`page ${page.id} has neither a block nor a file`)
   const bytes = await deps.files.get(page.storageKey)
-  const { fileName, kind, number, placed } = page
-  return deps.reader.read({ bytes, fileName, kind, page: number, placed }, signal)
+  const { fileName, kind, number, placed, planned } = page
+  return deps.reader.read({ bytes, fileName, kind, page: number, placed, planned }, signal)
 }
 
 /**

@@ -11,6 +11,8 @@ export interface PagePicture {
   page: number
   /** Where a clerk placed the page by hand. */
   placed: PageEntity['placed']
+  /** The sheet it was placed on is a planned one: no number boxes in its head. */
+  planned: boolean
 }
 
 export interface ReadPicture {

@@ -25,6 +25,8 @@ export interface TakenPage {
   block: Record<string, unknown> | null
   placed: PageEntity['placed']
   sheetId: string | null
+  /** Its sheet, if it has one already, is a planned one. */
+  planned: boolean
   uploadId: string
   fileName: string
   kind: UploadKind
@@ -42,7 +44,7 @@ export async function takePage(db: Db, pageId: string): Promise<TakenPage | null
     `UPDATE pages p SET attempt_token = gen_random_uuid(), attempts = p.attempts + 1, state = 'being read'
      FROM uploads u WHERE p.id = $1 AND u.id = p.upload_id AND p.state IN ('arrived', 'being read')
      RETURNING p.id, p.number, p.attempt_token AS "attemptToken", p.attempts, p.block, p.placed, p.sheet_id AS "sheetId",
-       u.id AS "uploadId", u.file_name AS "fileName", u.kind, u.storage_key AS "storageKey", p.picture_key AS "pictureKey"`,
+       coalesce((SELECT planned FROM sheets WHERE id = p.sheet_id), false) AS planned, u.id AS "uploadId", u.file_name AS "fileName", u.kind, u.storage_key AS "storageKey", p.picture_key AS "pictureKey"`,
     [pageId],
   )
   const taken = rows[0] ?? null

@@ -26,8 +26,7 @@ let loading: ReturnType<typeof loadSharp> | undefined
 
 /** Reads headers only: the pixels are decoded once, by the worker. */
 export async function checkPicture(kind: PictureKind, bytes: Buffer): Promise<Refusal | null> {
-  // A scanner's TIFF holds many pages and is measured as a scan.
-  const most = kind === 'tiff' ? FILE_LIMITS.pdf_bytes : FILE_LIMITS.photo_bytes
+  const most = FILE_LIMITS.photo_bytes
   if (bytes.length > most) return tooLarge('picture', bytes.length, most, 'Send it as the phone makes it, or in a lower quality.')
   const size = kind === 'heic' ? heicSize(bytes) : await headerSize(bytes)
   if (size === null) return damaged('its head cannot be read')

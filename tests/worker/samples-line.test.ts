@@ -1,0 +1,72 @@
+import { type ChildProcess, spawn } from 'node:child_process'
+import { readFile } from 'node:fs/promises'
+import sharp from 'sharp'
+import { afterAll, beforeAll, expect, it } from 'vitest'
+import type { Upload } from '../../shared/schemas/upload.ts'
+import type { TestAgent } from '../support/agent.ts'
+import { startTestServer, type TestServer } from '../support/server.ts'
+import { waitFor } from '../support/wait-for.ts'
+
+let server: TestServer
+let worker: ChildProcess
+let workerSaid = ''
+let clerk: TestAgent
+
+beforeAll(async () => {
+  server = await startTestServer()
+  clerk = await server.signIn('clerk')
+  const { store, databaseUrl } = server.deps.settings
+  if (store.kind !== 'folder') throw new Error('these tests keep files in a folder')
+  worker = spawn(process.execPath, ['--import', 'tsx', 'worker/main.ts'], {
+    env: { ...process.env, DATABASE_URL: databaseUrl, STORAGE_DIR: store.dir, LOG_LEVEL: 'warn' },
+    stdio: ['ignore', 'pipe', 'inherit'],
+  })
+  worker.stdout?.on('data', (part: Buffer) => {
+    workerSaid += part.toString()
+  })
+})
+afterAll(async () => {
+  const ended = new Promise((resolve) => worker.once('exit', resolve))
+  worker.kill('SIGTERM')
+  await ended
+  await server.close()
+})
+
+async function send(path: string): Promise<Upload> {
+  const form = new FormData()
+  form.append('files', new File([await readFile(path)], path.split('/').at(-1)!))
+  const [upload] = ((await clerk.send('/uploads', form)).body as { uploads: Upload[] }).uploads
+  await waitFor(
+    async () => ['done', 'not accepted'].includes(((await clerk.get(`/uploads/${upload!.id}`)).body as Upload).state),
+    { what: `${path} to be read (${workerSaid})`, deadline_ms: 50_000 },
+  )
+  return (await clerk.get(`/uploads/${upload!.id}`)).body as Upload
+}
+
+it('a flat scan is read to the desk: its sheet waits, its clear readings are what was written, its page can be seen', async () => {
+  const upload = await send('samples/flat-scan/flat-scan.jpg')
+  const [page] = upload.pages
+  expect(page).toMatchObject({ state: 'read', sheet: { state: expect.stringMatching(/waiting|settled/) } })
+  const truth = JSON.parse(await readFile('samples/flat-scan/flat-scan.truth.json', 'utf8'))
+  const readings: Array<{ key: string; value: unknown; state: string }> = await server.deps.source.query(
+    "SELECT key, value, state FROM readings WHERE sheet_id = $1 AND origin = 'ink'",
+    [page!.sheet!.id],
+  )
+  const clear = readings.filter(({ key, state }) => state === 'clear' && typeof truth.readings[key] === 'number')
+  expect(clear.length).toBeGreaterThan(20)
+  expect(clear.filter(({ key, value }) => value !== truth.readings[key])).toEqual([])
+  const picture = await clerk.get(`/pages/${page!.id}/picture`)
+  expect(picture.headers.get('content-type')).toBe('image/jpeg')
+  expect(await sharp(picture.bytes).metadata()).toMatchObject({ format: 'jpeg', width: 1240, height: 1754 })
+})
+
+it('a scan of three pages becomes three sheets', async () => {
+  const upload = await send('samples/three-pages/three-pages.pdf')
+  expect(upload.pages.map((page) => page.state)).toEqual(['read', 'read', 'read'])
+  expect(new Set(upload.pages.map((page) => page.sheet!.id)).size).toBe(3)
+})
+
+it('a picture with nothing to read is answered with what to do', async () => {
+  const upload = await send('samples/nothing/nothing.jpg')
+  expect(upload.pages).toMatchObject([{ state: 'take again', takeAgain: { advice: expect.stringMatching(/\w{3,}/) } }])
+})
