@@ -127,7 +127,7 @@ const q51: Rule = {
       found(
         'doubt',
         run.from,
-        `${figure(run.value, 1)} L/ha; the mean of ${run.all.length} such runs is ${figure(mean(run.all), 1)}, ${figure(G)} deviations away where ${figure(most)} are allowed.`,
+        `${figure(run.value, 1)} L/ha; the mean of ${run.all.length} such runs is ${figure(mean(run.all), 1)} L/ha, ${figure(G)} deviations away where ${figure(most)} are allowed.`,
         { l_per_ha: run.value, grubbs: G, critical: most },
       ),
     ]
@@ -149,7 +149,7 @@ const q52: Rule = {
       found(
         'doubt',
         run.from,
-        `${figure(run.value, 1)} L/ha; the middle of ${run.all.length} such runs is ${figure(median(run.all), 1)}.`,
+        `${figure(run.value, 1)} L/ha; the middle of ${run.all.length} such runs is ${figure(median(run.all), 1)} L/ha.`,
         { l_per_ha: run.value, median_l_per_ha: median(run.all), z },
       ),
     ]

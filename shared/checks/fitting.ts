@@ -66,7 +66,7 @@ const q54: Rule = {
     return minutes === null || minutes >= least
       ? []
       : [
-          found('note', ['warmup_min'], `Warmed up for ${minutes} min; ${least} are wanted.`, {
+          found('note', ['warmup_min'], `Warmed up for ${minutes} min; ${least} min are wanted.`, {
             warmup_min: minutes,
             least_min: least,
           }),
@@ -101,7 +101,7 @@ const r04: Rule = {
       found(
         'doubt',
         ['kit_id'],
-        `The kit was last checked ${figure(months, 0)} months before the run, on ${checked}; ${most} are allowed.`,
+        `The kit was last checked ${figure(months, 0)} months before the run, on ${checked}; ${most} months are allowed.`,
         { checked_on: checked, trial_date: day, months },
       ),
     ]

@@ -132,7 +132,7 @@ const q32: Rule = {
     if (value === null || usual === null) return []
     const ratio = value / usual
     const compared = { l_per_ha: value, usual_l_per_ha: usual }
-    const told = `${figure(value, 1)} L/ha; ${figure(usual, 1)} is usual for this operation.`
+    const told = `${figure(value, 1)} L/ha; ${figure(usual, 1)} L/ha is usual for this operation.`
     if (outside(ratio, ctx.limit('band_doubt_low'), ctx.limit('band_doubt_high')))
       return [found('doubt', ctx.results.l_per_ha.from, told, compared)]
     if (outside(ratio, ctx.limit('band_note_low'), ctx.limit('band_note_high')))

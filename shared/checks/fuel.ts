@@ -76,7 +76,7 @@ const q47: Rule = {
         found(
           'note',
           ['density_15'],
-          `Density ${rho} kg/m³ at 15 °C; ${ctx.limit('density_note_low')} to ${ctx.limit('density_note_high')} is usual.`,
+          `Density ${rho} kg/m³ at 15 °C; ${ctx.limit('density_note_low')} to ${ctx.limit('density_note_high')} kg/m³ is usual.`,
           compared,
         ),
       ]

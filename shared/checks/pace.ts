@@ -166,14 +166,19 @@ const q53: Rule = {
       const compared = { rpm_noload: free, rpm_load: loaded }
       if (droop < 0)
         out.push(
-          found('doubt', ['rpm_noload', 'rpm_load'], `${loaded} r/min in work, ${free} without load: changed over?`, compared),
+          found(
+            'doubt',
+            ['rpm_noload', 'rpm_load'],
+            `${loaded} r/min in work, ${free} r/min without load: changed over?`,
+            compared,
+          ),
         )
       else if (above(droop, ctx.limit('droop_pct')))
         out.push(
           found(
             'doubt',
             ['rpm_noload', 'rpm_load'],
-            `${free} r/min fell to ${loaded} in work, by ${figure(droop, 1)} %: misread?`,
+            `${free} r/min fell to ${loaded} r/min in work, by ${figure(droop, 1)} %: misread?`,
             compared,
           ),
         )

@@ -100,7 +100,7 @@ const q37: Rule = {
         found(
           'stop',
           keys,
-          `${keys.map((key, i) => `${ctx.label(key)} ${lengths[i]}`).join(', ')} m do not close to a triangle.`,
+          `${keys.map((key, i) => `${ctx.label(key)} ${lengths[i]} m`).join(', ')} do not close to a triangle.`,
           Object.fromEntries(keys.map((key, i) => [key, lengths[i] ?? 0])),
         ),
       )
@@ -136,7 +136,7 @@ function diagonals(ctx: CheckContext): Found[] {
         found(
           'doubt',
           ['side_ab_m', 'side_bc_m', key],
-          `${ctx.label(key)} ${d} m; ${ab} by ${bc} m with square corners has ${figure(square, 1)} m. Measure all four sides.`,
+          `${ctx.label(key)} ${d} m; ${ab} by ${bc} m with square corners has a diagonal of ${figure(square, 1)} m. Measure all four sides.`,
           { [key]: d, square_m: square },
         ),
       ]

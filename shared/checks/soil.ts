@@ -2,12 +2,13 @@
 
 import type { Operation } from '../trial/facts.ts'
 import { soilWater_pct, waterOfWetSoil_pct } from '../trial/moisture.ts'
+import type { Repeat } from '../trial/readings.ts'
 import { median, medianDeviation, variation_pct } from '../trial/stats.ts'
 import { above, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import type { LimitName } from './limits.ts'
-import { type Found, found, type Rule } from './rule.ts'
-import { figure, listed, rough, valued } from './text.ts'
+import { type Found, found, type Rule, type Severity } from './rule.ts'
+import { figure, listed, numbersListed, rough, valued } from './text.ts'
 
 const q23: Rule = {
   id: 'Q23',
@@ -91,25 +92,42 @@ const q42: Rule = {
   why: 'Deeper than tool or rule can reach.',
   check: (ctx) => {
     const reach = ctx.facts.ruleReach_cm ?? ctx.limit('rule_reach_cm')
-    const most = ctx.facts.maxDepth_cm ?? null
-    return ctx.all('depth_cm').flatMap(({ key, value }) => {
-      if (value > reach)
-        return [
-          found('stop', [key], `${valued(ctx.label(key), `${value} cm`)}: the rule measures ${reach} cm.`, {
-            [key]: value,
-            reach_cm: reach,
-          }),
-        ]
-      if (most !== null && value > most)
-        return [
-          found('doubt', [key], `${valued(ctx.label(key), `${value} cm`)}: the tool reaches ${most} cm.`, {
-            [key]: value,
-            tool_cm: most,
-          }),
-        ]
-      return []
-    })
+    const most = ctx.facts.maxDepth_cm ?? Number.POSITIVE_INFINITY
+    const depths = ctx.all('depth_cm')
+    return [
+      ...tooDeep(
+        ctx,
+        depths.filter((d) => d.value > reach),
+        'stop',
+        'the rule measures',
+        reach,
+      ),
+      ...tooDeep(
+        ctx,
+        depths.filter((d) => d.value > most && d.value <= reach),
+        'doubt',
+        'the tool reaches',
+        most,
+      ),
+    ]
   },
+}
+
+/** One sentence for all depths beyond one limit. */
+function tooDeep(ctx: CheckContext, depths: readonly Repeat[], severity: Severity, what: string, most: number): Found[] {
+  const first = depths[0]
+  if (first === undefined) return []
+  const deepest = Math.max(...depths.map((d) => d.value))
+  const label = ctx.label(first.key).replace(/\d+/, numbersListed(depths.map((d) => d.n)))
+  const text = depths.length === 1 ? valued(label, `${first.value} cm`) : `${label}, to ${deepest} cm`
+  return [
+    found(
+      severity,
+      depths.map((d) => d.key),
+      `${text}: ${what} ${most} cm.`,
+      { deepest_cm: deepest, most_cm: most, readings: depths.length },
+    ),
+  ]
 }
 
 /** Working depths, cm, by operation [P]. */
