@@ -5,40 +5,59 @@ import type { User } from '../../shared/schemas/user.ts'
 import { listSheetRows } from '../db/desk/sheet-rows.ts'
 import { getSheet } from '../features/sheets/change-sheet.ts'
 import { enterSheet } from '../features/sheets/enter.service.ts'
-import { settleOneReading } from '../features/sheets/settle.service.ts'
+import { settleOneDoubt, settleOneReading } from '../features/sheets/settle.service.ts'
 import type { Deps } from '../http/route.ts'
-import { type SampleSheet, sampleFile } from './sample-sheets.ts'
+import { type SampleSheet, truthFile } from './sample-sheets.ts'
 
 /** Sheets with trouble of their own stay at the desk, so that its pages have something true to show. */
-const LEFT_AT_THE_DESK = /wrong|crossed|blank|nothing|missing|dirt|pencil|small/
+const LEFT_AT_THE_DESK = new Set(['wrong-sum', 'crossed-out', 'blanks', 'pencil', 'small', 'thumb', 'corner-missing'])
+
+interface Truth {
+  sheet: string
+  readings: Record<string, Value>
+}
 
 /** A clerk with the paper in hand: keeps what was read right, corrects what was not. */
-export async function settleByTruth(deps: Deps, clerk: User, samples: readonly SampleSheet[]): Promise<void> {
-  for (const sample of samples.filter((s) => s.sheetCode && !LEFT_AT_THE_DESK.test(s.case))) {
-    const truth = await truthOf(sample)
-    const { rows } = await listSheetRows(deps.source.manager, { desk: true, search: sample.sheetCode ?? '' })
-    for (const row of rows) await settleReadings(deps, clerk, await getSheet(deps, clerk, row.id), truth)
+export async function settleByPaper(deps: Deps, clerk: User, samples: readonly SampleSheet[]): Promise<void> {
+  for (const sample of samples.filter((s) => !LEFT_AT_THE_DESK.has(s.case))) {
+    const paper = await paperOf(sample)
+    const { rows } = await listSheetRows(deps.source.manager, { desk: true, search: sample.sheetCode })
+    for (const row of rows) {
+      const settled = await settleReadings(deps, clerk, await getSheet(deps, clerk, row.id), paper)
+      await letDoubtsStand(deps, clerk, settled)
+    }
   }
 }
 
-async function truthOf(sample: SampleSheet): Promise<Record<string, Value>> {
-  const text = await readFile(sampleFile(sample).replace(/\.[a-z]+$/, '.truth.json'), 'utf8').catch(() => '{"readings":{}}')
-  return (JSON.parse(text) as { readings: Record<string, Value> }).readings
+async function paperOf(sample: SampleSheet): Promise<Record<string, Value>> {
+  const truth = JSON.parse(await readFile(truthFile(sample), 'utf8')) as Truth | Truth[]
+  return [truth].flat().find((t) => t.sheet === sample.sheetCode)?.readings ?? {}
 }
 
-async function settleReadings(deps: Deps, clerk: User, sheet: Sheet, truth: Record<string, Value>): Promise<void> {
+async function settleReadings(deps: Deps, clerk: User, sheet: Sheet, paper: Record<string, Value>): Promise<Sheet> {
   let at = sheet
-  for (const reading of sheet.readings.filter((r) => r.state === 'in doubt' && r.settlement === null)) {
-    if (!(reading.key in truth)) continue
-    const value = truth[reading.key] ?? null
-    const { key } = reading
+  for (const { key, value } of sheet.readings.filter((r) => r.state === 'in doubt' && r.settlement === null)) {
+    const written = paper[key] ?? null
     const settle =
-      value === reading.value
+      written === value
         ? ({ how: 'kept', why: '' } as const)
-        : value === null
+        : written === null
           ? ({ how: 'blank on purpose', why: '' } as const)
-          : ({ how: 'corrected', value, why: 'as the paper shows' } as const)
+          : ({ how: 'corrected', value: written, why: 'as the paper shows' } as const)
     at = await settleOneReading(deps, clerk, sheet.id, { version: at.version, key, ...settle })
+  }
+  return at
+}
+
+/** What the rules doubt and the paper says all the same; a stop is left for a person to look at. */
+async function letDoubtsStand(deps: Deps, clerk: User, sheet: Sheet): Promise<void> {
+  let at = sheet
+  for (const doubt of sheet.doubts.filter((d) => d.severity === 'doubt' && d.settledAt === null)) {
+    at = await settleOneDoubt(deps, clerk, sheet.id, {
+      version: at.version,
+      doubtId: doubt.id,
+      why: 'asked the demonstrator: it was so',
+    })
   }
 }
 

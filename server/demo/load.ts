@@ -13,9 +13,9 @@ import { createBoss } from '../db/queue.ts'
 import { listSent, takeFiles } from '../features/uploads/uploads.service.ts'
 import type { Deps } from '../http/route.ts'
 import type { FileStore } from '../storage/store.ts'
-import { enterSettled, settleByTruth } from './demo-clerk.ts'
+import { enterSettled, settleByPaper } from './demo-clerk.ts'
 import { addPeople, fillRegisters, type People, planRuns } from './plan-season.ts'
-import { readSampleSheets, sampleFile, sampleRuns } from './sample-sheets.ts'
+import { listSampleFiles, readSampleSheets, sampleRuns } from './sample-sheets.ts'
 import { ROW_RUNS, TROUBLE_RUNS } from './season.ts'
 
 export interface DemoSignIn {
@@ -48,14 +48,9 @@ export async function loadDemoSeason({ settings, store, startWorker, say }: Demo
     const ids = await fillRegisters(deps, people.get(401)!)
     const samples = await readSampleSheets()
     await planRuns(deps, people, ids, [...ROW_RUNS, ...TROUBLE_RUNS, ...sampleRuns(samples)])
-    await sendIn(
-      deps,
-      people,
-      ['samples/season/rows.csv', 'samples/season/trouble.csv', ...new Set(samples.map(sampleFile))],
-      say,
-    )
+    await sendIn(deps, people, ['samples/season/rows.csv', 'samples/season/trouble.csv', ...(await listSampleFiles())], say)
     const clerk = people.get(201)!
-    await settleByTruth(deps, clerk, samples)
+    await settleByPaper(deps, clerk, samples)
     say(`   ${await enterSettled(deps, clerk)} records entered`)
     return signIns(people)
   } finally {
