@@ -24,6 +24,8 @@ export const routes: RouteObject[] = [
         children: guarded([
           { path: paths.home.pattern, element: <Home /> },
           { path: paths.send.pattern, lazy: () => import('./routes/send.tsx') },
+          { path: paths.mySheets.pattern, lazy: () => import('./routes/my-sheets.tsx') },
+          { path: paths.mySheet.pattern, lazy: () => import('./routes/my-sheet.tsx') },
           { path: paths.desk.pattern, lazy: () => import('./routes/desk-list.tsx') },
           { path: paths.deskSheet.pattern, lazy: () => import('./routes/desk-sheet.tsx') },
           ...officeRoutes,

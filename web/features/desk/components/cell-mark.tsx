@@ -93,8 +93,8 @@ function SettledMark({ reading, bounds }: { reading: Reading; bounds: Bounds }) 
     case 'kept':
       return (
         <g fill="var(--pen)">
-          {[-2, 0, 2].map((dx) => (
-            <circle key={dx} cx={right - 4 + dx} cy={low + 2.7} r="0.6" />
+          {[1.8, 3.6, 5.4].map((dx) => (
+            <circle key={dx} cx={right + dx} cy={low - 1.2} r="0.65" />
           ))}
         </g>
       )

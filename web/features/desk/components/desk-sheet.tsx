@@ -46,7 +46,8 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
   }
   useKeys(deskKeyMap(desk, acts, { entering, leave: () => onLeave(null) }))
 
-  const page = sheet.pages.find((p) => p.flattened)
+  // A sheet with several pictures shows the one that holds the ink of the cell in hand.
+  const page = sheet.pages.find((p) => p.flattened && p.id === acts.reading?.pageId) ?? sheet.pages.find((p) => p.flattened)
   const picture = page ? `/api/pages/${page.id}/picture` : null
   const figures = stripOf(desk.view.results, desk.items)
   return (

@@ -77,10 +77,13 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
   if (item) {
     return (
       <>
-        <h1 className="mt-0.5 text-5 leading-[36px]">
-          {acts.cell && !item.reading ? `${item.label}: ${acts.cell.label}` : item.label}
-        </h1>
+        <h1 className="mt-0.5 text-5 leading-[36px]">{item.label}</h1>
         <p className="mt-0.5 text-2 leading-[27px]">{item.text}</p>
+        {acts.cell && item.doubt && item.cells.length > 1 && (
+          <p className="mt-0.5">
+            In hand: <strong>{acts.cell.label}</strong>. What is typed here corrects it.
+          </p>
+        )}
         {acts.proposal?.split && item.reading && (
           <p className="mt-0.5 text-2">The ink favours one value, the sums another. You choose.</p>
         )}

@@ -17,13 +17,8 @@ interface PagePaneProps {
 export function PagePane({ desk, picture, pane }: PagePaneProps) {
   const { layout } = desk
   return (
-    <section
-      ref={pane}
-      aria-label="The sheet"
-      tabIndex={-1}
-      className="relative min-h-0 overflow-y-auto bg-board lg:py-[50vh] lg:pl-1"
-    >
-      <div className="relative bg-leaf" style={{ aspectRatio: `${layout.page.width} / ${layout.page.height}` }}>
+    <section ref={pane} aria-label="The sheet" tabIndex={-1} className="relative min-h-0 overflow-y-auto bg-board lg:pl-1">
+      <div className="relative bg-leaf lg:my-[60vh]" style={{ aspectRatio: `${layout.page.width} / ${layout.page.height}` }}>
         {picture && <img src={picture} alt="The sheet, flattened" className="absolute inset-0 h-full w-full" />}
         <SheetMarks desk={desk} inBox={picture === null} />
         {layout.cells.map((cell) => (

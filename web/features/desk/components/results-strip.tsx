@@ -16,7 +16,7 @@ export function ResultsStrip({ figures, other }: ResultsStripProps) {
     >
       {figures.map((figure, i) => (
         <div key={figure.key} className="border-l border-line px-2 py-1 first:border-l-0 max-sm:border-b">
-          <p className="label flex flex-wrap justify-between gap-x-2">
+          <p className="label flex min-h-[36px] flex-wrap content-start justify-between gap-x-2 leading-[18px]">
             <span>
               {figure.words}
               {figure.value !== null && !figure.firm && ', not firm yet'}

@@ -1,0 +1,35 @@
+import { useQuery } from '@tanstack/react-query'
+import { Link, useParams } from 'react-router-dom'
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
+import { MySheetDetail } from '../../features/sheets/components/my-sheet-detail.tsx'
+import { mySheetQueries } from '../../features/sheets/sheets.queries.ts'
+import { ApiError } from '../../lib/api-error.ts'
+import { paths } from '../../lib/paths.ts'
+import { Page } from '../../ui/page.tsx'
+import { ErrorState, Loading } from '../../ui/says.tsx'
+import { NotFound } from './route-error.tsx'
+
+export function Component() {
+  const { id = '' } = useParams()
+  const sheet = useQuery(mySheetQueries.detail(id))
+  if (sheet.error instanceof ApiError && sheet.error.status === 404) return <NotFound />
+  if (sheet.error) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
+  if (!sheet.data) return <Loading what="Looking up the sheet" />
+  const { code, tractor, implement, runNumber } = sheet.data
+  const name = code ? formatSheetCode(code) : 'Sheet without a code'
+  const what = [tractor, implement, runNumber ? `run ${runNumber}` : null].filter(Boolean).join(', ')
+  return (
+    <Page
+      title={name}
+      over={<span className="figures">{name}</span>}
+      sentence={what || name}
+      aside={
+        <Link className="word" to={paths.mySheets.to()}>
+          My sheets
+        </Link>
+      }
+    >
+      <MySheetDetail sheet={sheet.data} />
+    </Page>
+  )
+}
