@@ -1,7 +1,9 @@
 /**
  * A worker process for the crash tests: the real loop and the real page job, with a reader that hangs on "hang.jpg" (when told
- * to) and kills its own process on "poison.jpg". It says on standard output when it starts to read.
+ * to), waits for a word on standard input at "gate.jpg", and kills its own process on "poison.jpg". It says on standard output
+ * when it starts to read.
  */
+import { once } from 'node:events'
 import { pino } from 'pino'
 import { pageReadJob } from '../../worker/jobs/page-read.job.ts'
 import { startWorker } from '../../worker/start-worker.ts'
@@ -22,6 +24,7 @@ await startWorker(
           read: async ({ fileName }) => {
             process.stdout.write(`reading ${fileName}\n`)
             if (fileName === 'poison.jpg') process.kill(process.pid, 'SIGKILL')
+            if (fileName === 'gate.jpg') await once(process.stdin, 'data')
             if (fileName === 'hang.jpg' && hangs) await new Promise(() => undefined)
             return { outcome: readOutcome(), picture: null }
           },

@@ -56,23 +56,7 @@ export async function createSetting(): Promise<Setting> {
     userId,
     pageOf,
     expireAfter: (seconds) => source.query('UPDATE pgboss.queue SET expire_seconds = $1', [seconds]),
-    addPage: (fileName) =>
-      source.transaction(async (db) => {
-        const uploadId = await insertUpload(db, {
-          uploadedBy: userId,
-          fileName,
-          kind: 'jpeg',
-          bytes: 3,
-          sha256: randomUUID(),
-          storageKey: `uploads/${randomUUID()}`,
-          state: 'arrived',
-          reason: null,
-          forSheetId: null,
-        })
-        const pageId = await insertPage(db, { uploadId, number: 1 })
-        await sendJob(boss, db, 'page-read', { pageId })
-        return pageId
-      }),
+    addPage: (fileName) => addPage(source, boss, userId, fileName),
     waitForState: async (pageId, state, deadline_ms = 20_000) => {
       await waitFor(async () => (await pageOf(pageId)).state === state, { what: `the page to be ${state}`, deadline_ms })
     },
@@ -149,5 +133,36 @@ export function gate() {
       arrive()
       return opened
     },
+  }
+}
+
+/** A picture that arrived, with its page and its job in one transaction, as the door writes them. */
+async function addPage(source: DataSource, boss: Setting['boss'], userId: string, fileName: string): Promise<string> {
+  return source.transaction(async (db) => {
+    const uploadId = await insertUpload(db, {
+      uploadedBy: userId,
+      fileName,
+      kind: 'jpeg',
+      bytes: 3,
+      sha256: randomUUID(),
+      storageKey: `uploads/${randomUUID()}`,
+      state: 'arrived',
+      reason: null,
+      forSheetId: null,
+    })
+    const pageId = await insertPage(db, { uploadId, number: 1 })
+    await sendJob(boss, db, 'page-read', { pageId })
+    return pageId
+  })
+}
+
+/** The same with a queue of its own for the moment. */
+export async function addPageTo(source: DataSource, url: string, userId: string, fileName: string): Promise<string> {
+  const boss = createBoss(url)
+  await boss.start()
+  try {
+    return await addPage(source, boss, userId, fileName)
+  } finally {
+    await boss.stop({ graceful: false, wait: true })
   }
 }
