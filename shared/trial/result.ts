@@ -1,4 +1,5 @@
 /** A figure that leaves the sheet: value, uncertainty, where it came from, or why it is not there. */
+import type { FormulaId } from './formulas.ts'
 import { type Measure, type Part, type Reason, standardUncertainty } from './measure.ts'
 
 /** Version of the formulas that made a record's results. Change it with any change of a figure. */
@@ -34,7 +35,7 @@ export const RESULTS = {
   width_cv_pct: { unit: '%', formula: 'C10', label: 'variation of width' },
   speed_km_h: { unit: 'km/h', formula: 'C11', label: 'speed' },
   slip_pct: { unit: '%', formula: 'C12', label: 'wheel slip' },
-} as const
+} as const satisfies Record<string, { unit: string; formula: FormulaId; label: string }>
 
 export type ResultKey = keyof typeof RESULTS
 export const RESULT_KEYS = Object.keys(RESULTS) as ResultKey[]
@@ -63,7 +64,7 @@ export interface Result {
 export type Results = Record<ResultKey, Result>
 
 /** A result from a measure. `formula` tells where one key has several (slip A, B, C). */
-export function resultOf(key: ResultKey, measure: Measure, formula: string = RESULTS[key].formula): Result {
+export function resultOf(key: ResultKey, measure: Measure, formula: FormulaId = RESULTS[key].formula): Result {
   const base = { key, label: RESULTS[key].label, unit: RESULTS[key].unit, k: COVERAGE_K, from: measure.cells, formula }
   if (!measure.known) return { ...base, value: null, u: null, U: null, assumes: [], budget: [], reason: measure.reason }
   const u = measure.parts.length > 0 ? standardUncertainty(measure.parts) : null
