@@ -6,7 +6,7 @@ import type { Picture } from './align/patch.ts'
 import { blackAt } from './cells/black-level.ts'
 import { cutCell, samplesFor } from './cells/cut.ts'
 import { inkWithin, signedBy } from './cells/signed.ts'
-import { measureTick, tickDist } from './cells/ticks.ts'
+import { measureTick, tickDist, tickHabit } from './cells/ticks.ts'
 import { type BoxDist, boxDist, CELL_PX, type DigitNet, type TickDist } from './classes.ts'
 import { scaleAt } from './geometry/homography.ts'
 import { type FieldMap, fieldToPhoto } from './geometry/page-map.ts'
@@ -62,14 +62,14 @@ export async function readCells(
       cell.key,
       own.map(() => boxDist(probabilities, next++)),
     )
-  const tickInk = new Map<string, TickDist[]>()
-  for (const { cell, boxes: own } of placed) {
-    if (cell.kind !== 'tick' && cell.kind !== 'choice') continue
-    tickInk.set(
-      cell.key,
-      own.map(({ box, map }) => tickDist(measureTick(picture, map, box, blackAt(alignment.blacks, box)))),
-    )
-  }
+  const ticks = placed.filter(({ cell }) => cell.kind === 'tick' || cell.kind === 'choice')
+  const inks = ticks.map(({ boxes: own }) =>
+    own.map(({ box, map }) => measureTick(picture, map, box, blackAt(alignment.blacks, box))),
+  )
+  const habit = tickHabit(inks.flat())
+  const tickInk = new Map(
+    ticks.map(({ cell }, i): [string, TickDist[]] => [cell.key, inks[i]!.map((ink) => tickDist(ink, habit))]),
+  )
   watch.lap('ticks')
   const weighed = weighSheet(layout, { combs: combInk, ticks: tickInk }, facts)
   watch.lap('weigh')

@@ -43,7 +43,7 @@ export function decideComb(variable: Variable, posterior: Float64Array | null, w
   }
   for (const sum of wrongSums) {
     if (sum.isResult) add('R04', wrongText(sum, value.value), sum.cells)
-    else if (value.ink < CLEAR_BESIDE_A_WRONG_SUM) add('R04', besideText(variable, sum, value), sum.cells)
+    else if (sum.fails && value.ink < CLEAR_BESIDE_A_WRONG_SUM) add('R04', besideText(variable, sum, value), sum.cells)
   }
   return {
     value: value.value,

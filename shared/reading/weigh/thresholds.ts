@@ -8,7 +8,7 @@ export const CLEAR = 0.995
 /** With a sum that does not hold, its parts must be this sure by their own ink: one of them may be what is wrong. */
 export const CLEAR_BESIDE_A_WRONG_SUM = 0.99
 /** A sum holds from this posterior on; below, the written result is in doubt. */
-export const SUM_HOLDS = 0.99
+export const SUM_HOLDS = 0.95
 /** Knowledge may choose only among digits at least this probable in their own box. */
 export const DIGIT_ALLOWED = 0.02
 /** Spoiled boxes are rarer on sheets (about 1 in 100) than in training (1 in 7): their share is weighed down by this. */

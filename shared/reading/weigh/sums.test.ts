@@ -1,128 +1,10 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
+import { box, comb, one, place, plain, rules, tick, weigh, written } from '../../../tests/builders/ink.ts'
 import type { ChoiceCell, CombCell } from '../../layouts/layout.ts'
 import { ACRE_M2, HECTARE_M2, type Tie } from '../../layouts/tie.ts'
-import { BLANK, CLASS_COUNT, type TickDist, VOID } from '../classes.ts'
+import { BLANK } from '../classes.ts'
 import { type SheetInk, weighSheet } from './sheet.ts'
-import type { Facts, Weighed } from './types.ts'
-
-const place = { x: 0, y: 0, section: 1, need: 'mandatory' as const }
-const comb = (key: string, format: string, more: Partial<CombCell> = {}): CombCell => ({
-  ...place,
-  kind: 'digits',
-  key,
-  label: key,
-  format,
-  unit: null,
-  ...more,
-})
-const time = (key: string): CombCell => comb(key, '99:99', { kind: 'time' })
-
-/** A box by its likely classes; the rest is spread thinly over the others. */
-function box(shares: Record<number, number>): number[] {
-  const named = Object.values(shares).reduce((a, b) => a + b, 0)
-  const rest = (1 - named) / (CLASS_COUNT - Object.keys(shares).length)
-  return Array.from({ length: CLASS_COUNT }, (_, k) => shares[k] ?? rest)
-}
-const plain = (k: number) => box({ [k]: 0.9999 })
-/** '  80' with blanks, 'x' for a spoiled box. */
-const written = (text: string) => [...text].map((c) => plain(c === ' ' ? BLANK : c === 'x' ? VOID : Number(c)))
-
-const tick = (p: number): TickDist => ({ ticked: p, empty: 1 - p - 1e-5, spoiled: 1e-5 })
-
-function weigh(
-  cells: Array<CombCell | ChoiceCell>,
-  ties: Tie[],
-  combs: Record<string, number[][]>,
-  more: { ticks?: SheetInk['ticks']; facts?: Facts } = {},
-) {
-  return weighSheet({ cells, ties }, { combs: new Map(Object.entries(combs)), ticks: more.ticks ?? new Map() }, more.facts)
-}
-const one = (cell: CombCell, boxes: number[][], ties: Tie[] = [], facts?: Facts): Weighed =>
-  weigh([cell], ties, { [cell.key]: boxes }, { facts }).get(cell.key)!
-const rules = (reading: Weighed | undefined) => reading?.reasons.map((r) => r.rule)
-
-describe('one reading', () => {
-  it('takes right-aligned digits with leading blanks or zeros as the same number', () => {
-    expect(one(comb('a', '9999'), written(' 480'))).toMatchObject({ value: 480, state: 'clear' })
-    expect(one(comb('a', '9999'), written('0480'))).toMatchObject({ value: 480, state: 'clear' })
-    expect(one(comb('a', '99.9'), written(' 95'))).toMatchObject({ value: 9.5, state: 'clear' })
-    expect(one(comb('a', '99.999'), written('  270'))).toMatchObject({ value: 0.27 })
-  })
-
-  it('adds up the ink of both ways to write the same number', () => {
-    const either = [box({ [BLANK]: 0.5, 0: 0.4999 }), plain(4), plain(8), plain(0)]
-    expect(one(comb('a', '9999'), either)).toMatchObject({ value: 480, state: 'clear' })
-  })
-
-  it('reads an empty comb as blank', () => {
-    expect(one(comb('a', '9999'), written('    '))).toMatchObject({ value: null, state: 'clear' })
-  })
-
-  it('doubts a gap between digits and an empty decimal box', () => {
-    expect(rules(one(comb('a', '9999'), written('4 80')))).toContain('Q55')
-    expect(rules(one(comb('a', '99.9'), written('15 ')))).toContain('Q55')
-  })
-
-  it('doubts a crossed-out box', () => {
-    const reading = one(comb('a', '9999'), written('48x0'))
-    expect(reading.state).toBe('in doubt')
-    expect(rules(reading)).toContain('R01')
-  })
-
-  it('knows clock and calendar', () => {
-    expect(one(time('t'), written('0910'))).toMatchObject({ value: '09:10', state: 'clear' })
-    expect(one(time('t'), written(' 910'))).toMatchObject({ value: '09:10', state: 'clear' })
-    expect(one(time('t'), written('2910')).state).toBe('in doubt')
-    const date = comb('d', '99-99-9999', { kind: 'date' })
-    expect(one(date, written('13102026'))).toMatchObject({ value: '2026-10-13', state: 'clear' })
-    expect(one(date, written('31022026')).state).toBe('in doubt')
-    expect(one(date, written('14102026'), [], { today: '2026-10-13' }).state).toBe('in doubt')
-  })
-
-  it('chooses by the clock between two digits that the ink allows', () => {
-    // 27:10 is no time, so the second digit is the 1 that the ink holds likely as well.
-    expect(one(time('t'), [plain(2), box({ 7: 0.4, 1: 0.5999 }), plain(1), plain(0)])).toMatchObject({
-      value: '21:10',
-      state: 'clear',
-    })
-  })
-
-  it('leans on the marks of an instrument, and leaves a broken mark to a person', () => {
-    const marks: Tie[] = [{ kind: 'marks', keys: ['jar'], step: 200, half: 100 }]
-    const jar = comb('jar', '9999')
-    const smudged = [plain(4), plain(8), box({ 0: 0.98, 6: 0.0199 }), plain(0)]
-    expect(one(jar, smudged).state).toBe('in doubt')
-    expect(one(jar, smudged, marks)).toMatchObject({ value: 4800, state: 'clear' })
-    expect(one(jar, written('4810'), marks)).toMatchObject({ value: 4810, state: 'in doubt' })
-  })
-
-  it('prefers numbers that the register holds, without inventing ink', () => {
-    const cell = comb('kit', '9999', { register: 'kits' })
-    const facts = { known: { kits: new Set([31, 37, 112]) } }
-    const smudged = [plain(0), plain(0), plain(3), box({ 7: 0.97, 9: 0.0299 })]
-    expect(one(cell, smudged).state).toBe('in doubt')
-    expect(one(cell, smudged, [], facts)).toMatchObject({ value: 37, state: 'clear' })
-    expect(one(cell, written('0039'), [], facts)).toMatchObject({ value: 39 })
-  })
-
-  it('puts every comb whose boxes are unsure in doubt, whatever the digits', () => {
-    fc.assert(
-      fc.property(
-        fc.array(fc.integer({ min: 0, max: 9 }), { minLength: 4, maxLength: 4 }),
-        fc.nat(3),
-        fc.double({ min: 0.3, max: 0.95, noNaN: true }),
-        (digits, at, p) => {
-          const boxes = digits.map((d, i) => (i === at ? box({ [d]: p, [(d + 1) % 10]: 1 - p - 0.001 }) : plain(d)))
-          const reading = one(comb('a', '9999'), boxes)
-          expect(reading.state).toBe('in doubt')
-          expect(reading.candidates.length).toBeGreaterThan(1)
-        },
-      ),
-      { numRuns: 100 },
-    )
-  })
-})
 
 const FUEL: Tie = { kind: 'balance', plus: ['start', 'topup'], minus: ['end'], equals: 'used' }
 const fuelCells = [
@@ -215,6 +97,15 @@ describe('the fuel balance', () => {
       ),
       { numRuns: 100 },
     )
+  })
+
+  it('says so where the time is up before a group is weighed', () => {
+    let clock = 0
+    const combs = new Map(
+      Object.entries({ start: written('4800'), topup: written('1000'), end: written('2000'), used: written('3800') }),
+    )
+    const read = weighSheet({ cells: fuelCells, ties: [FUEL] }, { combs, ticks: new Map() }, {}, () => (clock += 3000))
+    expect([...read.values()].map((r) => r.reasons[0]?.rule)).toEqual(['R05', 'R05', 'R05', 'R05'])
   })
 })
 
@@ -318,73 +209,5 @@ describe('area and rate by hand', () => {
     const read = weigh(cells, ties, rectangle, { ticks: new Map([['unit', [tick(1e-4), tick(1e-4)]]]) })
     expect(read.get('unit')).toMatchObject({ value: null, state: 'clear' })
     expect(read.get('area')).toMatchObject({ value: 0.27, state: 'clear' })
-  })
-})
-
-describe('clock and meters', () => {
-  const keys = ['t_start', 'stop_from', 'stop_to', 't_end']
-  const ties: Tie[] = [
-    { kind: 'order', keys, usual_min: 180 },
-    { kind: 'order', keys: ['t_start', 'jar_t', 't_end'], usual_min: 240 },
-    { kind: 'not-less', less: 'h_start', greater: 'h_end', usual: 12 },
-    { kind: 'elapsed', less: 'h_start', greater: 'h_end', start: 't_start', end: 't_end' },
-  ]
-  const cells = [...keys, 'jar_t'].map(time).concat([comb('h_start', '99999.9'), comb('h_end', '99999.9')])
-  const ink = {
-    t_start: written('0910'),
-    stop_from: written('0938'),
-    stop_to: written('0942'),
-    t_end: written('1002'),
-    jar_t: written('0912'),
-    h_start: written(' 12345'),
-    h_end: written(' 12354'),
-  }
-
-  it('keeps what fits clear although the ties close a ring', () => {
-    const read = weigh(cells, ties, ink)
-    expect([...read.values()].every((r) => r.state === 'clear')).toBe(true)
-  })
-
-  it('settles a smudged hour and a smudged meter by the clock', () => {
-    const smudged = [box({ 0: 0.95, 2: 0.04 }), plain(9), plain(3), plain(8)]
-    expect(one(time('stop_from'), [box({ 0: 0.95, 2: 0.04 }), plain(1), plain(3), plain(8)]).state).toBe('in doubt')
-    const read = weigh(cells, ties, { ...ink, stop_from: smudged })
-    expect(read.get('stop_from')).toMatchObject({ value: '09:38', state: 'clear' })
-    const meter = [plain(BLANK), plain(1), plain(2), plain(3), plain(5), box({ 4: 0.97, 9: 0.0299 })]
-    expect(one(comb('h_end', '99999.9'), meter).state).toBe('in doubt')
-    expect(weigh(cells, ties, { ...ink, h_end: meter }).get('h_end')).toMatchObject({ value: 1235.4, state: 'clear' })
-  })
-})
-
-describe('units, ticks and limits', () => {
-  const pressure = comb('p', '999', { scale: { by: 'unit', factors: { psi: 1, bar: 0.01 } } })
-  const unit: ChoiceCell = {
-    ...place,
-    kind: 'choice',
-    key: 'unit',
-    label: 'unit',
-    labelAt: 'none',
-    options: ['psi', 'bar'].map((option) => ({ option, label: option, x: 0, y: 0 })),
-  }
-  const with_ = (ticks: TickDist[]) => weigh([pressure, unit], [], { p: written('190') }, { ticks: new Map([['unit', ticks]]) })
-
-  it('scales digits by the ticked unit, and doubts them without one', () => {
-    expect(with_([tick(1e-4), tick(0.9999)]).get('p')).toMatchObject({ value: 1.9, state: 'clear' })
-    expect(rules(with_([tick(1e-4), tick(1e-4)]).get('p'))).toEqual(['Q16'])
-  })
-
-  it('doubts two ticks of one choice, and then the reading that needs the unit', () => {
-    const read = with_([tick(0.9999), tick(0.9999)])
-    expect(rules(read.get('unit'))).toEqual(['R06'])
-    expect(rules(read.get('p'))).toContain('Q16')
-  })
-
-  it('says so where the time is up before a group is weighed', () => {
-    let clock = 0
-    const combs = new Map(
-      Object.entries({ start: written('4800'), topup: written('1000'), end: written('2000'), used: written('3800') }),
-    )
-    const read = weighSheet({ cells: fuelCells, ties: [FUEL] }, { combs, ticks: new Map() }, {}, () => (clock += 3000))
-    expect([...read.values()].map((r) => r.reasons[0]?.rule)).toEqual(['R05', 'R05', 'R05', 'R05'])
   })
 })
