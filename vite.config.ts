@@ -23,6 +23,7 @@ export default defineConfig({
             'tests/unit/**/*.test.ts',
           ],
           setupFiles: ['tests/support/fail-on-console.ts'],
+          testTimeout: 30_000,
         },
       },
       {
@@ -32,6 +33,7 @@ export default defineConfig({
           environment: 'jsdom',
           include: ['tests/web/**/*.test.tsx'],
           setupFiles: ['tests/support/fail-on-console.ts'],
+          testTimeout: 30_000,
         },
       },
       {

@@ -74,7 +74,7 @@ async function runVitest(what: string, projects: string[], env: NodeJS.ProcessEn
     '--reporter=json',
     `--outputFile.json=${file}`,
   ]
-  const code = await step(what, () => runTool(args, env))
+  const code = await step(what, () => runTool(args, env), { speaks: true })
   const tally = countResults(file, code)
   total.passed += tally.passed
   total.failed += tally.failed

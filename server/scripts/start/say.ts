@@ -3,12 +3,15 @@ export function say(line: string): void {
   process.stdout.write(`${line}\n`)
 }
 
-/** Prints what is being done, does it, and prints how long it took when that was long enough to notice. */
-export async function step<T>(what: string, work: () => T | Promise<T>): Promise<T> {
+/**
+ * Prints what is being done, does it, and prints how long it took when that was long enough to notice.
+ * @param options.speaks the work prints its own progress
+ */
+export async function step<T>(what: string, work: () => T | Promise<T>, options: { speaks?: boolean } = {}): Promise<T> {
   const begin = Date.now()
   say(`${what} …`)
   // A long silence reads as a hang.
-  const ticker = setInterval(() => say(`  ${what}: ${seconds(begin)} so far`), 10_000)
+  const ticker = options.speaks ? undefined : setInterval(() => say(`  ${what}: ${seconds(begin)} so far`), 10_000)
   try {
     const result = await work()
     if (Date.now() - begin > 500) say(`  ${what}: done in ${seconds(begin)}`)
