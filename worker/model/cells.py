@@ -6,7 +6,7 @@ a figure taken with the generator a net was trained on says little.
 """
 
 import torch
-from torch.nn.functional import conv2d, grid_sample, interpolate
+from torch.nn.functional import conv2d, grid_sample, interpolate, max_pool2d
 
 from strokes import HEIGHT_PX, NAMES, WIDTH_PX, draw, line_through, scribble, styled, uniform
 
@@ -42,6 +42,8 @@ def _digit(images: torch.Tensor, centre: torch.Tensor, height: torch.Tensor, nar
     raw = grid_sample(images[:, None].float() / 255, grid, mode="bilinear", padding_mode="zeros", align_corners=False)[:, 0]
     # A high level leaves the spine of the stroke (thin pen), a low one its whole blob (thick pen).
     level = (0.62 - 0.42 * wide)[:, None, None]
+    thick = (wide > 0.9).nonzero()[:, 0]
+    raw[thick] = max_pool2d(raw[thick][:, None], 3, 1, 1)[:, 0]
     return ((raw - level) * uniform(n, 2.0, 5.0)[:, None, None] + 0.5).clamp(0, 1) * (raw > 0.02)
 
 
@@ -231,7 +233,7 @@ class Generator:
         n = len(pick)
         labels = self.labels[pick].clone()
         frame, box = frames(n)
-        height = (25 + torch.randn(n) * 4.5).clamp(13, 37)
+        height = (26.5 + torch.randn(n) * 4.5).clamp(14, 38)
         narrow = (1 + torch.randn(n) * 0.12).clamp(0.65, 1.35)
         wide = torch.rand(n)
         centre = box + torch.randn(n, 2) * torch.tensor([1.8, 2.2])
@@ -251,7 +253,7 @@ class Generator:
         labels[empty] = BLANK
         # Pens: black, blue, pencil; a dry one leaves gaps of its own.
         kind = torch.rand(n)
-        dark = torch.where(kind < 0.45, uniform(n, 0.75, 1.05), torch.where(kind < 0.82, uniform(n, 0.5, 0.9), uniform(n, 0.25, 0.6)))
+        dark = torch.where(kind < 0.5, uniform(n, 0.75, 1.05), torch.where(kind < 0.88, uniform(n, 0.5, 0.9), uniform(n, 0.28, 0.6)))
         dry = uniform(n, 0.0, 0.45) * _mask(n, 0.25)
         ink = torch.maximum(ink, self._neighbours(n)) * (1 - dry[:, None, None] * torch.rand(n, HEIGHT_PX, WIDTH_PX))
         ink = ink * dark[:, None, None]

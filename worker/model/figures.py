@@ -43,21 +43,25 @@ def temperature_of(logits: torch.Tensor, labels: torch.Tensor) -> float:
     return min(grid, key=lambda t: torch.nn.functional.cross_entropy(logits / t, labels).item())
 
 
+def digit_figures(net: torch.nn.Module, source: Generator, temperature: float, hardness: float) -> dict[str, float]:
+    x, y = every_digit(source, hardness, blank=0, void=0, style=0)
+    p = torch.softmax(logits_of(net, x) / temperature, 1)
+    best, choice = p.max(1)
+    right = choice == y
+    return {
+        "digits": len(y),
+        "digitAccuracy": right.float().mean().item(),
+        "digitTakenAsVoid": (choice == VOID).float().mean().item(),
+        "digitTakenAsBlank": (choice == BLANK).float().mean().item(),
+        "shareAbove0.99": (best > 0.99).float().mean().item(),
+        "wrongAbove0.99": int(((best > 0.99) & ~right).sum()),
+    }
+
+
 def figures(net: torch.nn.Module, source: Generator, temperature: float) -> dict[str, dict[str, float]]:
     out: dict[str, dict[str, float]] = {}
     for name, hardness in LEVELS.items():
-        x, y = every_digit(source, hardness, blank=0, void=0, style=0)
-        p = torch.softmax(logits_of(net, x) / temperature, 1)
-        best, choice = p.max(1)
-        right = choice == y
-        row = {
-            "digits": len(y),
-            "digitAccuracy": right.float().mean().item(),
-            "digitTakenAsVoid": (choice == VOID).float().mean().item(),
-            "digitTakenAsBlank": (choice == BLANK).float().mean().item(),
-            "shareAbove0.99": (best > 0.99).float().mean().item(),
-            "wrongAbove0.99": int(((best > 0.99) & ~right).sum()),
-        }
+        row = digit_figures(net, source, temperature, hardness)
         for label, shares, key in ((VOID, {"void": 1.0, "blank": 0.0}, "void"), (BLANK, {"void": 0.0, "blank": 1.0}, "blank")):
             x, y = every_digit(source, hardness, style=0, **shares)
             p = torch.softmax(logits_of(net, x) / temperature, 1)

@@ -19,7 +19,7 @@ class Conv(nn.Module):
 
 
 class Net(nn.Module):
-    def __init__(self, widths: tuple[int, int, int, int] = (16, 32, 64, 80), dense: int = 96):
+    def __init__(self, widths: tuple[int, int, int, int] = (16, 32, 64, 96), dense: int = 96):
         super().__init__()
         a, b, c, d = widths
         self.body = nn.Sequential(

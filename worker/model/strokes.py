@@ -70,6 +70,8 @@ def line_through(centre: torch.Tensor, height: torch.Tensor, steepest_deg: float
     n = len(centre)
     angle = uniform(n, -steepest_deg, steepest_deg) * 3.14159 / 180
     reach = (height * 0.35 + uniform(n, 4.0, 9.0)).clamp(max=19)
+    # A line through a whole comb runs over the box's edges.
+    reach = torch.where(torch.rand(n) < 0.3, torch.full((n,), 26.0), reach)
     middle = centre + torch.stack([torch.randn(n) * 1.5, torch.randn(n) * 0.1 * height], -1)
     t = torch.tensor([-1.0, -0.33, 0.33, 1.0])[None] * reach[:, None]
     direction = torch.stack([angle.cos(), angle.sin()], -1)

