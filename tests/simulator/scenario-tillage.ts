@@ -65,10 +65,10 @@ function headOf(chance: Chance, machine: Machine): Record<string, Written> {
 }
 
 /** A rectangle, or now and then a plot of four unlike sides with its diagonals; passes run along A-B. Areas in m². */
-function plotOf(chance: Chance, least_m2: number) {
+function plotOf(chance: Chance, least_m2: number, most_m2: number) {
   let length = chance.between(42, 110)
   let breadth = length * chance.between(0.4, 0.78)
-  const grow = Math.max(1, Math.sqrt(least_m2 / (length * breadth)))
+  const grow = Math.min(Math.max(1, Math.sqrt(least_m2 / (length * breadth))), Math.sqrt(most_m2 / (length * breadth)))
   length = toPlaces(length * grow, 1)
   breadth = toPlaces(breadth * grow, 1)
   if (chance.odds(0.75)) {
@@ -139,8 +139,8 @@ export function tillageScenario(chance: Chance, options: TillageOptions = {}): S
   const maybe = (share: number, value: Written): Written => (chance.odds(share) ? value : null)
 
   const rate = chance.between(...machine.fuel_l_ha)
-  const plot = plotOf(chance.fork('plot'), options.worthwhile ? (2.4 / rate) * 10_000 : 0)
-  const fuel = fuelOf(chance.fork('fuel'), Math.min(6000, (rate * plot.area_m2) / 10))
+  const plot = plotOf(chance.fork('plot'), options.worthwhile ? (2.4 / rate) * 10_000 : 0, (6 / rate) * 10_000)
+  const fuel = fuelOf(chance.fork('fuel'), (rate * plot.area_m2) / 10)
   const speed = chance.between(...machine.speed_kmh)
   const capacity_ha_h = (machine.width_m * speed * chance.between(0.66, 0.8)) / 10
   const run_min = Math.max(20, Math.round((plot.area_m2 / 10_000 / capacity_ha_h) * 60))
