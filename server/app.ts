@@ -1,5 +1,6 @@
 /** The web server as a function of what it needs; main.ts and the tests let it listen. */
 import express, { type Express, Router } from 'express'
+import type { DestinationStream } from 'pino'
 import { signedInPeople } from './features/session/sign-in.ts'
 import { refuseForeignWrites } from './http/csrf.ts'
 import { createLogger, logRequests } from './http/log.ts'
@@ -14,13 +15,15 @@ import { webApp } from './http/web-app.ts'
 interface AppOptions {
   /** Fails a request whose answer differs from its schema: for tests. */
   checkResponses?: boolean
+  /** Where log lines go; standard output unless told. */
+  logTo?: DestinationStream
 }
 
 const BODY_LIMIT = '1mb'
 
 export function createApp(deps: Deps, options: AppOptions = {}): Express {
   const { settings } = deps
-  const logger = createLogger(settings.logLevel)
+  const logger = createLogger(settings.logLevel, options.logTo)
   const app = express()
   app.disable('x-powered-by')
   app.set('trust proxy', settings.trustedProxies)

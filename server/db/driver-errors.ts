@@ -24,6 +24,9 @@ export function isUniqueViolation(error: unknown, constraint?: string): boolean 
 /** A row it names does not exist, or a row that names it still does. */
 export const isForeignKeyViolation = (error: unknown): boolean => driverErrorOf(error)?.code === '23503'
 
+/** Text with a NUL, which PostgreSQL cannot hold, as text or inside JSON. */
+export const isUnstorableText = (error: unknown): boolean => ['22021', '22P05'].includes(driverErrorOf(error)?.code ?? '')
+
 const AWAY_CODES = new Set(['ECONNREFUSED', 'ECONNRESET', 'ENOTFOUND', 'EPIPE', 'ETIMEDOUT', '57P01', '57P02', '57P03', '53300'])
 /** The driver gives these two no code. */
 const AWAY_TEXTS = /Connection terminated|timeout exceeded when trying to connect|Client has encountered a connection error/

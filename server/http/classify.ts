@@ -1,7 +1,7 @@
 /** First what a failure is, then (serialise.ts) how it looks on the wire. */
 import { ZodError } from 'zod'
 import { type Issue, TransientError, UserError } from '../../shared/errors.ts'
-import { isDatabaseAway, isDatabaseFull } from '../db/driver-errors.ts'
+import { isDatabaseAway, isDatabaseFull, isUnstorableText } from '../db/driver-errors.ts'
 
 export interface Failure {
   status: number
@@ -15,6 +15,7 @@ export interface Failure {
 
 const AWAY = 'The database is away for a moment. Nothing was changed. Try again shortly.'
 const FULL = 'The disk is full. Nothing was changed. The people who run this machine must make room.'
+const NO_TEXT = 'The input holds a character (NUL) that no text can hold. Nothing was saved.'
 const BUG =
   'Something in Sheafbook failed. Nothing was changed by this request. Give the request number to the people who run it.'
 
@@ -35,6 +36,7 @@ export function classify(error: unknown): Failure {
 function asKnown(error: unknown): unknown {
   if (isDatabaseAway(error)) return new TransientError(AWAY, { cause: error, retryAfter_s: 2 })
   if (isDatabaseFull(error)) return new TransientError(FULL, { cause: error, full: true })
+  if (isUnstorableText(error)) return new UserError('invalid', NO_TEXT, { cause: error })
   return asBodyError(error) ?? error
 }
 

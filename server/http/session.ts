@@ -1,5 +1,5 @@
 /** Sessions in PostgreSQL; the table holds a hash of the id, so that a copy of it signs nobody in. */
-import { createHash } from 'node:crypto'
+import { createHash, randomBytes } from 'node:crypto'
 import connectPgSimple from 'connect-pg-simple'
 import type { RequestHandler } from 'express'
 import session, { type SessionData } from 'express-session'
@@ -41,6 +41,7 @@ export function sessions({ source, settings }: Deps, onError: (error: unknown) =
     name: cookieName(settings.publicUrl),
     secret: settings.sessionSecret,
     store: new HashedStore({ pool: poolOf(source), tableName: 'session', errorLog: onError }),
+    genid: () => randomBytes(32).toString('base64url'),
     resave: false,
     saveUninitialized: false,
     rolling: true,

@@ -48,6 +48,12 @@ describe('the server', () => {
     expect([response.status, errorOf(await response.json()).code]).toEqual([status, code])
   })
 
+  it('refuses text that cannot be stored', async () => {
+    const admin = await server.signIn('admin')
+    const answer = await admin.post('/registers/places', { number: 1, name: 'Long\u0000Acre', district: 'Nether Vale' })
+    expect([answer.status, errorOf(answer.body).code]).toEqual([400, 'invalid'])
+  })
+
   it('keeps the text of a bug to itself', async () => {
     const admin = await server.signIn('admin')
     // Makes a query fail in a way nobody foresaw, with a text that must not leave.

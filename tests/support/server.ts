@@ -19,6 +19,8 @@ export interface TestServer {
   url: string
   deps: Deps
   database: TestDatabase
+  /** What the server logged, with LOG_LEVEL given in `env`. */
+  logged: string[]
   /** Somebody without a session. */
   anonymous(): TestAgent
   /** A new person of this role (or the one given), signed in. */
@@ -50,13 +52,16 @@ export async function startTestServer(
   boss.on('error', () => undefined)
   await boss.start()
   const deps: Deps = { source, boss, files: createFileStore(settings.store), settings }
-  const server = createServer(createApp(deps, { checkResponses: true }))
+  const logged: string[] = []
+  const logTo = { write: (line: string) => void logged.push(line) }
+  const server = createServer(createApp(deps, { checkResponses: true, logTo }))
   await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve))
   const url = `http://127.0.0.1:${(server.address() as AddressInfo).port}`
   return {
     url,
     deps,
     database,
+    logged,
     anonymous: () => createAgent(url),
     signIn: async (who) => {
       const user = typeof who === 'string' ? await createUser(source.manager, { role: who }) : who

@@ -15,7 +15,7 @@ export const sessionRoutes = [
     handle: async ({ deps, req, body }) => {
       req.body = body
       const user = await authenticate(deps, req)
-      await openSession(req, user)
+      await openSession(deps, req, user)
       await writeTrail(deps.source.manager, {
         actor: user,
         action: 'sign in',

@@ -6,18 +6,20 @@ import type { User } from '../../../shared/schemas/user.ts'
 import { findActiveUser } from '../../db/repositories/user.ts'
 import type { Deps } from '../../http/route.ts'
 import { idle_ms } from '../../http/session.ts'
+import { bucketOf, markKnown } from './known-browser.ts'
 import { checkSignIn, wrongSignIn } from './session.service.ts'
 
+type SignInDeps = Pick<Deps, 'source' | 'settings'>
 type Authenticator = InstanceType<typeof Passport>
 const authenticators = new WeakMap<Deps['source'], Authenticator>()
 
-function authenticatorOf(deps: Pick<Deps, 'source'>): Authenticator {
+function authenticatorOf(deps: SignInDeps): Authenticator {
   const known = authenticators.get(deps.source)
   if (known) return known
   const made = new Passport()
   made.use(
-    new Strategy({ usernameField: 'email', session: false }, (email, password, done) => {
-      checkSignIn(deps, { email, password }, `account ${email}`).then((user) => done(null, user ?? false), done)
+    new Strategy({ usernameField: 'email', session: false, passReqToCallback: true }, (req, email, password, done) => {
+      checkSignIn(deps, { email, password }, bucketOf(deps, req, email)).then((user) => done(null, user ?? false), done)
     }),
   )
   made.serializeUser((user, done) => done(null, (user as User).id))
@@ -30,7 +32,7 @@ function authenticatorOf(deps: Pick<Deps, 'source'>): Authenticator {
 }
 
 /** Puts `req.user` in place. */
-export function signedInPeople(deps: Pick<Deps, 'source'>): RequestHandler[] {
+export function signedInPeople(deps: SignInDeps): RequestHandler[] {
   return [authenticatorOf(deps).session() as RequestHandler, keepIdleTime]
 }
 
@@ -45,7 +47,7 @@ const keepIdleTime: RequestHandler = (req, _res, next) => {
  * Checks e-mail and password of the request's body.
  * @throws UserError `not_signed_in` (the same for an unknown address and a wrong password) or `too_many`
  */
-export function authenticate(deps: Pick<Deps, 'source'>, req: Request): Promise<User> {
+export function authenticate(deps: SignInDeps, req: Request): Promise<User> {
   return new Promise((resolve, reject) => {
     const check = authenticatorOf(deps).authenticate('local', (error: unknown, user: User | false) => {
       if (error) reject(error)
@@ -57,9 +59,10 @@ export function authenticate(deps: Pick<Deps, 'source'>, req: Request): Promise<
 }
 
 /** Opens a new session (a new id: one planted before the sign-in is worth nothing) for this person. */
-export async function openSession(req: Request, user: User): Promise<void> {
+export async function openSession(deps: SignInDeps, req: Request, user: User): Promise<void> {
   await new Promise<void>((resolve, reject) => req.logIn(user, (error: unknown) => (error ? reject(error) : resolve())))
   req.session.cookie.maxAge = idle_ms(user.role)
+  if (req.res) markKnown(deps, req.res, user.email)
 }
 
 export async function closeSession(req: Request): Promise<void> {

@@ -43,7 +43,7 @@ export const passwordRoutes = [
     response: sessionSchema,
     handle: async ({ deps, body, req }) => {
       const user = await setPassword(deps, body)
-      await openSession(req, user)
+      await openSession(deps, req, user)
       return { user }
     },
   }),
@@ -56,7 +56,7 @@ export const passwordRoutes = [
     response: sessionSchema,
     handle: async ({ deps, body, req }) => {
       const user = await makeFirstAdmin(deps.source, body)
-      await openSession(req, user)
+      await openSession(deps, req, user)
       return { user }
     },
   }),
