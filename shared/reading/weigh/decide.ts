@@ -2,16 +2,20 @@
 import type { TickCell } from '../../layouts/layout.ts'
 import type { TickDist } from '../classes.ts'
 import { CLEAR, CLEAR_BESIDE_A_WRONG_SUM, DIGIT_ALLOWED, GAP_DOUBT, TICK_CLEAR, VOID_DOUBT } from './thresholds.ts'
-import type { Candidate, Reason, ReasonRule, Value, Weighed, WrongSum } from './types.ts'
+import type { Candidate, Reason, ReasonRule, Value, Weighed } from './types.ts'
 import type { Option, Variable } from './variable.ts'
+import type { Chosen, WrongSum } from './wrong-sum.ts'
 
 const MOST_CANDIDATES = 5
 const SHOWN_FROM = 0.001
 
-/** Whether what is known favours another value than the ink alone. */
-export function isReadAgainstInk(variable: Variable, posterior: Float64Array | null): boolean {
-  if (!posterior) return false
-  return argMax(variable.options, (_, k) => posterior[k]!) !== argMax(variable.options, (o) => o.ink)
+/** What a comb or choice is taken as before it is decided whether that is clear. */
+export function chosen(variable: Variable, posterior: Float64Array | null): Chosen {
+  const weight = (o: Option, k: number) => posterior?.[k] ?? o.weight
+  return {
+    value: variable.options[argMax(variable.options, weight)]!.value,
+    byInk: variable.options[argMax(variable.options, (o) => o.ink)]!.value,
+  }
 }
 
 const percent = (p: number) => (p >= 0.9995 ? 'over 99.9 %' : p < 0.001 ? 'under 0.1 %' : `${Number((p * 100).toFixed(1))} %`)
@@ -42,7 +46,7 @@ export function decideComb(variable: Variable, posterior: Float64Array | null, w
     add('R02', unsure(variable, p))
   }
   for (const sum of wrongSums) {
-    if (sum.isResult) add('R04', wrongText(sum, value.value), sum.cells)
+    if (sum.isResult) add('R04', wrongText(sum), sum.cells)
     else if (sum.fails && value.ink < CLEAR_BESIDE_A_WRONG_SUM) add('R04', besideText(variable, sum, value), sum.cells)
   }
   return {
@@ -59,20 +63,13 @@ function unsure(variable: Variable, p: ArrayLike<number>): string {
   return `${variable.label} reads ${likely.map((c) => `${said(c.value)} (${percent(c.p)})`).join(', ')}.`
 }
 
-const wrongText = (sum: WrongSum, value: Value): string =>
-  sum.fails
-    ? `${sum.labels.at(-1)} is written ${said(value)}, and that does not follow from ${list(sum.labels.slice(0, -1))}.`
-    : `${sum.labels.at(-1)} is written ${said(value)}; whether it follows from ${list(sum.labels.slice(0, -1))} is not sure.`
+const wrongText = ({ result, parts, fails }: WrongSum): string =>
+  fails
+    ? `Written: ${result}. That does not follow from ${parts}.`
+    : `Written: ${result}. Whether it follows from ${parts} is not sure.`
 
-const besideText = (variable: Variable, sum: WrongSum, value: Option): string =>
-  `${variable.label} reads ${said(value.value)} (${percent(value.ink)} by its ink), and the result ${sum.labels.at(-1)} does not follow from it.`
-
-const list = (labels: string[]) =>
-  labels.length > 4
-    ? `${labels[0]} to ${labels.at(-1)}`
-    : labels.length > 1
-      ? `${labels.slice(0, -1).join(', ')} and ${labels.at(-1)}`
-      : labels[0]
+const besideText = (variable: Variable, { result }: WrongSum, value: Option): string =>
+  `${variable.label} reads ${said(value.value)} (${percent(value.ink)} by its ink), and the written ${result} does not follow from it.`
 
 /** One of a choice, or none; two ticked or a spoiled tick is in doubt. */
 export function decideChoice(variable: Variable, posterior: Float64Array | null): Weighed {

@@ -3,13 +3,14 @@ import { type ChoiceCell, type CombCell, isComb, type LayoutCell, type TickCell 
 import type { Tie } from '../../layouts/tie.ts'
 import type { BoxDist, TickDist } from '../classes.ts'
 import type { Budget } from './chain.ts'
-import { decideChoice, decideComb, decideTick, isReadAgainstInk } from './decide.ts'
+import { chosen, decideChoice, decideComb, decideTick } from './decide.ts'
 import { weighJointly } from './joint.ts'
 import { scaled } from './scale.ts'
-import { MOST_STEPS, SHEET_LIMIT_MS, SUM_HOLDS } from './thresholds.ts'
-import { compileTies, type Factor } from './ties/compile.ts'
-import type { Facts, Weighed, WrongSum } from './types.ts'
+import { MOST_STEPS, SHEET_LIMIT_MS } from './thresholds.ts'
+import { compileTies } from './ties/compile.ts'
+import type { Facts, Weighed } from './types.ts'
 import { choiceVariable, combVariable, type Variable } from './variable.ts'
+import { wrongSum } from './wrong-sum.ts'
 
 export interface SheetInk {
   /** For every comb on the sheet one distribution a box, in writing order. */
@@ -40,7 +41,7 @@ export function weighSheet(
   const budget = (): Omit<Budget, 'floor'> => ({ steps: MOST_STEPS, expired: () => now() > until })
   const joint = weighJointly(variables, factors, budget)
 
-  const against = variables.map((variable, i) => isReadAgainstInk(variable, joint.posteriors[i]!))
+  const decided = variables.map((variable, i) => chosen(variable, joint.posteriors[i]!))
   const out = new Map<string, Weighed>()
   variables.forEach((variable, i) => {
     const posterior = joint.posteriors[i]!
@@ -49,7 +50,7 @@ export function weighSheet(
       return
     }
     const failing = factors.flatMap((factor, f) =>
-      factor.readings.includes(i) ? wrongSum(factor, joint.ties[f], variables, i, against) : [],
+      factor.readings.includes(i) ? wrongSum(factor, joint.ties[f] ?? null, variables, decided, i) : [],
     )
     out.set(variable.key, decideComb(variable, posterior, failing))
   })
@@ -58,28 +59,4 @@ export function weighSheet(
     if (cell.scale) out.set(cell.key, scaled(cell, out.get(cell.key)!, out.get(cell.scale.by)))
   }
   return out
-}
-
-function wrongSum(
-  factor: Factor,
-  odds: { holds: number; fails: number } | null | undefined,
-  variables: ReadonlyArray<Variable>,
-  reading: number,
-  against: readonly boolean[],
-): WrongSum[] {
-  if (factor.result === null || !odds) return []
-  const claimed = odds.holds + odds.fails
-  if (claimed < 0.5) return []
-  // A sum that holds only with a part read against its ink does not vouch for the result: the writer's slip looks the same.
-  const vouched = factor.result !== reading || !factor.readings.some((r) => against[r])
-  if (odds.holds / claimed >= SUM_HOLDS && vouched) return []
-  const own = factor.readings.map((r) => variables[r]!)
-  return [
-    {
-      cells: own.map((v) => v.key),
-      labels: own.map((v) => v.label),
-      isResult: factor.result === reading,
-      fails: odds.fails > odds.holds,
-    },
-  ]
 }

@@ -45,13 +45,3 @@ export interface Facts {
   /** 'YYYY-MM-DD': a trial lies before it, mostly by less than a month. */
   today?: string
 }
-
-/** A written result that does not, or may not, follow from its parts. */
-export interface WrongSum {
-  cells: string[]
-  labels: string[]
-  /** The reading is the written result, not one of its parts. */
-  isResult: boolean
-  /** More likely wrong than right; otherwise it is only not sure. */
-  fails: boolean
-}
