@@ -158,8 +158,8 @@ const q02: Rule = {
 }
 
 /** Read far from the run it belongs to, but in order: the other half of Q01. */
-const r05: Rule = {
-  id: 'R05',
+const l05: Rule = {
+  id: 'L05',
   version: 1,
   name: 'jar read far from the run',
   severity: ['doubt'],
@@ -183,8 +183,8 @@ const r05: Rule = {
 }
 
 /** A clock cell that holds no time of day, and a run longer than a day's work. */
-const r06: Rule = {
-  id: 'R06',
+const l06: Rule = {
+  id: 'L06',
   version: 1,
   name: 'no time of day',
   severity: ['stop'],
@@ -192,7 +192,7 @@ const r06: Rule = {
   why: 'Hours to 23, minutes to 59, a run of 12 h at most [P].',
   check: (ctx) => {
     const { run } = ctx
-    const wrong = r06.cells.flatMap(ctx.keys).filter((key) => ctx.text(key) !== null && clockMinutes(ctx.text(key)) === null)
+    const wrong = l06.cells.flatMap(ctx.keys).filter((key) => ctx.text(key) !== null && clockMinutes(ctx.text(key)) === null)
     const none = wrong.map((key) =>
       found('stop', [key], `${ctx.label(key)} ${ctx.text(key)} is no time of day.`, { [key]: ctx.text(key) ?? '' }),
     )
@@ -207,4 +207,4 @@ const r06: Rule = {
   },
 }
 
-export const clockRules: readonly Rule[] = [q01, q02, r05, r06]
+export const clockRules: readonly Rule[] = [q01, q02, l05, l06]

@@ -40,8 +40,8 @@ const q34: Rule = {
   check: (ctx) => unticked(ctx, AIR_TICKS).map((key) => told(ctx, key)),
 }
 
-const r03: Rule = {
-  id: 'R03',
+const l03: Rule = {
+  id: 'L03',
   version: 1,
   name: 'check not ticked',
   severity: ['doubt'],
@@ -82,8 +82,8 @@ function monthsBetween(from: string, to: string): number {
   return (y2 - y1) * 12 + (m2 - m1) - (d2 < d1 ? 1 : 0)
 }
 
-const r04: Rule = {
-  id: 'R04',
+const l04: Rule = {
+  id: 'L04',
   version: 1,
   name: 'kit check too old',
   severity: ['doubt'],
@@ -108,4 +108,4 @@ const r04: Rule = {
   },
 }
 
-export const fittingRules: readonly Rule[] = [q33, q34, r03, q54, r04]
+export const fittingRules: readonly Rule[] = [q33, q34, l03, q54, l04]

@@ -48,8 +48,8 @@ const unitOf = (ctx: CheckContext, key: string) => {
   return unit ? ` ${unit}` : ''
 }
 
-const r01: Rule = {
-  id: 'R01',
+const l01: Rule = {
+  id: 'L01',
   version: 1,
   name: 'impossible reading',
   severity: ['stop'],
@@ -65,15 +65,15 @@ const r01: Rule = {
     ),
 }
 
-const r02: Rule = {
-  id: 'R02',
+const l02: Rule = {
+  id: 'L02',
   version: 1,
   name: 'unlikely reading',
   severity: ['doubt'],
   cells: [],
   why: 'Outside what is usual (table of readings, [P]).',
   check: (ctx) => {
-    const impossible = new Set(r01.check(ctx).flatMap((f) => f.cells))
+    const impossible = new Set(l01.check(ctx).flatMap((f) => f.cells))
     return outside(ctx, OWN_BAND, 'plausible', (key, value, low, high) =>
       found('doubt', [key], `${said(ctx, key, value)}; ${low} to ${high}${unitOf(ctx, key)} is usual.`, {
         [key]: value,
@@ -90,8 +90,8 @@ const isNumeric = (ctx: CheckContext, key: string) => {
   return unit !== undefined || decimals !== undefined || hard !== undefined || /^tyre_p_.[lr]$/.test(key)
 }
 
-const r07: Rule = {
-  id: 'R07',
+const l07: Rule = {
+  id: 'L07',
   version: 1,
   name: 'no number',
   severity: ['stop'],
@@ -105,4 +105,4 @@ const r07: Rule = {
     }),
 }
 
-export const instrumentRules: readonly Rule[] = [r01, r02, r07]
+export const instrumentRules: readonly Rule[] = [l01, l02, l07]

@@ -19,6 +19,7 @@ export interface Finding {
 export type Found = Omit<Finding, 'rule' | 'version'>
 
 export interface Rule {
+  /** Q01 to Q58, or L.. for limits of readings those do not ask about. R.. belongs to the reader. */
   id: string
   version: number
   name: string

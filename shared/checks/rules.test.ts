@@ -28,6 +28,8 @@ describe('every rule', () => {
 
   it('has an id of its own and says which severities it can find', () => {
     expect(new Set(RULES.map((rule) => rule.id)).size).toBe(RULES.length)
+    // R.. is the reader's: its reasons and these stand side by side on a sheet.
+    for (const rule of RULES) expect(rule.id).toMatch(/^[QL]\d\d$/)
     for (const c of CASES) {
       const rule = RULES.find((r) => r.id === c.id)
       for (const f of run(c.fires).filter((x) => x.rule === c.id)) expect(rule?.severity).toContain(f.severity)

@@ -140,8 +140,8 @@ const USUAL_CM: Readonly<Record<Operation, readonly [number, number]>> = {
   subsoiler: [30, 60],
 }
 
-const r08: Rule = {
-  id: 'R08',
+const l08: Rule = {
+  id: 'L08',
   version: 1,
   name: 'depth of the operation',
   severity: ['doubt'],
@@ -258,4 +258,4 @@ function moisture(ctx: CheckContext, n: number): Found[] {
   return out
 }
 
-export const soilRules: readonly Rule[] = [q23, q41, q42, q43, q44, q50, r08]
+export const soilRules: readonly Rule[] = [q23, q41, q42, q43, q44, q50, l08]

@@ -86,8 +86,8 @@ const q40: Rule = {
 }
 
 /** Shorter runs burn too little, longer ones are a misread clock [P]. */
-const r09: Rule = {
-  id: 'R09',
+const l09: Rule = {
+  id: 'L09',
   version: 1,
   name: 'length of the run',
   severity: ['doubt'],
@@ -107,4 +107,4 @@ const r09: Rule = {
   },
 }
 
-export const workTimeRules: readonly Rule[] = [q38, q39, q40, r09]
+export const workTimeRules: readonly Rule[] = [q38, q39, q40, l09]

@@ -16,7 +16,7 @@ const LARGEST = 1e9
 export const isUsable = (value: ReadingValue | undefined): value is number =>
   typeof value === 'number' && Math.abs(value) <= LARGEST
 
-/** The number in a cell; null when absent, blank, or not a usable number (rule R07 tells of those). */
+/** The number in a cell; null when absent, blank, or not a usable number (rule L07 tells of those). */
 export function numberAt(readings: Readings, key: string): number | null {
   const value = readings[key]
   return isUsable(value) ? value : null

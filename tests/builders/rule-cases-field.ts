@@ -116,9 +116,9 @@ export const FIELD_CASES: readonly Case[] = [
   row('Q53', 'doubt', sheet({ rpm_load: 1710 }), sheet({ rpm_load: 1700 }), 'changed over?'),
   row('Q53', 'doubt', sheet({ rpm_load: 1444 }), sheet({ rpm_load: 1445 })),
   row('Q53', 'doubt', sheet({ pto_rpm: 595 }), sheet({ pto_rpm: 594 })),
-  row('R08', 'doubt', sheet({ 'depth_cm[3]': 11.5 }), sheet({ 'depth_cm[3]': 12 }), '12 to 30 cm'),
+  row('L08', 'doubt', sheet({ 'depth_cm[3]': 11.5 }), sheet({ 'depth_cm[3]': 12 }), '12 to 30 cm'),
   row(
-    'R09',
+    'L09',
     'doubt',
     sheet({ t_end: '09:29', jar_end_t: '09:29', 'topup_t[1]': '09:20' }),
     sheet({ t_end: '09:30', jar_end_t: '09:30', 'topup_t[1]': '09:20' }),
