@@ -38,6 +38,3 @@ export const RATE_LIMITS = { failures_per_min: 5, failures_per_h: 100, uploads_p
 
 /** How long an unused session lives. */
 export const SESSION_IDLE = { admin_s: 30 * 60, desk_s: 8 * 3600, phone_s: 30 * 24 * 3600 } as const
-
-/** How long the answer to an Idempotency-Key is kept: a phone may be without network for a week. */
-export const IDEMPOTENCY_KEPT_DAYS = 14
