@@ -35,9 +35,9 @@ function equalCells(ctx: CheckContext, other: OtherSheet): string[] {
   )
 }
 
-/** Cells that differ from run to run; settings such as gear or pressures are often alike on honest sheets. */
+/** Cells that differ from run to run. Settings are alike on honest sheets, and so are the sides of a plot worked again. */
 const TELLING =
-  /^(depth_cm|width_m|speed_t_s|dist_load_m|dist_noload_m|jar_|topup_ml|side_|diag_|hour_meter|fuel_used|depth_mean|width_mean|l_per)/
+  /^(depth_cm|width_m|speed_t_s|dist_load_m|dist_noload_m|jar_|topup_ml|hour_meter|fuel_used|depth_mean|width_mean|l_per)/
 
 const q45: Rule = {
   id: 'Q45',

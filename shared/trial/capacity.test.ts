@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { effectiveCapacity, fieldEfficiency, theoreticalCapacity, theoreticalCapacityUs } from './capacity.ts'
+import { effectiveCapacity, fieldEfficiency, theoreticalCapacity, theoreticalCapacityUs, timeEfficiency } from './capacity.ts'
 import { hours, kmh, metres, ml, quantity, squareMetres } from './quantity.ts'
 import { slipByDistance, slipByTime, slipByTurns } from './slip.ts'
 import { speedOverPegs } from './speed.ts'
@@ -19,6 +19,13 @@ describe('work rates', () => {
     expect(efc).toBeCloseTo(0.31153846153846154, 14)
     expect(fieldEfficiency(efc, theoreticalCapacity(metres(0.9), kmh(4.3991853360488795)))).toBeCloseTo(78.68589743589745, 11)
     expect(fieldEfficiency(efc, theoreticalCapacity(metres(0.905), kmh(4.3991853360488795)))).toBeCloseTo(78.25116872078198, 11)
+  })
+
+  // DOMAIN section 2, C09: 50 passes of 60 m at speed take 40.917 of the 52 min; 45 m in 50 passes is the rated width.
+  it('C09: field efficiency by time and overlap is the same figure', () => {
+    const time = timeEfficiency(50, metres(60), kmh(4.3991853360488795), hours(52 / 60))
+    expect((time * 52) / 100).toBeCloseTo(40.91666666666667, 11)
+    expect((time * (45 / 50)) / 0.9).toBeCloseTo(78.68589743589745, 10)
   })
 
   // E1: Iowa State University PM 696 (2001), studylib copy.

@@ -19,3 +19,10 @@ export const effectiveCapacity = (area: Quantity<'m2'>, fieldTime: Quantity<'h'>
 /** C09, %: effective over theoretical capacity, by the rated width. */
 export const fieldEfficiency = (effective: HectaresPerHour, theoretical: HectaresPerHour): Quantity<'%'> =>
   quantity((100 * effective) / theoretical, '%')
+
+/**
+ * C09 the other way, %: share of the field time spent on passes at speed. Times (breadth ÷ passes) ÷ rated width it is the
+ * field efficiency again, which is how a wrong count of passes shows.
+ */
+export const timeEfficiency = (passes: number, pass: Quantity<'m'>, speed: Kmh, fieldTime: Quantity<'h'>): Quantity<'%'> =>
+  quantity((100 * passes * pass) / (1000 * speed * fieldTime), '%')
