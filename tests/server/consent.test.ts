@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import sharp from 'sharp'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { blankLateArrival } from '../../server/print/blank-pictures.ts'
 import { cellBounds } from '../../shared/layouts/geometry.ts'
 import { isComb } from '../../shared/layouts/layout.ts'
 import { tillage1 } from '../../shared/layouts/tillage-1.ts'
@@ -33,12 +34,17 @@ describe('withdrawing consent', () => {
 
   /** A demonstration whose first sheet came back as a photo; the original and the flattened picture are both kept. */
   async function photographed() {
+    const plan = await preparePlan(server.deps.source.manager, agent.user.id)
+    const planned = (await agent.post('/demonstrations', plan)).body as Demonstration
+    return { planned, ...(await photograph(planned, 0)) }
+  }
+
+  async function photograph(planned: Demonstration, run: number) {
     const { source, files } = server.deps
-    const planned = (await agent.post('/demonstrations', await preparePlan(source.manager, agent.user.id))).body as Demonstration
     // What the plan knows has no boxes on a planned sheet.
     const printed = new Set(tillage1.cells.flatMap((cell) => (isComb(cell) && cell.planned ? [cell.key] : [])))
     const readings = readingsOf(buildReadings()).filter(({ key }) => !printed.has(key))
-    const sheetCode = planned.trials[0]?.runs[0]?.sheetCode ?? null
+    const sheetCode = planned.trials[0]?.runs[run]?.sheetCode ?? null
     const sheetId = await createArrivedSheet(source, agent.user.id, buildOutcome({ readings, sheetCode, planned: true }))
     const [page]: { id: string; uploadId: string }[] = await source.query(
       'SELECT id, upload_id AS "uploadId" FROM pages WHERE sheet_id = $1',
@@ -51,7 +57,7 @@ describe('withdrawing consent', () => {
       [page?.id, keys.picture],
     )
     await source.query(`UPDATE uploads SET storage_key = $2, kind = 'png' WHERE id = $1`, [page?.uploadId, keys.original])
-    return { planned, sheetId, pageId: page?.id ?? '', keys }
+    return { sheetId, pageId: page?.id ?? '', uploadId: page?.uploadId ?? '', keys }
   }
 
   const brightness = async (picture: Buffer, x_mm: number, y_mm: number) => {
@@ -104,6 +110,22 @@ describe('withdrawing consent', () => {
     await agent.post(`/demonstrations/${planned.id}/withdraw-consent`, { reason: 'asked for' })
     expect((await agent.get(`/pages/${pageId}/picture`)).status).toBe(404)
     expect((await agent.get(`/pages/${pageId}/original`)).status).toBe(410)
+  })
+
+  it('covers what comes in after it, too', async () => {
+    const { source, files } = server.deps
+    const { planned } = await photographed()
+    await agent.post(`/demonstrations/${planned.id}/withdraw-consent`, { reason: 'asked for' })
+    const late = await photograph(planned, 1)
+    expect(await blankLateArrival({ source, files }, late.uploadId)).toBe(true)
+    for (const which of ['picture', 'original']) {
+      const { bytes } = await agent.get(`/pages/${late.pageId}/${which}`)
+      const farmer = cellBounds(tillage1.cells.find((cell) => cell.key === 'sign_farmer')!)
+      expect(await brightness(bytes, farmer.x + farmer.width / 2, farmer.y + farmer.height / 2)).toBeGreaterThan(150)
+    }
+    const other = await photographed()
+    expect(await blankLateArrival({ source, files }, other.uploadId)).toBe(false)
+    expect(await files.exists(other.keys.original)).toBe(true)
   })
 
   it('is done once, and a saved plan does not bring the name back', async () => {

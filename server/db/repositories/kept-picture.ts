@@ -27,8 +27,8 @@ interface Row extends Omit<KeptPage, 'layout'> {
   layoutVersion: number | null
 }
 
-/** Every file that holds a sheet of the demonstration, with all its pages in their order. */
-export async function listKeptFiles(db: Db, demonstrationId: string): Promise<KeptFile[]> {
+/** Every file that holds a sheet of the demonstration (or one of these files), with all its pages in their order. */
+export async function listKeptFiles(db: Db, of: { demonstrationId: string; uploadId: string | null }): Promise<KeptFile[]> {
   const rows: Row[] = await db.query(
     `WITH theirs AS (
        SELECT s.id FROM sheets s JOIN runs r ON r.id = s.run_id JOIN trials t ON t.id = r.trial_id WHERE t.demonstration_id = $1)
@@ -36,10 +36,10 @@ export async function listKeptFiles(db: Db, demonstrationId: string): Promise<Ke
        coalesce(p.sheet_id IN (SELECT id FROM theirs), false) AS concerned,
        CASE WHEN p.state = 'read' THEN s.layout_key END AS "layoutKey", s.layout_version AS "layoutVersion"
      FROM pages p JOIN uploads u ON u.id = p.upload_id LEFT JOIN sheets s ON s.id = p.sheet_id
-     WHERE u.storage_key IS NOT NULL AND u.kind IS NOT NULL
+     WHERE ($2::uuid IS NULL OR u.id = $2) AND u.storage_key IS NOT NULL AND u.kind IS NOT NULL
        AND p.upload_id IN (SELECT upload_id FROM pages WHERE sheet_id IN (SELECT id FROM theirs))
      ORDER BY p.upload_id, p.number`,
-    [demonstrationId],
+    [of.demonstrationId, of.uploadId],
   )
   const files = new Map<string, KeptFile>()
   for (const { kind, storageKey, layoutKey, layoutVersion, ...page } of rows) {
@@ -68,4 +68,15 @@ export async function replaceOriginal(
     file?.kind ?? null,
     file?.bytes ?? null,
   ])
+}
+
+/** Demonstrations shown in this file whose farmer was erased: they were planned with one. */
+export async function findWithdrawn(db: Db, uploadId: string): Promise<string[]> {
+  const rows: { id: string }[] = await db.query(
+    `SELECT DISTINCT d.id FROM pages p JOIN sheets s ON s.id = p.sheet_id JOIN runs r ON r.id = s.run_id
+       JOIN trials t ON t.id = r.trial_id JOIN demonstrations d ON d.id = t.demonstration_id
+     WHERE p.upload_id = $1 AND d.farmer_id IS NULL`,
+    [uploadId],
+  )
+  return rows.map(({ id }) => id)
 }

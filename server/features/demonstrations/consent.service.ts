@@ -5,8 +5,8 @@ import type { User } from '../../../shared/schemas/user.ts'
 import { changeDemonstration, findDemonstrationRow } from '../../db/repositories/demonstration.ts'
 import { findFarmer, removeFarmer } from '../../db/repositories/farmer.ts'
 import type { Deps } from '../../http/route.ts'
+import { blankPictures } from '../../print/blank-pictures.ts'
 import { writeTrail } from '../trail/trail.service.ts'
-import { blankPictures } from './blank-pictures.ts'
 import { checkMayChange, getDemonstration } from './get-demonstration.ts'
 
 /**

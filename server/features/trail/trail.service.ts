@@ -4,7 +4,7 @@ import type { Db } from '../../db/database.ts'
 import { listTrail } from '../../db/repositories/trail.ts'
 
 /** Every change calls this in its own transaction: what is not in the trail did not happen, and the other way round. */
-export { addTrailLine as writeTrail, type TrailLine } from '../../db/repositories/trail.ts'
+export { addTrailLine as writeTrail } from '../../db/repositories/trail.ts'
 
 const PAGE = 100
 

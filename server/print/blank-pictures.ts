@@ -1,21 +1,21 @@
 /** Takes a person out of every stored picture of a demonstration's sheets. */
 import { randomUUID } from 'node:crypto'
-import { findLayout } from '../../../shared/layouts/registry.ts'
-import type { UploadKind } from '../../../shared/schemas/upload.ts'
-import type { Db } from '../../db/database.ts'
-import {
-  type KeptFile,
-  type KeptPage,
-  listKeptFiles,
-  replaceOriginal,
-  replacePicture,
-} from '../../db/repositories/kept-picture.ts'
-import type { Deps } from '../../http/route.ts'
-import { blankAreas } from '../../print/blank-areas.ts'
-import { picturesAsPdf } from '../../print/pictures-pdf.ts'
-import type { FileStore } from '../../storage/store.ts'
+import { findLayout } from '../../shared/layouts/registry.ts'
+import type { UploadKind } from '../../shared/schemas/upload.ts'
+import type { DataSource, Db } from '../db/database.ts'
+import { type KeptFile, type KeptPage, listKeptFiles, replaceOriginal, replacePicture } from '../db/repositories/kept-picture.ts'
+import { addTrailLine } from '../db/repositories/trail.ts'
+import type { FileStore } from '../storage/store.ts'
+import { uprightKey } from '../storage/upright-key.ts'
+import { blankAreas } from './blank-areas.ts'
+import { picturesAsPdf } from './pictures-pdf.ts'
 
 const SPREADSHEETS: readonly UploadKind[] = ['xlsx', 'csv']
+
+interface Kept {
+  source: DataSource
+  files: FileStore
+}
 
 /** What was done, for the trail. */
 export interface Blanked {
@@ -34,8 +34,9 @@ export interface Blanked {
  * Covers the personal areas. The old files are overwritten before any row changes: whatever fails after that, nobody is shown
  * any more, and doing it again ends the work. New keys are given besides, since browsers keep a picture under its key.
  */
-export async function blankPictures(deps: Pick<Deps, 'source' | 'files'>, demonstrationId: string): Promise<Blanked> {
-  const files = (await listKeptFiles(deps.source.manager, demonstrationId)).filter(({ kind }) => !SPREADSHEETS.includes(kind))
+export async function blankPictures(deps: Kept, demonstrationId: string, uploadId: string | null = null): Promise<Blanked> {
+  const found = await listKeptFiles(deps.source.manager, { demonstrationId, uploadId })
+  const files = found.filter(({ kind }) => !SPREADSHEETS.includes(kind))
   const steps: ((db: Db) => Promise<void>)[] = []
   const done: Blanked = { pages: 0, replaced: 0, removed: 0, stale: [], write: (db) => inTurn(steps, db) }
   for (const file of files) {
@@ -66,6 +67,7 @@ async function blankPage(
   const layout = page.layout && findLayout(page.layout.key, page.layout.version)
   const before = await pictureOf(store, page)
   if (page.pictureKey) done.stale.push(page.pictureKey)
+  await store.remove(uprightKey(page.id))
   if (!layout || !before) {
     done.removed += 1
     if (page.pictureKey) await store.remove(page.pictureKey)
@@ -94,4 +96,22 @@ async function replaceFile(store: FileStore, file: KeptFile, kept: readonly Buff
   await store.put(storageKey, bytes)
   await store.put(file.storageKey, bytes)
   return (db) => replaceOriginal(db, file.id, { kind, storageKey, bytes: bytes.length })
+}
+
+/**
+ * For a file whose page was just read: covers it at once when its farmer has withdrawn consent before it came in.
+ * @returns whether it had to be covered
+ */
+export async function blankLateArrival(deps: Kept, uploadId: string): Promise<boolean> {
+  const withdrawn = await findWithdrawn(deps.source.manager, uploadId)
+  for (const demonstrationId of withdrawn) {
+    const blanked = await blankPictures(deps, demonstrationId, uploadId)
+    await deps.source.transaction(async (db) => {
+      await blanked.write(db)
+      const text = `A picture came in after consent was withdrawn: blanked ${blanked.pages}, not placed and removed ${blanked.removed}`
+      await addTrailLine(db, { actor: null, action: 'blank', subject: 'demonstration', subjectId: demonstrationId, text })
+    })
+    for (const key of blanked.stale) await deps.files.remove(key)
+  }
+  return withdrawn.length > 0
 }
