@@ -19,7 +19,6 @@ const FUEL: ResultKey[] = [
   'kg_per_ha',
 ]
 
-// DOMAIN section 10, "Stop".
 describe('a stop', () => {
   it('leaves every result standing on a sound sheet', () => {
     expect(nulled({})).toEqual([])
@@ -70,7 +69,7 @@ describe('findings', () => {
     expect(new Set(order).size).toBe(3)
   })
 
-  it('drop to doubt where a unit slip explains them, and name it (section 10, "Rules")', () => {
+  it('drop to doubt where a unit slip explains them, and name it', () => {
     const { findings } = judge({ area_written: 0.667 })
     expect(findings.map((f) => [f.rule, f.severity])).toEqual([
       ['Q14', 'doubt'],

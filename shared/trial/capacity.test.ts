@@ -8,7 +8,7 @@ const seconds = (...times: number[]) => times.map((t) => quantity(t, 's'))
 const feet = (inches: number) => quantity(inches / 12, 'ft')
 const mph = (v: number) => quantity(v, 'mile/h')
 
-// Check values C07 to C14: DOMAIN section 2, the golden sheet.
+// Check values C07 to C14: the golden sheet, worked out independently to full digits.
 describe('work rates', () => {
   it('C07: theoretical field capacity', () => {
     expect(theoreticalCapacity(metres(0.9), kmh(4.3991853360488795))).toBeCloseTo(0.39592668024439914, 14)
@@ -21,7 +21,7 @@ describe('work rates', () => {
     expect(fieldEfficiency(efc, theoreticalCapacity(metres(0.905), kmh(4.3991853360488795)))).toBeCloseTo(78.25116872078198, 11)
   })
 
-  // DOMAIN section 2, C09: 50 passes of 60 m at speed take 40.917 of the 52 min; 45 m in 50 passes is the rated width.
+  // Golden sheet, C09: 50 passes of 60 m at speed take 40.917 of the 52 min; 45 m in 50 passes is the rated width.
   it('C09: field efficiency by time and overlap is the same figure', () => {
     const time = timeEfficiency(50, metres(60), kmh(4.3991853360488795), hours(52 / 60))
     expect((time * 52) / 100).toBeCloseTo(40.91666666666667, 11)

@@ -19,7 +19,6 @@ describe('clock readings', () => {
   })
 })
 
-// DOMAIN section 10, "Midnight" and "Times".
 describe('a run', () => {
   it('lasts from start to end', () => {
     expect(run({})).toMatchObject({ state: 'known', gross_min: 52, overMidnight: false })

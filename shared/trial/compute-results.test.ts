@@ -10,7 +10,7 @@ const value = (results: Results, key: ResultKey) => results[key].value ?? Number
 const relative_pct = (results: Results, key: ResultKey) => (100 * (results[key].u ?? Number.NaN)) / value(results, key)
 const part = (results: Results, key: ResultKey, name: string) => results[key].budget.find((p) => p.name === name)?.u
 
-// DOMAIN section 3, "Worked sheet (golden)", every line of it; full digits from the independent computation behind it.
+// The golden sheet, every line of its budget (JCGM 100:2008), worked out independently to full digits.
 describe('the golden sheet', () => {
   const r = computeResults(buildFullReadings(), buildFacts())
 
@@ -87,7 +87,7 @@ describe('the golden sheet', () => {
   })
 })
 
-// Issue 2 section 7 and issue 4: the sheet that fits the layout.
+// What fits the printed layout: the first 10 depths and 5 widths, worked out independently.
 describe('the short golden sheet', () => {
   const r = computeResults(buildReadings(), buildFacts())
 
@@ -105,7 +105,7 @@ describe('uncertainty of the fuel', () => {
   const relative = (changes: Readings, facts: Facts = {}) =>
     relative_pct(computeResults(buildReadings(changes), buildFacts(facts)), 'fuel_ml')
 
-  // DOMAIN section 3: "same with δ = 100".
+  // The same budget with δ = 100 mL.
   it('is 1.39117 % with marks of 100 mL', () => {
     expect(relative({}, { jarMark_ml: 100 })).toBeCloseTo(1.391173866778878, 10)
   })
@@ -116,7 +116,7 @@ describe('uncertainty of the fuel', () => {
     expect(relative({ jar_start_ml: 4900 })).toBeCloseTo((100 * u) / 3900, 10)
   })
 
-  // DOMAIN section 3: method L, three full fillings and a part of 800 mL.
+  // Method L: √(40²/6 + 100²/12 + 3·20²/3 + 21.94²); three full fillings and a part of 800 mL.
   it('is halved by refilling to the same line: 44.51 mL, 1.1714 %', () => {
     const refilled = { fuel_method: 'L', jar_start_ml: 4000, jar_end_ml: 4000, ...numbered('topup_ml', [1000, 1000, 1000, 800]) }
     const r = computeResults(buildReadings(refilled), buildFacts())
@@ -132,7 +132,7 @@ describe('uncertainty of the fuel', () => {
     expect(computeResults(buildReadings(), buildFacts()).fuel_ml.assumes).toEqual([])
   })
 
-  it('adds a clock difference for each stop taken out (section 10)', () => {
+  it('adds a clock difference for each stop taken out', () => {
     const stop = { 'stop_from[1]': '09:20', 'stop_to[1]': '09:26', 'stop_engine_off[1]': true }
     expect(computeResults(buildReadings(stop), buildFacts()).time_min.u).toBeCloseTo(Math.sqrt(2) / Math.sqrt(6), 12)
   })
@@ -150,7 +150,7 @@ describe('Monte Carlo (JCGM 101)', () => {
     }
   }
 
-  // DOMAIN section 3: mean 14.0744, u 0.3384, 95 % 13.427 to 14.727 from 2·10⁶ draws.
+  // Independent run: mean 14.0744, u 0.3384, 95 % 13.427 to 14.727 from 2·10⁶ draws.
   it('agrees with the budget of L/ha', () => {
     const random = uniform(20261014)
     const within = (half: number) => half * (2 * random() - 1)

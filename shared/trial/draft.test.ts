@@ -18,7 +18,7 @@ import { kmh, quantity } from './quantity.ts'
 const kw = (value: number) => quantity(value, 'kW')
 const cm = (value: number) => quantity(value, 'cm')
 
-// Check values C18 to C22 and C25, examples E5, E11, E13, E14: DOMAIN sections 2 and 6.
+// Check values C18 to C22 and C25, computed independently from the cited formulas; examples name their page.
 describe('draft and power', () => {
   it('C22: a plough in medium soil', () => {
     const draft = draft_n(DRAFT.plough, 'medium', kmh(4.4), 0.905, cm(15))
@@ -75,7 +75,7 @@ describe('fuel to expect', () => {
   })
 })
 
-// DOMAIN section 3, "Least fuel to burn".
+// JCGM 100 solved for the fuel; table computed independently.
 describe('the least fuel to burn', () => {
   const least = (U_pct: number, jarStep_ml: number, topups: number, area_u_pct: number) =>
     leastFuel({ U_pct, jarStep_ml, jugMark_ml: 100, topups, scale_pct: 1, area_u_pct })

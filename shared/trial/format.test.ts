@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { formatResult, roundByUncertainty } from './format.ts'
 
 describe('figures for people', () => {
-  // DOMAIN section 3: 14.1 ± 0.7 L/ha; 4.38 ± 0.22 L/h, two figures of U because its first is 1 or 2.
+  // Golden sheet: 14.1 ± 0.7 L/ha; 4.38 ± 0.22 L/h, two figures of U because its first is 1 or 2.
   it('are rounded by their uncertainty', () => {
     expect(formatResult(14.074074, 0.67637)).toBe('14.1 ± 0.7')
     expect(formatResult(4.384615, 0.215058)).toBe('4.38 ± 0.22')

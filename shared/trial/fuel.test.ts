@@ -7,7 +7,7 @@ import { densityAt15, expansion, volumeCorrection } from './volume-correction.ts
 const rho = (value: number) => quantity(value, 'kg/m3')
 const level = (volume: number, temp_c: number) => ({ volume: ml(volume), temp_c })
 
-// Check values C01 to C04 and C17: DOMAIN section 2, the golden sheet.
+// Check values C01 to C04 and C17: the golden sheet, worked out independently to full digits.
 describe('fuel by the balance of the jar', () => {
   it('C01: start, plus top-ups, less end', () => {
     expect(fuelUsed(ml(4800), [ml(1000)], ml(2000))).toBe(3800)
@@ -52,7 +52,7 @@ describe('fuel by the balance of the jar', () => {
   })
 })
 
-// C15, C16: ASTM D1250-80 Table 54B/53B, computed from the cited formula (DOMAIN section 2).
+// C15, C16: ASTM D1250-80 Table 54B/53B, computed independently from the cited formula.
 describe('volume correction', () => {
   it.each([
     [835, 40, 0.97855164],

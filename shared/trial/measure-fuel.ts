@@ -50,7 +50,7 @@ function balanceOf(readings: Readings): Balance | Measure {
 const inWords = (key: (typeof LEVELS)[number]) =>
   key === 'jar_start_ml' ? 'the jar level at the start' : 'the jar level at the end'
 
-/** Section 3: reading the jar, filling the jug, and the scales of both, which do not average out. */
+/** JCGM 100 budget: reading the jar, filling the jug, and the scales of both, which do not average out. */
 function fuelParts(balance: Balance, readings: Readings, facts: Facts): Part[] {
   const kit = kitOf(facts)
   const { start, end, topups } = balance

@@ -3,7 +3,7 @@ import { soilWater_pct, waterOfWetSoil_pct } from './moisture.ts'
 import { grubbsCritical, grubbsDistance, robustZ } from './outliers.ts'
 import { incompleteBeta, quantileAbove, upperTail } from './student.ts'
 
-// R 4.2.2 quantiles, DOMAIN section 5.
+// Quantiles of R 4.2.2 (qt).
 describe("Student's t", () => {
   it.each([
     [5, 2.5705818],
@@ -28,7 +28,7 @@ describe("Student's t", () => {
   })
 })
 
-// NIST e-Handbook 1.3.5.17.1 and R, DOMAIN section 5.
+// NIST e-Handbook 1.3.5.17.1 (data, mean, G); critical values from R 4.2.2.
 describe('outliers', () => {
   const masses = [199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57]
 

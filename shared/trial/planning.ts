@@ -15,8 +15,8 @@ export interface LeastFuelInput {
 }
 
 /**
- * Least fuel to burn, mL, for a wanted uncertainty: √((δ²/6 + n·m²/12) / ((U/200)² − cal²/3 − r²)) (section 3 of the
- * method; JCGM 100). Null when scale and area alone are less sure than wanted: no fuel is enough.
+ * Least fuel to burn, mL, for a wanted uncertainty: √((δ²/6 + n·m²/12) / ((U/200)² − cal²/3 − r²)) (JCGM 100:2008
+ * 5.1.6, solved for the fuel). Null when scale and area alone are less sure than wanted: no fuel is enough.
  */
 export function leastFuel(input: LeastFuelInput): Quantity<'mL'> | null {
   const reading = input.jarStep_ml ** 2 / 6 + (input.topups * input.jugMark_ml ** 2) / 12

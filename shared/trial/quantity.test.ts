@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest'
 import { UserError } from '../errors.ts'
 import { convert, metres, quantity, unitFromTick } from './quantity.ts'
 
-// Units: NIST SP 811 App. B, exact by definition (DOMAIN section 2, "Units").
+// Units: NIST SP 811 App. B, exact by definition.
 describe('units', () => {
   const one = <U extends Parameters<typeof quantity>[1]>(unit: U) => quantity(1, unit)
 

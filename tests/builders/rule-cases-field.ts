@@ -60,7 +60,7 @@ export const FIELD_CASES: readonly Case[] = [
     sheet({ side_ab_m: 130, diag_ac_m: 137.6, area_written: 0.585 }),
     sheet({ side_ab_m: 120, diag_ac_m: 128.2, area_written: 0.54 }),
   ),
-  // DOMAIN golden sheet: 40.92 min at work, 441 s of turns, 220 s of stop make 51.93 of 52 min.
+  // Golden sheet: 40.92 min at work, 441 s of turns, 220 s of stop make 51.93 of 52 min.
   row('Q38', 'doubt', sheet({ turn_time_s: 441 }), sheet({ turn_time_s: 441, ...stop('09:38:00', '09:41:40') })),
   row('Q39', 'doubt', sheet({ turn_count: 47 }), sheet({ turn_count: 48 })),
   row('Q39', 'doubt', sheet({ turn_count: 49, turn_time_s: 195 }), sheet({ turn_count: 49, turn_time_s: 196 })),
