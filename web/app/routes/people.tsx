@@ -1,0 +1,47 @@
+import { useQuery } from '@tanstack/react-query'
+import { useState } from 'react'
+import { InviteForm } from '../../features/people/components/invite-form.tsx'
+import { PeopleTable } from '../../features/people/components/people-table.tsx'
+import { peopleQueries, useInviteAgain, useUpdatePerson } from '../../features/people/people.queries.ts'
+import { useMe } from '../../lib/me.ts'
+import { counted } from '../../lib/words.ts'
+import { Button } from '../../ui/button.tsx'
+import { Page } from '../../ui/page.tsx'
+import { ErrorNote, ErrorState, Loading } from '../../ui/says.tsx'
+
+export function Component() {
+  const me = useMe()
+  const [inviting, setInviting] = useState(false)
+  const people = useQuery(peopleQueries.list())
+  const update = useUpdatePerson()
+  const again = useInviteAgain()
+  const said = people.data
+    ? `${counted(people.data.filter((p) => p.active).length, 'person', 'people')} may work here.`
+    : 'People'
+  return (
+    <Page title="People" sentence={said} aside={<Button onClick={() => setInviting(true)}>Invite somebody</Button>}>
+      {inviting && <InviteForm onDone={() => setInviting(false)} />}
+      {(update.error || again.error) && (
+        <div className="px-margin py-2">
+          <ErrorNote error={update.error ?? again.error} />
+        </div>
+      )}
+      {again.isSuccess && (
+        <p role="status" className="px-margin py-1">
+          The invitation went out again.
+        </p>
+      )}
+      {people.error && <ErrorState error={people.error} again={() => people.refetch()} />}
+      {people.isPending && <Loading what="Looking up who works here" />}
+      {people.data && (
+        <PeopleTable
+          people={people.data}
+          me={me}
+          onRole={({ id }, role) => update.mutate({ id, change: { role } })}
+          onActive={({ id }, active) => update.mutate({ id, change: { active } })}
+          onInvite={({ id }) => again.mutate(id)}
+        />
+      )}
+    </Page>
+  )
+}

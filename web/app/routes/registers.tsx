@@ -1,0 +1,64 @@
+import { useQuery } from '@tanstack/react-query'
+import { useState } from 'react'
+import { Navigate, NavLink, useParams } from 'react-router-dom'
+import { REGISTER_NAMES, type RegisterName, registerNameSchema } from '../../../shared/schemas/register.ts'
+import { type RegisterRow, RegisterTable } from '../../features/registers/components/register-table.tsx'
+import { RowForm } from '../../features/registers/components/row-form.tsx'
+import { REGISTER_WORDS } from '../../features/registers/register-fields.ts'
+import { registerQueries } from '../../features/registers/registers.queries.ts'
+import { useMe } from '../../lib/me.ts'
+import { paths } from '../../lib/paths.ts'
+import { Button } from '../../ui/button.tsx'
+import { Page } from '../../ui/page.tsx'
+import { EmptyState, ErrorState, Loading } from '../../ui/says.tsx'
+
+export function Component() {
+  const name = registerNameSchema.safeParse(useParams().name)
+  if (!name.success) return <Navigate to={paths.register.to('tractors')} replace />
+  return <RegisterPage key={name.data} name={name.data} />
+}
+
+function RegisterPage({ name }: { name: RegisterName }) {
+  const me = useMe()
+  const [open, setOpen] = useState<RegisterRow | 'new' | null>(null)
+  const rows = useQuery(registerQueries.rows(name))
+  const { title, one, says } = REGISTER_WORDS[name]
+  const admin = me.role === 'admin'
+  return (
+    <Page
+      title={title}
+      over={<Which />}
+      sentence={says}
+      aside={admin && <Button onClick={() => setOpen('new')}>Add a {one}</Button>}
+    >
+      {open && (
+        <RowForm
+          key={open === 'new' ? 'new' : open.id}
+          register={name}
+          row={open === 'new' ? null : open}
+          onDone={() => setOpen(null)}
+        />
+      )}
+      {rows.error && <ErrorState error={rows.error} again={() => rows.refetch()} />}
+      {rows.isPending && <Loading what={`Opening the register of ${title.toLowerCase()}`} />}
+      {rows.data?.length === 0 && <EmptyState says={`No ${one} is registered yet. Sheets name it by its number.`} />}
+      {rows.data && rows.data.length > 0 && (
+        <RegisterTable register={name} rows={rows.data as unknown as RegisterRow[]} {...(admin ? { onChange: setOpen } : {})} />
+      )}
+    </Page>
+  )
+}
+
+const Which = () => (
+  <nav aria-label="Registers" className="flex flex-wrap gap-x-3">
+    {REGISTER_NAMES.map((name) => (
+      <NavLink
+        key={name}
+        to={paths.register.to(name)}
+        className={({ isActive }) => (isActive ? 'font-[700] text-ink no-underline' : 'word')}
+      >
+        {REGISTER_WORDS[name].title}
+      </NavLink>
+    ))}
+  </nav>
+)

@@ -1,0 +1,45 @@
+import { useInfiniteQuery } from '@tanstack/react-query'
+import type { TrailEntry } from '../../../shared/schemas/trail.ts'
+import { trailQueries } from '../../features/trail/trail.queries.ts'
+import { momentText } from '../../lib/time.ts'
+import { Button } from '../../ui/button.tsx'
+import { type LedgerColumn, LedgerTable } from '../../ui/ledger-table.tsx'
+import { Page } from '../../ui/page.tsx'
+import { ErrorState, Loading } from '../../ui/says.tsx'
+
+const columns: LedgerColumn<TrailEntry>[] = [
+  {
+    key: 'at',
+    head: 'when',
+    tight: true,
+    cell: (e) => <span className="figures text-[13.5px] font-normal">{momentText(e.at)}</span>,
+  },
+  { key: 'who', head: 'who', tight: true, cell: (e) => e.who },
+  { key: 'what', head: 'what', tight: true, cell: (e) => `${e.action}, ${e.subject}` },
+  { key: 'text', head: 'in words', cell: (e) => e.text },
+]
+
+export function Component() {
+  const trail = useInfiniteQuery(trailQueries.lines())
+  return (
+    <Page title="Trail" sentence="Every change, newest first. Nobody can alter or take out a line.">
+      {trail.error && <ErrorState error={trail.error} again={() => trail.refetch()} />}
+      {trail.isPending && <Loading what="Opening the trail" />}
+      {trail.data && (
+        <LedgerTable
+          caption="The audit trail, newest first"
+          columns={columns}
+          groups={[{ key: 'all', rows: trail.data.pages.flatMap((p) => p.entries) }]}
+          rowKey={(e) => String(e.id)}
+        />
+      )}
+      {trail.hasNextPage && (
+        <p className="px-margin py-2">
+          <Button look="word" disabled={trail.isFetchingNextPage} onClick={() => trail.fetchNextPage()}>
+            Older lines
+          </Button>
+        </p>
+      )}
+    </Page>
+  )
+}

@@ -1,0 +1,60 @@
+import { zodResolver } from '@hookform/resolvers/zod'
+import { type Resolver, useForm } from 'react-hook-form'
+import { REGISTERS, type RegisterName } from '../../../../shared/schemas/register.ts'
+import { Button } from '../../../ui/button.tsx'
+import { Field, FieldChoice } from '../../../ui/field.tsx'
+import { ErrorNote } from '../../../ui/says.tsx'
+import { newRow, REGISTER_FIELDS, REGISTER_WORDS, type RegisterField } from '../register-fields.ts'
+import { useSaveRow } from '../registers.queries.ts'
+
+type Row = Record<string, unknown> & { id: string; version: number }
+
+/** Adds a row of a register, or changes one. What was typed stays when it is refused. */
+export function RowForm({ register: name, row, onDone }: { register: RegisterName; row: Row | null; onDone: () => void }) {
+  const resolver = zodResolver(REGISTERS[name].save as never) as unknown as Resolver<Record<string, unknown>>
+  const form = useForm<Record<string, unknown>>({ resolver, defaultValues: row ?? newRow(name) })
+  const save = useSaveRow(name)
+  const submit = form.handleSubmit((values) =>
+    save.mutate({ id: row?.id ?? null, values: { ...values, ...(row ? { version: row.version } : {}) } }, { onSuccess: onDone }),
+  )
+  const errorOf = (key: string) => form.formState.errors[key]?.message?.toString()
+  const fieldOf = (f: RegisterField) => {
+    const frame = {
+      label: f.label,
+      ...(f.unit ? { unit: f.unit } : {}),
+      ...(f.hint ? { hint: f.hint } : {}),
+      error: errorOf(f.key),
+    }
+    if (f.kind === 'choice') return <FieldChoice key={f.key} {...frame} options={f.options ?? []} {...form.register(f.key)} />
+    return (
+      <Field
+        key={f.key}
+        {...frame}
+        type={f.kind === 'date' ? 'date' : 'text'}
+        inputMode={f.kind === 'number' ? 'decimal' : 'text'}
+        {...form.register(f.key)}
+      />
+    )
+  }
+  return (
+    <form noValidate onSubmit={submit} className="max-w-[720px] px-margin py-3">
+      <h2 className="pb-1 text-3">
+        {row ? `Change ${REGISTER_WORDS[name].one} ${String(row.number)}` : `A new ${REGISTER_WORDS[name].one}`}
+      </h2>
+      <div className="border-t-2 border-ink">{REGISTER_FIELDS[name].map(fieldOf)}</div>
+      <label className="mt-2 flex min-h-[44px] items-center gap-1">
+        <input type="checkbox" className="size-[20px]" {...form.register('active')} />
+        in use: offered when a demonstration is planned
+      </label>
+      {save.error && <ErrorNote error={save.error} kept="What you typed is kept here." />}
+      <div className="mt-2 flex gap-3">
+        <Button look="ink" type="submit" disabled={save.isPending}>
+          Save
+        </Button>
+        <Button look="word" onClick={onDone}>
+          Leave it
+        </Button>
+      </div>
+    </form>
+  )
+}
