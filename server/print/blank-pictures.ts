@@ -3,7 +3,14 @@ import { randomUUID } from 'node:crypto'
 import { findLayout } from '../../shared/layouts/registry.ts'
 import type { UploadKind } from '../../shared/schemas/upload.ts'
 import type { DataSource, Db } from '../db/database.ts'
-import { type KeptFile, type KeptPage, listKeptFiles, replaceOriginal, replacePicture } from '../db/repositories/kept-picture.ts'
+import {
+  findWithdrawn,
+  type KeptFile,
+  type KeptPage,
+  listKeptFiles,
+  replaceOriginal,
+  replacePicture,
+} from '../db/repositories/kept-picture.ts'
 import { addTrailLine } from '../db/repositories/trail.ts'
 import type { FileStore } from '../storage/store.ts'
 import { uprightKey } from '../storage/upright-key.ts'
