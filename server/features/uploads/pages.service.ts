@@ -5,6 +5,7 @@ import type { UploadKind } from '../../../shared/schemas/upload.ts'
 import type { User } from '../../../shared/schemas/user.ts'
 import { findShownPage, type ShownPage } from '../../db/repositories/page.ts'
 import type { Deps } from '../../http/route.ts'
+import { uprightKey } from '../../storage/upright-key.ts'
 
 const TYPES: Record<UploadKind, string> = {
   jpeg: 'image/jpeg',
@@ -32,12 +33,20 @@ export async function openPicture(deps: Deps, actor: User, pageId: string): Prom
   return { stream: await deps.files.stream(pictureKey), key: pictureKey }
 }
 
+/**
+ * @param asPicture asks for something an image element can show: the page upright as JPEG where the file itself cannot be shown
+ */
 export async function openOriginal(
   deps: Deps,
   actor: User,
   pageId: string,
+  asPicture: boolean,
 ): Promise<{ stream: Readable; type: string; fileName: string }> {
   const page = await getShownPage(deps, actor, pageId)
   if (page.storageKey === null) throw new UserError('gone', 'The original of this page is not kept any more.')
+  const upright = uprightKey(page.id)
+  if (asPicture && (await deps.files.exists(upright))) {
+    return { stream: await deps.files.stream(upright), type: TYPES.jpeg, fileName: `${page.fileName}.jpg` }
+  }
   return { stream: await deps.files.stream(page.storageKey), type: TYPES[page.kind], fileName: page.fileName }
 }

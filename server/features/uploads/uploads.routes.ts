@@ -68,11 +68,12 @@ export const uploadRoutes: Route[] = [
   route({
     method: 'get',
     path: '/pages/:id/original',
-    summary: 'The file a page came in, as it was sent',
+    summary: 'The file a page came in, as it was sent; with ?as=picture, something a browser can show where there is one',
     access: VIEWERS,
     params,
-    handle: async ({ deps, actor, params, res }) => {
-      const { stream, type, fileName } = await openOriginal(deps, actor, params.id)
+    query: z.object({ as: z.literal('picture').optional() }),
+    handle: async ({ deps, actor, params, query, res }) => {
+      const { stream, type, fileName } = await openOriginal(deps, actor, params.id, query.as === 'picture')
       res.attachment(fileName)
       // Whatever the bytes are, a browser may show them as this type or save them; it may not run them.
       res.set({ 'Content-Type': type, 'X-Content-Type-Options': 'nosniff', 'Cache-Control': 'private, no-cache' })
