@@ -5,11 +5,11 @@ import { isDatabaseAway } from '../server/db/driver-errors.ts'
 import { listKnownNumbers } from '../server/db/repositories/known-numbers.ts'
 import { createMailer } from '../server/mail/mailer.ts'
 import { createFileStore } from '../server/storage/store.ts'
+import { createReadingProcess } from './child/reading-process.ts'
 import { runParser } from './child/run-parser.ts'
 import { mailSendJob } from './jobs/mail-send.job.ts'
 import { pageReadJob } from './jobs/page-read.job.ts'
 import type { PageReader } from './jobs/page-reader.ts'
-import { createPageReader } from './jobs/read-photo.ts'
 import { uploadSplitJob } from './jobs/upload-split.job.ts'
 import { startWorker } from './start-worker.ts'
 
@@ -29,7 +29,7 @@ async function run(settings: WorkerSettings): Promise<void> {
       poolSize: settings.databasePool,
       log,
       handlers: ({ source, boss }) => {
-        reader = createPageReader(() => listKnownNumbers(source.manager))
+        reader = createReadingProcess({ listKnown: () => listKnownNumbers(source.manager) })
         return [
           uploadSplitJob({ source, boss, files, parse: runParser }),
           pageReadJob({ source, files, reader }),

@@ -7,7 +7,8 @@ import { once } from 'node:events'
 import { pino } from 'pino'
 import { pageReadJob } from '../../worker/jobs/page-read.job.ts'
 import { startWorker } from '../../worker/start-worker.ts'
-import { memoryStore, noneOf, readOutcome } from './setting.ts'
+import { readOutcome } from './outcomes.ts'
+import { memoryStore, noneOf } from './setting.ts'
 
 const hangs = process.argv.includes('hang')
 await startWorker(

@@ -5,7 +5,8 @@ import { checkHandlers } from '../../worker/jobs/job-handler.ts'
 import { pageReadJob } from '../../worker/jobs/page-read.job.ts'
 import type { PageReader, ReadPicture } from '../../worker/jobs/page-reader.ts'
 import { waitFor } from '../support/wait-for.ts'
-import { createSetting, gate, memoryStore, noneOf, readOutcome, type Setting } from './setting.ts'
+import { readOutcome } from './outcomes.ts'
+import { createSetting, gate, memoryStore, noneOf, type Setting } from './setting.ts'
 
 let setting: Setting
 beforeAll(async () => {

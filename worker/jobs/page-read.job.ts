@@ -4,6 +4,7 @@ import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
 import { takeInPage } from '../../server/db/intake/take-in-page.ts'
 import { holdsPage, type TakenPage, takePage } from '../../server/db/repositories/page.ts'
 import type { FileStore } from '../../server/storage/store.ts'
+import { uprightKey } from '../../server/storage/upright-key.ts'
 import { defineJob, type JobContext, type JobEnd, type JobHandler } from './job-handler.ts'
 import type { PageReader, ReadPicture } from './page-reader.ts'
 import { readBlock } from './read-block.ts'
@@ -55,12 +56,15 @@ async function read(deps: PageReadDeps, page: TakenPage, signal: AbortSignal): P
  * The picture first, then all rows in one transaction. A picture whose rows were refused is removed again, and so is the one
  * it replaces; when the answer to the commit is lost, it stays, because rows may name it.
  */
-async function keep(deps: PageReadDeps, page: TakenPage, { outcome, picture }: ReadPicture): Promise<JobEnd> {
+async function keep(deps: PageReadDeps, page: TakenPage, { outcome, picture, upright }: ReadPicture): Promise<JobEnd> {
   const pictureKey = picture ? `pictures/${page.id}/${page.attemptToken}` : null
   if (picture && pictureKey) await deps.files.put(pictureKey, picture)
+  // The same for every attempt, so no attempt can spoil it for another.
+  if (upright) await deps.files.put(uprightKey(page.id), upright)
   const written = await deps.source.transaction((db) => write(db, page, withPicture(outcome, pictureKey)))
   const stale = written ? page.pictureKey : pictureKey
   if (pictureKey && stale) await deps.files.remove(stale)
+  if (written && outcome.kind === 'read' && !page.block) await deps.files.remove(uprightKey(page.id))
   return written ? 'done' : 'late'
 }
 

@@ -1,4 +1,4 @@
-/** What the page job asks of the photo reader: the real one stands in read-photo.ts, tests hand in a fake. */
+/** What the page job asks of the photo reader: the real one is worker/child/reading-process.ts, tests hand in a fake. */
 import type { PageEntity } from '../../server/db/entities/upload.ts'
 import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
 import type { UploadKind } from '../../shared/schemas/upload.ts'
@@ -19,6 +19,8 @@ export interface ReadPicture {
   outcome: PageOutcome
   /** The flattened page as JPEG, when it could be placed. */
   picture: Uint8Array | null
+  /** The page upright as JPEG, in the pixels corners are set in, when it could not be read and browsers cannot show its file. */
+  upright?: Uint8Array
 }
 
 export interface PageReader {

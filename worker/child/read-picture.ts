@@ -1,31 +1,15 @@
-/** The photo reader as the page job asks for it: made when the first picture comes, kept for the process. */
+/** From the photo reader's words to those of the intake. */
 import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
 import type { KnownNumbers } from '../../server/db/repositories/known-numbers.ts'
 import { UserError } from '../../shared/errors.ts'
 import type { PageCell, PageReading } from '../../shared/schemas/page-reading.ts'
+import type { UploadKind } from '../../shared/schemas/upload.ts'
+import type { PagePicture, ReadPicture } from '../jobs/page-reader.ts'
 import type { ByHand, PhotoReader, ReadHooks } from '../readers/photo/read-page.ts'
-import type { PagePicture, PageReader, ReadPicture } from './page-reader.ts'
+import { drawUpright } from './draw-upright.ts'
 
-/** @param listKnown the numbers that registers hold, asked for each page: they change while the process runs */
-export function createPageReader(listKnown: () => Promise<KnownNumbers>): PageReader {
-  let making: Promise<PhotoReader> | undefined
-  const reader = () => {
-    making ??= import('../readers/photo/read-page.ts').then((module) => module.createPhotoReader())
-    // A reader that could not be made is made anew for the next page.
-    making.catch(() => {
-      making = undefined
-    })
-    return making
-  }
-  return {
-    read: async (picture) => readPicture(await reader(), picture, await listKnown()),
-    close: async () => {
-      await (await making)?.close()
-    },
-  }
-}
-
-async function readPicture(reader: PhotoReader, picture: PagePicture, known: KnownNumbers): Promise<ReadPicture> {
+/** One page of one file: read, or the words for why not. @throws what is a fault and worth another attempt */
+export async function readPicture(reader: PhotoReader, picture: PagePicture, known: KnownNumbers): Promise<ReadPicture> {
   let flattened: Uint8Array | null = null
   const hooks: ReadHooks = {
     known,
@@ -39,7 +23,7 @@ async function readPicture(reader: PhotoReader, picture: PagePicture, known: Kno
     const page = byHand
       ? await reader.readWithCorners(picture.bytes, picture.fileName, byHand, hooks)
       : (await reader.read(picture.bytes, picture.fileName, hooks))[0]
-    if (page) return { outcome: toOutcome(page), picture: flattened }
+    if (page) return { outcome: toOutcome(page), picture: flattened, ...(page.takeAgain ? await uprightOf(picture) : {}) }
     return { outcome: { kind: 'unreadable', reason: `The file has no page ${picture.page}.` }, picture: null }
   } catch (cause) {
     // What the reader says of a file in words for its sender is a result; anything else is a fault and tried again.
@@ -47,6 +31,13 @@ async function readPicture(reader: PhotoReader, picture: PagePicture, known: Kno
       return { outcome: { kind: 'take again', code: cause.code, advice: cause.message }, picture: null }
     throw cause
   }
+}
+
+/** Kinds that browsers do not show in an image element. */
+const NOT_SHOWN: ReadonlySet<UploadKind> = new Set(['heic', 'tiff', 'pdf'])
+
+async function uprightOf({ bytes, kind, page }: PagePicture): Promise<{ upright?: Uint8Array }> {
+  return NOT_SHOWN.has(kind) ? { upright: await drawUpright(bytes, page) } : {}
 }
 
 function byHandOf({ placed, planned }: PagePicture): ByHand | null {
