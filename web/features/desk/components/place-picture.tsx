@@ -32,7 +32,7 @@ export function PlacePicture({ sheet, busy, error, onPlace }: PlacePictureProps)
   return (
     <div className="grid grow lg:grid-cols-[minmax(0,1fr)_minmax(380px,30%)]">
       {page ? (
-        <CornerPicker src={`/api/pages/${page.id}/original`} corners={corners} onCorners={setCorners} />
+        <CornerPicker src={`/api/pages/${page.id}/original?as=picture`} corners={corners} onCorners={setCorners} />
       ) : (
         <p className="px-margin py-3">This sheet has no picture.</p>
       )}
