@@ -5,6 +5,7 @@ import type { UploadKind } from '../../shared/schemas/upload.ts'
 import type { DataSource, Db } from '../db/database.ts'
 import {
   findWithdrawn,
+  hasOpenPages,
   type KeptFile,
   type KeptPage,
   listKeptFiles,
@@ -38,7 +39,7 @@ export interface Blanked {
 }
 
 /**
- * Covers the personal areas. The old files are overwritten before any row changes: whatever fails after that, nobody is shown
+ * Covers the personal areas. No page of the files may still wait to be read. The old files are overwritten before any row changes: whatever fails after that, nobody is shown
  * any more, and doing it again ends the work. New keys are given besides, since browsers keep a picture under its key.
  */
 export async function blankPictures(deps: Kept, demonstrationId: string, uploadId: string | null = null): Promise<Blanked> {
@@ -47,10 +48,9 @@ export async function blankPictures(deps: Kept, demonstrationId: string, uploadI
   const steps: ((db: Db) => Promise<void>)[] = []
   const done: Blanked = { pages: 0, replaced: 0, removed: 0, stale: [], write: (db) => inTurn(steps, db) }
   for (const file of files) {
-    const kept: Buffer[] = []
+    const kept: (Buffer | null)[] = []
     for (const page of file.pages) {
-      const picture = page.concerned ? await blankPage(deps.files, page, steps, done) : await pictureOf(deps.files, page)
-      if (picture) kept.push(picture)
+      kept.push(page.concerned ? await blankPage(deps.files, page, steps, done) : await pictureOf(deps.files, page))
     }
     steps.push(await replaceFile(deps.files, file, kept))
     done.replaced += 1
@@ -90,9 +90,13 @@ async function blankPage(
   return blanked
 }
 
-/** The original becomes its own flattened pages: a JPEG, or a PDF where there are several. */
-async function replaceFile(store: FileStore, file: KeptFile, kept: readonly Buffer[]): Promise<(db: Db) => Promise<void>> {
-  const [first] = kept
+/** The original becomes its own flattened pages: a JPEG, or a PDF of as many pages as it had. */
+async function replaceFile(
+  store: FileStore,
+  file: KeptFile,
+  kept: readonly (Buffer | null)[],
+): Promise<(db: Db) => Promise<void>> {
+  const [first] = kept.filter((picture) => picture !== null)
   if (!first) {
     await store.remove(file.storageKey)
     return (db) => replaceOriginal(db, file.id, null)
@@ -111,6 +115,8 @@ async function replaceFile(store: FileStore, file: KeptFile, kept: readonly Buff
  */
 export async function blankLateArrival(deps: Kept, uploadId: string): Promise<boolean> {
   const withdrawn = await findWithdrawn(deps.source.manager, uploadId)
+  // The pages still to be read are read from the original: the last of them has it covered.
+  if (await hasOpenPages(deps.source.manager, uploadId)) return false
   for (const demonstrationId of withdrawn) {
     const blanked = await blankPictures(deps, demonstrationId, uploadId)
     await deps.source.transaction(async (db) => {

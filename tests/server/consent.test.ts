@@ -103,6 +103,23 @@ describe('withdrawing consent', () => {
     expect(whole.map(({ row }) => row).join()).not.toMatch(/Matis|0555 0142/)
   })
 
+  it('waits until a file is read to its end, and keeps the numbers of its pages', async () => {
+    const { source } = server.deps
+    const { planned, uploadId, pageId } = await photographed()
+    const addPage = `INSERT INTO pages (upload_id, number, state) VALUES ($1, $2, $3) RETURNING id`
+    const [second]: { id: string }[] = await source.query(addPage, [uploadId, 2, 'arrived'])
+    await source.query('UPDATE pages SET number = 3 WHERE id = $1', [pageId])
+    await source.query(addPage, [uploadId, 1, 'unreadable'])
+    const path = `/demonstrations/${planned.id}/withdraw-consent`
+    expect((await agent.post(path, { reason: 'asked for' })).status).toBe(409)
+    expect((await agent.get(`/demonstrations/${planned.id}`)).body).toMatchObject({ farmer: { name: 'Matis Orrel' } })
+    await source.query(`UPDATE pages SET state = 'unreadable' WHERE id = $1`, [second?.id])
+    expect((await agent.post(path, { reason: 'asked for' })).status).toBe(200)
+    const { headers, bytes } = await agent.get(`/pages/${pageId}/original`)
+    expect(headers.get('content-type')).toBe('application/pdf')
+    expect(bytes.toString('latin1').match(/\/Type \/Page\b/g)).toHaveLength(3)
+  })
+
   it('removes a picture whole that no layout could be laid on, and its original', async () => {
     const { planned, pageId, sheetId } = await photographed()
     await server.deps.source.query(`UPDATE pages SET state = 'unreadable' WHERE id = $1`, [pageId])

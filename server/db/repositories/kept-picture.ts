@@ -1,6 +1,9 @@
 /** Stored pictures of a demonstration's sheets, for taking out what shows a person. */
+
+import { In } from 'typeorm'
 import type { UploadKind } from '../../../shared/schemas/upload.ts'
 import type { Db } from '../database.ts'
+import { PageEntity } from '../entities/upload.ts'
 
 export interface KeptPage {
   id: string
@@ -79,4 +82,9 @@ export async function findWithdrawn(db: Db, uploadId: string): Promise<string[]>
     [uploadId],
   )
   return rows.map(({ id }) => id)
+}
+
+/** Whether a page of the file is still to be read, or being read. */
+export async function hasOpenPages(db: Db, uploadId: string): Promise<boolean> {
+  return db.existsBy(PageEntity, { uploadId, state: In(['arrived', 'being read']) })
 }

@@ -2,8 +2,10 @@ import { createHash, randomBytes } from 'node:crypto'
 import { UserError } from '../../../shared/errors.ts'
 import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
 import type { User } from '../../../shared/schemas/user.ts'
+import type { Db } from '../../db/database.ts'
 import { changeDemonstration, findDemonstrationRow } from '../../db/repositories/demonstration.ts'
 import { findFarmer, removeFarmer } from '../../db/repositories/farmer.ts'
+import { hasOpenPages, listKeptFiles } from '../../db/repositories/kept-picture.ts'
 import type { Deps } from '../../http/route.ts'
 import { blankPictures } from '../../print/blank-pictures.ts'
 import { writeTrail } from '../trail/trail.service.ts'
@@ -21,6 +23,7 @@ export async function withdrawConsent(deps: Deps, actor: User, id: string, reaso
   const farmer = row?.farmerId ? await findFarmer(db, row.farmerId) : null
   if (!row?.farmerId || !farmer) throw new UserError('conflict', 'The farmer of this demonstration was erased before.')
   const { farmerId, version } = row
+  await checkAllRead(db, id)
   const blanked = await blankPictures(deps, id)
   const salt = randomBytes(16).toString('hex')
   const hash = createHash('sha256').update(`${salt}|${farmer.name}|${farmer.phone}`).digest('hex')
@@ -43,4 +46,12 @@ export async function withdrawConsent(deps: Deps, actor: User, id: string, reaso
   })
   for (const key of blanked.stale) await deps.files.remove(key)
   return getDemonstration(db, actor, id)
+}
+
+/** @throws UserError `conflict` while a file of its sheets is being read: its pages are read from the original */
+async function checkAllRead(db: Db, id: string): Promise<void> {
+  for (const file of await listKeptFiles(db, { demonstrationId: id, uploadId: null })) {
+    if (!(await hasOpenPages(db, file.id))) continue
+    throw new UserError('conflict', 'A file of these sheets is being read. Nothing was erased. Try again in a minute.')
+  }
 }
