@@ -16,7 +16,7 @@ export interface Chain {
 }
 
 /** Weights of a reading's options as they come in; `other` stands last. */
-export interface Incoming {
+interface Incoming {
   counts: ReadonlyArray<number | null | undefined>
   weights: ArrayLike<number>
 }

@@ -10,7 +10,7 @@ import type { Variable } from './variable.ts'
 
 const MOST_COMBINATIONS = 400
 
-export interface JointResult {
+interface JointResult {
   /** For every reading the probability of its options, `other` last; null where its group was not decided. */
   posteriors: Array<Float64Array | null>
   /** Probability that the result of a tie holds, fails, or was not claimed; null where not decided. */
