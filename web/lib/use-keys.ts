@@ -1,4 +1,4 @@
-import { useEffect, useRef } from 'react'
+import { useEffect, useLayoutEffect, useRef } from 'react'
 import { letterKeysOn } from './letter-keys.ts'
 
 /** `Enter`, `Shift+Enter`, `Ctrl+z`, `ArrowDown`, `?`, `1`. Letters are lower case. */
@@ -31,7 +31,8 @@ const THROUGH = /^(Shift\+Enter|F\d+|Escape|Ctrl\+.*)$/
  */
 export function useKeys(keys: KeyMap, { on = true }: Options = {}): void {
   const latest = useRef(keys)
-  useEffect(() => {
+  // With the picture, not after it: the next key press must meet what is on the screen.
+  useLayoutEffect(() => {
     latest.current = keys
   })
   useEffect(() => {

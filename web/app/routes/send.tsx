@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query'
 import { Link, useSearchParams } from 'react-router-dom'
+import type { Role } from '../../../shared/schemas/user.ts'
 import { BeforeYouShoot } from '../../features/uploads/components/before-you-shoot.tsx'
 import { NotYetSentList } from '../../features/uploads/components/not-yet-sent.tsx'
 import { PickFiles } from '../../features/uploads/components/pick-files.tsx'
@@ -22,10 +23,7 @@ export function Component() {
   // What was not accepted is not kept by the server; its answer is shown from here.
   const shown = [...answers.filter((answer) => !known.has(answer.id)), ...(uploads.data ?? [])]
   return (
-    <Page
-      title="Send sheets"
-      sentence={forSheet ? 'Send what answers the sheet that came back.' : 'Photograph each sheet before you leave the field.'}
-    >
+    <Page title="Send sheets" sentence={sentenceFor(me.role, forSheet)}>
       <PickFiles onFiles={(files) => void outbox.add(files, forSheet)} />
       <BeforeYouShoot />
       <NotYetSentList />
@@ -49,4 +47,9 @@ export function Component() {
       </section>
     </Page>
   )
+}
+
+function sentenceFor(role: Role, forSheet: string | null): string {
+  if (forSheet) return 'Send what answers the sheet that came back.'
+  return role === 'demonstrator' ? 'Photograph each sheet before you leave the field.' : 'Send photos, scans or filled forms.'
 }

@@ -1,6 +1,7 @@
 import { formatValue } from '../../../shared/layouts/cell-value.ts'
 import type { KeyMap } from '../../lib/use-keys.ts'
 import type { FootKey } from '../../ui/foot.tsx'
+import { BLANK_RULES } from './model/desk-view.ts'
 import type { Desk } from './use-desk.ts'
 import type { DeskActs } from './use-desk-acts.ts'
 
@@ -47,6 +48,7 @@ export function deskFootKeys(desk: Desk, acts: DeskActs, entering: () => void): 
     return [
       { keys: 'Enter', does: 'let it stand, with the reason', press: acts.asProposed },
       { keys: '1 to 9', does: 'take a cell in hand' },
+      ...(item.doubt && BLANK_RULES.has(item.doubt.rule) ? [{ keys: 'b', does: 'all blank on purpose', press: acts.blank }] : []),
       ...always,
     ]
   }

@@ -8,6 +8,7 @@ import { typedValue } from './model/typed-value.ts'
 import type { Desk } from './use-desk.ts'
 
 const OF_CANDIDATES = 'taken from what the reader allows'
+const KEYED = 'keyed beside the picture'
 
 export type DeskActs = ReturnType<typeof useDeskActs>
 
@@ -32,7 +33,7 @@ export function useDeskActs(desk: Desk) {
     if (!reading) return
     if (value === reading.value) doing(() => desk.settle('kept', value))
     else if (value === null) doing(() => desk.settle('blank on purpose', null))
-    else doing(() => desk.settle('corrected', value, OF_CANDIDATES))
+    else doing(() => desk.settle('corrected', value, desk.sheet.origin === 'keyed' ? KEYED : OF_CANDIDATES))
   }
 
   const asProposed = () => {
@@ -48,6 +49,7 @@ export function useDeskActs(desk: Desk) {
     const { value, problem } = typedValue(cell, mode.text, view.values)
     if (problem !== null) setMode({ ...mode, problem })
     else if (value === reading.value) doing(() => desk.settle('kept', value))
+    else if (desk.sheet.origin === 'keyed' && reading.value === null) doing(() => desk.settle('corrected', value, KEYED))
     else setMode({ kind: 'why', value })
   }
 
@@ -73,7 +75,10 @@ export function useDeskActs(desk: Desk) {
     typed,
     correct: (value: Value, why: string) => doing(() => desk.settle('corrected', value, why)),
     unreadable: () => reading && doing(() => desk.settle('unreadable', null)),
-    blank: () => reading && doing(() => desk.settle('blank on purpose', null)),
+    blank: () => {
+      if (reading) doing(() => desk.settle('blank on purpose', null))
+      else doing(() => void desk.allBlank())
+    },
     keep: () => {
       if (item?.doubt) setMode({ kind: 'let stand' })
       else if (reading) doing(() => desk.settle('kept', reading.value))

@@ -1,9 +1,9 @@
 import { useMemo, useRef, useState } from 'react'
 import type { Layout } from '../../../shared/layouts/layout.ts'
 import type { Settlement, Sheet, Value } from '../../../shared/schemas/sheet.ts'
-import { itemsOf, nextOpen, openOf } from './model/desk-items.ts'
+import { type DeskItem, itemsOf, nextOpen, openOf } from './model/desk-items.ts'
 import { type DeskOp, oppositeOf } from './model/desk-op.ts'
-import { viewOf } from './model/desk-view.ts'
+import { BLANK_RULES, type DeskView, viewOf } from './model/desk-view.ts'
 import { useSaver } from './use-saver.ts'
 
 export type Desk = ReturnType<typeof useDesk>
@@ -27,8 +27,9 @@ export function useDesk(sheet: Sheet, layout: Layout, me: string) {
     saver.push(op)
   }
   const goOn = () => {
-    const next = nextOpen(items, item?.id ?? null)
-    go(next?.id ?? null)
+    const blank = nextBlank(sheet, layout, view, key)
+    if (blank && (sheet.origin === 'keyed' || isOfBlanks(item))) go(null, blank)
+    else go(nextOpen(items, item?.id ?? null)?.id ?? null)
   }
 
   return {
@@ -49,6 +50,13 @@ export function useDesk(sheet: Sheet, layout: Layout, me: string) {
       if (key === null) return
       act({ kind: 'settle', key, how, value, why })
       goOn()
+    },
+    /** What a rule found blank was left so on purpose: every cell it names. */
+    allBlank: (): boolean => {
+      if (key !== null || !item?.doubt || !isOfBlanks(item)) return false
+      for (const cell of item.doubt.cells) act({ kind: 'settle', key: cell, how: 'blank on purpose', value: null, why: '' })
+      go(nextOpen(items, item.id)?.id ?? null)
+      return true
     },
     letStand: (why: string) => {
       if (!item?.doubt) return
@@ -72,4 +80,19 @@ export function useDesk(sheet: Sheet, layout: Layout, me: string) {
       return true
     },
   }
+}
+
+const isOfBlanks = (item: DeskItem | null) =>
+  item?.doubt !== null && item?.doubt !== undefined && BLANK_RULES.has(item.doubt.rule)
+
+/** The next cell of the page that should hold something and does not: keying goes from one to the next. */
+function nextBlank(sheet: Sheet, layout: Layout, view: DeskView, key: string | null): string | null {
+  const at = layout.cells.findIndex((cell) => cell.key === key)
+  if (at === -1) return null
+  const found = layout.cells.slice(at + 1).find((cell) => {
+    const reading = view.readings.get(cell.key)
+    const wanted = cell.need === 'mandatory' || sheet.origin === 'keyed'
+    return wanted && reading !== undefined && reading.value === null && reading.settlement === null
+  })
+  return found?.key ?? null
 }

@@ -19,68 +19,117 @@ export interface OutboxItem {
   problem: string | null
 }
 
-interface Snapshot {
+export interface OutboxState {
   items: readonly OutboxItem[]
   /** What the server said of files sent since the page was opened, newest first. */
   answers: readonly Upload[]
 }
 
-const AGAIN_MS = 8_000
-
-let snapshot: Snapshot = { items: [], answers: [] }
-let userId: string | null = null
-let running = false
-let timer: ReturnType<typeof setTimeout> | null = null
-const watchers = new Set<() => void>()
-
-function show(change: Partial<Snapshot>): void {
-  snapshot = { ...snapshot, ...change }
-  for (const told of watchers) told()
+/** What the outbox needs of the world. */
+export interface OutboxPorts {
+  store: Pick<typeof outboxDb, 'put' | 'get' | 'remove' | 'list'>
+  send: typeof sendFile
+  /** Calls back after so many milliseconds; answers how to call it off. */
+  later: (call: () => void, wait_ms: number) => () => void
+  /** Runs the work while nobody else does: two open tabs send each file once. */
+  alone: (work: () => Promise<void>) => Promise<void>
 }
 
-const showItem = (id: string, change: Partial<OutboxItem>) =>
-  show({ items: snapshot.items.map((item) => (item.id === id ? { ...item, ...change } : item)) })
+const AGAIN_MS = 8_000
 
-export const outbox = {
-  subscribe: (told: () => void): (() => void) => {
-    watchers.add(told)
-    return () => watchers.delete(told)
-  },
-  current: (): Snapshot => snapshot,
+export function createOutbox({ store, send, later, alone }: OutboxPorts) {
+  let state: OutboxState = { items: [], answers: [] }
+  let userId: string | null = null
+  let running: Promise<void> | null = null
+  let callOff: (() => void) | null = null
+  const watchers = new Set<() => void>()
 
-  /** Begins to send what this person left here, now and whenever the line is back. */
-  start: async (user: string): Promise<() => void> => {
-    userId = user
-    const kept = await outboxDb.list(user)
-    show({ items: kept.map(toItem), answers: [] })
-    window.addEventListener('online', sendAll)
-    void sendAll()
-    return () => {
-      window.removeEventListener('online', sendAll)
-      if (timer) clearTimeout(timer)
-      userId = null
+  const show = (change: Partial<OutboxState>) => {
+    state = { ...state, ...change }
+    for (const told of watchers) told()
+  }
+  const showItem = (id: string, change: Partial<OutboxItem>) =>
+    show({ items: state.items.map((item) => (item.id === id ? { ...item, ...change } : item)) })
+  const leave = (id: string) => state.items.filter((item) => item.id !== id)
+
+  function sendAll(): Promise<void> {
+    if (!userId) return Promise.resolve()
+    callOff?.()
+    callOff = null
+    show({ items: state.items.map((item) => ({ ...item, problem: null })) })
+    running ??= alone(sendEach).finally(() => {
+      running = null
+    })
+    return running
+  }
+
+  async function sendEach(): Promise<void> {
+    for (let next = firstWaiting(); next; next = firstWaiting()) {
+      const file = await store.get(next.id)
+      // Sent by another tab meanwhile.
+      if (!file) show({ items: leave(next.id) })
+      else if (!(await sendOne(file))) return
     }
-  },
+  }
 
-  /** Keeps the files, then sends them. Resolves when they are kept. */
-  add: async (files: readonly File[], forSheet: string | null): Promise<void> => {
-    if (!userId) return
-    void navigator.storage?.persist?.()
-    for (const file of files) {
-      const bytes = await file.arrayBuffer()
-      const { name, type } = file
-      const kept = { id: newId(), userId, name, type, bytes, sha256: await sha256(bytes), forSheet, addedAt: Date.now() }
-      await outboxDb.put(kept)
-      show({ items: [...snapshot.items, toItem(kept)] })
+  const firstWaiting = () => state.items.find((item) => item.state === 'waiting' && item.problem === null)
+
+  /** False when there is no sense in trying the next one now. */
+  async function sendOne(file: WaitingFile): Promise<boolean> {
+    showItem(file.id, { state: 'sending', share: 0 })
+    try {
+      const upload = await send(file, (share) => showItem(file.id, { share }))
+      if (upload.sha256 !== file.sha256) throw new ApiError('damaged', 'It arrived damaged.')
+      await store.remove(file.id)
+      show({ items: leave(file.id), answers: [upload, ...state.answers] })
+      return true
+    } catch (error) {
+      const known = error instanceof ApiError ? error : new ApiError('unknown', 'It could not be sent.')
+      showItem(file.id, { state: 'waiting', share: 0, problem: known.message })
+      callOff ??= later(() => void sendAll(), known.retryAfter_s === null ? AGAIN_MS : known.retryAfter_s * 1000)
+      return ofThisFile(known)
     }
-    void sendAll()
-  },
+  }
 
-  /** Throws away a file that was never sent; a person asked for it. */
-  drop: async (id: string): Promise<void> => {
-    await outboxDb.remove(id)
-    show({ items: snapshot.items.filter((item) => item.id !== id) })
-  },
+  return {
+    subscribe: (told: () => void): (() => void) => {
+      watchers.add(told)
+      return () => watchers.delete(told)
+    },
+    current: (): OutboxState => state,
+    /** Sends what waits, now. Resolves when all was tried. */
+    sendAll,
+
+    /** Begins with what this person left here; the answer stops it. */
+    start: async (user: string): Promise<() => void> => {
+      userId = user
+      show({ items: (await store.list(user)).map(toItem), answers: [] })
+      void sendAll()
+      return () => {
+        callOff?.()
+        userId = null
+      }
+    },
+
+    /** Keeps the files, then sends them. Resolves when they are kept. */
+    add: async (files: readonly File[], forSheet: string | null): Promise<void> => {
+      if (!userId) return
+      for (const file of files) {
+        const bytes = await file.arrayBuffer()
+        const { name, type } = file
+        const kept = { id: newId(), userId, name, type, bytes, sha256: await sha256(bytes), forSheet, addedAt: Date.now() }
+        await store.put(kept)
+        show({ items: [...state.items, toItem(kept)] })
+      }
+      void sendAll()
+    },
+
+    /** Throws away a file that was never sent; a person asked for it. */
+    drop: async (id: string): Promise<void> => {
+      await store.remove(id)
+      show({ items: leave(id) })
+    },
+  }
 }
 
 const toItem = (file: WaitingFile): OutboxItem => ({
@@ -92,61 +141,22 @@ const toItem = (file: WaitingFile): OutboxItem => ({
   problem: null,
 })
 
+/** A refusal of one file says nothing of the others; a silent line or a lost session does. */
+const ofThisFile = (error: ApiError) =>
+  error.status >= 400 && error.status < 500 && error.code !== 'not_signed_in' && error.code !== 'too_many'
+
 /** `crypto.randomUUID` needs https or loopback; this id never leaves the browser. */
 const newId = () => `${Date.now().toString(36)}-${Math.random().toString(36).slice(2)}`
 
-async function sendAll(): Promise<void> {
-  if (running || !userId) return
-  running = true
-  if (timer) clearTimeout(timer)
-  timer = null
-  try {
-    await alone(sendEach)
-  } finally {
-    running = false
-  }
-}
-
-/** Two open tabs send each file once. */
-const alone = async (work: () => Promise<void>): Promise<void> => {
-  if (navigator.locks) await navigator.locks.request('sheafbook-outbox', work)
-  else await work()
-}
-
-async function sendEach(): Promise<void> {
-  for (let next = firstWaiting(); next; next = firstWaiting()) {
-    const file = await outboxDb.get(next.id)
-    if (!file) {
-      show({ items: snapshot.items.filter((item) => item.id !== next?.id) })
-      continue
-    }
-    if (!(await sendOne(file))) return
-  }
-}
-
-const firstWaiting = () => snapshot.items.find((item) => item.state === 'waiting' && item.problem === null)
-
-/** False when there is no sense in trying the next one now. */
-async function sendOne(file: WaitingFile): Promise<boolean> {
-  showItem(file.id, { state: 'sending', share: 0 })
-  try {
-    const upload = await sendFile(file, (share) => showItem(file.id, { share }))
-    if (upload.sha256 !== file.sha256) throw new ApiError('damaged', 'It arrived damaged on the way and is sent again.')
-    await outboxDb.remove(file.id)
-    show({ items: snapshot.items.filter((item) => item.id !== file.id), answers: [upload, ...snapshot.answers] })
-    return true
-  } catch (error) {
-    const known = error instanceof ApiError ? error : new ApiError('unknown', 'It could not be sent.')
-    showItem(file.id, { state: 'waiting', share: 0, problem: known.message })
-    again(known.retryAfter_s === null ? AGAIN_MS : known.retryAfter_s * 1000)
-    return known.status >= 400 && known.status < 500 && known.code !== 'not_signed_in' && known.code !== 'too_many'
-  }
-}
-
-function again(wait_ms: number): void {
-  if (timer) clearTimeout(timer)
-  timer = setTimeout(() => {
-    show({ items: snapshot.items.map((item) => ({ ...item, problem: null })) })
-    void sendAll()
-  }, wait_ms)
-}
+export const outbox = createOutbox({
+  store: outboxDb,
+  send: sendFile,
+  later: (call, wait_ms) => {
+    const timer = setTimeout(call, wait_ms)
+    return () => clearTimeout(timer)
+  },
+  alone: async (work) => {
+    if (navigator.locks) await navigator.locks.request('sheafbook-outbox', work)
+    else await work()
+  },
+})

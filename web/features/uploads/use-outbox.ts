@@ -11,16 +11,21 @@ export function useOutboxAtWork(userId: string): void {
   useEffect(() => {
     let stop: (() => void) | null = null
     let gone = false
+    const again = () => void outbox.sendAll()
+    window.addEventListener('online', again)
+    // The browser may throw stored files away when room is short; asked for once, it does not.
+    void navigator.storage?.persist?.()
     outbox
       .start(userId)
       .then((stopIt) => {
         if (gone) stopIt()
         else stop = stopIt
       })
-      // No IndexedDB (a private window): files are then sent at once or not at all, which the send page says.
+      // No IndexedDB (some private windows): the send page then says that nothing can be kept.
       .catch(() => undefined)
     return () => {
       gone = true
+      window.removeEventListener('online', again)
       stop?.()
     }
   }, [userId])

@@ -134,6 +134,7 @@ function NamedCells({ desk, onTake }: { desk: Desk; onTake: (n: number) => void 
           </button>
         </li>
       ))}
+      {desk.item && desk.item.more > 0 && <li className="label py-0.5">and {desk.item.more} more</li>}
     </ul>
   )
 }

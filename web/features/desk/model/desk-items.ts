@@ -14,6 +14,8 @@ export interface DeskItem {
   open: boolean
   /** Named by letters a, b, c on the sheet. */
   cells: readonly string[]
+  /** How many more cells it names than there are letters. */
+  more: number
   /** Ink that can be read two ways; null for a doubt of a rule. */
   reading: Reading | null
   doubt: DeskDoubt | null
@@ -43,6 +45,7 @@ function ofReading(reading: Reading, label: string, view: DeskView): Unnumbered 
     text: reason?.text ?? named?.text ?? twoWays(reading),
     open: reading.settlement === null,
     cells: cells.filter((key) => key !== reading.key).slice(0, LETTERS.length),
+    more: 0,
     reading,
     doubt: null,
   }
@@ -56,6 +59,7 @@ function ofDoubt(doubt: DeskDoubt, labels: ReadonlyMap<string, string>): Unnumbe
     text: doubt.text,
     open: doubt.settledBy === null,
     cells: doubt.cells.slice(0, LETTERS.length),
+    more: Math.max(0, doubt.cells.length - LETTERS.length),
     reading: null,
     doubt,
   }

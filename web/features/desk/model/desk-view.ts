@@ -28,7 +28,7 @@ export interface DeskView {
 /** Rules the browser cannot ask: they look into a register. They stand until the server says otherwise. */
 const OF_THE_SERVER = new Set(['register'])
 /** "Left blank" is no question once a person said so. */
-const BLANK_RULES = new Set(['Q56', 'Q57'])
+export const BLANK_RULES = new Set(['Q56', 'Q57'])
 
 export const valuesOf = (readings: Iterable<Reading>): Values => Object.fromEntries([...readings].map((r) => [r.key, r.value]))
 

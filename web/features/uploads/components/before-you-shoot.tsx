@@ -13,7 +13,10 @@ const ADVICE: ReadonlyArray<{ words: string; drawn: ReactNode }> = [
 
 export function BeforeYouShoot() {
   return (
-    <ul aria-label="Before you press" className="grid grid-cols-4 border-y-[1.5px] border-ink max-sm:border-y-[3px]">
+    <ul
+      aria-label="Before you press"
+      className="grid grid-cols-4 pointer-fine:hidden border-y-[1.5px] border-ink max-sm:border-y-[3px]"
+    >
       {ADVICE.map(({ words, drawn }) => (
         <li
           key={words}

@@ -28,8 +28,8 @@ export function PickFiles({ onFiles }: PickFilesProps) {
       onDrop={drop}
       className={`grid gap-2 px-margin py-3 sm:grid-cols-[auto_auto_1fr] sm:items-center sm:border-b sm:border-line sm:py-4 ${over ? 'bg-straw-pale' : ''}`}
     >
-      <PickButton ink words="Photograph a sheet" capture onFiles={onFiles} />
-      <PickButton words="Choose files" onFiles={onFiles} />
+      <PickButton words="Photograph a sheet" kind="camera" className="pointer-fine:hidden" onFiles={onFiles} />
+      <PickButton words="Choose files" kind="files" onFiles={onFiles} />
       <p className="text-graphite sm:pl-2">
         <span className="max-sm:hidden">Or drop them here. </span>
         Photos, scans as PDF, and our forms as XLSX or CSV; up to {FILE_LIMITS.files_at_once} at once.
@@ -38,22 +38,28 @@ export function PickFiles({ onFiles }: PickFilesProps) {
   )
 }
 
-function PickButton({
-  words,
-  ink = false,
-  capture = false,
-  onFiles,
-}: PickFilesProps & { words: string; ink?: boolean; capture?: boolean }) {
+const LOOK = {
+  camera: 'bg-ink text-white',
+  files: 'border-2 border-ink pointer-fine:bg-ink pointer-fine:text-white',
+} as const
+
+interface PickButtonProps extends PickFilesProps {
+  words: string
+  kind: keyof typeof LOOK
+  className?: string
+}
+
+function PickButton({ words, kind, className = '', onFiles }: PickButtonProps) {
   const id = useId()
-  const look = ink ? 'bg-ink text-white' : 'border-2 border-ink sm:border-[1.5px]'
+  const camera = kind === 'camera'
   return (
-    <span className="grid">
+    <span className={`grid ${className}`}>
       <input
         id={id}
         type="file"
-        multiple={!capture}
-        accept={capture ? 'image/*' : TAKES}
-        {...(capture ? { capture: 'environment' as const } : {})}
+        multiple={!camera}
+        accept={camera ? 'image/*' : TAKES}
+        {...(camera ? { capture: 'environment' as const } : {})}
         className="peer away"
         onChange={(event) => {
           const files = [...(event.target.files ?? [])].slice(0, FILE_LIMITS.files_at_once)
@@ -64,7 +70,7 @@ function PickButton({
       />
       <label
         htmlFor={id}
-        className={`${look} flex min-h-[66px] items-center justify-center px-4 text-3 font-[650] peer-focus-visible:outline-3 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-ink peer-focus-visible:outline-solid sm:min-h-[54px] sm:text-2`}
+        className={`${LOOK[kind]} flex min-h-[66px] items-center justify-center px-4 text-3 font-[650] peer-focus-visible:outline-3 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-ink peer-focus-visible:outline-solid sm:min-h-[54px] sm:text-2`}
       >
         {words}
       </label>
