@@ -5,9 +5,13 @@ import { findLayout } from '../../../shared/layouts/registry.ts'
 import type { SheetState } from '../../../shared/schemas/sheet.ts'
 import type { Db } from '../database.ts'
 import type { ReadingEntity } from '../entities/reading.ts'
+import type { SheetEntity } from '../entities/sheet.ts'
+import { PageEntity } from '../entities/upload.ts'
 import { isOpenDoubt, listDoubts, putFindings } from '../repositories/doubt.ts'
 import { isOpen, listReadings, valuesOf } from '../repositories/reading.ts'
 import { findSheet, noteOnSheet } from '../repositories/sheet.ts'
+import { planFindings } from './plan-findings.ts'
+import { planOfRun } from './plan-of-run.ts'
 import { factsOf, namedOnSheet, registerFindings } from './sheet-facts.ts'
 
 const FOLLOWS_DOUBTS: readonly SheetState[] = ['arrived', 'being read', 'waiting', 'settled']
@@ -20,7 +24,11 @@ export async function recheckSheet(db: Db, sheetId: string): Promise<void> {
   const values = valuesOf(readings)
   const named = await namedOnSheet(db, values)
   const facts = await factsOf(db, sheet, values, named)
-  const findings = [...registerFindings(values, named), ...judgeSheet(layout, values, facts).findings]
+  const findings = [
+    ...registerFindings(values, named),
+    ...(await againstPlan(db, sheet)),
+    ...judgeSheet(layout, values, facts).findings,
+  ]
   await putFindings(
     db,
     sheetId,
@@ -36,6 +44,14 @@ export async function recheckSheet(db: Db, sheetId: string): Promise<void> {
     firstDoubt: doubts[0]?.text ?? firstReason(inDoubt, layout.cells),
     ...(FOLLOWS_DOUBTS.includes(sheet.state) ? { state: openDoubts > 0 ? 'waiting' : 'settled' } : {}),
   })
+}
+
+/** A sheet whose typed block was recognised is held against its plan as it stands now. */
+async function againstPlan(db: Db, sheet: SheetEntity): Promise<Finding[]> {
+  const plan = sheet.planned && sheet.runId ? await planOfRun(db, sheet.runId) : null
+  const page = plan && (await db.findOne(PageEntity, { where: { sheetId: sheet.id, state: 'read' }, order: { readAt: 'DESC' } }))
+  const lines = page?.reading?.planText
+  return plan && Array.isArray(lines) ? planFindings(lines as string[], plan) : []
 }
 
 /** "Blank" is no longer a question where a person said: blank on purpose, or unreadable. */

@@ -1,5 +1,6 @@
 /** What the registers know of a sheet: looked up by the numbers on it, and handed to rules and formulas. */
 import type { Finding } from '../../../shared/checks/rule.ts'
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { Values } from '../../../shared/schemas/sheet.ts'
 import type { Facts, OtherSheet } from '../../../shared/trial/facts.ts'
 import type { Db } from '../database.ts'
@@ -100,7 +101,7 @@ async function otherSheets(db: Db, sheet: SheetEntity, tractor: TractorEntity | 
     [sheet.id, sheet.code, tractor?.number ?? -1, typeof trialDate === 'string' ? trialDate : ''],
   )
   return rows.map(({ code, values }) => ({
-    sheetCode: code ?? 'without a code',
+    sheetCode: code ? formatSheetCode(code) : 'without a code',
     sameCode: code !== null && code === sheet.code,
     tractorSerial: tractor && values.tractor_id === tractor.number ? tractor.serial : null,
     demonstratorId: typeof values.demonstrator_id === 'number' ? values.demonstrator_id : null,

@@ -35,6 +35,7 @@ export async function takeInPage(db: Db, input: { pageId: string; attemptToken: 
       readAt: () => 'now()',
       takeAgain: outcome.kind === 'take again' ? { code: outcome.code, advice: outcome.advice } : null,
       problem: outcome.kind === 'unreadable' ? outcome.reason : null,
+      ...(outcome.kind === 'read' && outcome.planText ? { reading: { planText: outcome.planText } as never } : {}),
       ...('pictureKey' in outcome && outcome.pictureKey ? { pictureKey: outcome.pictureKey } : {}),
     })
     .where({ id: pageId, attemptToken })
