@@ -32,6 +32,8 @@ export interface PageScore {
   /** Cells left blank: how many, and how many came out clear with a value. */
   blanks: SheetShare
   mistakes: Mistake[]
+  /** Spoiled cells and wrong sums that came out clear. */
+  missed: string[]
   /** Digits written in the number readings that came out clear. */
   clearDigits: number
   /** Distance of each read cell's middle from where it lies, mm. */
@@ -44,6 +46,10 @@ const emptyTally = (): Tally => ({ readings: 0, doubts: 0, clear: 0, silent: 0 }
 
 export const sameValue = (a: Written, b: Written): boolean =>
   typeof a === 'number' && typeof b === 'number' ? Math.abs(a - b) < 1e-9 : a === b
+
+/** The digits of a value as they are written, without points, colons and hyphens. */
+export const digitsIn = (value: Written): string =>
+  typeof value === 'boolean' || value === null ? '' : String(value).replace(/\D/g, '')
 
 /** Counts one page. `cpuMs`: from bytes to readings. */
 export function scorePage(
@@ -64,6 +70,7 @@ export function scorePage(
     caught: [0, 0],
     blanks: [0, 0],
     mistakes: [],
+    missed: [],
     clearDigits: 0,
     placement_mm: [],
     cpuMs,
@@ -79,6 +86,7 @@ export function scorePage(
     const tally = isComb(cell) ? (tied.has(cell.key) ? score.tied : score.untied) : score.ticks
     const right = sameValue(reading.value, written)
     if (onPurpose) {
+      if (reading.state === 'clear') score.missed.push(cell.key)
       score.caught = [score.caught[0] + (reading.state === 'clear' ? 0 : 1), score.caught[1] + 1]
     } else if (written === null || written === false) {
       score.blanks = [score.blanks[0] + (reading.state === 'clear' && !right ? 1 : 0), score.blanks[1] + 1]
@@ -93,7 +101,7 @@ export function scorePage(
       if (holdsInk) tally.silent += 1
       score.mistakes.push({ file, key: cell.key, written, read: reading.value })
     }
-    if (isComb(cell) && holdsInk && reading.state === 'clear') score.clearDigits += cell.format.replace(/[^9]/g, '').length
+    if (isComb(cell) && holdsInk && reading.state === 'clear') score.clearDigits += digitsIn(written).length
     const off = map && placementOff(reading, map.cells[cell.key], boxesOf(cell))
     if (off !== null) score.placement_mm.push(off)
   }

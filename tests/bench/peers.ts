@@ -6,7 +6,7 @@ import { createRequire } from 'node:module'
 import { dirname, join } from 'node:path'
 import sharp from 'sharp'
 import { createWorker, OEM, PSM } from 'tesseract.js'
-import { boxesOf } from '../../shared/layouts/geometry.ts'
+import { type Box, boxesOf, cellBounds } from '../../shared/layouts/geometry.ts'
 import { isComb, type Layout } from '../../shared/layouts/layout.ts'
 import { boxDigits } from '../simulator/boxes.ts'
 import { chanceOf } from '../simulator/random.ts'
@@ -37,18 +37,36 @@ export async function decodeMs(bytes: Uint8Array): Promise<number> {
   return (user + system) / 1000
 }
 
-/** Every hand-written digit of a photo, where it lies. Spoiled cells are left out. */
-export function digitsOf(file: string, truth: Truth, layout: Layout, cells: Readonly<Record<string, Corners>>): DigitPlace[] {
+/** Corners of one box inside its comb's outline. */
+function boxCorners(outline: Corners, bounds: Box, box: Box): Corners {
+  const [a, b, c, d] = outline as [Corners[0], Corners[0], Corners[0], Corners[0]]
+  const at = (x: number, y: number): readonly [number, number] => {
+    const [u, v] = [(x - bounds.x) / bounds.width, (y - bounds.y) / bounds.height]
+    const mix = (k: 0 | 1) => (1 - v) * ((1 - u) * a![k] + u * b![k]) + v * ((1 - u) * d![k] + u * c![k])
+    return [mix(0), mix(1)]
+  }
+  const [right, low] = [box.x + box.width, box.y + box.height]
+  return [at(box.x, box.y), at(right, box.y), at(right, low), at(box.x, low)]
+}
+
+/** Every hand-written digit of a photo, where it lies: by the simulator's map, or where the reader found its comb. */
+export function digitsOf(
+  file: string,
+  truth: Truth,
+  layout: Layout,
+  outlineOf: (key: string) => Corners | null | undefined,
+): DigitPlace[] {
   return layout.cells.filter(isComb).flatMap((cell) => {
     const written = truth.readings[cell.key]
-    if (written === undefined || written === null || truth.spoiled.includes(cell.key)) return []
+    const outline = outlineOf(cell.key)
+    if (!outline || written === undefined || written === null || truth.spoiled.includes(cell.key)) return []
     const unit = cell.scale && truth.readings[cell.scale.by]
     const scale = (typeof unit === 'string' && cell.scale?.factors[unit]) || 1
     const digits = boxDigits(cell, written, scale, false)
-    return boxesOf(cell).flatMap((_, i) => {
-      const corners = cells[`${cell.key}#${i + 1}`]
+    const bounds = cellBounds(cell)
+    return boxesOf(cell).flatMap((box, i) => {
       const digit = digits[i]
-      return corners && digit !== null && digit !== undefined ? [{ file, corners, digit }] : []
+      return typeof digit === 'number' ? [{ file, corners: boxCorners(outline, bounds, box), digit }] : []
     })
   })
 }
@@ -89,9 +107,10 @@ export async function tesseractDigits(places: readonly DigitPlace[], count: numb
       picture = { data: grey, width: info.width, height: info.height }
     }
     const png = await cutBox(picture, place.corners)
-    const start = performance.now()
+    const start = process.cpuUsage()
     const answer = await engine.recognize(png)
-    ms += performance.now() - start
+    const { user, system } = process.cpuUsage(start)
+    ms += (user + system) / 1000
     if (answer.data.text.trim() !== String(place.digit)) wrong += 1
   }
   await engine.terminate()

@@ -34,6 +34,9 @@ export function levelLines(level: string, f: LevelFigures): string[] {
 export const mistakeLines = (pages: readonly PageScore[]): string[] =>
   pages.flatMap((p) => p.mistakes).map((m) => `  ${m.file} ${m.key}: written ${String(m.written)}, read ${String(m.read)}`)
 
+export const missedLines = (pages: readonly PageScore[]): string[] =>
+  pages.flatMap((p) => p.missed.map((key) => `  ${p.file} ${key}: made wrong on purpose, read clear`))
+
 export const peerLines = (peers: Peers): string[] => [
   `bare JPEG decode p50 ${peers.jpegDecodeMsP50.toFixed(0)} ms CPU; whole page ${peers.readOverDecode.toFixed(2)} times that`,
   ...(peers.tesseractCells > 0

@@ -6,14 +6,16 @@
 import { readdir, readFile } from 'node:fs/promises'
 import { join, relative } from 'node:path'
 import { parseArgs } from 'node:util'
+import { UserError } from '../../shared/errors.ts'
 import { findLayout } from '../../shared/layouts/registry.ts'
 import type { PhotoMap } from '../simulator/make-photo.ts'
 import type { Truth } from '../simulator/scenario.ts'
-import { type PageScore, scorePage } from './compare.ts'
+import { digitsIn, type PageScore, scorePage } from './compare.ts'
 import { levelFigures } from './figures.ts'
 import { type DigitPlace, decodeMs, digitsOf, type Peers, tesseractDigits } from './peers.ts'
-import { levelLines, mistakeLines, peerLines } from './print.ts'
+import { levelLines, missedLines, mistakeLines, peerLines } from './print.ts'
 import { openReader } from './reader.ts'
+import type { OnePage } from './reading-json.ts'
 import { standardSet } from './standard-set.ts'
 import { quantile } from './statistics.ts'
 import { tiedKeys } from './tied.ts'
@@ -50,17 +52,17 @@ for (const stem of stems) {
   const layout = truth && findLayout(truth.layout, truth.version)
   if (!layout) continue
   const bytes = await readFile(`${stem}.jpg`)
-  if (!warm) await reader.read(bytes, stem)
+  if (!warm) await reader.read(bytes, stem).catch(refused)
   warm = true
   const start = process.cpuUsage()
-  const pages = await reader.read(bytes, `${stem}.jpg`)
+  const pages = await reader.read(bytes, `${stem}.jpg`).catch(refused)
   const { user, system } = process.cpuUsage(start)
   decode.push(await decodeMs(bytes))
   const map = await json<PhotoMap>(`${stem}.map.json`)
   const name = relative(folder, stem)
   const score = scorePage(name, pages[0], truth, layout, tiedKeys(layout), map, (user + system) / 1000)
   scores.set(truth.level, [...(scores.get(truth.level) ?? []), score])
-  if (map) places.push(...digitsOf(stem, truth, layout, map.cells))
+  if (!score.takeAgain) places.push(...digitsOf(stem, truth, layout, (key) => map?.cells[key] ?? pages[0]?.readings[key]?.quad))
   if (!values.json) say(`${name}: ${score.takeAgain ?? `${score.mistakes.length} silent`}, ${Math.round(score.cpuMs)} ms`)
 }
 await reader.close()
@@ -88,20 +90,27 @@ if (values.json) {
   process.stdout.write(`${JSON.stringify({ simulated: true, levels: figures, peers }, null, 1)}\n`)
 } else {
   for (const [level, pages] of levels) {
-    process.stdout.write(`${[...levelLines(level, levelFigures(pages)), ...mistakeLines(pages)].join('\n')}\n\n`)
+    process.stdout.write(
+      `${[...levelLines(level, levelFigures(pages)), ...mistakeLines(pages), ...missedLines(pages)].join('\n')}\n\n`,
+    )
   }
   process.stdout.write(`${peerLines(peers).join('\n')}\n`)
 }
 process.exit(0)
 
+/** A file the reader refuses with a reason gives no page; anything else is a fault and ends the run. */
+function refused(error: unknown): readonly OnePage[] {
+  if (error instanceof UserError) return []
+  throw error
+}
+
 /** Digits of clear readings that came out wrong, over all digits of clear readings. */
 function wrongDigits(pages: readonly PageScore[]): number | null {
-  const digitsIn = (value: unknown) => String(value).replace(/\D/g, '')
   const clear = pages.reduce((sum, p) => sum + p.clearDigits, 0)
   if (clear === 0) return null
   let wrong = 0
   for (const mistake of pages.flatMap((p) => p.mistakes)) {
-    if (typeof mistake.written === 'boolean') continue
+    if (!digitsIn(mistake.written)) continue
     const [a, b] = [digitsIn(mistake.written).padStart(12), digitsIn(mistake.read).padStart(12)]
     for (let i = 0; i < 12; i += 1) if (a[i] !== b[i]) wrong += 1
   }

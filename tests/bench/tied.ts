@@ -3,10 +3,10 @@ import type { Layout } from '../../shared/layouts/layout.ts'
 import type { Tie } from '../../shared/layouts/tie.ts'
 
 /**
- * Marks of an instrument, likeness of repeats and mere bounds choose between readings, but are no second way to one. Registers
- * are not handed to the bench, so their numbers count as untied.
+ * Marks of an instrument, likeness of repeats and mere bounds choose between readings, but are no second way to one; clock times
+ * that belong together are. Registers are not handed to the bench, so their numbers count as untied.
  */
-function keysOf(tie: Tie): readonly string[] {
+function keysOf(tie: Tie, isTime: (key: string) => boolean): readonly string[] {
   switch (tie.kind) {
     case 'balance':
       return [...tie.plus, ...tie.minus, tie.equals]
@@ -20,9 +20,14 @@ function keysOf(tie: Tie): readonly string[] {
       return tie.keys
     case 'elapsed':
       return [tie.less, tie.greater, tie.start, tie.end]
+    case 'near':
+      return tie.keys.filter(isTime)
     default:
       return []
   }
 }
 
-export const tiedKeys = (layout: Layout): ReadonlySet<string> => new Set(layout.ties.flatMap(keysOf))
+export function tiedKeys(layout: Layout): ReadonlySet<string> {
+  const times = new Set(layout.cells.filter((cell) => cell.kind === 'time').map((cell) => cell.key))
+  return new Set(layout.ties.flatMap((tie) => keysOf(tie, (key) => times.has(key))))
+}

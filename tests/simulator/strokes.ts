@@ -53,6 +53,15 @@ export function strikeThrough(ink: InkLayer, box: Box, pen: Pen, chance: Chance)
   }
 }
 
+/** Two long lines over a small box and well past its sides. */
+export function strikeWide(ink: InkLayer, box: Box, pen: Pen, chance: Chance): void {
+  for (const level of [0.36, 0.66]) {
+    const y = box.y + box.height * level
+    const [left, right] = [box.x - chance.between(1, 1.8), box.x + box.width + chance.between(1, 1.8)]
+    draw(ink, [jitter(chance, left, y, 0.2), jitter(chance, right, y, 0.2)], pen, chance)
+  }
+}
+
 /** A zigzag that makes what was written unreadable. */
 export function scribble(ink: InkLayer, box: Box, pen: Pen, chance: Chance): void {
   const turns = chance.whole(4, 9)

@@ -6,7 +6,7 @@ import type { Digits } from './digits.ts'
 import type { InkLayer } from './ink.ts'
 import type { Chance } from './random.ts'
 import type { Scenario } from './scenario.ts'
-import { crossSeven, drawTickMark, scribble, sign, strikeThrough, writeWords } from './strokes.ts'
+import { crossSeven, drawTickMark, scribble, sign, strikeThrough, strikeWide, writeWords } from './strokes.ts'
 import { writeDigit } from './write-digit.ts'
 import type { Writer } from './writer.ts'
 
@@ -122,8 +122,10 @@ function spoilComb(
 function writeTick({ ink, writer, chance }: Desk, cell: TickCell, ticked: boolean, spoiled: boolean): void {
   const box = boxesOf(cell)[0]!
   if (ticked || spoiled) drawTickMark(ink, box, writer, chance)
-  if (spoiled && !ticked) scribble(ink, box, writer.pen, chance)
-  else if (spoiled) strikeThrough(ink, box, writer.pen, chance)
+  if (!spoiled) return
+  // One short line through a cross is only another cross: a hand that takes a tick back blackens it or crosses it out wide.
+  if (chance.odds(0.5)) scribble(ink, box, writer.pen, chance)
+  else strikeWide(ink, box, writer.pen, chance)
 }
 
 function writeChoice({ ink, writer, chance }: Desk, cell: ChoiceCell, value: unknown, spoiled: boolean): void {
