@@ -46,6 +46,15 @@ describe('the registers', () => {
     expect(rows.find((tractor) => tractor.id === id)).toMatchObject({ ratedRpm: 2300, tyreRear: row.tyreRear })
   })
 
+  it('take one of twenty writes made on the same version, and refuse the others', async () => {
+    const admin = await server.signIn('admin')
+    const { body } = await admin.post('/registers/places', buildPlace())
+    const { id, ...row } = body as { id: string; number: number }
+    const writes = Array.from({ length: 20 }, (_, i) => admin.put(`/registers/places/${id}`, { ...row, name: `Name ${i}` }))
+    const statuses = (await Promise.all(writes)).map(({ status }) => status).sort()
+    expect(statuses).toEqual([200, ...Array(19).fill(412)])
+  })
+
   it('refuse a write that names no version', async () => {
     const admin = await server.signIn('admin')
     const { body } = await admin.post('/registers/kits', buildKit())
