@@ -2,7 +2,7 @@ import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
 import { makeSheetCode } from '../../shared/layouts/sheet-code.ts'
 
 /** What a sheet read from ink comes to: enough for the intake, with a code of its own. */
-export const readOutcome = (jar_start_ml = 4800): PageOutcome => ({
+export const readOutcome = (jar_start_ml = 4800): Extract<PageOutcome, { kind: 'read' }> => ({
   kind: 'read',
   layout: 'tillage',
   layoutVersion: 1,

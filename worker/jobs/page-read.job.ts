@@ -2,7 +2,8 @@
 import type { DataSource, Db } from '../../server/db/database.ts'
 import type { PageOutcome } from '../../server/db/intake/page-outcome.ts'
 import { takeInPage } from '../../server/db/intake/take-in-page.ts'
-import { holdsPage, type TakenPage, takePage } from '../../server/db/repositories/page.ts'
+import { findFinishedPictures, holdsPage, type TakenPage, takePage } from '../../server/db/repositories/page.ts'
+import { blankLateArrival } from '../../server/print/blank-pictures.ts'
 import type { FileStore } from '../../server/storage/store.ts'
 import { uprightKey } from '../../server/storage/upright-key.ts'
 import { defineJob, type JobContext, type JobEnd, type JobHandler } from './job-handler.ts'
@@ -24,12 +25,25 @@ const GIVEN_UP =
 export function pageReadJob(deps: PageReadDeps): JobHandler {
   return defineJob({
     name: 'page-read',
-    handle: ({ pageId }, context) => readPage(deps, pageId, context),
+    handle: async ({ pageId }, context) => {
+      const end = await readPage(deps, pageId, context)
+      if (end === 'done') await coverWithdrawn(deps, pageId)
+      return end
+    },
     giveUp: async ({ pageId }) => {
       const page = await takePage(deps.source.manager, pageId)
       if (page) await keep(deps, page, { outcome: { kind: 'unreadable', reason: GIVEN_UP }, picture: null })
     },
   })
+}
+
+/**
+ * A sheet photographed after its farmer asked to be erased is covered as soon as the last page of its file is read; an attempt
+ * that died in between is repeated, finds the page read, and comes past here again.
+ */
+async function coverWithdrawn(deps: PageReadDeps, pageId: string): Promise<void> {
+  const uploadId = await findFinishedPictures(deps.source.manager, pageId)
+  if (uploadId) await blankLateArrival(deps, uploadId)
 }
 
 async function readPage(deps: PageReadDeps, pageId: string, { signal }: JobContext): Promise<JobEnd> {

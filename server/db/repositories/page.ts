@@ -79,6 +79,16 @@ export async function holdsPage(db: Db, page: Pick<TakenPage, 'id' | 'attemptTok
   return rows.length === 1
 }
 
+/** The upload of a page once all its pages are at their end, when it holds pictures; null otherwise. */
+export async function findFinishedPictures(db: Db, pageId: string): Promise<string | null> {
+  const rows: Array<{ id: string }> = await db.query(
+    `SELECT u.id FROM uploads u JOIN pages p ON p.upload_id = u.id
+     WHERE p.id = $1 AND u.state = 'done' AND u.kind NOT IN ('xlsx', 'csv')`,
+    [pageId],
+  )
+  return rows[0]?.id ?? null
+}
+
 /**
  * Locks an upload whose pages are to be made.
  * @returns false when it is gone, refused or has its pages already
