@@ -14,6 +14,7 @@ export interface Failure {
 }
 
 const AWAY = 'The database is away for a moment. Nothing was changed. Try again shortly.'
+const PASSING = 'This cannot be done at the moment. Nothing was changed. Try again shortly.'
 const FULL = 'The disk is full. Nothing was changed. The people who run this machine must make room.'
 const NO_TEXT = 'The input holds a character (NUL) that no text can hold. Nothing was saved.'
 const BUG =
@@ -27,7 +28,7 @@ export function classify(error: unknown): Failure {
   }
   if (known instanceof TransientError) {
     const code = known.full ? 'full' : 'unavailable'
-    const message = known.full ? FULL : AWAY
+    const message = known.full ? FULL : isDatabaseAway(error) ? AWAY : PASSING
     return { status: known.status, code, message, issues: [], retryAfter_s: known.retryAfter_s, level: 'warn' }
   }
   return { status: 500, code: 'bug', message: BUG, issues: [], retryAfter_s: undefined, level: 'error' }
