@@ -16,7 +16,7 @@ import { planOf } from './plan.ts'
 import type { Chance } from './random.ts'
 import { FLAT, scan } from './scan.ts'
 import type { Scenario, Truth } from './scenario.ts'
-import { tillageScenario } from './scenario-tillage.ts'
+import { scenarioFor } from './scenario-any.ts'
 import { chooseSpoiled, makeWrongSum } from './spoil.ts'
 import { soil } from './stains.ts'
 import type { Surface } from './surface.ts'
@@ -98,9 +98,9 @@ function paperWhite(chance: Chance): readonly [number, number, number] {
 }
 
 function drawScenario(layout: Layout, conditions: Conditions, chance: Chance): Scenario {
-  const scenario = tillageScenario(chance.fork('scenario'))
+  const scenario = scenarioFor(layout, chance.fork('scenario'))
   const slips = chance.fork('slips')
-  if (slips.odds(conditions.wrongSum)) makeWrongSum(scenario, slips)
+  if (slips.odds(conditions.wrongSum)) makeWrongSum(scenario, layout, slips)
   const count = Math.floor(conditions.spoiled + slips.unit())
   chooseSpoiled(scenario, layout, count, slips)
   return scenario

@@ -3,26 +3,27 @@ import { isComb, type Layout } from '../../shared/layouts/layout.ts'
 import type { Chance } from './random.ts'
 import { type Scenario, toPlaces } from './scenario.ts'
 
-/** Results worked out by hand, and by how much a slip of the head moves them. */
-const BY_HAND: ReadonlyArray<{ key: string; places: number; slips: readonly number[] }> = [
-  { key: 'fuel_used_written_ml', places: 0, slips: [-1000, 1000, -200, 200, -100, 100, 400] },
-  { key: 'depth_mean_written_cm', places: 1, slips: [-1, 1, -0.4, 0.5, 0.2] },
-  { key: 'width_mean_written_m', places: 3, slips: [-0.1, 0.1, 0.01, -0.02, 0.008] },
-  { key: 'l_per_ha_written', places: 2, slips: [-1, 1, 2.5, -0.6, 0.5] },
-  { key: 'area_written', places: 3, slips: [0.1, -0.05, 0.04, 0.02] },
-]
+const SLIPS: ReadonlyArray<number> = [-100, 100, -20, 20, -10, 10, 40, -5, 7]
 
-/** Makes one written result wrong: a slip in adding, or two digits changed round. */
-export function makeWrongSum(scenario: Scenario, chance: Chance): void {
-  const able = BY_HAND.filter(({ key }) => typeof scenario.readings[key] === 'number')
+/**
+ * Makes one result that the layout ties to others wrong, as a slip in adding does: by a digit of the first three that are
+ * written, and by more than the rules let pass as rounding (a hundredth, and the last written place).
+ */
+export function makeWrongSum(scenario: Scenario, layout: Layout, chance: Chance): void {
+  const results = layout.ties.flatMap((tie) => ('equals' in tie ? [tie.equals] : []))
+  const able = layout.cells.filter(isComb).filter((c) => results.includes(c.key) && typeof scenario.readings[c.key] === 'number')
   if (able.length === 0) return
-  const { key, places, slips } = chance.pick(able)
-  const right = scenario.readings[key] as number
-  const relative = key === 'area_written' ? 0.035 * right : 0
-  const wrong = toPlaces(right + chance.pick(slips) + Math.sign(chance.unit() - 0.5) * relative, places)
-  if (wrong <= 0 || wrong === right) return
-  scenario.readings[key] = wrong
-  scenario.wrongSum.push(key)
+  const cell = chance.pick(able)
+  const right = scenario.readings[cell.key] as number
+  const places = cell.format.includes('.') ? cell.format.length - cell.format.indexOf('.') - 1 : 0
+  const step = 10 ** (Math.floor(Math.log10(Math.max(right, 1e-3))) - 2)
+  const slip = chance.pick(SLIPS) * step
+  const wrong = toPlaces(right + slip, places)
+  const high = Number(cell.format)
+  const noticed = Math.abs(wrong - right) > Math.max(0.02 * right, 2 * 10 ** -places)
+  if (wrong <= 0 || wrong > high || !noticed) return
+  scenario.readings[cell.key] = wrong
+  scenario.wrongSum.push(cell.key)
 }
 
 /** Chooses written cells to spoil; how each is spoiled is decided when it is written. */

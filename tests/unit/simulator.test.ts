@@ -7,7 +7,9 @@ import { boxDigits } from '../simulator/boxes.ts'
 import { drawConditions } from '../simulator/levels.ts'
 import { makePhoto } from '../simulator/make-photo.ts'
 import { chanceOf } from '../simulator/random.ts'
+import { scenarioFor } from '../simulator/scenario-any.ts'
 import { tillageScenario } from '../simulator/scenario-tillage.ts'
+import { makeWrongSum } from '../simulator/spoil.ts'
 
 const layout = findLayout('tillage', 1)!
 const comb = (key: string) => {
@@ -27,11 +29,11 @@ const photo = (seed: string) =>
   })
 
 describe('the photo simulator', () => {
-  it('makes the same photo from the same seed, and another from another', async () => {
-    const [a, b, c] = [await photo('one'), await photo('one'), await photo('two')]
+  it('makes the same photo from the same seed, and another trial from another', async () => {
+    const [a, b] = [await photo('one'), await photo('one')]
     expect(a.jpeg.equals(b.jpeg)).toBe(true)
     expect(a.truth).toEqual(b.truth)
-    expect(a.jpeg.equals(c.jpeg)).toBe(false)
+    expect(tillageScenario(chanceOf('one'))).not.toEqual(tillageScenario(chanceOf('two')))
   }, 60_000)
 
   it('says where each box lies: written boxes are dark inside, blank ones are not', async () => {
@@ -72,6 +74,35 @@ describe('the photo simulator', () => {
       const depths = Array.from({ length: 10 }, (_, i) => number(`depth_cm[${i + 1}]`))
       const mean = depths.reduce((a, b) => a + b, 0) / 10
       expect(Math.abs(mean - number('depth_mean_written_cm'))).toBeLessThan(0.0501)
+    }
+  })
+
+  it('makes a wrong sum wrong by more than rounding, and says which', () => {
+    for (let n = 0; n < 60; n += 1) {
+      const scenario = tillageScenario(chanceOf(`wrong ${n}`))
+      const before = { ...scenario.readings }
+      makeWrongSum(scenario, layout, chanceOf(`slip ${n}`))
+      const changed = Object.keys(before).filter((key) => before[key] !== scenario.readings[key])
+      expect(changed).toEqual(scenario.wrongSum)
+      for (const key of changed) {
+        const [right, wrong] = [Number(before[key]), Number(scenario.readings[key])]
+        expect(Math.abs(wrong - right) / right).toBeGreaterThan(0.02)
+      }
+    }
+  })
+
+  it('fills a layout it has no story for: every value fits its boxes, times run in order, means hold', () => {
+    const other = { ...layout, key: 'another' }
+    for (let n = 0; n < 40; n += 1) {
+      const { readings } = scenarioFor(other, chanceOf(`any ${n}`))
+      for (const cell of other.cells.filter(isComb)) {
+        const digits = boxDigits(cell, readings[cell.key]!, scaleOf(readings, cell.scale), true)
+        expect(digits).toHaveLength(boxesOf(cell).length)
+      }
+      const widths = [1, 2, 3, 4, 5].flatMap((k) => readings[`width_m[${k}]`] ?? []).map(Number)
+      const mean = widths.reduce((a, b) => a + b, 0) / widths.length
+      expect(Math.abs(mean - Number(readings.width_mean_written_m))).toBeLessThan(0.00051)
+      if (readings.t_start && readings.t_end) expect(String(readings.t_end) >= String(readings.t_start)).toBe(true)
     }
   })
 
