@@ -8,6 +8,11 @@ export interface LedgerColumn<Row> {
   figures?: boolean
   /** Stays on one line. */
   tight?: boolean
+  /**
+   * How the cell stands in a stacked row: `lead` heads it, `word` is a line of its own (both full width), `named` repeats the
+   * column's head before it. Default: `named` for figures, else `word`.
+   */
+  stack?: 'lead' | 'word' | 'named'
 }
 
 export interface LedgerGroup<Row> {
@@ -30,15 +35,18 @@ interface LedgerTableProps<Row> {
   onRow?: (row: Row) => void
   /** Closes the table: cells of a last row over the double rule. */
   total?: ReactNode
+  /** On a phone each row stands as a block of named lines, and nothing scrolls sideways. */
+  stacked?: boolean
 }
 
 /** No frame, no stripes, no filled heads: rules, right-aligned figures, groups as sentences. */
-export function LedgerTable<Row>({ caption, columns, groups, rowKey, inHand, quiet, onRow, total }: LedgerTableProps<Row>) {
+export function LedgerTable<Row>(table: LedgerTableProps<Row>) {
+  const { caption, columns, groups, rowKey, inHand, quiet, onRow, total, stacked = false } = table
   return (
     <div className="overflow-x-auto">
-      <table className="w-full border-collapse text-left">
+      <table className={`w-full border-collapse text-left ${stacked ? 'max-sm:block' : ''}`}>
         <caption className="away">{caption}</caption>
-        <thead>
+        <thead className={stacked ? 'max-sm:hidden' : ''}>
           <tr className="border-b-[1.5px] border-ink">
             {columns.map((column) => (
               <th
@@ -52,10 +60,14 @@ export function LedgerTable<Row>({ caption, columns, groups, rowKey, inHand, qui
           </tr>
         </thead>
         {groups.map((group) => (
-          <tbody key={group.key}>
+          <tbody key={group.key} className={stacked ? 'max-sm:block' : ''}>
             {group.says !== undefined && (
-              <tr className="border-b border-line">
-                <th scope="rowgroup" colSpan={columns.length} className="px-1 pt-2 pb-0.5 pl-margin font-normal">
+              <tr className={`border-b border-line ${stacked ? 'max-sm:block' : ''}`}>
+                <th
+                  scope="rowgroup"
+                  colSpan={columns.length}
+                  className={`px-1 pt-2 pb-0.5 pl-margin font-normal ${stacked ? 'max-sm:block' : ''}`}
+                >
                   {group.says}
                 </th>
               </tr>
@@ -67,6 +79,7 @@ export function LedgerTable<Row>({ caption, columns, groups, rowKey, inHand, qui
                 columns={columns}
                 held={inHand?.(row) ?? false}
                 quiet={quiet?.(row) ?? false}
+                stacked={stacked}
                 {...(onRow ? { onRow } : {})}
               />
             ))}
@@ -83,24 +96,40 @@ interface LedgerRowProps<Row> {
   columns: ReadonlyArray<LedgerColumn<Row>>
   held: boolean
   quiet: boolean
+  stacked: boolean
   onRow?: (row: Row) => void
 }
 
-function LedgerRow<Row>({ row, columns, held, quiet, onRow }: LedgerRowProps<Row>) {
+const STACKED_ROW = 'max-sm:block max-sm:px-margin max-sm:py-1.5'
+const STACKED_CELL = {
+  lead: 'max-sm:block max-sm:h-auto max-sm:p-0! max-sm:pb-0.5! max-sm:text-left max-sm:text-2',
+  word: 'max-sm:block max-sm:h-auto max-sm:p-0! max-sm:text-left',
+  named: 'max-sm:flex max-sm:h-auto max-sm:min-h-[28px] max-sm:items-baseline max-sm:justify-between max-sm:gap-2 max-sm:p-0!',
+} as const
+
+function LedgerRow<Row>({ row, columns, held, quiet, stacked, onRow }: LedgerRowProps<Row>) {
   const look = held ? 'border-y-[1.5px] border-ink bg-straw-pale' : 'border-b border-feint'
   return (
     <tr
-      className={`${look} ${quiet ? 'text-graphite' : ''} ${onRow ? 'cursor-pointer' : ''}`}
+      className={`${look} ${quiet ? 'text-graphite' : ''} ${onRow ? 'cursor-pointer' : ''} ${stacked ? STACKED_ROW : ''}`}
       onClick={onRow ? () => onRow(row) : undefined}
     >
-      {columns.map((column) => (
-        <td
-          key={column.key}
-          className={`h-[30px] px-1 align-middle first:pl-margin last:pr-margin ${column.figures ? 'figures text-right whitespace-nowrap' : ''} ${column.tight ? 'whitespace-nowrap' : ''}`}
-        >
-          {column.cell(row)}
-        </td>
-      ))}
+      {columns.map((column) => {
+        const stack = column.stack ?? (column.figures ? 'named' : 'word')
+        return (
+          <td
+            key={column.key}
+            className={`h-[30px] px-1 align-middle first:pl-margin last:pr-margin ${column.figures ? 'figures text-right whitespace-nowrap' : ''} ${column.tight ? 'whitespace-nowrap' : ''} ${stacked ? STACKED_CELL[stack] : ''}`}
+          >
+            {stacked && stack === 'named' && (
+              <span aria-hidden="true" className="label font-sans font-normal whitespace-nowrap sm:hidden">
+                {column.head}
+              </span>
+            )}
+            {column.cell(row)}
+          </td>
+        )
+      })}
     </tr>
   )
 }

@@ -14,6 +14,8 @@ export type Trouble =
 
 export interface SaverState {
   ops: readonly DeskOp[]
+  /** What the last write was answered with: it arrives together with the shorter list, so nothing flickers back. */
+  answered: Sheet | null
   trouble: Trouble | null
   savedAt: Date | null
 }
@@ -33,7 +35,7 @@ const storeKey = (sheetId: string) => `sheafbook.desk.${sheetId}`
 export type DeskSaver = ReturnType<typeof createDeskSaver>
 
 export function createDeskSaver(ports: SaverPorts) {
-  let state: SaverState = { ops: keptOps(ports.sheetId), trouble: null, savedAt: null }
+  let state: SaverState = { ops: keptOps(ports.sheetId), answered: null, trouble: null, savedAt: null }
   let sending = false
   let closed = false
   let timer: ReturnType<typeof setTimeout> | null = null
@@ -60,8 +62,9 @@ export function createDeskSaver(ports: SaverPorts) {
     if (!sheet) return false
     const body = bodyOf(op, sheet)
     try {
-      if (body) ports.put(await ports.post(body))
-      show({ ops: state.ops.slice(1), trouble: null, savedAt: new Date() })
+      const answered = body ? await ports.post(body) : state.answered
+      if (body && answered) ports.put(answered)
+      show({ ops: state.ops.slice(1), answered, trouble: null, savedAt: new Date() })
       return true
     } catch (error) {
       return await troubled(error)

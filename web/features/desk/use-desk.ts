@@ -9,8 +9,9 @@ import { useSaver } from './use-saver.ts'
 export type Desk = ReturnType<typeof useDesk>
 
 /** Which doubt and which cell are in hand, and what can be done with them. */
-export function useDesk(sheet: Sheet, layout: Layout, me: string) {
-  const { saver, saved } = useSaver(sheet.id)
+export function useDesk(given: Sheet, layout: Layout, me: string) {
+  const { saver, saved } = useSaver(given.id)
+  const sheet = saved.answered && saved.answered.version >= given.version ? saved.answered : given
   const view = useMemo(() => viewOf(sheet, layout, saved.ops, me), [sheet, layout, saved.ops, me])
   const items = useMemo(() => itemsOf(view, layout), [view, layout])
   const [chosen, setChosen] = useState<{ itemId: string | null; key: string | null }>({ itemId: null, key: null })

@@ -1,17 +1,7 @@
-import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query'
-import { z } from 'zod'
-import { REGISTERS, type RegisterName, type RegisterRows } from '../../../shared/schemas/register.ts'
+import { useMutation, useQueryClient } from '@tanstack/react-query'
+import type { RegisterName } from '../../../shared/schemas/register.ts'
 import { api } from '../../lib/api.ts'
-
-export const registerQueries = {
-  all: () => ['registers'] as const,
-  rows: <N extends RegisterName>(name: N) =>
-    queryOptions({
-      queryKey: [...registerQueries.all(), name],
-      queryFn: async ({ signal }): Promise<RegisterRows[N][]> =>
-        (await api.get(`/registers/${name}`, z.array(REGISTERS[name].row), signal)) as RegisterRows[N][],
-    }),
-}
+import { registerQueries } from '../../lib/register-rows.ts'
 
 interface Save {
   id: string | null

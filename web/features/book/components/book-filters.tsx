@@ -1,8 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
 import { useId } from 'react'
-import { z } from 'zod'
-import { OPERATIONS, REGISTERS } from '../../../../shared/schemas/register.ts'
-import { api } from '../../../lib/api.ts'
+import { OPERATIONS } from '../../../../shared/schemas/register.ts'
+import { registerQueries } from '../../../lib/register-rows.ts'
 import type { BookFilters } from '../book.queries.ts'
 
 interface Choice {
@@ -10,13 +9,7 @@ interface Choice {
   words: string
 }
 
-const named = (name: 'tractors' | 'implements' | 'places') => ({
-  queryKey: ['registers', name, 'choices'] as const,
-  queryFn: async ({ signal }: { signal: AbortSignal }): Promise<Choice[]> => {
-    const rows = await api.get(`/registers/${name}`, z.array(REGISTERS[name].row), signal)
-    return rows.map((row) => ({ value: row.id, words: row.name }))
-  },
-})
+const named = (row: { id: string; name: string }): Choice => ({ value: row.id, words: row.name })
 
 const words = (text: string): Choice => ({ value: text, words: text.replaceAll('_', ' ') })
 
@@ -28,16 +21,16 @@ export function BookFilterBar({
   filters: BookFilters
   onChange: (name: keyof BookFilters, value: string) => void
 }) {
-  const tractors = useQuery(named('tractors'))
-  const tools = useQuery(named('implements'))
-  const places = useQuery(named('places'))
+  const tractors = useQuery(registerQueries.rows('tractors'))
+  const tools = useQuery(registerQueries.rows('implements'))
+  const places = useQuery(registerQueries.rows('places'))
   const set = (name: keyof BookFilters) => (value: string) => onChange(name, value)
   return (
     <search className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5">
-      <Pick label="tractor" value={filters.tractor} choices={tractors.data ?? []} onPick={set('tractor')} />
-      <Pick label="implement" value={filters.implement} choices={tools.data ?? []} onPick={set('implement')} />
+      <Pick label="tractor" value={filters.tractor} choices={tractors.data?.map(named) ?? []} onPick={set('tractor')} />
+      <Pick label="implement" value={filters.implement} choices={tools.data?.map(named) ?? []} onPick={set('implement')} />
       <Pick label="operation" value={filters.operation} choices={OPERATIONS.map(words)} onPick={set('operation')} />
-      <Pick label="place" value={filters.place} choices={places.data ?? []} onPick={set('place')} />
+      <Pick label="place" value={filters.place} choices={places.data?.map(named) ?? []} onPick={set('place')} />
       <Pick label="soil" value={filters.soil} choices={['fine', 'medium', 'coarse'].map(words)} onPick={set('soil')} />
       <Day label="from" value={filters.from} onPick={set('from')} />
       <Day label="to" value={filters.to} onPick={set('to')} />

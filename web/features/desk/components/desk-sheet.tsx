@@ -36,7 +36,7 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
   const pane = useRef<HTMLElement>(null)
   useAlignedRow({ pane, crop, share: rowInHand(desk) })
   const [sendBack, setAside, enter] = [useSendBack(sheet.id), useSetAside(sheet.id), useEnter(sheet.id)]
-  const { version } = sheet
+  const { version } = desk.sheet
 
   const leave = { onSuccess: () => onLeave(null), onError: (error: Error) => acts.say(error.message) }
   const entering = () => {

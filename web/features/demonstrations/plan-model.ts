@@ -1,0 +1,65 @@
+/** What the plan form begins with, and what it says of a kit before the day. Pure. */
+import type { Demonstration, SaveDemonstration, SaveTrial } from '../../../shared/schemas/demonstration.ts'
+import type { Kit } from '../../../shared/schemas/register.ts'
+import { leastFuel } from '../../../shared/trial/planning.ts'
+
+/** Three runs on a plot are the least that show how much runs differ (PAES 111:2000, as quoted). */
+const USUAL_RUNS = 3
+/** A farmer who withdrew has no name any more; the schema asks for one, and the server leaves it unsaved. */
+const ERASED = { name: 'erased', phone: '' }
+
+export const blankTrial: SaveTrial = { tractorId: '', implementId: '', kitId: '', plot: '', runs: USUAL_RUNS }
+
+/** The next trial of a day: the same implement and kit, behind another tractor on another plot. */
+export const nextTrial = (last: SaveTrial | undefined): SaveTrial => (last ? { ...last, tractorId: '', plot: '' } : blankTrial)
+
+export const blankPlan = (demonstratorId: string): SaveDemonstration => ({
+  heldOn: '',
+  placeId: '',
+  demonstratorId,
+  driver: '',
+  farmer: { name: '', phone: '' },
+  trials: [blankTrial],
+})
+
+export const planOf = (day: Demonstration): SaveDemonstration => ({
+  heldOn: day.heldOn,
+  placeId: day.place.id,
+  demonstratorId: day.demonstrator.id,
+  driver: day.driver,
+  farmer: day.farmer ?? ERASED,
+  trials: day.trials.map(({ tractor, implement, kit, plot, runs }) => ({
+    tractorId: tractor.id,
+    implementId: implement.id,
+    kitId: kit.id,
+    plot,
+    runs: runs.length,
+  })),
+})
+
+/** How old a kit's check may be on the day, months: common practice. */
+const CHECK_MONTHS = 12
+
+const monthsBetween = (from: string, to: string): number => {
+  const [fromYear = 0, fromMonth = 0, fromDay = 0] = from.split('-').map(Number)
+  const [toYear = 0, toMonth = 0, toDay = 0] = to.split('-').map(Number)
+  return (toYear - fromYear) * 12 + (toMonth - fromMonth) - (toDay < fromDay ? 1 : 0)
+}
+
+/** "last checked 14 months before that day; 12 are allowed", or null while the check is young enough. */
+export function oldCheck(kit: Kit, heldOn: string): string | null {
+  if (!/^\d{4}-\d{2}-\d{2}$/.test(heldOn)) return null
+  const months = monthsBetween(kit.checkedOn, heldOn)
+  const over = months > CHECK_MONTHS || (months === CHECK_MONTHS && kit.checkedOn.slice(8) !== heldOn.slice(8))
+  if (!over) return null
+  return `This kit was last checked ${months} months before that day; ${CHECK_MONTHS} are allowed. Choose another, or have it checked.`
+}
+
+/** Wanted U of the fuel, %, and what is assumed of the kit: one top-up and 1 % scale error, as the trial book's own budget does. */
+const WANTED = { U_pct: 5, topups: 1, scale_pct: 1, area_u_pct: 0 }
+
+/** Least fuel to burn with a kit, litres, for ± 5 % of the fuel; null when no amount is enough. */
+export function leastFuel_l(kit: Kit): number | null {
+  const least = leastFuel({ ...WANTED, jarStep_ml: kit.jarMark_ml, jugMark_ml: kit.jugMark_ml })
+  return least === null ? null : least / 1000
+}
