@@ -5,12 +5,18 @@ import { join } from 'node:path'
 import { LEVELS } from '../simulator/levels.ts'
 import { makeSet } from '../simulator/make-set.ts'
 
-const SOURCES = ['tests/simulator', 'shared/layouts', 'server/print']
+/** What a photo is made by. What only samples, plans or ties use does not change it. */
+const SOURCES: ReadonlyArray<readonly [folder: string, files: RegExp]> = [
+  ['tests/simulator', /^(?!.*sample|expected|golden|scan-pdf).*\.ts$/],
+  ['shared/layouts', /^(layout|geometry|sheet-code|corner-modules|.*-\d+)\.ts$/],
+  ['server/print', /^(page|sheet-.*)\.ts$/],
+]
 
 async function fingerprint(): Promise<string> {
   const hash = createHash('sha256')
-  for (const folder of SOURCES) {
-    for (const name of (await readdir(folder)).sort()) if (name.endsWith('.ts')) hash.update(await readFile(join(folder, name)))
+  for (const [folder, files] of SOURCES) {
+    const names = (await readdir(folder)).filter((name) => files.test(name) && !name.endsWith('.test.ts'))
+    for (const name of names.sort()) hash.update(await readFile(join(folder, name)))
   }
   return hash.digest('hex').slice(0, 10)
 }
