@@ -24,6 +24,8 @@ const READY_WITHIN_MS = 90_000
 const FALLS_BEFORE_GIVING_UP = 3
 
 const stops = new Stops()
+// A closed terminal must not keep us from stopping what was started.
+for (const stream of [process.stdout, process.stderr]) stream.on('error', () => undefined)
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.on(signal, () => void stops.runAndExit(0, 'Stopping …'))
 
 try {
