@@ -5,6 +5,7 @@ import type { Express } from 'express'
 
 /** Requests in hand get this long; the process has 20 s in all. */
 const GRACE_MS = 12_000
+const SWEEP_MS = 50
 
 export interface Listener {
   /** Starts once; a second call waits for the first. Returns the port (0 in the settings takes any). */
@@ -26,11 +27,13 @@ export function createListener(app: Express, at: { host: string; port: number })
     new Promise<void>((resolve) => {
       if (!server.listening) return resolve()
       const insist = setTimeout(() => server.closeAllConnections(), GRACE_MS)
+      // A browser keeps its connection open after its last answer.
+      const sweep = setInterval(() => server.closeIdleConnections(), SWEEP_MS)
       server.close(() => {
         clearTimeout(insist)
+        clearInterval(sweep)
         resolve()
       })
-      server.closeIdleConnections()
     })
   return {
     start: () => {
