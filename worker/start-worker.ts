@@ -10,6 +10,8 @@ import { pause, poll } from './poll.ts'
 
 /** One look at an empty queue every half second: a photo waits that long at most for a worker that is free. */
 export const POLL_MS = 500
+/** Nobody waits at a screen for a job that was given up. */
+const POLL_FAILED_MS = 2_000
 const CONNECT_PAUSES_MS = [500, 1_000, 2_000, 5_000, 10_000]
 
 export interface WorkerOptions {
@@ -39,14 +41,14 @@ export async function startWorker(options: WorkerOptions, stop: AbortSignal): Pr
   const noMore = new AbortController()
   const giveBack = new AbortController()
   const loops = [...handlers.values()].flatMap((handler) => [
-    run(handler.name, (data, signal) => handler.handle(data as never, { signal })),
-    run(failedQueue(handler.name), async (data) => {
+    run(handler.name, POLL_MS, (data, signal) => handler.handle(data as never, { signal })),
+    run(failedQueue(handler.name), POLL_FAILED_MS, async (data) => {
       await handler.giveUp(data as never)
       return 'done'
     }),
   ])
 
-  function run(queue: string, work: Parameters<typeof attempt>[1]): Promise<void> {
+  function run(queue: string, pause_ms: number, work: Parameters<typeof attempt>[1]): Promise<void> {
     const log = options.log.child({ queue })
     const ends = {
       complete: async (id: string) => void (await boss.complete(queue, id)),
@@ -56,7 +58,7 @@ export async function startWorker(options: WorkerOptions, stop: AbortSignal): Pr
       const [job] = await boss.fetch<unknown>(queue, { batchSize: 1 })
       return job ? () => attempt(job as FetchedJob, work, ends, { stop: giveBack.signal, log }) : null
     }
-    return poll({ fetch, pause_ms: POLL_MS, stop: noMore.signal })
+    return poll({ fetch, pause_ms, stop: noMore.signal })
   }
 
   let stopping: Promise<void> | undefined

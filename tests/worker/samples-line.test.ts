@@ -4,6 +4,7 @@ import { buffer } from 'node:stream/consumers'
 import PDFDocument from 'pdfkit'
 import sharp from 'sharp'
 import { afterAll, beforeAll, expect, it } from 'vitest'
+import type { Sheet } from '../../shared/schemas/sheet.ts'
 import type { Upload } from '../../shared/schemas/upload.ts'
 import type { TestAgent } from '../support/agent.ts'
 import { startTestServer, type TestServer } from '../support/server.ts'
@@ -69,6 +70,36 @@ it('a flat scan is read to the desk: its sheet waits, its clear readings are wha
   const picture = await clerk.get(`/pages/${page!.id}/picture`)
   expect(picture.headers.get('content-type')).toBe('image/jpeg')
   expect(await sharp(picture.bytes).metadata()).toMatchObject({ format: 'jpeg', width: 1240, height: 1754 })
+})
+
+it('a picture whose corners a clerk sets is read anew at that place', async () => {
+  const bytes = await sharp(await readFile('samples/flat-scan/flat-scan.jpg'))
+    .jpeg({ quality: 85 })
+    .toBuffer()
+  const upload = await send(new File([bytes], 'by-hand.jpg'))
+  const id = upload.pages[0]!.sheet!.id
+  const { width, height } = await sharp(bytes).metadata()
+  const before = (await clerk.get(`/sheets/${id}`)).body as Sheet
+  const answer = await clerk.post(`/sheets/${id}/place`, {
+    version: before.version,
+    layout: 'tillage',
+    layoutVersion: 1,
+    sheetCode: before.code,
+    corners: [
+      [0, 0],
+      [width, 0],
+      [width, height],
+      [0, height],
+    ],
+  })
+  expect(answer).toMatchObject({ status: 200, body: { state: 'being read' } })
+  await waitFor(async () => ((await clerk.get(`/sheets/${id}`)).body as Sheet).state !== 'being read', {
+    what: 'the page to be read again',
+    deadline_ms: 50_000,
+  })
+  const after = (await clerk.get(`/sheets/${id}`)).body as Sheet
+  expect(after.readings.filter((reading) => reading.value !== null).length).toBeGreaterThan(40)
+  expect((await clerk.get(`/pages/${upload.pages[0]!.id}/picture`)).status).toBe(200)
 })
 
 it('a scan of three pages becomes three sheets', async () => {

@@ -14,7 +14,8 @@ import { planFindings } from './plan-findings.ts'
 import { planOfRun } from './plan-of-run.ts'
 import { factsOf, namedOnSheet, registerFindings } from './sheet-facts.ts'
 
-const FOLLOWS_DOUBTS: readonly SheetState[] = ['arrived', 'being read', 'waiting', 'settled']
+/** Not "being read": until the page is taken in, what stands there is not what the picture says. */
+const FOLLOWS_DOUBTS: readonly SheetState[] = ['arrived', 'waiting', 'settled']
 
 export async function recheckSheet(db: Db, sheetId: string): Promise<void> {
   const sheet = await findSheet(db, sheetId)

@@ -1,7 +1,7 @@
 /** Files as they come over the wire: into a temporary folder, hashed on the way, never more than the limits. */
 import { createHash, randomUUID } from 'node:crypto'
 import { createReadStream, createWriteStream } from 'node:fs'
-import { mkdir, mkdtemp, rm } from 'node:fs/promises'
+import { mkdir, mkdtemp, readdir, rm, stat } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { type Readable, Transform } from 'node:stream'
@@ -34,15 +34,37 @@ export async function withReceivedFiles<T>(
   work: (files: ReceivedFile[], fields: Record<string, unknown>) => Promise<T>,
 ): Promise<T> {
   if (Number(req.headers['content-length'] ?? 0) > REQUEST_BYTES) throw requestTooLarge()
-  const parent = join(tmpdir(), 'sheafbook-incoming')
-  await mkdir(parent, { recursive: true, mode: 0o700 })
-  const folder = await mkdtemp(join(parent, 'request-'))
+  const folder = await mkdtemp(join(await incomingFolder(), 'request-'))
   try {
     const files = await parse(req, res, folder)
     return await work(files, (req.body ?? {}) as Record<string, unknown>)
   } finally {
     await rm(folder, { recursive: true, force: true })
   }
+}
+
+/** Where requests are received. What a server left there that was killed in the middle is swept when the next one starts. */
+function incomingFolder(): Promise<string> {
+  sweeping ??= sweepIncoming(join(tmpdir(), 'sheafbook-incoming'))
+  // A folder that could not be made is tried again by the next request.
+  sweeping.catch(() => {
+    sweeping = undefined
+  })
+  return sweeping
+}
+let sweeping: Promise<string> | undefined
+
+/** No request lasts an hour, so what is older belongs to nobody. */
+const STALE_MS = 3_600_000
+
+async function sweepIncoming(parent: string): Promise<string> {
+  await mkdir(parent, { recursive: true, mode: 0o700 })
+  for (const name of await readdir(parent)) {
+    const folder = join(parent, name)
+    const entry = await stat(folder).catch(() => null)
+    if (entry && Date.now() - entry.mtimeMs > STALE_MS) await rm(folder, { recursive: true, force: true })
+  }
+  return parent
 }
 
 function parse(req: Request, res: Response, folder: string): Promise<ReceivedFile[]> {
