@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest'
+import { tillage1 } from '../../shared/layouts/tillage-1.ts'
+import { mm, newPage } from './page.ts'
 import { FARMER_LINE, type PrintedPlan, planLines, VALUE_CHARS } from './plan-lines.ts'
 
 const plan: PrintedPlan = {
@@ -26,7 +28,7 @@ const plan: PrintedPlan = {
 describe('the typed block', () => {
   it('says what the plan knows, with units', () => {
     expect(planLines(plan).map(({ label, value }) => `${label}: ${value}`)).toEqual([
-      'date: 09-04-2026 run 2 of 3',
+      'date: 09-04-2026 run 2/3',
       'place: 14 Long Acre',
       'farmer: Matis Orrel',
       'plot: upper, by the ditch',
@@ -34,7 +36,7 @@ describe('the typed block', () => {
       'engine: 55 kW 2200/min 4WD',
       'implement: 7 three-furrow 0.90 m',
       'tyres: 11.2-24, 16.9-30',
-      'kit (mL): 3 jar 5000 jug 1000',
+      'kit 3: jar 5000 jug 1000 mL',
       'tape, gauge: T-3, G-3',
       'demonstr.: 12 R. Imhaut',
       'driver: S. Dolm',
@@ -56,6 +58,16 @@ describe('the typed block', () => {
     })
     for (const { value } of lines) expect(value.length).toBeLessThanOrEqual(VALUE_CHARS)
     expect(lines[6]?.value).toMatch(/^9999 .+… 11\.55 m$/)
+  })
+
+  it('fits its column in the face it is printed in', () => {
+    const { columnWidth } = tillage1.planBlock
+    const page = newPage({ title: '', width_mm: 210, height_mm: 297 })
+    // As drawn by the sheet's printer: labels in 6.6 pt, values from 14 mm on in bold 7 pt mono.
+    const value_mm = page.font('mono-bold').fontSize(7).widthOfString('W'.repeat(VALUE_CHARS)) / mm(1)
+    expect(14 + value_mm).toBeLessThan(columnWidth - 1)
+    const labels = planLines({ ...plan, kit: { ...plan.kit, number: 9999 } }).map(({ label }) => label)
+    for (const label of labels) expect(page.font('regular').fontSize(6.6).widthOfString(label) / mm(1), label).toBeLessThan(13.5)
   })
 
   it('leaves the farmer out once the name is erased', () => {

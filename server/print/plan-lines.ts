@@ -26,8 +26,8 @@ export interface PrintedPlan {
   driver: string
 }
 
-/** 36 mm of 7 pt mono, 4.2 pt a character: the next column begins after it. */
-export const VALUE_CHARS = 24
+/** 34 of the 36 mm a value has in 7 pt mono, at 1.56 mm a character: the next column's label begins after it. */
+export const VALUE_CHARS = 22
 
 /** Cuts in the middle of a value, so that number and unit at its ends always stand. */
 function cut(before: string, text: string, after = ''): string {
@@ -42,7 +42,7 @@ export function planLines(plan: PrintedPlan): PlanLine[] {
   const tyres = [tractor.tyreFront, tractor.tyreRear].filter(Boolean).join(', ')
   const tools = [kit.tapeSerial, kit.gaugeSerial].filter(Boolean).join(', ')
   return [
-    { label: 'date', value: `${day}-${month}-${year} run ${plan.run} of ${plan.runs}` },
+    { label: 'date', value: `${day}-${month}-${year} run ${plan.run}/${plan.runs}` },
     { label: 'place', value: cut(`${place.number} `, place.name) },
     { label: 'farmer', value: cut('', plan.farmer ?? '') },
     { label: 'plot', value: cut('', plan.plot) },
@@ -50,7 +50,7 @@ export function planLines(plan: PrintedPlan): PlanLine[] {
     { label: 'engine', value: cut('', `${tractor.ratedPower_kw} kW ${tractor.ratedRpm}/min ${tractor.drive}`) },
     { label: 'implement', value: cut(`${implement.number} `, implement.name, ` ${implement.ratedWidth_m.toFixed(2)} m`) },
     { label: 'tyres', value: cut('', tyres) },
-    { label: 'kit (mL)', value: `${kit.number} jar ${kit.jarCapacity_ml} jug ${kit.jugCapacity_ml}` },
+    { label: `kit ${kit.number}`, value: `jar ${kit.jarCapacity_ml} jug ${kit.jugCapacity_ml} mL` },
     { label: 'tape, gauge', value: cut('', tools) },
     { label: 'demonstr.', value: cut(`${demonstrator.number} `, demonstrator.name) },
     { label: 'driver', value: cut('', plan.driver) },

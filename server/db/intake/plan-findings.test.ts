@@ -50,3 +50,16 @@ test('a block printed before the tractor was exchanged names tractor and both nu
 test('what could not be recognised says nothing', () => {
   expect(planFindings(['tract?r l2', ''], plan)).toEqual([])
 })
+
+test('every number that the block prints is compared', () => {
+  const other = {
+    placeNumber: 7,
+    tractorNumber: 13,
+    implementNumber: 25,
+    kitNumber: 33,
+    demonstratorNumber: 103,
+    heldOn: '2026-10-21',
+  }
+  const found = planFindings(printed, { ...plan, ...other })
+  expect(found.map((f) => f.compared.printed)).toEqual(['20-10-2026', '6', '12', '24', '32', '102'])
+})

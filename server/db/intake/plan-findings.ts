@@ -18,7 +18,7 @@ const PRINTED: readonly Printed[] = [
   { cell: 'place_id', words: 'place', pattern: /\bplace\s+(\d{1,4})\b/i, planned: (p) => String(p.placeNumber) },
   { cell: 'tractor_id', words: 'tractor', pattern: /\btractor\s+(\d{1,4})\b/i, planned: (p) => String(p.tractorNumber) },
   { cell: 'implement_id', words: 'implement', pattern: /\bimplement\s+(\d{1,4})\b/i, planned: (p) => String(p.implementNumber) },
-  { cell: 'kit_id', words: 'kit', pattern: /\bkit \(mL\)\s+(\d{1,4})\b/i, planned: (p) => String(p.kitNumber) },
+  { cell: 'kit_id', words: 'kit', pattern: /\bkit(?: \(mL\))?\s+(\d{1,4})\b/i, planned: (p) => String(p.kitNumber) },
   {
     cell: 'demonstrator_id',
     words: 'demonstrator',
