@@ -35,3 +35,8 @@ export function momentText(moment: string | Date, now: Date = new Date()): strin
   const year = at.getFullYear() === now.getFullYear() ? '' : ` ${at.getFullYear()}`
   return `${at.getDate()} ${MONTHS[at.getMonth()]}${year} ${clockOf(at)}`
 }
+
+/** Today as a calendar date, "2026-10-13", in the reader's own time. */
+export function todayText(now: Date = new Date()): string {
+  return `${now.getFullYear()}-${two(now.getMonth() + 1)}-${two(now.getDate())}`
+}

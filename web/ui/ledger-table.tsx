@@ -8,6 +8,8 @@ export interface LedgerColumn<Row> {
   figures?: boolean
   /** Stays on one line. */
   tight?: boolean
+  /** Left out where the window is narrower than a desk, or than a phone held upright. */
+  wide?: 'desk' | 'phone'
   /**
    * How the cell stands in a stacked row: `lead` heads it, `word` is a line of its own (both full width), `named` repeats the
    * column's head before it. Default: `named` for figures, else `word`.
@@ -21,6 +23,8 @@ export interface LedgerGroup<Row> {
   says?: ReactNode
   rows: readonly Row[]
 }
+
+const SHOWN = { desk: 'max-lg:hidden', phone: 'max-sm:hidden' } as const
 
 interface LedgerTableProps<Row> {
   /** Says what the table holds, for people who do not see it. */
@@ -52,7 +56,7 @@ export function LedgerTable<Row>(table: LedgerTableProps<Row>) {
               <th
                 key={column.key}
                 scope="col"
-                className={`label h-[30px] px-1 font-normal whitespace-nowrap first:pl-margin last:pr-margin ${column.figures ? 'text-right' : ''}`}
+                className={`label h-[30px] px-1 font-normal whitespace-nowrap first:pl-margin last:pr-margin ${column.figures ? 'text-right' : ''} ${column.wide ? SHOWN[column.wide] : ''}`}
               >
                 {column.head}
               </th>

@@ -63,3 +63,18 @@ export function leastFuel_l(kit: Kit): number | null {
   const least = leastFuel({ ...WANTED, jarStep_ml: kit.jarMark_ml, jugMark_ml: kit.jugMark_ml })
   return least === null ? null : least / 1000
 }
+
+/** A row of a register, or a person, that a plan can name. */
+export interface Chosen {
+  id: string
+  number: number
+  name: string
+  active?: boolean
+}
+
+/** What may be chosen: rows in use, and those the plan names already, by their numbers. */
+export const choicesOf = (rows: readonly Chosen[], chosen: readonly string[]): Array<{ value: string; words: string }> =>
+  rows
+    .filter((row) => row.active !== false || chosen.includes(row.id))
+    .sort((a, b) => a.number - b.number)
+    .map((row) => ({ value: row.id, words: `${row.number}  ${row.name}` }))

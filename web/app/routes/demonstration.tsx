@@ -1,0 +1,96 @@
+import { useQuery } from '@tanstack/react-query'
+import { Link, useParams } from 'react-router-dom'
+import { findLayout } from '../../../shared/layouts/registry.ts'
+import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
+import { sheetStateSchema } from '../../../shared/schemas/sheet.ts'
+import type { Role } from '../../../shared/schemas/user.ts'
+import { CheckList } from '../../features/demonstrations/components/check-list.tsx'
+import { DayFacts } from '../../features/demonstrations/components/day-facts.tsx'
+import { TakeAlong } from '../../features/demonstrations/components/take-along.tsx'
+import { TrialRuns } from '../../features/demonstrations/components/trial-runs.tsx'
+import { WithdrawConsent } from '../../features/demonstrations/components/withdraw-consent.tsx'
+import { demonstrationQueries, useWithdrawConsent } from '../../features/demonstrations/demonstrations.queries.ts'
+import { STATE_WORDS } from '../../features/sheets/sheet-words.ts'
+import { ApiError } from '../../lib/api-error.ts'
+import { useMe } from '../../lib/me.ts'
+import { paths } from '../../lib/paths.ts'
+import { dateText, weekdayOf } from '../../lib/time.ts'
+import { counted } from '../../lib/words.ts'
+import { ButtonLink } from '../../ui/button.tsx'
+import { Glyph } from '../../ui/glyphs.tsx'
+import { Page } from '../../ui/page.tsx'
+import { ErrorState, Loading } from '../../ui/says.tsx'
+import { NotFound } from './route-error.tsx'
+
+/** The sheet that planned runs are printed on. */
+const LAYOUT = 'tillage'
+
+export function Component() {
+  const { id = '' } = useParams()
+  const day = useQuery(demonstrationQueries.detail(id))
+  if (day.error instanceof ApiError && day.error.status === 404) return <NotFound />
+  if (day.error) return <ErrorState error={day.error} again={() => day.refetch()} />
+  if (!day.data) return <Loading what="Opening the demonstration" />
+  return <DayPage day={day.data} />
+}
+
+function DayPage({ day }: { day: Demonstration }) {
+  const me = useMe()
+  const withdraw = useWithdrawConsent(day.id)
+  const layout = findLayout(LAYOUT)
+  const mayPlan = me.role === 'demonstrator' || me.role === 'admin'
+  const runs = day.trials.reduce((sum, trial) => sum + trial.runs.length, 0)
+  const entered = day.trials.flatMap((trial) => trial.runs).filter((run) => run.recordNumber !== null).length
+  return (
+    <Page
+      title={`${day.place.name}, ${dateText(day.heldOn)}`}
+      over={
+        <Link className="word" to={paths.demonstrations.to()}>
+          Demonstrations
+        </Link>
+      }
+      sentence={`${day.place.name}, ${weekdayOf(`${day.heldOn}T12:00`)} ${dateText(day.heldOn)}: ${counted(day.trials.length, 'trial')}, ${counted(runs, 'run')}, ${entered} in the book.`}
+      aside={mayPlan && <ButtonLink to={paths.editDemonstration.to(day.id)}>Change the plan</ButtonLink>}
+    >
+      <div className="grid grid-cols-[minmax(0,8fr)_minmax(0,4fr)] max-lg:grid-cols-1">
+        <div className="border-r-[3px] border-double border-line max-lg:border-r-0">
+          <TakeAlong id={day.id} runs={runs} mayPrint={me.role !== 'analyst'} layout={LAYOUT} />
+          <section aria-labelledby="trials" className="pt-2 pb-3">
+            <h2 id="trials" className="away">
+              Trials and runs
+            </h2>
+            <TrialRuns
+              trials={day.trials}
+              links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint: me.role !== 'analyst' }}
+            />
+          </section>
+        </div>
+        <div>
+          <DayFacts day={day} mayKnowFarmer={me.role !== 'analyst'}>
+            {mayPlan && day.farmer && (
+              <WithdrawConsent
+                pending={withdraw.isPending}
+                error={withdraw.error}
+                onWithdraw={(reason) => withdraw.mutate(reason)}
+              />
+            )}
+          </DayFacts>
+          {layout && <CheckList layout={layout} />}
+        </div>
+      </div>
+    </Page>
+  )
+}
+
+const sheetPathOf = (role: Role) => (role === 'demonstrator' ? paths.mySheet.to : role === 'analyst' ? null : paths.deskSheet.to)
+
+function stateMark(state: string) {
+  const known = sheetStateSchema.safeParse(state)
+  if (!known.success) return state
+  const { glyph, says } = STATE_WORDS[known.data]
+  return (
+    <span className="whitespace-nowrap">
+      <Glyph name={glyph} /> {says}
+    </span>
+  )
+}

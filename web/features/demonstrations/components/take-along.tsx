@@ -1,0 +1,39 @@
+import type { ReactNode } from 'react'
+import { counted } from '../../../lib/words.ts'
+
+/** Papers for the day. The day's own sheets carry the plan in print; the blank sheet and the form serve what nobody planned. */
+export function TakeAlong({ id, runs, mayPrint, layout }: { id: string; runs: number; mayPrint: boolean; layout: string }) {
+  return (
+    <section aria-labelledby="take-along" className="px-margin pt-3">
+      <h2 id="take-along" className="pb-1 text-2">
+        Papers for the day
+      </h2>
+      {mayPrint && (
+        <a
+          href={`/api/demonstrations/${id}/sheets.pdf`}
+          target="_blank"
+          rel="noreferrer"
+          className="mb-1 inline-flex min-h-[48px] items-center bg-ink px-4 text-2 font-[650] text-white no-underline max-sm:w-full max-sm:justify-center"
+        >
+          Print {runs === 1 ? 'the sheet' : `all ${counted(runs, 'sheet')}`}
+        </a>
+      )}
+      <p className="flex flex-wrap gap-x-3 pb-1">
+        <span className="label">for a run nobody planned</span>
+        <Paper href={`/api/layouts/${layout}/blank.pdf`}>a blank sheet</Paper>
+        <Paper href={`/api/layouts/${layout}/form.xlsx`}>spreadsheet form, XLSX</Paper>
+        <Paper href={`/api/layouts/${layout}/form.csv`}>CSV</Paper>
+      </p>
+    </section>
+  )
+}
+
+const Paper = ({ href, children }: { href: string; children: ReactNode }) => (
+  <a
+    className="word max-sm:min-h-[44px]"
+    href={href}
+    {...(href.endsWith('.pdf') ? { target: '_blank', rel: 'noreferrer' } : { download: true })}
+  >
+    {children}
+  </a>
+)
