@@ -21,8 +21,11 @@ export const FILE_LIMITS = {
   name_chars: 200,
 } as const
 
-/** The child process that opens a stranger's file. */
-export const PARSER_LIMITS = { heap_mb: 512, time_s: 30 } as const
+/**
+ * The child process that opens a stranger's file. `resident_mb` counts what the heap's limit does not (buffers, WebAssembly):
+ * a 50-megapixel picture in colour takes 150 MB, and reading it works on a few copies.
+ */
+export const PARSER_LIMITS = { heap_mb: 512, resident_mb: 1_500, time_s: 30 } as const
 
 /** Free space under which nothing more is taken in: whichever is larger. */
 export const DISK_LIMITS = { free_bytes: 2_000 * MB, free_share: 0.1 } as const

@@ -6,5 +6,9 @@ if (what === 'fills the memory') {
   const kept: number[][] = []
   for (;;) kept.push(Array.from({ length: 100_000 }, Math.random))
 }
+if (what === 'fills buffers') {
+  const kept: Buffer[] = []
+  setInterval(() => kept.push(Buffer.alloc(20_000_000, 1)), 20)
+}
 if (what === 'never ends') setInterval(() => undefined, 1_000)
 if (what === 'dies') process.kill(process.pid, 'SIGKILL')

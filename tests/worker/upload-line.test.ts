@@ -153,10 +153,10 @@ describe('a parser', () => {
   const signal = new AbortController().signal
   const script = 'tests/worker/bad-parser.ts'
 
-  it.each(['fills the memory', 'never ends', 'dies'])(
+  it.each(['fills the memory', 'fills buffers', 'never ends', 'dies'])(
     'that %s costs its own process only, and the file is refused',
     async (what) => {
-      const answer = await runParser('csv', Buffer.from(what), { signal, script, heap_mb: 64, time_s: 6 })
+      const answer = await runParser('csv', Buffer.from(what), { signal, script, heap_mb: 64, resident_mb: 400, time_s: 6 })
       expect(answer).toEqual({ kind: 'refused', reason: expect.stringContaining('Nothing was kept') })
     },
   )

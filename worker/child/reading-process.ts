@@ -5,6 +5,7 @@ import type { KnownNumbers } from '../../server/db/repositories/known-numbers.ts
 import { PARSER_LIMITS } from '../../shared/limits.ts'
 import type { PagePicture, PageReader, ReadPicture } from '../jobs/page-reader.ts'
 import type { ReadingAnswer, ReadingRequest } from './reading-messages.ts'
+import { watchMemory } from './watch-memory.ts'
 
 interface ReadingOptions {
   /** The numbers that registers hold, asked for each page: they change while the process runs. */
@@ -51,7 +52,9 @@ export function createReadingProcess({ listKnown, script = resolve('worker/child
 /** Whatever ends the reading early ends its process with it: it may be in the middle of what never ends. */
 function ask(child: ChildProcess, request: ReadingRequest, signal: AbortSignal, drop: () => void): Promise<ReadPicture> {
   return new Promise((done, fail) => {
+    const unwatch = watchMemory(child.pid, PARSER_LIMITS.resident_mb, () => child.kill('SIGKILL'))
     const end = (act: () => void) => {
+      unwatch()
       child.off('message', hear).off('exit', gone).off('error', fault)
       signal.removeEventListener('abort', abort)
       act()

@@ -3,6 +3,7 @@ import { spawn } from 'node:child_process'
 import { resolve } from 'node:path'
 import { PARSER_LIMITS } from '../../shared/limits.ts'
 import { answerSchema, type ParsedKind, type ParserAnswer } from './answer.ts'
+import { watchMemory } from './watch-memory.ts'
 
 export interface ParserOptions {
   signal: AbortSignal
@@ -10,6 +11,7 @@ export interface ParserOptions {
   script?: string
   time_s?: number
   heap_mb?: number
+  resident_mb?: number
 }
 
 /** A file that ends its parser is a file to refuse, not a job to repeat. */
@@ -29,6 +31,7 @@ export async function runParser(kind: ParsedKind, bytes: Uint8Array, options: Pa
     script = resolve('worker/child/parse.ts'),
     time_s = PARSER_LIMITS.time_s,
     heap_mb = PARSER_LIMITS.heap_mb,
+    resident_mb = PARSER_LIMITS.resident_mb,
   } = options
   signal.throwIfAborted()
   const args = [`--max-old-space-size=${heap_mb}`, '--import', 'tsx', script, kind]
@@ -40,6 +43,7 @@ export async function runParser(kind: ParsedKind, bytes: Uint8Array, options: Pa
   })
   const kill = () => child.kill('SIGKILL')
   signal.addEventListener('abort', kill, { once: true })
+  const unwatch = watchMemory(child.pid, resident_mb, kill)
   try {
     // A parser that dies while the file is still being handed over closes the pipe; its exit tells the rest.
     child.stdin.on('error', () => undefined)
@@ -56,6 +60,7 @@ export async function runParser(kind: ParsedKind, bytes: Uint8Array, options: Pa
     if (code !== 0 || size > MOST_ANSWER_BYTES) return { kind: 'refused', reason: `${TOO_MUCH} ${SEND_ELSE}` }
     return answerSchema.parse(JSON.parse(Buffer.concat(parts).toString()))
   } finally {
+    unwatch()
     signal.removeEventListener('abort', kill)
     kill()
   }
