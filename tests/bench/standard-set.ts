@@ -7,7 +7,7 @@ import { makeSet } from '../simulator/make-set.ts'
 
 /** What a photo is made by. What only samples, plans or ties use does not change it. */
 const SOURCES: ReadonlyArray<readonly [folder: string, files: RegExp]> = [
-  ['tests/simulator', /^(?!.*sample|expected|golden|scan-pdf).*\.ts$/],
+  ['tests/simulator', /^(?!.*sample|expected|golden|scan-pdf|foreign).*\.ts$/],
   ['shared/layouts', /^(layout|geometry|sheet-code|corner-modules|.*-\d+)\.ts$/],
   ['server/print', /^(page|sheet-.*)\.ts$/],
 ]
