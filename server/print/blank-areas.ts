@@ -7,8 +7,11 @@ import { FARMER_LINE } from './plan-lines.ts'
 const MARGIN_MM = { x: 1.5, above: 3, below: 1.5 }
 const COVER = '#d9d2c3'
 
-/** Places on the page, in millimetres: signatures and names, and the farmer's line of the typed block. */
-export function personalAreas(layout: Layout): Box[] {
+/**
+ * Places on the page, in millimetres: signatures and names, and the farmer's line of the typed block, which only a planned
+ * sheet has; a blank one has boxes to write in there.
+ */
+export function personalAreas(layout: Layout, planned: boolean): Box[] {
   const cells = layout.cells.filter((cell) => 'personal' in cell && cell.personal).map(cellBounds)
   const { x, y, columnWidth, rows, rowHeight } = layout.planBlock
   const farmer = {
@@ -23,16 +26,16 @@ export function personalAreas(layout: Layout): Box[] {
     width: box.width + 2 * MARGIN_MM.x,
     height: box.height + MARGIN_MM.above + MARGIN_MM.below,
   }))
-  return [...widened, farmer]
+  return planned ? [...widened, farmer] : widened
 }
 
 /** @param picture a JPEG of the whole page, flattened onto the layout */
-export async function blankAreas(picture: Buffer, layout: Layout): Promise<Buffer> {
+export async function blankAreas(picture: Buffer, layout: Layout, planned: boolean): Promise<Buffer> {
   const { default: sharp } = await import('sharp')
   const { width, height } = await sharp(picture).metadata()
   const across = width / layout.page.width
   const down = height / layout.page.height
-  const covers = personalAreas(layout).map((box) => {
+  const covers = personalAreas(layout, planned).map((box) => {
     const left = Math.max(0, Math.floor(box.x * across))
     const top = Math.max(0, Math.floor(box.y * down))
     const right = Math.min(width, Math.ceil((box.x + box.width) * across))

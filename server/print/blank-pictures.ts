@@ -81,7 +81,7 @@ async function blankPage(
     steps.push((db) => replacePicture(db, page.id, null))
     return null
   }
-  const blanked = await blankAreas(before, layout)
+  const blanked = await blankAreas(before, layout, page.planned)
   const key = `pictures/${page.id}/${randomUUID()}`
   await store.put(key, blanked)
   if (page.pictureKey) await store.put(page.pictureKey, blanked)

@@ -90,6 +90,15 @@ describe('withdrawing consent', () => {
     expect(sheet.readings.length).toBeGreaterThan(50)
   })
 
+  it('leaves the boxes alone that an unplanned sheet has where a planned one names the farmer', async () => {
+    const { planned, pageId, sheetId } = await photographed()
+    await server.deps.source.query('UPDATE sheets SET planned = false WHERE id = $1', [sheetId])
+    await agent.post(`/demonstrations/${planned.id}/withdraw-consent`, { reason: 'asked for' })
+    const { bytes } = await agent.get(`/pages/${pageId}/picture`)
+    const { x, y, rowHeight } = tillage1.planBlock
+    expect(await brightness(bytes, x + 20, y + 2 * rowHeight + 1)).toBeLessThan(20)
+  })
+
   it('leaves a salted hash in the trail, and the name nowhere', async () => {
     const { planned } = await photographed()
     await agent.post(`/demonstrations/${planned.id}/withdraw-consent`, { reason: 'sold the farm' })

@@ -12,6 +12,8 @@ export interface KeptPage {
   pictureKey: string | null
   /** Flattened onto this layout; null when the page could not be placed. */
   layout: { key: string; version: number } | null
+  /** What the plan knows is printed on it, the farmer's name too. */
+  planned: boolean
   /** It shows a sheet of the demonstration; false for another page of the same file. */
   concerned: boolean
 }
@@ -37,7 +39,7 @@ export async function listKeptFiles(db: Db, of: { demonstrationId: string; uploa
        SELECT s.id FROM sheets s JOIN runs r ON r.id = s.run_id JOIN trials t ON t.id = r.trial_id WHERE t.demonstration_id = $1)
      SELECT p.id, p.upload_id AS "uploadId", p.number, p.picture_key AS "pictureKey", u.kind, u.storage_key AS "storageKey",
        coalesce(p.sheet_id IN (SELECT id FROM theirs), false) AS concerned,
-       CASE WHEN p.state = 'read' THEN s.layout_key END AS "layoutKey", s.layout_version AS "layoutVersion"
+       coalesce(s.planned, false) AS planned, CASE WHEN p.state = 'read' THEN s.layout_key END AS "layoutKey", s.layout_version AS "layoutVersion"
      FROM pages p JOIN uploads u ON u.id = p.upload_id LEFT JOIN sheets s ON s.id = p.sheet_id
      WHERE ($2::uuid IS NULL OR u.id = $2) AND u.storage_key IS NOT NULL AND u.kind IS NOT NULL
        AND p.upload_id IN (SELECT upload_id FROM pages WHERE sheet_id IN (SELECT id FROM theirs))
