@@ -8,8 +8,8 @@ export interface LedgerColumn<Row> {
   figures?: boolean
   /** Stays on one line. */
   tight?: boolean
-  /** Left out where the window is narrower than a desk, or than a phone held upright. */
-  wide?: 'desk' | 'phone'
+  /** Decoration that is left out where the window is narrower than a desk. */
+  wide?: true
   /**
    * How the cell stands in a stacked row: `lead` heads it, `word` is a line of its own (both full width), `named` repeats the
    * column's head before it. Default: `named` for figures, else `word`.
@@ -24,7 +24,7 @@ export interface LedgerGroup<Row> {
   rows: readonly Row[]
 }
 
-const SHOWN = { desk: 'max-lg:hidden', phone: 'max-sm:hidden' } as const
+const WIDE = 'max-lg:hidden!'
 
 interface LedgerTableProps<Row> {
   /** Says what the table holds, for people who do not see it. */
@@ -56,7 +56,7 @@ export function LedgerTable<Row>(table: LedgerTableProps<Row>) {
               <th
                 key={column.key}
                 scope="col"
-                className={`label h-[30px] px-1 font-normal whitespace-nowrap first:pl-margin last:pr-margin ${column.figures ? 'text-right' : ''} ${column.wide ? SHOWN[column.wide] : ''}`}
+                className={`label h-[30px] px-1 font-normal whitespace-nowrap first:pl-margin last:pr-margin ${column.figures ? 'text-right' : ''} ${column.wide ? WIDE : ''}`}
               >
                 {column.head}
               </th>
@@ -123,7 +123,7 @@ function LedgerRow<Row>({ row, columns, held, quiet, stacked, onRow }: LedgerRow
         return (
           <td
             key={column.key}
-            className={`h-[30px] px-1 align-middle first:pl-margin last:pr-margin ${column.figures ? 'figures text-right whitespace-nowrap' : ''} ${column.tight ? 'whitespace-nowrap' : ''} ${stacked ? STACKED_CELL[stack] : ''}`}
+            className={`h-[30px] px-1 align-middle first:pl-margin last:pr-margin ${column.figures ? 'figures text-right whitespace-nowrap' : ''} ${column.tight ? 'whitespace-nowrap' : ''} ${column.wide ? WIDE : ''} ${stacked ? STACKED_CELL[stack] : ''}`}
           >
             {stacked && stack === 'named' && (
               <span aria-hidden="true" className="label font-sans font-normal whitespace-nowrap sm:hidden">

@@ -29,6 +29,7 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
   const columns: LedgerColumn<SheetRow>[] = [
     {
       key: 'age',
+      wide: true,
       head: <AgeHead from={from} now={now} />,
       cell: (row) => row.arrivedAt && <AgeStraw arrivedAt={row.arrivedAt} from={from} now={now} held={row.id === chosen} />,
     },
@@ -38,7 +39,7 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
       tight: true,
       cell: (row) => <span className="sums">{row.arrivedAt ? momentText(row.arrivedAt, now) : ''}</span>,
     },
-    { key: 'sheet', head: 'sheet', tight: true, cell: (row) => <SheetLink row={row} /> },
+    { key: 'sheet', stack: 'lead', head: 'sheet', tight: true, cell: (row) => <SheetLink row={row} /> },
     {
       key: 'what',
       head: 'tractor and implement',
@@ -48,6 +49,7 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
     { key: 'from', head: 'from', cell: (row) => row.demonstrator ?? '' },
     {
       key: 'doubts',
+      stack: 'named',
       head: 'doubts',
       tight: true,
       cell: (row) => (
@@ -67,6 +69,7 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
       inHand={(row) => row.id === chosen}
       quiet={withOther}
       onRow={onOpen}
+      stacked
     />
   )
 }
