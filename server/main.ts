@@ -2,9 +2,9 @@
 import { createApp } from './app.ts'
 import { BadSettings, readSettings, type Settings } from './config.ts'
 import { openDatabase } from './db/database.ts'
+import { createBoss } from './db/queue.ts'
 import { createListener } from './http/listen.ts'
 import { createLogger } from './http/log.ts'
-import { createBoss } from './queue/boss.ts'
 import { createFileStore } from './storage/store.ts'
 
 /** Longer than requests in hand are waited for, shorter than a supervisor's patience. */

@@ -2,8 +2,8 @@ import type PgBoss from 'pg-boss'
 import type { DataSource } from 'typeorm'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { openDatabase } from '../../server/db/database.ts'
+import { createBoss, sendJob } from '../../server/db/queue.ts'
 import { withClient } from '../../server/postgres/roles.ts'
-import { createBoss, sendJob } from '../../server/queue/boss.ts'
 import { createTestDatabase, type TestDatabase } from '../support/database.ts'
 
 let database: TestDatabase

@@ -8,11 +8,11 @@ import type { User } from '../../../shared/schemas/user.ts'
 import type { Db } from '../../db/database.ts'
 import type { SheetEntity } from '../../db/entities/sheet.ts'
 import { planOfRun, planValues } from '../../db/intake/plan-of-run.ts'
+import { sendJob } from '../../db/queue.ts'
 import { placePage } from '../../db/repositories/page-placing.ts'
 import { putReadings } from '../../db/repositories/reading.ts'
 import { lockSheetsByCode, noteOnSheet } from '../../db/repositories/sheet.ts'
 import type { Deps } from '../../http/route.ts'
-import { sendJob } from '../../queue/boss.ts'
 import { getSheet, writeOnSheet } from './change-sheet.ts'
 
 export async function placeSheet(deps: Deps, actor: User, id: string, input: PlaceSheet): Promise<Sheet> {

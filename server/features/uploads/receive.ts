@@ -1,6 +1,6 @@
 /** Files as they come over the wire: into a temporary folder, hashed on the way, never more than the limits. */
 import { createHash, randomUUID } from 'node:crypto'
-import { createReadStream, createWriteStream } from 'node:fs'
+import { createWriteStream } from 'node:fs'
 import { mkdir, mkdtemp, readdir, rm, stat } from 'node:fs/promises'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
@@ -147,10 +147,3 @@ function explain(cause: unknown): unknown {
 
 const brokenOff = (cause: Error) =>
   new UserError('invalid', 'The files did not arrive whole. Nothing was kept. Send them again.', { cause })
-
-/** The sha256 of a file on disk, hexadecimal: what `ReceivedFile` carries of one that came over the wire. */
-export async function hashFile(path: string): Promise<string> {
-  const hash = createHash('sha256')
-  await pipeline(createReadStream(path), hash)
-  return hash.digest('hex')
-}
