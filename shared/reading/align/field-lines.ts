@@ -1,7 +1,7 @@
 /** What is printed of a field, as lines across and down, in layout millimetres: the same numbers that print it. */
 import { type Box, boxesOf, layComb } from '../../layouts/geometry.ts'
 import { BOX, isComb, type LayoutCell, TICK } from '../../layouts/layout.ts'
-import type { Line } from './lines.ts'
+import { type Line, shareWhite } from './lines.ts'
 
 /** A part of a field that is measured on its own: up to three boxes of a comb, or one tick box. */
 export interface FieldPart {
@@ -29,7 +29,9 @@ function combParts(cell: Extract<LayoutCell, { format: string }>): FieldPart[] {
   const end = x + width
   const edges = boxes.flatMap((box) => [box.x, box.x + box.width]).filter((at) => at - x > 0.1 && end - at > 0.1)
   const between = edges.filter((at, i) => !edges.slice(0, i).some((other) => Math.abs(other - at) < 0.05))
-  const whole = [{ from: x - BOX.bar, to: x + HALF_FRAME }, ...between.map(thin), { from: end - HALF_FRAME, to: end + BOX.bar }]
+  const opening = { from: x - BOX.bar, to: x + HALF_FRAME }
+  const closing = { from: end - HALF_FRAME, to: end + BOX.bar }
+  const whole = shareWhite([opening, ...between.map(thin), closing])
   const parts = Math.max(1, Math.round(boxes.length / 3))
   return Array.from({ length: parts }, (_, part) => {
     const own = boxes.slice(Math.round((part * boxes.length) / parts), Math.round(((part + 1) * boxes.length) / parts))

@@ -34,6 +34,9 @@ const BAR_CONTRAST = 0.3
 /** What is compared on both sides of a bar's end, mm. */
 const BAR_SIDE_MM = 0.55
 
+/** What distance from the expected place costs, in support a mm; and a lean of one: rules and labels also run level. */
+const AWAY_COST = 0.08
+const LEAN_COST = 1.5
 /** Leans beside the one that neighbours give. */
 const LEANS = [0, 0.006, -0.006, 0.012, -0.012, 0.02, -0.02, 0.03, -0.03, 0.045, -0.045, 0.06, -0.06]
 
@@ -114,7 +117,7 @@ export function matchLevel(
   const end = field.x + field.width
   if (Math.abs(last.x + last.width - end) < 0.1) voters.push(barVoter(patch, end, field.y, field.y + field.height, dx, middle))
 
-  let best = { support: -1, shift: around.shift_mm, lean: around.lean }
+  let best = { value: -1, support: -1, shift: around.shift_mm, lean: around.lean }
   const step = patch.step_mm / 2
   const steps = Math.ceil(reach_mm / step)
   for (const bend of leans) {
@@ -122,10 +125,8 @@ export function matchLevel(
     for (let k = -steps; k <= steps; k++) {
       const shift = around.shift_mm + k * step
       const support = supportAt(voters, shift, lean)
-      const value = support - 0.02 * Math.abs(k * step) - Math.abs(bend)
-      if (value > best.support - 0.02 * Math.abs(best.shift - around.shift_mm) - Math.abs(best.lean - around.lean)) {
-        best = { support, shift, lean }
-      }
+      const value = support - AWAY_COST * Math.abs(k * step) - LEAN_COST * Math.abs(bend)
+      if (value > best.value) best = { value, support, shift, lean }
     }
   }
   return refine(voters, best)

@@ -16,6 +16,9 @@ export interface PartFit {
   ahead: number
   /** How far single lines are from the fit, mm. */
   spread_mm: number
+  /** Wider and leaning beside the map it was measured with. */
+  stretch: number
+  lean: number
 }
 
 const STEP_MM = 0.16
@@ -59,18 +62,20 @@ export function measureParts(patch: Patch, parts: readonly FieldPart[], reach_mm
   const beside =
     pitch_mm === null
       ? 0
-      : Math.max(support(columns, first.whole, along - pitch_mm), support(columns, first.whole, along + pitch_mm))
+      : Math.max(...[-pitch_mm, pitch_mm].map((to) => support(columns, first.whole, along + to, whole.stretch)))
   const ahead = whole.support - beside
+  const { lean } = down
   if (parts.length === 1) {
     const spread_mm = Math.max(whole.spread_mm, down.spread_mm)
-    return [{ dx: along, dy: down.shift_mm, supportX: whole.support, supportY: down.support, ahead, spread_mm }]
+    const { support: supportX, stretch } = whole
+    return [{ dx: along, dy: down.shift_mm, supportX, supportY: down.support, ahead, spread_mm, stretch, lean }]
   }
   const near = Math.min(PART_REACH_MM, reach_mm)
   const middle = field.x + field.width / 2
   return parts.map((part) => {
-    const x = matchLines(columns, part.upright, near, along)
     const own = (part.boxes[0]!.x + part.boxes.at(-1)!.x + part.boxes.at(-1)!.width) / 2 - middle
-    const around = { shift_mm: down.shift_mm + down.lean * own, lean: down.lean }
+    const x = matchLines(columns, part.upright, near, along + whole.stretch * own, stretchesAbout(whole.stretch))
+    const around = { shift_mm: down.shift_mm + lean * own, lean }
     const y = matchLevel(patch, [part], x.shift_mm, PART_LEVEL_REACH_MM, full, around, [0])
     return {
       dx: x.shift_mm,
@@ -79,6 +84,10 @@ export function measureParts(patch: Patch, parts: readonly FieldPart[], reach_mm
       supportY: y.support,
       ahead,
       spread_mm: Math.max(x.spread_mm, y.spread_mm),
+      stretch: x.stretch,
+      lean,
     }
   })
 }
+
+const stretchesAbout = (stretch: number) => [stretch, stretch - 0.02, stretch + 0.02]

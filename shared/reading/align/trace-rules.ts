@@ -5,6 +5,7 @@
 import type { Layout } from '../../layouts/layout.ts'
 import type { Homography } from '../geometry/homography.ts'
 import { type Anchor, displacementAt } from '../geometry/residual-field.ts'
+import type { Mark } from './marks.ts'
 import { type Picture, samplePatch } from './patch.ts'
 
 /** Section rules are printed from the left to the right margin, this far from the page's edges, mm. */
@@ -94,14 +95,14 @@ function trace(
 }
 
 /** Heights of the rule under the head and of all section rules, where both traces agree or only one came by. */
-export function traceRules(picture: Picture, layout: Layout, homography: Homography, anchors: readonly Anchor[]): Anchor[] {
+export function traceRules(picture: Picture, layout: Layout, homography: Homography, anchors: readonly Anchor[]): Mark[] {
   const sections = layout.sections.map(({ y }) => ({ y, left: MARGIN_MM, right: layout.page.width - MARGIN_MM }))
   return [HEAD_RULE, ...sections].flatMap(({ y, left, right }) => {
     const forth = trace(picture, homography, anchors, y, left, right)
     const back = trace(picture, homography, anchors, y, right, left)
     return thin(merge(forth, back)).map(({ x, dy }) => {
       const { dx } = displacementAt(anchors, { x, y })
-      return { x, y, dx, dy, weight: 0.5, onlyDown: true as const }
+      return { key: 'rule', field: 'rule', x, y, dx, dy, weight: 0.5, onlyDown: true as const }
     })
   })
 }

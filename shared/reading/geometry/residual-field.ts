@@ -14,6 +14,8 @@ export interface Anchor {
   weight: number
   /** A line across the page tells how high it stands, and nothing of left and right. */
   onlyDown?: true
+  /** How the displacement changes along x, where the anchor is wide enough to tell; worth so many mm² of spread. */
+  slope?: { dxx: number; dyx: number; worth_mm2: number }
 }
 
 /** A displacement and how it changes: d(p) = (dx, dy) + (dxx, dyx)(p.x - x) + (dxy, dyy)(p.y - y). */
@@ -73,6 +75,13 @@ function fitNear(anchors: readonly Anchor[], at: Point, skip: ((anchor: Anchor) 
     v += w * anchor.dy
     vx += wx * anchor.dy
     vy += wy * anchor.dy
+    const { slope } = anchor
+    if (slope) {
+      txx += w * slope.worth_mm2
+      vx += w * slope.worth_mm2 * slope.dyx
+      sxx += w * slope.worth_mm2
+      ux += w * slope.worth_mm2 * slope.dxx
+    }
     if (anchor.onlyDown) continue
     across++
     s += w

@@ -1,0 +1,103 @@
+/** Places on the page that are known, and whether they agree with each other. */
+import type { FieldMap } from '../geometry/page-map.ts'
+import { type Anchor, displacementAt } from '../geometry/residual-field.ts'
+import type { Point } from '../pixels/grey.ts'
+import type { FieldPart } from './field-lines.ts'
+import type { PartFit } from './measure-part.ts'
+
+export interface Mark extends Anchor {
+  /** 'code', 'square', 'rule', or the field's key and part. */
+  key: string
+  /** The field it belongs to: parts of one field stand or fall together, so they do not vouch for each other. */
+  field: string
+  /** Its own lines leave no doubt where it is. */
+  plain?: boolean
+  spread_mm?: number
+  ahead?: number
+}
+
+/** Disagreement with the neighbours that is refused, mm: at least this, or some times the page's usual one. */
+const DISAGREE_MM = 0.55
+const DISAGREE_TIMES = 4
+/** A field whose own lines leave no doubt may differ so far, mm: paper folds; it is still far from the next box. */
+const DISAGREE_PLAIN_MM = 1.8
+/** But not so far up and down, where the section rules have been followed and a rule may stand beside a frame. */
+const DISAGREE_PLAIN_DOWN_MM = 0.6
+const PLAIN = { support: 0.65, ahead: 0.25 } as const
+/** Of marks that disagree, only the worst within this distance is taken out at a time, mm: it may be what spoils the others. */
+const SPOILS_MM = 22
+const MOST_ROUNDS = 6
+const TICK_WEIGHT = 0.4
+
+export const distance = (a: Point, b: Point) => Math.hypot(a.x - b.x, a.y - b.y)
+
+/** Distance to the nearest anchor that tells of left and right as well. */
+export const nearest = (anchors: readonly Anchor[], p: Point) =>
+  anchors.reduce((least, a) => (a.onlyDown ? least : Math.min(least, distance(a, p))), 1e9)
+
+export const centerOf = (part: FieldPart): Point => {
+  const first = part.boxes[0]!
+  const last = part.boxes.at(-1)!
+  return { x: (first.x + last.x + last.width) / 2, y: first.y + first.height / 2 }
+}
+
+export const keyOf = (part: FieldPart) => `${part.key} ${part.part}`
+
+/** Where a fit puts the middle of a part: the shift is in the field's own, slightly turned and stretched, frame. */
+export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boolean): Mark {
+  const center = centerOf(part)
+  const u = center.x - map.center.x
+  const v = center.y - map.center.y
+  const d = map.displacement
+  const mark = {
+    key: keyOf(part),
+    field: part.key,
+    x: center.x,
+    y: center.y,
+    dx: d.dx + d.dxx * (u + fit.dx) + d.dxy * (v + fit.dy) + fit.dx,
+    dy: d.dy + d.dyx * (u + fit.dx) + d.dyy * (v + fit.dy) + fit.dy,
+    weight: tick ? TICK_WEIGHT : 1,
+    plain: !tick && Math.min(fit.supportX, fit.supportY) >= PLAIN.support && fit.ahead >= PLAIN.ahead,
+    spread_mm: fit.spread_mm,
+    ahead: fit.ahead,
+  }
+  if (part.pitch_mm === null) return mark
+  const width = part.boxes.at(-1)!.x + part.boxes.at(-1)!.width - part.boxes[0]!.x
+  return { ...mark, slope: { dxx: d.dxx + fit.stretch, dyx: d.dyx + fit.lean, worth_mm2: (width / 4) ** 2 } }
+}
+
+const isField = (mark: Mark) => mark.key !== mark.field
+
+/** How far a mark is from where the others (not of its own field) put it, mm. */
+export function disagreement(marks: readonly Mark[], mark: Mark): number {
+  const { x, y } = apart(marks, mark)
+  return Math.hypot(x, y)
+}
+
+function apart(marks: readonly Mark[], mark: Mark): Point {
+  const d = displacementAt(marks, mark, (other) => other === mark || (isField(mark) && (other as Mark).field === mark.field))
+  return { x: d.dx - mark.dx, y: d.dy - mark.dy }
+}
+
+/** Takes out the worst marks again and again while they disagree with their neighbours. */
+export function refuseOutliers(marks: Mark[]): Mark[] {
+  let kept = marks
+  for (let round = 0; round < MOST_ROUNDS; round++) {
+    const off = kept.map((mark) => {
+      const { x, y } = mark.key === 'code' || mark.key === 'rule' ? { x: 0, y: 0 } : apart(kept, mark)
+      return { mm: Math.hypot(x, y), allowed: mark.plain && Math.abs(y) < DISAGREE_PLAIN_DOWN_MM }
+    })
+    const usual = off.map((o) => o.mm).sort((a, b) => a - b)[kept.length >> 1] ?? 0
+    const limit = Math.max(DISAGREE_MM, DISAGREE_TIMES * usual)
+    const worst = new Set(
+      kept.filter((mark, i): boolean => {
+        const { mm, allowed } = off[i]!
+        if (mm <= (allowed ? DISAGREE_PLAIN_MM : limit)) return false
+        return !kept.some((o, j) => off[j]!.mm > mm && distance(o, mark) < SPOILS_MM)
+      }),
+    )
+    if (worst.size === 0) break
+    kept = kept.filter((mark) => !worst.has(mark))
+  }
+  return kept
+}

@@ -1,0 +1,50 @@
+/** The last word on each part: found on its own lines, sure by its neighbours, or not found. */
+import { type Displacement, displacementAt } from '../geometry/residual-field.ts'
+import type { Point } from '../pixels/grey.ts'
+import type { FieldPart } from './field-lines.ts'
+import { centerOf, disagreement, distance, keyOf, type Mark } from './marks.ts'
+
+export interface PlacedPart {
+  part: FieldPart
+  center: Point
+  displacement: Displacement
+  /** Found on its own lines, or between neighbours that leave no room for doubt. */
+  found: boolean
+  /** How far it may be off, mm: by its own lines where they are plain, else by its neighbours. */
+  fit_mm: number
+}
+
+/** Neighbours vouch for a field whose own lines are covered by ink: so many, so near, agreeing so well (median, mm). */
+const VOUCH = { count: 4, within_mm: 32, agree_mm: 0.25 } as const
+/** A field between its neighbours may be off by this much more than they are from each other. */
+const BETWEEN = 1.5
+
+export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[]): PlacedPart[] {
+  const byKey = new Map(marks.map((mark) => [mark.key, mark]))
+  const off = new Map(
+    parts.flatMap((part) => {
+      const mark = byKey.get(keyOf(part))
+      return mark ? [[mark, disagreement(marks, mark)] as const] : []
+    }),
+  )
+  return parts.map((part): PlacedPart => {
+    const center = centerOf(part)
+    const mark = byKey.get(keyOf(part))
+    const around = displacementAt(marks, center, (other) => other !== mark && (other as Mark).field === part.key)
+    if (!mark) {
+      const fit_mm = vouched(part, center, off)
+      return { part, center, displacement: around, found: fit_mm !== null, fit_mm: fit_mm ?? Number.NaN }
+    }
+    const { dx, dy, slope, plain, spread_mm } = mark
+    const displacement = { ...around, dx, dy, dxx: slope?.dxx ?? around.dxx, dyx: slope?.dyx ?? around.dyx }
+    const fit_mm = plain && spread_mm !== undefined && !Number.isNaN(spread_mm) ? spread_mm : off.get(mark)!
+    return { part, center, displacement, found: true, fit_mm }
+  })
+}
+
+function vouched(part: FieldPart, center: Point, off: ReadonlyMap<Mark, number>): number | null {
+  const near = [...off].flatMap(([mark, mm]) => (mark.field !== part.key && distance(mark, center) < VOUCH.within_mm ? [mm] : []))
+  if (near.length < VOUCH.count) return null
+  const agree = near.sort((a, b) => a - b)[near.length >> 1]!
+  return agree <= VOUCH.agree_mm ? BETWEEN * agree : null
+}
