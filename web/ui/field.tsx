@@ -24,7 +24,7 @@ export function FieldRow({ label, unit, hint, error, children }: FieldFrame & { 
         <label htmlFor={id} className="flex items-center py-1 pr-2 font-[600] max-sm:pb-0">
           {label}
         </label>
-        <div className="flex items-stretch border-l border-line bg-leaf max-sm:border-l-0">
+        <div className="flex items-stretch border-l border-line bg-leaf max-sm:mb-1 max-sm:border-2 max-sm:border-ink">
           {children({ id, 'aria-invalid': error !== undefined, 'aria-describedby': says === '' ? undefined : says })}
           {unit && <span className="flex items-center px-1 text-graphite">{unit}</span>}
         </div>

@@ -37,7 +37,7 @@ export function Tally({ settled, waiting, inHand = false }: { settled: number; w
 
 /** As many leaning stalks as there are doubts, in groups of five; the count stands beside it. */
 export function Stalks({ doubts, held = false }: { doubts: number; held?: boolean }) {
-  const shown = Math.min(doubts, 15)
+  const shown = Math.min(doubts, 10)
   const places = Array.from({ length: shown }, (_, i) => 3 + i * 5 + Math.floor(i / 5) * 4)
   return (
     <svg

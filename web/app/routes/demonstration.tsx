@@ -4,10 +4,10 @@ import { findLayout } from '../../../shared/layouts/registry.ts'
 import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
 import { sheetStateSchema } from '../../../shared/schemas/sheet.ts'
 import type { Role } from '../../../shared/schemas/user.ts'
-import { CheckList } from '../../features/demonstrations/components/check-list.tsx'
+import { Cautions, CheckList } from '../../features/demonstrations/components/check-list.tsx'
 import { DayFacts } from '../../features/demonstrations/components/day-facts.tsx'
 import { TakeAlong } from '../../features/demonstrations/components/take-along.tsx'
-import { TrialRuns } from '../../features/demonstrations/components/trial-runs.tsx'
+import { hasArrived, TrialRuns } from '../../features/demonstrations/components/trial-runs.tsx'
 import { WithdrawConsent } from '../../features/demonstrations/components/withdraw-consent.tsx'
 import { demonstrationQueries, useWithdrawConsent } from '../../features/demonstrations/demonstrations.queries.ts'
 import { STATE_WORDS } from '../../features/sheets/sheet-words.ts'
@@ -39,8 +39,8 @@ function DayPage({ day }: { day: Demonstration }) {
   const withdraw = useWithdrawConsent(day.id)
   const layout = findLayout(LAYOUT)
   const mayPlan = me.role === 'demonstrator' || me.role === 'admin'
-  const runs = day.trials.reduce((sum, trial) => sum + trial.runs.length, 0)
-  const entered = day.trials.flatMap((trial) => trial.runs).filter((run) => run.recordNumber !== null).length
+  const runs = day.trials.flatMap((trial) => trial.runs)
+  const entered = runs.filter((run) => run.recordNumber !== null).length
   return (
     <Page
       title={`${day.place.name}, ${dateText(day.heldOn)}`}
@@ -49,12 +49,18 @@ function DayPage({ day }: { day: Demonstration }) {
           Demonstrations
         </Link>
       }
-      sentence={`${day.place.name}, ${weekdayOf(`${day.heldOn}T12:00`)} ${dateText(day.heldOn)}: ${counted(day.trials.length, 'trial')}, ${counted(runs, 'run')}, ${entered} in the book.`}
+      sentence={`${day.place.name}, ${weekdayOf(`${day.heldOn}T12:00`)} ${dateText(day.heldOn)}: ${counted(day.trials.length, 'trial')}, ${counted(runs.length, 'run')}, ${entered} in the book.`}
       aside={mayPlan && <ButtonLink to={paths.editDemonstration.to(day.id)}>Change the plan</ButtonLink>}
     >
       <div className="grid grid-cols-[minmax(0,8fr)_minmax(0,4fr)] max-lg:grid-cols-1">
         <div className="border-r-[3px] border-double border-line max-lg:border-r-0">
-          <TakeAlong id={day.id} runs={runs} mayPrint={me.role !== 'analyst'} layout={LAYOUT} />
+          <TakeAlong
+            id={day.id}
+            runs={runs.length}
+            toCome={runs.filter((run) => !hasArrived(run)).length}
+            mayPrint={me.role !== 'analyst'}
+            layout={LAYOUT}
+          />
           <section aria-labelledby="trials" className="pt-2 pb-3">
             <h2 id="trials" className="away">
               Trials and runs
@@ -64,6 +70,7 @@ function DayPage({ day }: { day: Demonstration }) {
               links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint: me.role !== 'analyst' }}
             />
           </section>
+          {layout && <CheckList layout={layout} />}
         </div>
         <div>
           <DayFacts day={day} mayKnowFarmer={me.role !== 'analyst'}>
@@ -75,7 +82,7 @@ function DayPage({ day }: { day: Demonstration }) {
               />
             )}
           </DayFacts>
-          {layout && <CheckList layout={layout} />}
+          <Cautions />
         </div>
       </div>
     </Page>

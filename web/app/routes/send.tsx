@@ -6,6 +6,7 @@ import { NotYetSentList } from '../../features/uploads/components/not-yet-sent.t
 import { PickFiles } from '../../features/uploads/components/pick-files.tsx'
 import { UploadList } from '../../features/uploads/components/upload-list.tsx'
 import { outbox } from '../../features/uploads/outbox.ts'
+import { justSentFirst } from '../../features/uploads/outcome.ts'
 import { uploadQueries } from '../../features/uploads/uploads.queries.ts'
 import { useOutbox } from '../../features/uploads/use-outbox.ts'
 import { useMe } from '../../lib/me.ts'
@@ -19,9 +20,7 @@ export function Component() {
   const uploads = useQuery(uploadQueries.list())
   const { answers } = useOutbox()
   const sheetPath = me.role === 'demonstrator' ? paths.mySheet.to : paths.deskSheet.to
-  const known = new Set(uploads.data?.map((upload) => upload.id))
-  // What was not accepted is not kept by the server; its answer is shown from here.
-  const shown = [...answers.filter((answer) => !known.has(answer.id)), ...(uploads.data ?? [])]
+  const shown = justSentFirst(uploads.data ?? [], answers)
   return (
     <Page title="Send sheets" sentence={sentenceFor(me.role, forSheet)}>
       <PickFiles onFiles={(files) => void outbox.add(files, forSheet)} />

@@ -51,3 +51,12 @@ function doubtsSaid({ sheet }: UploadPage): string {
   if (sheet.openDoubts === 0) return 'No doubts. You can leave.'
   return `${counted(sheet.openDoubts, 'doubt')} ${sheet.openDoubts === 1 ? 'goes' : 'go'} to the desk. You can leave.`
 }
+
+/** What was sent just now stands first, also when it was here before; the list knows best how far each is. */
+export function justSentFirst(listed: readonly Upload[], answers: readonly Upload[]): Upload[] {
+  const byId = new Map(listed.map((upload) => [upload.id, upload]))
+  const sent = new Map(
+    answers.map((answer) => [answer.id, { ...(byId.get(answer.id) ?? answer), seenBefore: answer.seenBefore }]),
+  )
+  return [...sent.values(), ...listed.filter((upload) => !sent.has(upload.id))]
+}

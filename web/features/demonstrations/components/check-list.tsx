@@ -14,7 +14,7 @@ const CAUTIONS = [
   'Before the road: tank lines back, jar off and capped, leaks checked again, and the sheet says who did it and when.',
 ] as const
 
-/** What must be seen and ticked on each sheet before the first jar reading, and what may hurt. */
+/** What must be seen and ticked on each sheet before the first jar reading. */
 export function CheckList({ layout }: { layout: Layout }) {
   const checks = layout.cells.filter((cell) => cell.section === BEFORE && cell.kind === 'tick')
   return (
@@ -23,7 +23,7 @@ export function CheckList({ layout }: { layout: Layout }) {
         Before the first jar reading
       </h2>
       <p className="label pb-1">Each sheet asks for these {checks.length} ticks; a figure without them does not count.</p>
-      <ul className="border-t-[1.5px] border-ink">
+      <ul className="grid grid-cols-2 gap-x-3 border-t-[1.5px] border-ink max-sm:grid-cols-1">
         {checks.map((cell) => (
           <li key={cell.key} className="flex items-center gap-1.5 border-b border-feint py-0.5 max-sm:text-2">
             <span aria-hidden="true" className="size-[14px] shrink-0 border-[1.5px] border-ink bg-leaf" />
@@ -31,7 +31,17 @@ export function CheckList({ layout }: { layout: Layout }) {
           </li>
         ))}
       </ul>
-      <h3 className="pt-3 pb-1 text-0">What may hurt somebody</h3>
+    </section>
+  )
+}
+
+/** What may hurt somebody: read aloud before the day begins. */
+export function Cautions() {
+  return (
+    <section aria-labelledby="cautions" className="px-margin py-3">
+      <h2 id="cautions" className="pb-1 text-2">
+        What may hurt somebody
+      </h2>
       <ul className="border-t-[1.5px] border-ink">
         {CAUTIONS.map((caution) => (
           <li key={caution} className="border-b border-feint py-0.5">

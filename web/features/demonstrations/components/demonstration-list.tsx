@@ -14,7 +14,7 @@ const day: LedgerColumn<DemonstrationRow> = {
   tight: true,
   stack: 'lead',
   cell: (row) => (
-    <Link className="word" to={paths.demonstration.to(row.id)}>
+    <Link className="word max-sm:inline-flex max-sm:min-h-[44px] max-sm:items-center" to={paths.demonstration.to(row.id)}>
       {weekdayOf(`${row.heldOn}T12:00`)} {dateText(row.heldOn)}, {row.place.name}
     </Link>
   ),

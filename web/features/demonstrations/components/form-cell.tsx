@@ -16,7 +16,7 @@ interface FormCellProps {
 }
 
 /** What a person types or chooses is pen blue. */
-const TYPED = 'figures min-h-[44px] w-full min-w-0 bg-leaf px-1 text-pen'
+const TYPED = 'figures min-h-[44px] w-full min-w-0 border-b-[1.5px] border-ink bg-leaf max-sm:border-2 px-1 text-pen'
 
 /** A cell of a ruled row: its label above it as on a printed form, error and note below. */
 export function FormCell({ label, error, note, className = '', children }: FormCellProps) {

@@ -2,7 +2,19 @@ import type { ReactNode } from 'react'
 import { counted } from '../../../lib/words.ts'
 
 /** Papers for the day. The day's own sheets carry the plan in print; the blank sheet and the form serve what nobody planned. */
-export function TakeAlong({ id, runs, mayPrint, layout }: { id: string; runs: number; mayPrint: boolean; layout: string }) {
+interface TakeAlongProps {
+  id: string
+  runs: number
+  /** Sheets of the plan that have not come in yet. */
+  toCome: number
+  mayPrint: boolean
+  layout: string
+}
+
+const FIRST =
+  'mb-1 inline-flex min-h-[48px] items-center bg-ink px-4 text-2 font-[650] text-white no-underline max-sm:w-full max-sm:justify-center'
+
+export function TakeAlong({ id, runs, toCome, mayPrint, layout }: TakeAlongProps) {
   return (
     <section aria-labelledby="take-along" className="px-margin pt-3">
       <h2 id="take-along" className="pb-1 text-2">
@@ -13,7 +25,7 @@ export function TakeAlong({ id, runs, mayPrint, layout }: { id: string; runs: nu
           href={`/api/demonstrations/${id}/sheets.pdf`}
           target="_blank"
           rel="noreferrer"
-          className="mb-1 inline-flex min-h-[48px] items-center bg-ink px-4 text-2 font-[650] text-white no-underline max-sm:w-full max-sm:justify-center"
+          className={toCome > 0 ? FIRST : 'word mb-1 inline-block max-sm:min-h-[44px]'}
         >
           Print {runs === 1 ? 'the sheet' : `all ${counted(runs, 'sheet')}`}
         </a>

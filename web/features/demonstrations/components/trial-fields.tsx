@@ -29,15 +29,16 @@ export function TrialFields({ index, register, errors, choices, kit, heldOn, onT
   const name = <K extends keyof SaveDemonstration['trials'][number]>(key: K) => register(`trials.${index}.${key}`)
   return (
     <fieldset className="border-b border-line py-2">
-      <legend className="float-left w-full pb-0.5">
-        <span className="font-[700]">Trial {index + 1}</span>
-      </legend>
-      {onTakeOut && (
-        <Button look="word" className="float-right -mt-4" aria-label={`Take trial ${index + 1} out`} onClick={onTakeOut}>
-          take out
-        </Button>
-      )}
-      <div className="clear-both grid grid-cols-[1.2fr_1.5fr_1.2fr_1.4fr_84px] items-start gap-x-2 gap-y-1 max-lg:grid-cols-2 max-sm:grid-cols-1">
+      <legend className="away">Trial {index + 1}</legend>
+      <div className="flex items-baseline justify-between pb-0.5">
+        <h3 className="text-0">Trial {index + 1}</h3>
+        {onTakeOut && (
+          <Button look="word" aria-label={`Take trial ${index + 1} out`} onClick={onTakeOut}>
+            take out
+          </Button>
+        )}
+      </div>
+      <div className="grid grid-cols-[1.2fr_1.5fr_1.2fr_1.4fr_84px] items-start gap-x-2 gap-y-1 max-lg:grid-cols-2 max-sm:grid-cols-1">
         <FormCell label="tractor" error={wrong?.tractorId?.message}>
           {(tied) => <Options {...tied} {...name('tractorId')} options={choices.tractors} />}
         </FormCell>

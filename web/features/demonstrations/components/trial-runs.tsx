@@ -42,19 +42,30 @@ const TrialHead = ({ trial }: { trial: Trial }) => (
 
 function columnsFor({ sheetPath, stateMark, mayPrint }: RunLinks): LedgerColumn<Run>[] {
   return [
-    { key: 'run', head: 'run', tight: true, stack: 'lead', cell: (run) => `run ${run.number}` },
+    { key: 'run', head: 'run', tight: true, stack: 'named', cell: (run) => <strong>{run.number}</strong> },
     { key: 'sheet', head: 'sheet', tight: true, stack: 'named', cell: (run) => sheetOf(run, sheetPath) },
-    { key: 'state', head: 'where it stands', stack: 'named', cell: (run) => stateMark(run.sheetState ?? 'printed') },
+    {
+      key: 'state',
+      head: 'where it stands',
+      stack: 'named',
+      cell: (run) => (
+        <span className="inline-flex items-baseline gap-2">
+          {stateMark(run.sheetState ?? 'printed')}
+          {mayPrint && !hasArrived(run) && printOf(run)}
+        </span>
+      ),
+    },
     { key: 'record', head: 'record', tight: true, stack: 'named', cell: recordOf },
-    { key: 'print', head: 'paper', tight: true, stack: 'named', cell: (run) => (mayPrint ? printOf(run) : '–') },
   ]
 }
+
+/** A sheet that has arrived is not printed again: its twin would only make a doubt. */
+export const hasArrived = (run: Run): boolean => run.sheetState !== null && run.sheetState !== 'printed'
 
 function sheetOf(run: Run, sheetPath: RunLinks['sheetPath']): ReactNode {
   if (!run.sheetCode) return '–'
   const code = formatSheetCode(run.sheetCode)
-  const arrived = run.sheetId !== null && run.sheetState !== null && run.sheetState !== 'printed'
-  if (!arrived || !sheetPath || !run.sheetId) return <span className="figures">{code}</span>
+  if (!hasArrived(run) || !sheetPath || !run.sheetId) return <span className="figures">{code}</span>
   return (
     <Link className="word figures" to={sheetPath(run.sheetId)}>
       {code}
@@ -72,10 +83,8 @@ const recordOf = (run: Run): ReactNode =>
   )
 
 const printOf = (run: Run): ReactNode =>
-  run.sheetId === null ? (
-    '–'
-  ) : (
+  run.sheetId && (
     <a className="word" href={`/api/sheets/${run.sheetId}/sheet.pdf`} target="_blank" rel="noreferrer">
-      print<span className="away"> the sheet of run {run.number}</span>
+      print it<span className="away">: the sheet of run {run.number}</span>
     </a>
   )

@@ -1,6 +1,6 @@
 import { DAY_MS, dayOf, weekdayOf } from '../../../lib/time.ts'
 
-export const AGE_PX = 216
+export const AGE_PX = 180
 const EAR_PX = 20
 /** Older sheets begin at the left edge. */
 const MOST_DAYS = 14

@@ -27,7 +27,7 @@ export function CropOrOrigin({ desk, acts, picture, boxRef }: CropOrOriginProps)
       ) : (
         <p className="border-[1.5px] border-ink bg-leaf px-2 py-1">
           <span className="label">{reading?.cellRef ? 'from the spreadsheet cell' : 'keyed beside the picture'}</span>{' '}
-          <span className="figures text-3">{reading?.cellRef ?? shown.label}</span>
+          <span className="figures text-2">{reading?.cellRef ?? shown.label}</span>
         </p>
       )}
     </section>

@@ -45,8 +45,8 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
       head: 'tractor and implement',
       cell: (row) => [row.tractor, row.implement].filter(Boolean).join(', ') || 'not known',
     },
-    { key: 'place', head: 'place', cell: (row) => row.place ?? '' },
-    { key: 'from', head: 'from', cell: (row) => row.demonstrator ?? '' },
+    { key: 'place', tight: true, head: 'place', cell: (row) => row.place ?? '' },
+    { key: 'from', tight: true, head: 'from', cell: (row) => row.demonstrator ?? '' },
     {
       key: 'doubts',
       stack: 'named',

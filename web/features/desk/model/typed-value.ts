@@ -43,12 +43,15 @@ export function boxCharacters(cell: CombCell, value: Value, values: Values): str
   const count = boxCount(cell)
   if (value === null || typeof value === 'boolean') return Array.from({ length: count }, () => '')
   const text = charactersOf(cell, value, values)
-  if (text.length > count) return null
+  if (text === null || text.length > count) return null
   return [...text.padStart(count)].map((c) => c.trim())
 }
 
-function charactersOf(cell: CombCell, value: number | string, values: Values): string {
+/** Null where the boxes cannot hold it: pressures in bar need their unit before they are hundredths. */
+function charactersOf(cell: CombCell, value: number | string, values: Values): string | null {
   if (cell.kind === 'date') return String(value).split('-').reverse().join('')
   if (typeof value === 'string') return value.replaceAll(/\D/g, '')
-  return (value / scaleOf(cell, values)).toFixed(places(cell)).replace('.', '')
+  const written = value / scaleOf(cell, values)
+  const text = written.toFixed(places(cell))
+  return Math.abs(Number(text) - written) < 1e-6 ? text.replace('.', '') : null
 }
