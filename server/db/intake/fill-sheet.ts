@@ -15,7 +15,10 @@ type Target = Pick<SheetEntity, 'id' | 'state' | 'ownerId' | 'runId'>
 export async function fillSheet(db: Db, sheet: Target, page: PageEntity, upload: UploadEntity, read: ReadPage): Promise<string> {
   const plan = sheet.runId ? await planOfRun(db, sheet.runId) : null
   const before = await listReadings(db, sheet.id)
-  const rows = [...readRows(sheet.id, page.id, read), ...(read.planned && plan ? planRows(sheet.id, planValues(plan)) : [])]
+  const planned = read.planned && plan ? planRows(sheet.id, planValues(plan)) : []
+  // What the plan knows is printed, not read: the plan's word stands where both have the cell.
+  const known = new Set(planned.map((row) => row.key))
+  const rows = [...readRows(sheet.id, page.id, read).filter((row) => !known.has(row.key)), ...planned]
   await putReadings(
     db,
     rows.filter((row) => !settledAlike(before, row)),
