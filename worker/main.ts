@@ -29,7 +29,9 @@ async function run(settings: WorkerSettings): Promise<void> {
       poolSize: settings.databasePool,
       log,
       handlers: ({ source, boss }) => {
-        reader = createReadingProcess({ listKnown: () => listKnownNumbers(source.manager) })
+        const reading = createReadingProcess({ listKnown: () => listKnownNumbers(source.manager) })
+        reading.warm()
+        reader = reading
         return [
           uploadSplitJob({ source, boss, files, parse: runParser }),
           pageReadJob({ source, files, reader }),

@@ -4,6 +4,7 @@ import { buffer } from 'node:stream/consumers'
 import PDFDocument from 'pdfkit'
 import sharp from 'sharp'
 import { afterAll, beforeAll, expect, it } from 'vitest'
+import { isAlive } from '../../server/postgres/postmaster.ts'
 import type { Sheet } from '../../shared/schemas/sheet.ts'
 import type { Upload } from '../../shared/schemas/upload.ts'
 import type { TestAgent } from '../support/agent.ts'
@@ -29,9 +30,7 @@ beforeAll(async () => {
   })
 })
 afterAll(async () => {
-  const ended = new Promise((resolve) => worker.once('exit', resolve))
-  worker.kill('SIGTERM')
-  await ended
+  worker.kill('SIGKILL')
   await server.close()
 })
 
@@ -123,4 +122,16 @@ it('a scanned page that is no sheet can be looked at where its corners are set, 
 it('a picture with nothing to read is answered with what to do', async () => {
   const upload = await send('samples/nothing/nothing.jpg')
   expect(upload.pages).toMatchObject([{ state: 'take again', takeAgain: { advice: expect.stringMatching(/\w{3,}/) } }])
+})
+
+it('a worker told to end does so in order within 20 seconds, and takes its reading process with it', async () => {
+  const children = (await readFile(`/proc/${worker.pid}/task/${worker.pid}/children`, 'utf8')).trim().split(' ').map(Number)
+  expect(children.filter(Boolean).length).toBeGreaterThan(0)
+  const told = Date.now()
+  const ended = new Promise((resolve) => worker.once('exit', resolve))
+  worker.kill('SIGTERM')
+  expect(await ended).toBe(0)
+  // G-R13: 20 s from the signal to the end.
+  expect(Date.now() - told).toBeLessThan(20_000)
+  await waitFor(() => children.filter(Boolean).every((pid) => !isAlive(pid)), { what: 'the reading process to end' })
 })

@@ -14,7 +14,11 @@ interface ReadingOptions {
   script?: string
 }
 
-export function createReadingProcess({ listKnown, script = resolve('worker/child/reading.ts') }: ReadingOptions): PageReader {
+/** Call `warm` at the start: nets and code finder take seconds to load, which the first photo of the day need not wait for. */
+export function createReadingProcess({
+  listKnown,
+  script = resolve('worker/child/reading.ts'),
+}: ReadingOptions): PageReader & { warm(): void } {
   let child: ChildProcess | undefined
   let last = 0
   const living = () => {
@@ -28,6 +32,7 @@ export function createReadingProcess({ listKnown, script = resolve('worker/child
     return child
   }
   return {
+    warm: () => void living(),
     read: async (picture: PagePicture, signal: AbortSignal) => {
       const known = await listKnown()
       signal.throwIfAborted()
