@@ -1,5 +1,5 @@
 /**
- * Sets a corner code's known pattern onto the picture to a small fraction of a pixel: Gauss-Newton on an affine correction,
+ * Sets a corner code's known pattern onto the picture (its middle to a tenth of a pixel, its corners to a tenth of a module): Gauss-Newton on an affine correction,
  * with the print's contrast and the paper's level as two further unknowns.
  */
 import { type Homography, multiply, project } from '../geometry/homography.ts'
@@ -127,9 +127,10 @@ export function registerPattern(grey: Grey, pattern: Pattern, start: Homography)
     const correction = [1 - b, -c, -a + b * middle + c * middle, -e, 1 - f, -d + e * middle + f * middle, 0, 0, 1]
     toPhoto = multiply(toPhoto, correction)
     const step = Math.hypot(a, d)
+    const turn = Math.abs(b) + Math.abs(c) + Math.abs(e) + Math.abs(f)
     moved += step
-    if (moved > 3 || Math.abs(b) + Math.abs(c) + Math.abs(e) + Math.abs(f) > 0.4) return null
-    if (step < STILL_MODULES && round > 0) break
+    if (moved > 3 || turn > 0.4) return null
+    if (step < STILL_MODULES && turn * middle < 2 * STILL_MODULES) break
   }
   return { toPhoto, correlation: correlate(grey, pattern, toPhoto, 2) }
 }
