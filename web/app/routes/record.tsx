@@ -3,7 +3,7 @@ import { Link, useParams, useSearchParams } from 'react-router-dom'
 import { findLayout } from '../../../shared/layouts/registry.ts'
 import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { TrialRecord } from '../../../shared/schemas/record.ts'
-import { bookQueries, useChallenge } from '../../features/book/book.queries.ts'
+import { bookQueries, filtersOf, useChallenge } from '../../features/book/book.queries.ts'
 import { Budget } from '../../features/record/components/budget.tsx'
 import { ChallengeForm } from '../../features/record/components/challenge-form.tsx'
 import { Depths } from '../../features/record/components/depths.tsx'
@@ -11,6 +11,7 @@ import { FiguresTable } from '../../features/record/components/figures-table.tsx
 import { Headline } from '../../features/record/components/headline.tsx'
 import { RecordHistory } from '../../features/record/components/record-history.tsx'
 import { RecordNotes } from '../../features/record/components/record-notes.tsx'
+import { type OtherRun, Tape } from '../../features/record/components/tape.tsx'
 import { sourcesOf } from '../../features/record/record-model.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
@@ -44,10 +45,12 @@ export function Component() {
 function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
   const me = useMe()
   const challenge = useChallenge(record.number)
+  const others = useOtherRuns(record)
   const layout = findLayout(record.layout, record.layoutVersion)
   const where = [record.place.name, record.trialDate ? dateText(record.trialDate) : ''].filter(Boolean).join(', ')
   if (!layout) return <Page title={title}>The layout {record.layout} is not known to this page.</Page>
   const sources = sourcesOf(record, layout)
+  const figure = record.results.l_per_ha
   const mayChallenge = (me.role === 'analyst' || me.role === 'admin') && record.state === 'entered'
   return (
     <Page
@@ -61,6 +64,7 @@ function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
         </p>
       )}
       <Headline sources={sources} />
+      {figure?.value != null && <Tape value={figure.value} U={figure.U} unit={figure.unit} others={others} />}
       <div className="grid grid-cols-[minmax(0,7fr)_minmax(0,5fr)] border-t border-line max-lg:grid-cols-1">
         <div className="border-r-[3px] border-double border-line max-lg:border-r-0">
           <FiguresTable sources={sources} />
@@ -81,6 +85,26 @@ function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
       </div>
     </Page>
   )
+}
+
+/** Runs of the same tractor and implement at the same place on the same day, with their litres a hectare. */
+function useOtherRuns(record: TrialRecord): OtherRun[] {
+  const { tractor, implement, place, trialDate } = record
+  const named = tractor.id && implement.id && place.id && trialDate
+  const filters = filtersOf(
+    new URLSearchParams({
+      tractor: tractor.id ?? '',
+      implement: implement.id ?? '',
+      place: place.id ?? '',
+      from: trialDate ?? '',
+      to: trialDate ?? '',
+    }),
+  )
+  const runs = useQuery({ ...bookQueries.list(filters, ''), enabled: Boolean(named) })
+  return (runs.data?.records ?? []).flatMap(({ number, results }) => {
+    const value = results.l_per_ha?.value
+    return number === record.number || value == null ? [] : [{ number, value }]
+  })
 }
 
 function Entered({ record, title }: { record: TrialRecord; title: string }) {

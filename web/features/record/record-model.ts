@@ -67,3 +67,10 @@ export function repeatsOf({ readings }: Sources, stem: string): Array<{ key: str
     .flatMap(({ key, value }) => (key.startsWith(`${stem}[`) && typeof value === 'number' ? [{ key, value }] : []))
     .sort((a, b) => Number(a.key.slice(stem.length + 1, -1)) - Number(b.key.slice(stem.length + 1, -1)))
 }
+
+/** How many of these readings a person settled or keyed. */
+export const byHandCount = ({ readings }: Sources, keys: readonly string[]): number =>
+  keys.filter((key) => {
+    const reading = readings.get(key)
+    return reading !== undefined && (reading.settlement !== null || reading.origin === 'person')
+  }).length

@@ -30,7 +30,12 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
     {
       key: 'age',
       wide: true,
-      head: <AgeHead from={from} now={now} />,
+      head: (
+        <>
+          <span className="away">age</span>
+          <AgeHead from={from} now={now} />
+        </>
+      ),
       cell: (row) => row.arrivedAt && <AgeStraw arrivedAt={row.arrivedAt} from={from} now={now} held={row.id === chosen} />,
     },
     {

@@ -13,7 +13,10 @@ export function DeskStrip({ desk, held, back }: { desk: Desk; held: string | nul
   const what = [sheet.tractor, sheet.implement].filter(Boolean).join(', ')
   const where = [sheet.place, sheet.runNumber ? `run ${sheet.runNumber}` : null].filter(Boolean).join(', ')
   return (
-    <div className="flex flex-wrap items-center gap-x-3 border-b border-line bg-board px-margin py-0.5">
+    <section
+      aria-label="This sheet"
+      className="flex flex-wrap items-center gap-x-3 border-b border-line bg-board px-margin py-0.5"
+    >
       {back}
       <span className="figures font-[700]">{sheet.code ? formatSheetCode(sheet.code) : 'without a code'}</span>
       {what && <span>{what}</span>}
@@ -29,7 +32,7 @@ export function DeskStrip({ desk, held, back }: { desk: Desk; held: string | nul
           <Saved desk={desk} />
         </span>
       </span>
-    </div>
+    </section>
   )
 }
 
