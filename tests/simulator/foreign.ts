@@ -31,7 +31,7 @@ const twoSheets = () => {
 }
 
 async function filled(seed: string): Promise<Base> {
-  const scan = { dpi: 150, grey: true, skew: 0.004, scale: 1, copied: false, jpegQuality: 80 }
+  const scan = { dpi: 150, grey: true, skew: 0.004, scale: 1, copied: false, contrast: 1, jpegQuality: 80 }
   const { jpeg } = await makePhoto({
     layout: LAYOUT,
     level: 'easy',

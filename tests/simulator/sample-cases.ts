@@ -65,7 +65,7 @@ export const SAMPLE_CASES: readonly SampleCase[] = [
   }),
   make('careful', 'easy', 'a careful photo of a planned sheet', { adjust: (c) => ({ ...c, shot: upright(c) }) }),
   make('flat-scan', 'easy', 'an office scan, grey, a little askew', {
-    adjust: (c) => ({ ...c, scan: { dpi: 200, grey: true, skew: 0.012, scale: 1, copied: false, jpegQuality: 78 } }),
+    adjust: (c) => ({ ...c, scan: { dpi: 200, grey: true, skew: 0.012, scale: 1, copied: false, contrast: 1, jpegQuality: 78 } }),
   }),
   make('shadow', 'ordinary', 'the shadow of a cab across the page', {
     adjust: (c) => ({ ...c, shot: upright(c), light: { ...noShadow(c), shadow: 0.5, softness: 0.02 } }),
@@ -91,7 +91,10 @@ export const SAMPLE_CASES: readonly SampleCase[] = [
     },
   }),
   make('photocopy', 'ordinary', 'the scan of a photocopy: specks, 97 % of true size', {
-    adjust: (c) => ({ ...c, scan: { dpi: 200, grey: true, skew: -0.009, scale: 0.97, copied: true, jpegQuality: 75 } }),
+    adjust: (c) => ({
+      ...c,
+      scan: { dpi: 300, grey: true, skew: -0.009, scale: 0.97, copied: true, contrast: 1.2, jpegQuality: 70 },
+    }),
   }),
   make('curled', 'ordinary', 'paper that was rolled up', { adjust: (c) => ({ ...c, shot: upright(c), curl_mm: 13 }) }),
   make('turned', 'ordinary', 'upside down, stored lying with a tag', {
@@ -148,7 +151,7 @@ export const SAMPLE_CASES: readonly SampleCase[] = [
   make('outside', 'hard', 'two corners outside the picture: to be taken again', {
     adjust: (c) => ({
       ...c,
-      shot: upright(c, { fill: 1.12, off: [0.14, 0.02], pitch: 0.05, yaw: 0.05, roll: 0.03 }),
+      shot: upright(c, { fill: 0.93, off: [0.3, 0], pitch: 0.05, yaw: 0.05, roll: 0.03 }),
       light: noShadow(c),
     }),
   }),

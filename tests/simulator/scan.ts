@@ -16,6 +16,8 @@ export interface ScanPlan {
   scale: number
   /** A photocopy: harder contrast, specks, thinned or thickened lines. */
   copied: boolean
+  /** How much harder the copy is than its original, 1 = alike. */
+  contrast: number
   jpegQuality: number
 }
 
@@ -26,6 +28,7 @@ export function drawScanPlan(chance: Chance): ScanPlan {
     skew: chance.normal(0, 0.012),
     scale: chance.odds(0.3) ? chance.between(0.97, 1.01) : 1,
     copied: chance.odds(0.25),
+    contrast: chance.between(1.1, 1.5),
     jpegQuality: chance.whole(70, 92),
   }
 }
@@ -66,7 +69,7 @@ export async function scan(
   let image = sharp(picture.rgb, { raw: { width: picture.width, height: picture.height, channels: 3 } }).blur(
     0.3 + 0.35 * chance.unit(),
   )
-  if (plan.copied) image = image.linear(1.5, -70)
+  if (plan.copied) image = image.linear(plan.contrast, 150 * (1 - plan.contrast))
   if (plan.grey) image = image.grayscale()
   return { jpeg: await image.withMetadata({ density: plan.dpi }).jpeg({ quality: plan.jpegQuality }).toBuffer(), camera }
 }

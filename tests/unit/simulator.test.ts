@@ -17,7 +17,7 @@ const comb = (key: string) => {
   if (!cell || !isComb(cell)) throw new Error(`${key} is no comb`)
   return cell
 }
-const SCAN = { dpi: 200, grey: true, skew: 0.015, scale: 1, copied: false, jpegQuality: 85 }
+const SCAN = { dpi: 200, grey: true, skew: 0.015, scale: 1, copied: false, contrast: 1, jpegQuality: 85 }
 const photo = (seed: string) =>
   makePhoto({
     layout,
