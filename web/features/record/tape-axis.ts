@@ -15,10 +15,10 @@ export function axisAround(figures: readonly number[]): Axis {
   const low = Math.min(...figures)
   const high = Math.max(...figures)
   const span = Math.max(high - low, Math.abs(high) * 0.1, 1e-6)
-  const step = niceStep((span * 3) / MAJOR_TICKS)
-  const from = Math.floor((low - span) / step) * step
+  const step = niceStep((span * 1.8) / MAJOR_TICKS)
+  const from = Math.floor((low - span * 0.4) / step) * step
   const begin = low >= 0 ? Math.max(0, from) : from
-  const end = Math.ceil((high + span) / step) * step
+  const end = Math.ceil((high + span * 0.4) / step) * step
   const count = Math.round((end - begin) / step)
   const tick = (n: number, parts: number) => Number((begin + (n * step) / parts).toPrecision(8))
   return {

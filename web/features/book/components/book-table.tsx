@@ -18,6 +18,8 @@ const SHOWN: ReadonlyArray<readonly [ResultKey, string]> = [
   ['slip_pct', 'slip'],
 ]
 
+const MAIN: ResultKey = 'l_per_ha'
+
 const figures: LedgerColumn<RecordRow>[] = SHOWN.map(([key, words]) => ({
   key,
   head: (
@@ -26,7 +28,7 @@ const figures: LedgerColumn<RecordRow>[] = SHOWN.map(([key, words]) => ({
     </>
   ),
   figures: true,
-  cell: (row) => <Figure result={row.results[key]} />,
+  cell: (row) => <Figure result={row.results[key]} main={key === MAIN} />,
 }))
 
 const columns: LedgerColumn<RecordRow>[] = [
@@ -34,8 +36,9 @@ const columns: LedgerColumn<RecordRow>[] = [
     key: 'number',
     head: 'record',
     tight: true,
+    stack: 'lead',
     cell: (row) => (
-      <Link to={paths.record.to(row.number)} className="word figures">
+      <Link to={paths.record.to(row.number)} className="word figures max-sm:inline-flex max-sm:min-h-[44px] max-sm:items-center">
         {String(row.number).padStart(4, '0')}
       </Link>
     ),
@@ -68,6 +71,7 @@ const columns: LedgerColumn<RecordRow>[] = [
 export function BookTable({ records }: { records: readonly RecordRow[] }) {
   return (
     <LedgerTable
+      stacked
       caption="Records of the trial book, newest first, each figure with its uncertainty U, k = 2"
       columns={columns}
       groups={[{ key: 'all', rows: records }]}

@@ -1,14 +1,15 @@
 import type { ResultValue } from '../../../../shared/schemas/record.ts'
 import { roundByUncertainty } from '../../../../shared/trial/format.ts'
-import { PlusMinus } from '../../../ui/plus-minus.tsx'
 
-/** A figure with its ± in the straw cell; without a figure, why. */
-export function Figure({ result, shown = true }: { result: ResultValue | undefined; shown?: boolean }) {
+const reasonOf = (result: ResultValue) => result.reason?.text ?? 'no reason was kept'
+
+/** A figure with its ± in the straw cell; without a figure, why. `main` is the figure the run was made for. */
+export function Figure({ result, main = false }: { result: ResultValue | undefined; main?: boolean }) {
   if (!result) return <span className="text-graphite">–</span>
   if (result.value === null) {
     return (
-      <span className="font-sans font-normal text-graphite" title={result.reason?.text}>
-        {shown ? 'none' : (result.reason?.text ?? 'none')}
+      <span className="font-sans font-normal text-graphite">
+        {main ? <span className="inline-block max-w-[150px] whitespace-normal">none: {reasonOf(result)}</span> : 'none'}
       </span>
     )
   }
@@ -16,7 +17,7 @@ export function Figure({ result, shown = true }: { result: ResultValue | undefin
   return (
     <span className="inline-flex items-baseline justify-end gap-1 whitespace-nowrap">
       <span>{value}</span>
-      <PlusMinus U={U} />
+      <span className={`inline-block w-[66px] px-0.5 text-left ${main ? 'bg-straw' : 'bg-straw-pale'}`}>{U && `± ${U}`}</span>
     </span>
   )
 }

@@ -5,7 +5,7 @@ import { RESULT_KEYS } from '../../../../shared/trial/result.ts'
 import { counted, listed } from '../../../lib/words.ts'
 import { Ink } from '../../../ui/ink.tsx'
 import { PlusMinus } from '../../../ui/plus-minus.tsx'
-import { FIGURE_GROUPS, missingByReason, shownFigure } from '../figure-groups.ts'
+import { FIGURE_GROUPS, howOf, missingByReason, shownFigure } from '../figure-groups.ts'
 import { byHandCount, pictureOf, type Sources } from '../record-model.ts'
 import { Source } from './source.tsx'
 
@@ -14,6 +14,8 @@ const HEAD = 'label h-[30px] px-1 text-left font-normal'
 /** Every figure of the run with its ±, how it is computed, and the readings it leads back to. */
 export function FiguresTable({ sources }: { sources: Sources }) {
   const { results } = sources.record
+  // Ink stands in the row where there is a picture; else the words that make the figure.
+  const inked = sources.record.pages.some((page) => page.flattened)
   const missing = missingByReason(RESULT_KEYS.flatMap((key) => results[key] ?? []))
   const groups = FIGURE_GROUPS.map(({ says, keys }) => ({
     says,
@@ -40,9 +42,11 @@ export function FiguresTable({ sources }: { sources: Sources }) {
             <th scope="col" className={HEAD}>
               unit
             </th>
-            <th scope="col" className={`${HEAD} max-xl:hidden`}>
-              how
-            </th>
+            {!inked && (
+              <th scope="col" className={`${HEAD} max-xl:hidden`}>
+                how
+              </th>
+            )}
             <th scope="col" className={`${HEAD} pr-margin`}>
               leads back to
             </th>
@@ -51,12 +55,12 @@ export function FiguresTable({ sources }: { sources: Sources }) {
         {groups.map(({ says, known }) => (
           <tbody key={says} className="max-sm:block">
             <tr className="border-b border-line max-sm:block">
-              <th scope="rowgroup" colSpan={6} className="px-1 pt-1.5 pb-0.5 pl-margin font-[700] max-sm:block">
+              <th scope="rowgroup" colSpan={inked ? 5 : 6} className="px-1 pt-1.5 pb-0.5 pl-margin font-[700] max-sm:block">
                 {says}
               </th>
             </tr>
             {known.map((result) => (
-              <FigureRow key={result.key} sources={sources} result={result} />
+              <FigureRow key={result.key} sources={sources} result={result} inked={inked} />
             ))}
           </tbody>
         ))}
@@ -78,7 +82,7 @@ export function FiguresTable({ sources }: { sources: Sources }) {
   )
 }
 
-function FigureRow({ sources, result }: { sources: Sources; result: ResultValue }) {
+function FigureRow({ sources, result, inked }: { sources: Sources; result: ResultValue; inked: boolean }) {
   const [open, setOpen] = useState(false)
   const { value, U } = shownFigure(result)
   const keys = result.from.filter((key) => sources.readings.has(key))
@@ -88,7 +92,10 @@ function FigureRow({ sources, result }: { sources: Sources; result: ResultValue 
       <tr
         className={`border-b border-feint max-sm:flex max-sm:flex-wrap max-sm:items-baseline max-sm:gap-x-1 max-sm:px-margin max-sm:py-1`}
       >
-        <th scope="row" className="h-[30px] px-1 pl-margin font-[600] max-sm:h-auto max-sm:basis-full max-sm:p-0">
+        <th
+          scope="row"
+          className="h-[30px] px-1 pl-margin font-[600] sm:whitespace-nowrap max-sm:h-auto max-sm:basis-full max-sm:p-0"
+        >
           {result.label}
         </th>
         <td className="figures px-1 text-right whitespace-nowrap max-sm:p-0">{value}</td>
@@ -96,9 +103,9 @@ function FigureRow({ sources, result }: { sources: Sources; result: ResultValue 
           <PlusMinus U={U} />
         </td>
         <td className="px-1 whitespace-nowrap max-sm:p-0">{result.unit}</td>
-        <td className="label px-1 leading-[18px] max-xl:hidden">{formulaOf(result.formula)?.says ?? result.formula}</td>
+        {!inked && <td className="label px-1 leading-[18px] max-xl:hidden">{howOf(result)}</td>}
         <td className="px-1 pr-margin whitespace-nowrap max-sm:ml-auto max-sm:p-0">
-          <span className="flex items-center justify-between gap-1">
+          <span className="flex items-center gap-x-2">
             <button
               type="button"
               className="word min-h-[24px] max-sm:min-h-[44px]"
@@ -115,7 +122,7 @@ function FigureRow({ sources, result }: { sources: Sources; result: ResultValue 
       </tr>
       {open && (
         <tr className="border-b-[1.5px] border-ink bg-straw-pale max-sm:block">
-          <td colSpan={6} className="px-margin py-1 max-sm:block">
+          <td colSpan={inked ? 5 : 6} className="px-margin py-1 max-sm:block">
             <Behind sources={sources} result={result} keys={keys} />
           </td>
         </tr>
@@ -130,7 +137,7 @@ function Behind({ sources, result, keys }: { sources: Sources; result: ResultVal
   return (
     <>
       <p>
-        <strong>{result.label}</strong>: {formula?.says ?? result.formula}{' '}
+        <strong>{result.label}</strong>: {howOf(result)}{' '}
         <span className="label">
           ({result.formula}
           {formula ? `; ${formula.source}` : ''})
@@ -146,7 +153,7 @@ function Behind({ sources, result, keys }: { sources: Sources; result: ResultVal
   )
 }
 
-const CROPS = 2
+const CROPS = 3
 
 /** The first ink of a figure stands in its row. */
 function FirstInk({ sources, keys }: { sources: Sources; keys: readonly string[] }) {
@@ -157,7 +164,7 @@ function FirstInk({ sources, keys }: { sources: Sources; keys: readonly string[]
   })
   if (shown.length === 0) return null
   return (
-    <span className="flex gap-0.5 max-xl:hidden" aria-hidden="true">
+    <span className="ml-auto flex shrink-0 gap-0.5 max-xl:hidden" aria-hidden="true">
       {shown.slice(0, CROPS).map(({ cell, picture }) => (
         <Ink key={cell.key} layout={sources.layout} cell={cell} picture={picture} scale={2.2} around_mm={0.6} />
       ))}
