@@ -1,7 +1,7 @@
 /** The photo reader: one engine a process, picture files in, page readings out. */
 import { join } from 'node:path'
 import { findLayout, findLayoutByCode } from '../../../shared/layouts/registry.ts'
-import type { Point } from '../../../shared/reading/pixels/grey.ts'
+import type { Grey, Point } from '../../../shared/reading/pixels/grey.ts'
 import { readWithPageCorners } from '../../../shared/reading/read-by-hand.ts'
 import { type ReadingTools, readSheet } from '../../../shared/reading/read-sheet.ts'
 import type { SheetReading } from '../../../shared/reading/sheet-reading.ts'
@@ -13,6 +13,7 @@ import { createCodeFinder } from './find-codes.ts'
 import { flattenPage } from './flatten.ts'
 import { createNet } from './net.ts'
 import { openPages } from './pages.ts'
+import { createPrintedText } from './printed-text.ts'
 import { greyOf, type Raster } from './raster.ts'
 
 export interface PhotoReaderOptions {
@@ -29,6 +30,8 @@ export interface ReadHooks {
   page?: number
   /** Is handed the flattened page (JPEG, 150 dpi) of each page that was placed. Asking for it decodes in colour. */
   onFlattened?: (page: number, jpeg: Buffer) => Promise<void> | void
+  /** Reads the typed block of a planned sheet into `planText` (about half a second). */
+  planText?: boolean
 }
 
 /** A picture that a clerk has placed by hand. */
@@ -61,14 +64,27 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
     createNet(join(options.root ?? process.cwd(), 'worker/model/digits.onnx')),
   ])
   const tools: ReadingTools = { findCodes, net, layoutOf: findLayoutByCode }
+  const text = createPrintedText()
 
-  async function finish(raster: Raster, file: string, page: number, decode_ms: number, reading: SheetReading, hooks: ReadHooks) {
+  async function finish(
+    raster: Raster,
+    grey: Grey,
+    file: string,
+    page: number,
+    decode_ms: number,
+    reading: SheetReading,
+    hooks: ReadHooks,
+  ): Promise<PageReading> {
     if (hooks.onFlattened && reading.map && reading.layout) {
       const started = performance.now()
       await hooks.onFlattened(page, await flattenPage(raster, reading.map, reading.layout.page))
       reading.ms.flatten = performance.now() - started
     }
-    return assemblePage({ file, page }, { ...reading, ms: { decode: decode_ms, ...reading.ms } }, hooks.facts)
+    const assembled = assemblePage({ file, page }, { ...reading, ms: { decode: decode_ms, ...reading.ms } }, hooks.facts)
+    if (hooks.planText && reading.planned && reading.map && reading.layout) {
+      assembled.planText = await text.planLines(grey, reading.map, reading.layout)
+    }
+    return assembled
   }
 
   async function withPages<T>(bytes: Uint8Array, use: (pages: Awaited<ReturnType<typeof openPages>>) => Promise<T>): Promise<T> {
@@ -92,7 +108,7 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
           const raster = await pages.raster(page - 1, hooks.onFlattened !== undefined)
           const grey = greyOf(raster)
           const decode_ms = performance.now() - started
-          readings.push(await finish(raster, file, page, decode_ms, await readSheet(grey, tools, hooks.known), hooks))
+          readings.push(await finish(raster, grey, file, page, decode_ms, await readSheet(grey, tools, hooks.known), hooks))
         }
         return readings
       }),
@@ -106,9 +122,11 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
         const grey = greyOf(raster)
         const decode_ms = performance.now() - started
         const reading = await readWithPageCorners(grey, layout, byHand, tools, hooks.known)
-        return finish(raster, file, page, decode_ms, reading, hooks)
+        const finished = await finish(raster, grey, file, page, decode_ms, reading, hooks)
+        if (!finished.sheet && reading.map && layout) finished.sheet = await text.sheetCode(grey, reading.map, layout)
+        return finished
       }),
 
-    async close() {},
+    close: () => text.close(),
   }
 }
