@@ -17,10 +17,13 @@ export function useDesk(given: Sheet, layout: Layout, me: string) {
   const [chosen, setChosen] = useState<{ itemId: string | null; key: string | null }>({ itemId: null, key: null })
   const done = useRef<DeskOp[]>([])
 
-  const item = items.find((i) => i.id === chosen.itemId) ?? (chosen.key ? null : (openOf(items)[0] ?? null))
+  // A sheet to be keyed begins at its first blank cell; any other at its first doubt.
+  const toKey = sheet.origin === 'keyed' && chosen.itemId === null && !chosen.key ? nextBlank(sheet, layout, view, null) : null
+  const chosenKey = chosen.key ?? toKey
+  const item = items.find((i) => i.id === chosen.itemId) ?? (chosenKey ? null : (openOf(items)[0] ?? null))
   // A rule that names one cell only has that cell in hand at once.
   const only = item?.doubt && item.cells.length === 1 ? (item.cells[0] ?? null) : null
-  const key = chosen.key ?? item?.reading?.key ?? only
+  const key = chosenKey ?? item?.reading?.key ?? only
 
   const go = (itemId: string | null, cellKey: string | null = null) => setChosen({ itemId, key: cellKey })
   const act = (op: DeskOp) => {
@@ -89,10 +92,10 @@ const isOfBlanks = (item: DeskItem | null) =>
 /** The next cell of the page that should hold something and does not: keying goes from one to the next. */
 function nextBlank(sheet: Sheet, layout: Layout, view: DeskView, key: string | null): string | null {
   const at = layout.cells.findIndex((cell) => cell.key === key)
-  if (at === -1) return null
+  if (at === -1 && key !== null) return null
   const found = layout.cells.slice(at + 1).find((cell) => {
     const reading = view.readings.get(cell.key)
-    const wanted = cell.need === 'mandatory' || sheet.origin === 'keyed'
+    const wanted = cell.need === 'mandatory' || (sheet.origin === 'keyed' && cell.kind !== 'line')
     return wanted && reading !== undefined && reading.value === null && reading.settlement === null
   })
   return found?.key ?? null

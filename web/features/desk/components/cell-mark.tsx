@@ -99,7 +99,10 @@ function SettledMark({ reading, bounds }: { reading: Reading; bounds: Bounds }) 
         </g>
       )
     case 'corrected':
-      return <path d={`M${x} ${y + height / 2 + 1}L${right} ${y + height / 2 - 1}`} stroke="var(--pen)" strokeWidth="0.6" />
+      // Where nothing was read there is nothing to strike out.
+      return reading.readValue === null ? null : (
+        <path d={`M${x} ${y + height / 2 + 1}L${right} ${y + height / 2 - 1}`} stroke="var(--pen)" strokeWidth="0.6" />
+      )
     case 'unreadable':
       return <rect x={x} y={y} width={width} height={height} fill="url(#hatch)" />
     case 'blank on purpose':

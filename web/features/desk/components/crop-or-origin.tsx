@@ -1,4 +1,5 @@
 import type { RefObject } from 'react'
+import type { Sheet } from '../../../../shared/schemas/sheet.ts'
 import type { Desk } from '../use-desk.ts'
 import type { DeskActs } from '../use-desk-acts.ts'
 import { InkCrop } from './ink-crop.tsx'
@@ -24,12 +25,35 @@ export function CropOrOrigin({ desk, acts, picture, boxRef }: CropOrOriginProps)
           picture={picture}
           className="max-h-[150px] border-[1.5px] border-ink bg-leaf"
         />
+      ) : desk.sheet.origin === 'keyed' ? (
+        <UnplacedPicture sheet={desk.sheet} />
       ) : (
         <p className="border-[1.5px] border-ink bg-leaf px-2 py-1">
-          <span className="label">{reading?.cellRef ? 'from the spreadsheet cell' : 'keyed beside the picture'}</span>{' '}
+          <span className="label">{reading?.cellRef ? 'from the spreadsheet cell' : 'no picture shows it'}</span>{' '}
           <span className="figures text-2">{reading?.cellRef ?? shown.label}</span>
         </p>
       )}
     </section>
+  )
+}
+
+/** The picture a sheet is keyed from, twice as wide as its place: it is moved about under it. */
+function UnplacedPicture({ sheet }: { sheet: Sheet }) {
+  const [page] = sheet.pages
+  if (!page) return <p className="border-[1.5px] border-ink bg-leaf px-2 py-1">This sheet has no picture.</p>
+  const src = `/api/pages/${page.id}/original?as=picture`
+  return (
+    <>
+      <section
+        aria-label="The picture; scroll to move it"
+        tabIndex={0}
+        className="h-[30vh] overflow-auto border-[1.5px] border-ink bg-leaf"
+      >
+        <img src={src} alt={`The sheet as it came: ${page.fileName}`} className="w-[200%] max-w-none" />
+      </section>
+      <a className="word" href={src} target="_blank" rel="noreferrer">
+        Open it beside
+      </a>
+    </>
   )
 }

@@ -8,6 +8,7 @@ import { CropOrOrigin } from './crop-or-origin.tsx'
 import { MarginAsks } from './margin-asks.tsx'
 import { OffersTable } from './offers-table.tsx'
 import { OtherDoubts } from './other-doubts.tsx'
+import { SheetHistory } from './sheet-history.tsx'
 import { TroubleNote } from './trouble-note.tsx'
 
 interface MarginProps {
@@ -67,6 +68,7 @@ export function Margin(props: MarginProps) {
         )}
         <h2 className="mt-3 mb-0.5 text-[15px]">All doubts</h2>
         <OtherDoubts desk={desk} />
+        <SheetHistory history={desk.sheet.history} />
       </div>
     </section>
   )
@@ -95,7 +97,11 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
     return (
       <>
         <h1 className="mt-0.5 text-5 leading-[36px]">{acts.cell.label}</h1>
-        <p className="text-2">Nobody doubts it. It may be corrected all the same.</p>
+        <p className="text-2">
+          {acts.reading?.value === null && desk.sheet.origin === 'keyed'
+            ? 'Key what stands on the paper; b where it is blank there too.'
+            : 'Nobody doubts it. It may be corrected all the same.'}
+        </p>
       </>
     )
   }

@@ -17,7 +17,7 @@ interface PagePaneProps {
 export function PagePane({ desk, picture, pane }: PagePaneProps) {
   const { layout } = desk
   return (
-    <section ref={pane} aria-label="The sheet" tabIndex={-1} className="relative min-h-0 overflow-y-auto bg-board lg:pl-1">
+    <section ref={pane} aria-label="The sheet" className="relative min-h-0 overflow-y-auto bg-board lg:pl-1">
       <div className="relative bg-leaf lg:my-[60vh]" style={{ aspectRatio: `${layout.page.width} / ${layout.page.height}` }}>
         {picture && <img src={picture} alt="The sheet, flattened" className="absolute inset-0 h-full w-full" />}
         <SheetMarks desk={desk} inBox={picture === null} />
@@ -46,7 +46,8 @@ function CellButton({ cell, desk }: { cell: LayoutCell; desk: Desk }) {
   return (
     <button
       type="button"
-      tabIndex={-1}
+      // One tab stop for the whole sheet: the cell in hand.
+      tabIndex={cell.key === (desk.key ?? desk.item?.cells[0] ?? desk.layout.cells[0]?.key) ? 0 : -1}
       aria-label={`${cell.label}: ${saidOf(cell, reading)}`}
       onClick={() => (doubt ? desk.go(doubt.id) : desk.takeCell(cell.key))}
       className="absolute hover:outline-2 hover:outline-ink hover:outline-solid"

@@ -1,6 +1,7 @@
 import { cellBounds } from '../../../../shared/layouts/geometry.ts'
 import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
 import { type DeskItem, LETTERS } from '../model/desk-items.ts'
+import { BLANK_RULES } from '../model/desk-view.ts'
 import type { Desk } from '../use-desk.ts'
 import { CellMark } from './cell-mark.tsx'
 import { SheetDrawing } from './sheet-drawing.tsx'
@@ -29,9 +30,11 @@ export function SheetMarks({ desk, inBox }: { desk: Desk; inBox: boolean }) {
         if (!reading || (sheet.planned && isComb(cell) && cell.planned)) return null
         return <CellMark key={cell.key} cell={cell} reading={reading} values={view.values} inBox={inBox} />
       })}
-      {items.map((one) => (
-        <DoubtTab key={one.id} item={one} cells={cells} held={one.id === item?.id} />
-      ))}
+      {items
+        .filter((one) => !(sheet.origin === 'keyed' && one.doubt && BLANK_RULES.has(one.doubt.rule)))
+        .map((one) => (
+          <DoubtTab key={one.id} item={one} cells={cells} held={one.id === item?.id} />
+        ))}
       {lettered.map(({ cell, letter }) => (
         <Lettered key={cell.key} cell={cell} letter={letter} />
       ))}
