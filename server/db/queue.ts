@@ -30,12 +30,40 @@ export function createBoss(url: string, options: { owner?: boolean; maintenance_
   })
 }
 
-/** Writes the job in the caller's transaction: row and job stand or fall together. */
-export async function sendJob<N extends JobName>(boss: PgBoss, db: Db, name: N, payload: JobPayload<N>): Promise<void> {
+/** The caller's transaction, as the queue wants to be given it. */
+function within(db: Db, name: JobName) {
   const runner = db.queryRunner
   if (!runner) throw new Error(`${name} must be sent inside a transaction`)
-  const id = await boss.send(name, JOBS[name].parse(payload), {
-    db: { executeSql: async (text: string, values: unknown[]) => ({ rows: (await runner.query(text, values, true)).records }) },
-  })
+  return { executeSql: async (text: string, values: unknown[]) => ({ rows: (await runner.query(text, values, true)).records }) }
+}
+
+/** A photo goes before the pages of scans and spreadsheets: somebody stands in a field and waits to hear whether it can be read. */
+export const PHOTO_FIRST = 10
+
+/**
+ * Writes the job in the caller's transaction: row and job stand or fall together.
+ * @param priority higher goes first; 0 unless told
+ */
+export async function sendJob<N extends JobName>(
+  boss: PgBoss,
+  db: Db,
+  name: N,
+  payload: JobPayload<N>,
+  priority = 0,
+): Promise<void> {
+  const id = await boss.send(name, JOBS[name].parse(payload), { db: within(db, name), priority })
   if (!id) throw new Error(`the queue did not take ${name}: is the database migrated?`)
+}
+
+/** Many at once: one by one, the pages of a full season's spreadsheet would take longer than a job may. */
+export async function sendJobs<N extends JobName>(
+  boss: PgBoss,
+  db: Db,
+  name: N,
+  payloads: readonly JobPayload<N>[],
+): Promise<void> {
+  await boss.insert(
+    payloads.map((payload) => ({ name, data: JOBS[name].parse(payload) })),
+    { db: within(db, name) },
+  )
 }

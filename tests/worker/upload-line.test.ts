@@ -1,3 +1,4 @@
+import { randomBytes } from 'node:crypto'
 import exceljs from 'exceljs'
 import PDFDocument from 'pdfkit'
 import sharp from 'sharp'
@@ -116,6 +117,33 @@ describe('from the door to the desk', () => {
     const upload = await send('runs.csv', Buffer.from('layout,version,jar_start_ml [mL]\r\ntillage,1,4800\r\ntillage,1,4400\r\n'))
     expect(upload.pages).toHaveLength(2)
     expect(upload.pages.every((page) => page.state === 'read')).toBe(true)
+  })
+
+  it('a season of five hundred runs in one file becomes five hundred pages', async () => {
+    const lines = Array.from({ length: 500 }, (_, i) => `tillage,1,${4000 + i}\r\n`)
+    const form = new FormData()
+    form.append('files', new File([`layout,version,jar_start_ml [mL]\r\n${lines.join('')}`], 'season.csv'))
+    const [upload] = ((await clerk.send('/uploads', form)).body as { uploads: Upload[] }).uploads
+    await waitFor(async () => ((await clerk.get(`/uploads/${upload!.id}`)).body as Upload).pages.length === 500, {
+      what: 'the pages',
+      deadline_ms: 30_000,
+    })
+    const [first] = await server.deps.source.query(
+      "SELECT block->'values'->'jar_start_ml'->'value' AS value FROM pages WHERE upload_id = $1 AND number = 1",
+      [upload!.id],
+    )
+    expect(first.value).toBe(4000)
+    // Nobody in a field waits behind them: a photo is read before the rest of the season.
+    const photo = await sharp(randomBytes(60 * 90 * 3), { raw: { width: 60, height: 90, channels: 3 } })
+      .jpeg()
+      .toBuffer()
+    await send('field.jpg', photo)
+    const [left] = await server.deps.source.query(
+      "SELECT count(*) AS n FROM pgboss.job WHERE name = 'page-read' AND state < 'active'",
+    )
+    expect(Number(left.n)).toBeGreaterThan(0)
+    // They are not what this test is about, and would keep the worker busy for the others.
+    await server.deps.source.query("DELETE FROM pgboss.job WHERE name = 'page-read' AND state < 'active'")
   })
 
   it('a scan of three pages becomes three pages, each read by itself', async () => {

@@ -2,8 +2,8 @@
 
 import type PgBoss from 'pg-boss'
 import type { DataSource } from '../../server/db/database.ts'
-import { sendJob } from '../../server/db/queue.ts'
-import { insertPage, lockForSplitting } from '../../server/db/repositories/page.ts'
+import { sendJobs } from '../../server/db/queue.ts'
+import { insertPages, lockForSplitting } from '../../server/db/repositories/page.ts'
 import { findKeptUpload, type KeptUpload, refuseUpload } from '../../server/db/repositories/upload.ts'
 import type { FileStore } from '../../server/storage/store.ts'
 import { PARSED_KINDS, type ParsedKind, type ParserAnswer } from '../child/answer.ts'
@@ -51,12 +51,15 @@ async function makePages(
   uploadId: string,
   answer: Exclude<ParserAnswer, { kind: 'refused' }>,
 ): Promise<void> {
-  const blocks = answer.kind === 'blocks' ? answer.blocks : Array.from({ length: answer.pages }, () => undefined)
+  const blocks = answer.kind === 'blocks' ? answer.blocks : Array.from({ length: answer.pages }, () => null)
   await deps.source.transaction(async (db) => {
     if (!(await lockForSplitting(db, uploadId))) return
-    for (const [i, block] of blocks.entries()) {
-      const pageId = await insertPage(db, { uploadId, number: i + 1, ...(block ? { block } : {}) })
-      await sendJob(deps.boss, db, 'page-read', { pageId })
-    }
+    const pageIds = await insertPages(db, uploadId, blocks)
+    await sendJobs(
+      deps.boss,
+      db,
+      'page-read',
+      pageIds.map((pageId) => ({ pageId })),
+    )
   })
 }

@@ -4,15 +4,29 @@ import type { Db } from '../database.ts'
 import type { PageEntity } from '../entities/upload.ts'
 
 /** @returns the page's id */
-export async function insertPage(
-  db: Db,
-  page: { uploadId: string; number: number; block?: Record<string, unknown> },
-): Promise<string> {
-  const rows: Array<{ id: string }> = await db.query(
-    'INSERT INTO pages (upload_id, number, block) VALUES ($1, $2, $3) RETURNING id',
-    [page.uploadId, page.number, page.block ? JSON.stringify(page.block) : null],
-  )
+export async function insertPage(db: Db, page: { uploadId: string; number: number }): Promise<string> {
+  const rows: Array<{ id: string }> = await db.query('INSERT INTO pages (upload_id, number) VALUES ($1, $2) RETURNING id', [
+    page.uploadId,
+    page.number,
+  ])
   return rows[0]!.id
+}
+
+/**
+ * The pages of a file, numbered from 1, each with its block or with none.
+ * @returns their ids
+ */
+export async function insertPages(
+  db: Db,
+  uploadId: string,
+  blocks: ReadonlyArray<Record<string, unknown> | null>,
+): Promise<string[]> {
+  const rows: Array<{ id: string }> = await db.query(
+    `INSERT INTO pages (upload_id, number, block)
+     SELECT $1, number, nullif(block, 'null') FROM jsonb_array_elements($2::jsonb) WITH ORDINALITY AS b (block, number) RETURNING id`,
+    [uploadId, JSON.stringify(blocks)],
+  )
+  return rows.map((row) => row.id)
 }
 
 /** A page in the hands of one attempt. Whatever it writes must name `attemptToken`: a later attempt takes it away. */

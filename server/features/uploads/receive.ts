@@ -137,7 +137,9 @@ const requestTooLarge = () =>
 
 function explain(cause: unknown): unknown {
   if (!(cause instanceof MulterError))
-    return cause instanceof Error && /Multipart|Unexpected end|boundary/i.test(cause.message) ? brokenOff(cause) : cause
+    return cause instanceof Error && /multipart|unexpected end|boundary|aborted|premature close/i.test(cause.message)
+      ? brokenOff(cause)
+      : cause
   if (cause.code === 'LIMIT_FILE_COUNT' || cause.code === 'LIMIT_UNEXPECTED_FILE' || cause.code === 'LIMIT_PART_COUNT') {
     const message = `At most ${FILE_LIMITS.files_at_once} files at once, in the field "files". Nothing was kept. Send them in parts.`
     return new UserError('too_large', message, { cause })

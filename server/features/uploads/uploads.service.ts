@@ -6,7 +6,7 @@ import { FILE_LIMITS, RATE_LIMITS } from '../../../shared/limits.ts'
 import type { Upload, UploadKind } from '../../../shared/schemas/upload.ts'
 import type { User } from '../../../shared/schemas/user.ts'
 import { isUniqueViolation } from '../../db/driver-errors.ts'
-import { sendJob } from '../../db/queue.ts'
+import { PHOTO_FIRST, sendJob } from '../../db/queue.ts'
 import { insertPage } from '../../db/repositories/page.ts'
 import { addTrailLine } from '../../db/repositories/trail.ts'
 import {
@@ -97,7 +97,7 @@ async function writeRows(deps: Deps, row: NewUpload & { kind: UploadKind }, acto
     const uploadId = await insertUpload(db, row)
     await addTrailLine(db, { actor, action: 'send in', subject: 'upload', subjectId: uploadId, text: `${row.fileName} arrived` })
     if (SPLIT_KINDS.has(row.kind)) await sendJob(deps.boss, db, 'upload-split', { uploadId })
-    else await sendJob(deps.boss, db, 'page-read', { pageId: await insertPage(db, { uploadId, number: 1 }) })
+    else await sendJob(deps.boss, db, 'page-read', { pageId: await insertPage(db, { uploadId, number: 1 }) }, PHOTO_FIRST)
     return uploadId
   })
 }
