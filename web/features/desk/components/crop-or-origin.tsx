@@ -43,17 +43,10 @@ function UnplacedPicture({ sheet }: { sheet: Sheet }) {
   if (!page) return <p className="border-[1.5px] border-ink bg-leaf px-2 py-1">This sheet has no picture.</p>
   const src = `/api/pages/${page.id}/original?as=picture`
   return (
-    <>
-      <section
-        aria-label="The picture; scroll to move it"
-        tabIndex={0}
-        className="h-[30vh] overflow-auto border-[1.5px] border-ink bg-leaf"
-      >
+    <div className="h-[30vh] overflow-auto border-[1.5px] border-ink bg-leaf">
+      <a href={src} target="_blank" rel="noreferrer" title="Open it in a window of its own">
         <img src={src} alt={`The sheet as it came: ${page.fileName}`} className="w-[200%] max-w-none" />
-      </section>
-      <a className="word" href={src} target="_blank" rel="noreferrer">
-        Open it beside
       </a>
-    </>
+    </div>
   )
 }
