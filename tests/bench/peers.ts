@@ -19,7 +19,10 @@ export interface Peers {
   tesseractCells: number
   tesseractMsPerDigit: number | null
   tesseractWrongShare: number | null
+  /** Whole page over its written digits. */
   readerMsPerDigit: number | null
+  /** Cutting and recognising alone, which is what the digit-by-digit reader is timed for. */
+  readerCutAndNetMsPerDigit: number | null
   readerWrongDigitShare: number | null
 }
 

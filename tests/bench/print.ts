@@ -42,7 +42,7 @@ export const peerLines = (peers: Peers): string[] => [
   ...(peers.tesseractCells > 0
     ? [
         `tesseract.js digit by digit on ${peers.tesseractCells} cells: ${peers.tesseractMsPerDigit!.toFixed(1)} ms a digit, ${percent(peers.tesseractWrongShare)} wrong`,
-        `this reader: ${peers.readerMsPerDigit!.toFixed(2)} ms a digit (whole page), ${percent(peers.readerWrongDigitShare, 4)} of the digits of clear readings wrong`,
+        `this reader: ${peers.readerMsPerDigit!.toFixed(2)} ms a digit for the whole page, ${peers.readerCutAndNetMsPerDigit!.toFixed(2)} for cutting and recognising (by the clock), ${percent(peers.readerWrongDigitShare, 4)} of the digits of clear readings wrong`,
       ]
     : []),
 ]

@@ -80,6 +80,8 @@ const peers: Peers = {
   tesseractMsPerDigit: tesseract?.msPerDigit ?? null,
   tesseractWrongShare: tesseract?.wrongShare ?? null,
   readerMsPerDigit: places.length > 0 ? cpu.reduce((a, b) => a + b, 0) / places.length : null,
+  readerCutAndNetMsPerDigit:
+    places.length > 0 ? all.reduce((sum, p) => sum + (p.ms.cut ?? 0) + (p.ms.net ?? 0), 0) / places.length : null,
   readerWrongDigitShare: wrongDigits(all),
 }
 const order = ['easy', 'ordinary', 'hard']
