@@ -1,6 +1,8 @@
 import { afterAll, beforeAll, expect, it } from 'vitest'
+import { listKnownNumbers } from '../../server/db/repositories/known-numbers.ts'
 import { takePage } from '../../server/db/repositories/page.ts'
 import { withClient } from '../../server/postgres/roles.ts'
+import { createReadingProcess } from '../../worker/child/reading-process.ts'
 import { checkHandlers } from '../../worker/jobs/job-handler.ts'
 import { pageReadJob } from '../../worker/jobs/page-read.job.ts'
 import type { PageReader, ReadPicture } from '../../worker/jobs/page-reader.ts'
@@ -144,6 +146,23 @@ it('a page that fails three times becomes an unreadable sheet with its reason', 
     state: 'unreadable',
     reason: expect.stringMatching(/three attempts.*key the sheet beside the picture/i),
   })
+})
+
+it('a picture that crashes its reader costs no worker: it is unreadable with its reason, and the next picture is read', async () => {
+  const reader = createReadingProcess({
+    script: 'tests/worker/bad-reader.ts',
+    listKnown: () => listKnownNumbers(setting.source.manager),
+  })
+  const worker = await setting.start((source) => [...others(), pageReadJob({ source, files: memoryStore(), reader })])
+  const crashing = await setting.addPage('dies.jpg')
+  const good = await setting.addPage('good.jpg')
+  // G-R6: shown as failed, with a reason, within two minutes; here three starts of a process and two retry delays.
+  await setting.waitForState(crashing, 'unreadable', 40_000)
+  await setting.waitForState(good, 'read')
+  expect(await setting.pageOf(crashing)).toMatchObject({ attempts: 4 })
+  expect((await sheetOf(crashing)).reason).toContain('likely damaged')
+  await worker.stop(5_000)
+  await reader.close()
 })
 
 it('a page whose sessions the database ends is read nevertheless, and the worker goes on', async () => {
