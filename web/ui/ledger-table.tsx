@@ -104,9 +104,9 @@ interface LedgerRowProps<Row> {
   onRow?: (row: Row) => void
 }
 
-const STACKED_ROW = 'max-sm:block max-sm:px-margin max-sm:py-1.5'
+const STACKED_ROW = 'max-sm:flex max-sm:flex-col max-sm:px-margin max-sm:py-1.5'
 const STACKED_CELL = {
-  lead: 'max-sm:block max-sm:h-auto max-sm:p-0! max-sm:pb-0.5! max-sm:text-left max-sm:text-2',
+  lead: 'max-sm:order-first max-sm:block max-sm:font-[650] max-sm:h-auto max-sm:p-0! max-sm:pb-0.5! max-sm:text-left max-sm:text-2',
   word: 'max-sm:block max-sm:h-auto max-sm:p-0! max-sm:text-left',
   named: 'max-sm:flex max-sm:h-auto max-sm:min-h-[28px] max-sm:items-baseline max-sm:justify-between max-sm:gap-2 max-sm:p-0!',
 } as const

@@ -10,9 +10,9 @@ export function Component() {
   const mails = useQuery(mailQueries.list())
   const waiting = mails.data?.filter((m) => m.state === 'queued').length ?? 0
   const failed = mails.data?.filter((m) => m.state === 'failed').length ?? 0
-  const said = mails.data
+  const said = mails.data?.length
     ? `${counted(mails.data.length, 'mail')} written${waiting ? `, ${waiting} on the way` : ''}${failed ? `, ${failed} not delivered` : ''}.`
-    : 'What was written by mail.'
+    : 'Mails that were written.'
   return (
     <Page title="Outbox" sentence={said}>
       {mails.error && <ErrorState error={mails.error} again={() => mails.refetch()} />}
@@ -34,7 +34,7 @@ const STATES = { queued: 'on the way', sent: 'sent', failed: 'not delivered' } a
 const MailLine = ({ mail }: { mail: Mail }) => (
   <li className="border-b border-feint px-margin py-1">
     <details>
-      <summary className="grid cursor-pointer grid-cols-[120px_110px_240px_1fr] gap-x-2 max-lg:block">
+      <summary className="grid max-sm:min-h-[44px] cursor-pointer grid-cols-[120px_110px_240px_1fr] gap-x-2 max-lg:block">
         <span className="figures text-[13.5px] font-normal">{momentText(mail.createdAt)}</span>{' '}
         <span className={mail.state === 'failed' ? 'font-[700]' : 'text-graphite'}>{STATES[mail.state]}</span>{' '}
         <span>{mail.to}</span> <strong>{mail.subject}</strong>

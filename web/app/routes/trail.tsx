@@ -16,7 +16,7 @@ const columns: LedgerColumn<TrailEntry>[] = [
   },
   { key: 'who', head: 'who', tight: true, cell: (e) => e.who },
   { key: 'what', head: 'what', tight: true, cell: (e) => `${e.action}, ${e.subject}` },
-  { key: 'text', head: 'in words', cell: (e) => e.text },
+  { key: 'text', head: 'in words', stack: 'lead', cell: (e) => e.text },
 ]
 
 export function Component() {
@@ -27,6 +27,7 @@ export function Component() {
       {trail.isPending && <Loading what="Opening the trail" />}
       {trail.data && (
         <LedgerTable
+          stacked
           caption="The audit trail, newest first"
           columns={columns}
           groups={[{ key: 'all', rows: trail.data.pages.flatMap((p) => p.entries) }]}

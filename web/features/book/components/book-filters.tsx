@@ -26,7 +26,7 @@ export function BookFilterBar({
   const places = useQuery(registerQueries.rows('places'))
   const set = (name: keyof BookFilters) => (value: string) => onChange(name, value)
   return (
-    <search className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5">
+    <search className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5 max-sm:grid max-sm:grid-cols-2">
       <Pick label="tractor" value={filters.tractor} choices={tractors.data?.map(named) ?? []} onPick={set('tractor')} />
       <Pick label="implement" value={filters.implement} choices={tools.data?.map(named) ?? []} onPick={set('implement')} />
       <Pick label="operation" value={filters.operation} choices={OPERATIONS.map(words)} onPick={set('operation')} />
@@ -38,7 +38,7 @@ export function BookFilterBar({
   )
 }
 
-const LOOK = 'min-h-[36px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen'
+const LOOK = 'w-full min-w-0 min-h-[36px] max-sm:min-h-[44px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen'
 
 function Pick({
   label,
@@ -53,7 +53,7 @@ function Pick({
 }) {
   const id = useId()
   return (
-    <div className="flex flex-col">
+    <div className="flex min-w-0 flex-col">
       <label htmlFor={id} className="label">
         {label}
       </label>
@@ -72,7 +72,7 @@ function Pick({
 function Day({ label, value, onPick }: { label: string; value: string; onPick: (value: string) => void }) {
   const id = useId()
   return (
-    <div className="flex flex-col">
+    <div className="flex min-w-0 flex-col">
       <label htmlFor={id} className="label">
         {label}
       </label>

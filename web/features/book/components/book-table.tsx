@@ -4,8 +4,9 @@ import type { RecordRow } from '../../../../shared/schemas/record.ts'
 import { RESULTS, type ResultKey } from '../../../../shared/trial/result.ts'
 import { paths } from '../../../lib/paths.ts'
 import { dateText } from '../../../lib/time.ts'
+import { counted } from '../../../lib/words.ts'
 import { Glyph } from '../../../ui/glyphs.tsx'
-import { type LedgerColumn, LedgerTable } from '../../../ui/ledger-table.tsx'
+import { type LedgerColumn, type LedgerGroup, LedgerTable } from '../../../ui/ledger-table.tsx'
 import { Figure } from './figure.tsx'
 
 /** The figures a row shows, with the depth and the soil moved beside the fuel: shallow work is no saving. */
@@ -43,13 +44,11 @@ const columns: LedgerColumn<RecordRow>[] = [
       </Link>
     ),
   },
-  { key: 'date', head: 'date', tight: true, cell: (row) => (row.trialDate ? dateText(row.trialDate) : '–') },
   {
     key: 'tractor',
     head: 'tractor and implement',
     cell: (row) => `${row.tractor.name || 'unknown tractor'}, ${row.implement.name || 'unknown implement'}`,
   },
-  { key: 'place', head: 'place', cell: (row) => row.place.name || '–' },
   ...figures,
   {
     key: 'sheet',
@@ -68,13 +67,40 @@ const columns: LedgerColumn<RecordRow>[] = [
   },
 ]
 
+/** Runs of one day at one place stand together under a sentence: they are what may be compared. */
+function byDay(records: readonly RecordRow[]): LedgerGroup<RecordRow>[] {
+  const days = new Map<string, RecordRow[]>()
+  for (const row of records) {
+    const key = `${row.trialDate ?? ''}|${row.place.name}`
+    days.set(key, [...(days.get(key) ?? []), row])
+  }
+  return [...days].map(([key, rows]) => {
+    const { trialDate, place, demonstrator } = rows[0] as RecordRow
+    return {
+      key,
+      says: (
+        <>
+          <strong>
+            {trialDate ? dateText(trialDate) : 'no date'}, {place.name || 'place not known'}
+          </strong>{' '}
+          <span className="text-graphite">
+            {counted(rows.length, 'run')}
+            {demonstrator.name && `, ${demonstrator.name}`}
+          </span>
+        </>
+      ),
+      rows,
+    }
+  })
+}
+
 export function BookTable({ records }: { records: readonly RecordRow[] }) {
   return (
     <LedgerTable
       stacked
       caption="Records of the trial book, newest first, each figure with its uncertainty U, k = 2"
       columns={columns}
-      groups={[{ key: 'all', rows: records }]}
+      groups={byDay(records)}
       rowKey={(row) => String(row.number)}
     />
   )

@@ -17,7 +17,7 @@ export function Figure({ result, main = false }: { result: ResultValue | undefin
   return (
     <span className="inline-flex items-baseline justify-end gap-1 whitespace-nowrap">
       <span>{value}</span>
-      <span className={`inline-block w-[66px] px-0.5 text-left ${main ? 'bg-straw' : 'bg-straw-pale'}`}>{U && `± ${U}`}</span>
+      <span className={`inline-block w-[76px] px-0.5 text-left ${main ? 'bg-straw' : 'bg-straw-pale'}`}>{U && `± ${U}`}</span>
     </span>
   )
 }

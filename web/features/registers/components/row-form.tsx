@@ -1,6 +1,8 @@
 import { zodResolver } from '@hookform/resolvers/zod'
+import { useEffect } from 'react'
 import { type Resolver, useForm } from 'react-hook-form'
 import { REGISTERS, type RegisterName } from '../../../../shared/schemas/register.ts'
+import { plainIssue } from '../../../lib/plain-issue.ts'
 import { Button } from '../../../ui/button.tsx'
 import { Field, FieldChoice } from '../../../ui/field.tsx'
 import { ErrorNote } from '../../../ui/says.tsx'
@@ -11,12 +13,17 @@ type Row = Record<string, unknown> & { id: string; version: number }
 
 /** Adds a row of a register, or changes one. What was typed stays when it is refused. */
 export function RowForm({ register: name, row, onDone }: { register: RegisterName; row: Row | null; onDone: () => void }) {
-  const resolver = zodResolver(REGISTERS[name].save as never) as unknown as Resolver<Record<string, unknown>>
+  const resolver = zodResolver(REGISTERS[name].save as never, { error: plainIssue } as never) as unknown as Resolver<
+    Record<string, unknown>
+  >
   const form = useForm<Record<string, unknown>>({ resolver, defaultValues: row ?? newRow(name) })
   const save = useSaveRow(name)
   const submit = form.handleSubmit((values) =>
     save.mutate({ id: row?.id ?? null, values: { ...values, ...(row ? { version: row.version } : {}) } }, { onSuccess: onDone }),
   )
+  // The form opens above a long table: the cursor goes where the next key belongs.
+  const { setFocus } = form
+  useEffect(() => setFocus('number'), [setFocus])
   const errorOf = (key: string) => form.formState.errors[key]?.message?.toString()
   const fieldOf = (f: RegisterField) => {
     const frame = {
@@ -37,11 +44,13 @@ export function RowForm({ register: name, row, onDone }: { register: RegisterNam
     )
   }
   return (
-    <form noValidate onSubmit={submit} className="max-w-[720px] px-margin py-3">
+    <form noValidate onSubmit={submit} className="border-b-[3px] border-double border-ink px-margin py-3">
       <h2 className="pb-1 text-3">
         {row ? `Change ${REGISTER_WORDS[name].one} ${String(row.number)}` : `A new ${REGISTER_WORDS[name].one}`}
       </h2>
-      <div className="border-t-2 border-ink">{REGISTER_FIELDS[name].map(fieldOf)}</div>
+      <div className="grid grid-cols-2 items-start gap-x-6 border-t-2 border-ink max-lg:grid-cols-1">
+        {REGISTER_FIELDS[name].map(fieldOf)}
+      </div>
       <label className="mt-2 flex min-h-[44px] items-center gap-1">
         <input type="checkbox" className="size-[20px]" {...form.register('active')} />
         in use: offered when a demonstration is planned
