@@ -1,10 +1,13 @@
 /** Settled stalks stand upright and are tied in fives; waiting ones lean; the one in hand is straw. */
 const STEP_PX = 7
+/** Many stalks stand closer, so that the tally never pushes the page wide. */
+const WIDE_PX = 288
 const TALL_PX = 18
 
 export function Tally({ settled, waiting, inHand = false }: { settled: number; waiting: number; inHand?: boolean }) {
   const stalks = Array.from({ length: settled + waiting }, (_, i) => i)
-  const width = Math.max(1, stalks.length) * STEP_PX + STEP_PX
+  const step_px = Math.min(STEP_PX, WIDE_PX / Math.max(1, stalks.length))
+  const width = Math.max(1, stalks.length) * step_px + STEP_PX
   const tied = Array.from({ length: Math.floor(settled / 5) }, (_, i) => i)
   return (
     <svg
@@ -17,7 +20,7 @@ export function Tally({ settled, waiting, inHand = false }: { settled: number; w
       strokeWidth="1.6"
     >
       {stalks.map((i) => {
-        const x = 4 + i * STEP_PX
+        const x = 4 + i * step_px
         if (i < settled) return <path key={i} d={`M${x} 1V17`} />
         if (inHand && i === settled)
           return <rect key={i} x={x - 1.8} y="1" width="4" height="16" fill="var(--straw)" strokeWidth="1.2" />
@@ -26,7 +29,7 @@ export function Tally({ settled, waiting, inHand = false }: { settled: number; w
       {tied.map((i) => (
         <path
           key={`tie${i}`}
-          d={`M${2 + i * 5 * STEP_PX} 9H${6 + (i * 5 + 4) * STEP_PX}`}
+          d={`M${2 + i * 5 * step_px} 9H${6 + (i * 5 + 4) * step_px}`}
           stroke="var(--straw)"
           strokeWidth="3"
         />

@@ -96,7 +96,7 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
   if (acts.cell) {
     return (
       <>
-        <h1 className="mt-0.5 text-5 leading-[36px]">{acts.cell.label}</h1>
+        <h1 className="mt-0.5 text-5 leading-[36px] first-letter:uppercase">{acts.cell.label}</h1>
         <p className="text-2">
           {acts.reading?.value === null && desk.sheet.origin === 'keyed'
             ? 'Key what stands on the paper; b where it is blank there too.'
