@@ -40,6 +40,8 @@ const AGAIN_MS = 8_000
 export function createOutbox({ store, send, later, alone }: OutboxPorts) {
   let state: OutboxState = { items: [], answers: [] }
   let userId: string | null = null
+  /** Counts the starts: a stop that comes late must not end the work of the next one. */
+  let turn = 0
   let running: Promise<void> | null = null
   let callOff: (() => void) | null = null
   const watchers = new Set<() => void>()
@@ -103,9 +105,12 @@ export function createOutbox({ store, send, later, alone }: OutboxPorts) {
     /** Begins with what this person left here; the answer stops it. */
     start: async (user: string): Promise<() => void> => {
       userId = user
+      turn += 1
+      const mine = turn
       show({ items: (await store.list(user)).map(toItem), answers: [] })
       void sendAll()
       return () => {
+        if (mine !== turn) return
         callOff?.()
         userId = null
       }
