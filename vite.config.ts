@@ -6,7 +6,17 @@ import { defineConfig } from 'vitest/config'
 export default defineConfig({
   plugins: [react(), tailwindcss()],
   // Nothing inlined as data: the content policy takes files of our own only.
-  build: { outDir: '.data/web', emptyOutDir: true, sourcemap: false, assetsInlineLimit: 0 },
+  build: {
+    outDir: '.data/web',
+    emptyOutDir: true,
+    sourcemap: false,
+    assetsInlineLimit: 0,
+    // The service worker keeps its name and place: its scope is the folder it stands in.
+    rollupOptions: {
+      input: { index: 'index.html', sw: 'web/sw.ts' },
+      output: { entryFileNames: (chunk) => (chunk.name === 'sw' ? 'sw.js' : 'assets/[name]-[hash].js') },
+    },
+  },
   server: { watch: { ignored: ['**/.data/**'] } },
   test: {
     // The S3 SDK warns once that it will leave this Node version behind; the tests let nothing be printed.

@@ -1,4 +1,5 @@
 import { useQuery } from '@tanstack/react-query'
+import { useEffect } from 'react'
 import { Navigate, Outlet, ScrollRestoration, useLocation } from 'react-router-dom'
 import { sessionQueries } from '../../features/session/session.queries.ts'
 import { NotYetSentCount } from '../../features/uploads/components/not-yet-sent.tsx'
@@ -46,5 +47,9 @@ function LineDown() {
 
 function OutboxAtWork({ userId }: { userId: string }) {
   useOutboxAtWork(userId)
+  useEffect(() => {
+    // The send page is fetched while there is a line: it must open where there is none.
+    void import('./send.tsx').catch(() => undefined)
+  }, [])
   return null
 }

@@ -2,7 +2,7 @@ import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query
 import { z } from 'zod'
 import { type Session, type SignIn, sessionSchema } from '../../../shared/schemas/user.ts'
 import { api } from '../../lib/api.ts'
-import { ApiError } from '../../lib/api-error.ts'
+import { ApiError, isLineDown } from '../../lib/api-error.ts'
 
 export const linkSchema = z.object({
   kind: z.enum(['invitation', 'reset', 'first admin']),
@@ -11,11 +11,22 @@ export const linkSchema = z.object({
 })
 export type OneTimeLink = z.infer<typeof linkSchema>
 
+/** Who was signed in last, so that a phone without a line opens for them; the server decides again when the line is back. */
+const LAST = 'sheafbook.last-session'
+
+function keepSession(session: Session | null): Session | null {
+  if (session) localStorage.setItem(LAST, JSON.stringify(session))
+  else localStorage.removeItem(LAST)
+  return session
+}
+
 async function fetchMe(): Promise<Session | null> {
   try {
-    return await api.get('/session', sessionSchema)
+    return keepSession(await api.get('/session', sessionSchema))
   } catch (error) {
-    if (error instanceof ApiError && error.code === 'not_signed_in') return null
+    if (error instanceof ApiError && error.code === 'not_signed_in') return keepSession(null)
+    const last = sessionSchema.safeParse(JSON.parse(localStorage.getItem(LAST) ?? 'null'))
+    if (isLineDown(error) && last.success) return last.data
     throw error
   }
 }
@@ -39,7 +50,7 @@ function useSessionStart<Input>(path: string) {
     mutationFn: (input: Input) => api.post(path, input, sessionSchema),
     onSuccess: (session) => {
       cache.clear()
-      cache.setQueryData(sessionQueries.me().queryKey, session)
+      cache.setQueryData(sessionQueries.me().queryKey, keepSession(session))
     },
   })
 }
@@ -58,7 +69,7 @@ export function useSignOut() {
     mutationFn: () => api.delete('/session'),
     onSuccess: () => {
       cache.clear()
-      cache.setQueryData(sessionQueries.me().queryKey, null)
+      cache.setQueryData(sessionQueries.me().queryKey, keepSession(null))
     },
   })
 }
