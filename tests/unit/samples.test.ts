@@ -12,15 +12,25 @@ const onPurpose = (truth: { spoiled: string[]; wrongSum: string[] }) => [...trut
 
 const heads = ({ page, sheet, layout, version, takeAgain }: ExpectedPage) => ({ page, sheet, layout, version, takeAgain })
 
+/**
+ * Readings of a page that may fall into doubt with the right value: processors round the net's sums differently, which moves a
+ * reading that stands on the threshold. More than this is a reader that got worse.
+ */
+const ON_THE_EDGE = 2
+
 /** What came out worse than expected. A doubt that became clear with what was written is better, not worse. */
 function worse(expected: ExpectedPage, page: ExpectedPage, truth: Truth | undefined): string[] {
-  return Object.entries(expected.readings).flatMap(([key, { state, value }]) => {
+  const edge: string[] = []
+  const wrong = Object.entries(expected.readings).flatMap(([key, { state, value }]) => {
     const now = page.readings[key]
     const line = `${key}: expected ${state} ${String(value)}, came out ${now ? `${now.state} ${String(now.value)}` : 'not at all'}`
     if (!now) return [line]
-    if (state === 'clear') return now.state === 'clear' && now.value === value ? [] : [line]
-    return now.state === 'in doubt' || now.value === truth?.readings[key] ? [] : [line]
+    if (state === 'in doubt') return now.state === 'in doubt' || now.value === truth?.readings[key] ? [] : [line]
+    if (now.value !== value) return [line]
+    if (now.state === 'in doubt') edge.push(line)
+    return []
   })
+  return edge.length > ON_THE_EDGE ? [...wrong, ...edge] : wrong
 }
 
 describe('samples', () => {
