@@ -20,7 +20,7 @@ interface Watch {
 }
 
 /** A field farther than this from its neighbours' word is shown to a person, whatever the net says. */
-const FIT_LIMIT_MM = 0.8
+const FIT_LIMIT_MM = 0.65
 
 interface PlacedBox {
   box: Box
@@ -33,6 +33,8 @@ interface PlacedCell {
   /** Null where a box was not found on its own lines. */
   fit_mm: number | null
   hasFrame: boolean
+  /** All of its boxes were seen. */
+  seen: boolean
 }
 
 export async function readCells(
@@ -93,13 +95,13 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
         part.boxes.map((box) => ({ box, map: { homography, center, displacement } })),
       )
       const fit_mm = parts.every((p) => p.found) ? Math.max(...parts.map((p) => p.fit_mm)) : null
-      return [{ cell, boxes, fit_mm, hasFrame: true }]
+      return [{ cell, boxes, fit_mm, hasFrame: true, seen: parts.every((p) => p.seen) }]
     }
     const boxes = boxesOf(cell).map((box) => {
       const center = { x: box.x + box.width / 2, y: box.y + box.height / 2 }
       return { box, map: { homography, center, displacement: displacementAt(alignment.anchors, center) } }
     })
-    return [{ cell, boxes, fit_mm: null, hasFrame: false }]
+    return [{ cell, boxes, fit_mm: null, hasFrame: false, seen: false }]
   })
 }
 
@@ -114,7 +116,7 @@ function seen(picture: Picture, alignment: Alignment, { cell, boxes }: PlacedCel
   return { value: signed, state: sure ? 'clear' : 'in doubt', candidates: [], reasons, posterior: sure ? 1 : 0.5 }
 }
 
-function withPlace({ cell, boxes, fit_mm, hasFrame }: PlacedCell, weighed: Weighed): CellReading {
+function withPlace({ cell, boxes, fit_mm, hasFrame, seen: framed }: PlacedCell, weighed: Weighed): CellReading {
   const reading: CellReading = {
     value: weighed.value,
     unit: unitOf(cell),
@@ -128,6 +130,11 @@ function withPlace({ cell, boxes, fit_mm, hasFrame }: PlacedCell, weighed: Weigh
     const how = fit_mm === null ? 'were not found' : `stand ${fit_mm.toFixed(1)} mm from where the boxes around put them`
     reading.state = 'in doubt'
     reading.reasons.push({ rule: 'R07', text: `The printed boxes of ${cell.label} ${how}.`, cells: [cell.key] })
+  }
+  // Bright light takes frame and ink alike: what shows no frame is not known to be empty.
+  if (hasFrame && !framed && (weighed.value === null || weighed.value === false)) {
+    reading.state = 'in doubt'
+    reading.reasons.push({ rule: 'R07', text: `Neither ink nor frame of ${cell.label} can be seen.`, cells: [cell.key] })
   }
   return reading
 }

@@ -61,17 +61,17 @@ export function alignPage(
 
   const all = placings(layout, planned)
   const combs = all.filter((p) => !p.tick)
-  let known = [...marks, ...placeOutwards(framed, homography, marks, combs)]
-  for (let round = 0; round < SECOND_LOOKS; round++) {
-    known = refuseOutliers(known)
-    const again = combs.filter((p) => isLacking(p, known))
-    if (again.length === 0) break
-    const keys = new Set(again.flatMap((p) => p.parts.map(keyOf)))
-    known = known.filter((mark) => !keys.has(mark.key))
-    known.push(...placeOutwards(framed, homography, known, again))
+  let known: Mark[] = marks
+  for (const kind of [combs, all.filter((p) => p.tick)]) {
+    known = refuseOutliers([...known, ...placeOutwards(framed, homography, known, kind)])
+    for (let round = 0; round < SECOND_LOOKS; round++) {
+      const again = kind.filter((p) => isLacking(p, known))
+      if (again.length === 0) break
+      const keys = new Set(again.flatMap((p) => p.parts.map(keyOf)))
+      known = known.filter((mark) => !keys.has(mark.key))
+      known = refuseOutliers([...known, ...placeOutwards(framed, homography, known, again)])
+    }
   }
-  const ticks = all.filter((p) => p.tick)
-  known = refuseOutliers([...known, ...placeOutwards(framed, homography, known, ticks)])
 
   const parts = settleParts(
     all.flatMap((p) => p.parts),
@@ -79,7 +79,7 @@ export function alignPage(
   )
   return {
     homography: scaled(homography, 1 / scale),
-    anchors: known.map(({ key: _k, field: _f, plain: _p, spread_mm: _s, ahead: _a, ...anchor }) => anchor),
+    anchors: known.map(({ key: _k, field: _f, plain: _p, spread_mm: _s, ahead: _a, dyy: _d, ...anchor }) => anchor),
     parts,
     foundShare: parts.length === 0 ? 0 : parts.filter((p) => p.found).length / parts.length,
     edge_mm,

@@ -12,6 +12,8 @@ export interface LevelMatch {
   shift_mm: number
   /** Rise along the comb, mm a mm. */
   lean: number
+  /** How much taller it stands than expected: 0.01 is a hundredth. */
+  growth: number
   support: number
   spread_mm: number
 }
@@ -37,6 +39,10 @@ const BAR_SIDE_MM = 0.55
 /** What distance from the expected place costs, in support a mm; and a lean of one: rules and labels also run level. */
 const AWAY_COST = 0.08
 const LEAN_COST = 1.5
+/** Heights beside the expected one. */
+const GROWTHS = [0.04, -0.04, 0.08, -0.08] as const
+/** A place that is so well supported needs no bending. */
+const GOOD_AS_IT_IS = 0.6
 /** Leans beside the one that neighbours give. */
 const LEANS = [0, 0.006, -0.006, 0.012, -0.012, 0.02, -0.02, 0.03, -0.03, 0.045, -0.045, 0.06, -0.06]
 
@@ -83,26 +89,38 @@ function edgeVote(profile: Profile, at: number, darkBelow: boolean): number {
   return Math.max(-0.5, Math.min(1, (darkBelow ? below - above : above - below) / profile.full))
 }
 
-function supportAt(voters: readonly Voter[], shift: number, lean: number): number {
+interface Pose {
+  shift: number
+  lean: number
+  growth: number
+}
+
+/** Where something printed at height `y` stands, beside where it is expected, mm. */
+const offset = (pose: Pose, along: number, y: number, center: number) =>
+  pose.shift + pose.lean * along + pose.growth * (y - center)
+
+function supportAt(voters: readonly Voter[], pose: Pose, center: number): number {
   let sum = 0
   let count = 0
   for (const { along, profile, lines, edges } of voters) {
-    const by = shift + lean * along
-    for (const line of lines) sum += voteOf(profile, line, by)
-    for (const edge of edges) sum += edgeVote(profile, edge.at + by, edge.darkBelow)
+    for (const line of lines) sum += voteOf(profile, line, offset(pose, along, line.from, center))
+    for (const edge of edges) sum += edgeVote(profile, edge.at + offset(pose, along, edge.at, center), edge.darkBelow)
     count += lines.length + edges.length
   }
   return count === 0 ? 0 : sum / count
 }
 
-/** `withBars`: which of the comb's bars stand beside this part. */
+/**
+ * Seeks the boxes of `parts`, with the bars that stand beside them, within `reach_mm` of `around`. A page that curls away is
+ * thought of (leaning more, lower or taller) only where it does not fit as it is.
+ */
 export function matchLevel(
   patch: Patch,
   parts: readonly FieldPart[],
   dx: number,
   reach_mm: number,
   full: number,
-  around: { shift_mm: number; lean: number } = { shift_mm: 0, lean: 0 },
+  around: { shift_mm: number; lean: number; growth: number } = { shift_mm: 0, lean: 0, growth: 0 },
   leans: readonly number[] = LEANS,
 ): LevelMatch {
   const first = parts[0]!.boxes[0]!
@@ -117,38 +135,43 @@ export function matchLevel(
   const end = field.x + field.width
   if (Math.abs(last.x + last.width - end) < 0.1) voters.push(barVoter(patch, end, field.y, field.y + field.height, dx, middle))
 
-  let best = { value: -1, support: -1, shift: around.shift_mm, lean: around.lean }
+  const center = field.y + field.height / 2
+  let best = { value: -1, support: -1, shift: around.shift_mm, lean: around.lean, growth: around.growth }
   const step = patch.step_mm / 2
   const steps = Math.ceil(reach_mm / step)
-  for (const bend of leans) {
-    const lean = around.lean + bend
-    for (let k = -steps; k <= steps; k++) {
-      const shift = around.shift_mm + k * step
-      const support = supportAt(voters, shift, lean)
-      const value = support - AWAY_COST * Math.abs(k * step) - LEAN_COST * Math.abs(bend)
-      if (value > best.value) best = { value, support, shift, lean }
+  const seek = (growths: readonly number[]) => {
+    for (const grown of growths) {
+      for (const bend of leans) {
+        const cost = LEAN_COST * (Math.abs(bend) + Math.abs(grown))
+        for (let k = -steps; k <= steps; k++) {
+          const pose = { shift: around.shift_mm + k * step, lean: around.lean + bend, growth: around.growth + grown }
+          const support = supportAt(voters, pose, center)
+          const value = support - AWAY_COST * Math.abs(k * step) - cost
+          if (value > best.value) best = { value, support, ...pose }
+        }
+      }
     }
   }
-  return refine(voters, best)
+  seek([0])
+  if (best.support < GOOD_AS_IT_IS && leans.length > 1) seek(GROWTHS)
+  return refine(voters, best, best.support, center)
 }
 
 /** The median of what single lines say, about the best shift. */
-function refine(
-  voters: readonly Voter[],
-  { support, shift, lean }: { support: number; shift: number; lean: number },
-): LevelMatch {
+function refine(voters: readonly Voter[], pose: Pose, support: number, center: number): LevelMatch {
   const centres: number[] = []
   for (const { along, profile, lines } of voters) {
     for (const line of lines) {
-      const by = shift + lean * along
+      const by = offset(pose, along, line.from, center)
       const centre = centreOf(profile, line, by)
       if (centre !== null && voteOf(profile, line, by) > 0.25 && Math.abs(centre - by) < 0.4) centres.push(centre - by)
     }
   }
-  if (centres.length === 0) return { shift_mm: shift, lean, support, spread_mm: Number.NaN }
+  const { lean, growth } = pose
+  if (centres.length === 0) return { shift_mm: pose.shift, lean, growth, support, spread_mm: Number.NaN }
   centres.sort((a, b) => a - b)
   const n = centres.length
   const middle = n % 2 ? centres[n >> 1]! : (centres[n / 2 - 1]! + centres[n / 2]!) / 2
   const off = centres.map((c) => Math.abs(c - middle)).sort((a, b) => a - b)
-  return { shift_mm: shift + middle, lean, support, spread_mm: off[n >> 1]! }
+  return { shift_mm: pose.shift + middle, lean, growth, support, spread_mm: off[n >> 1]! }
 }

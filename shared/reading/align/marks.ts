@@ -13,6 +13,8 @@ export interface Mark extends Anchor {
   /** Its own lines leave no doubt where it is. */
   plain?: boolean
   spread_mm?: number
+  /** How its displacement changes downwards, by its own lines. */
+  dyy?: number
   ahead?: number
 }
 
@@ -60,6 +62,7 @@ export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boole
     plain: !tick && Math.min(fit.supportX, fit.supportY) >= PLAIN.support && fit.ahead >= PLAIN.ahead,
     spread_mm: fit.spread_mm,
     ahead: fit.ahead,
+    dyy: d.dyy + fit.growth,
   }
   if (part.pitch_mm === null) return mark
   const width = part.boxes.at(-1)!.x + part.boxes.at(-1)!.width - part.boxes[0]!.x

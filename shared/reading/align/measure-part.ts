@@ -19,6 +19,7 @@ export interface PartFit {
   /** Wider and leaning beside the map it was measured with. */
   stretch: number
   lean: number
+  growth: number
 }
 
 const STEP_MM = 0.16
@@ -64,18 +65,18 @@ export function measureParts(patch: Patch, parts: readonly FieldPart[], reach_mm
       ? 0
       : Math.max(...[-pitch_mm, pitch_mm].map((to) => support(columns, first.whole, along + to, whole.stretch)))
   const ahead = whole.support - beside
-  const { lean } = down
+  const { lean, growth } = down
   if (parts.length === 1) {
     const spread_mm = Math.max(whole.spread_mm, down.spread_mm)
     const { support: supportX, stretch } = whole
-    return [{ dx: along, dy: down.shift_mm, supportX, supportY: down.support, ahead, spread_mm, stretch, lean }]
+    return [{ dx: along, dy: down.shift_mm, supportX, supportY: down.support, ahead, spread_mm, stretch, lean, growth }]
   }
   const near = Math.min(PART_REACH_MM, reach_mm)
   const middle = field.x + field.width / 2
   return parts.map((part) => {
     const own = (part.boxes[0]!.x + part.boxes.at(-1)!.x + part.boxes.at(-1)!.width) / 2 - middle
     const x = matchLines(columns, part.upright, near, along + whole.stretch * own, stretchesAbout(whole.stretch))
-    const around = { shift_mm: down.shift_mm + lean * own, lean }
+    const around = { shift_mm: down.shift_mm + lean * own, lean, growth }
     const y = matchLevel(patch, [part], x.shift_mm, PART_LEVEL_REACH_MM, full, around, [0])
     return {
       dx: x.shift_mm,
@@ -86,6 +87,7 @@ export function measureParts(patch: Patch, parts: readonly FieldPart[], reach_mm
       spread_mm: Math.max(x.spread_mm, y.spread_mm),
       stretch: x.stretch,
       lean,
+      growth,
     }
   })
 }

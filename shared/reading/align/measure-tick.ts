@@ -81,7 +81,7 @@ export function measureTickPlace(picture: Picture, map: FieldMap, part: FieldPar
   }
   const dx = (best.dx + fine(at(best.dx - 1, best.dy), at(best.dx + 1, best.dy))) * STEP_MM
   const dy = (best.dy + fine(at(best.dx, best.dy - 1), at(best.dx, best.dy + 1))) * STEP_MM
-  return { dx, dy, supportX: best.value, supportY: best.value, ahead: 1, spread_mm: 0, stretch: 0, lean: 0 }
+  return { dx, dy, supportX: best.value, supportY: best.value, ahead: 1, spread_mm: 0, stretch: 0, lean: 0, growth: 0 }
 }
 
 function likenessAt(darkness: Float32Array, columns: number, left: number, top: number): number {

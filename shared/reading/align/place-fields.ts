@@ -15,7 +15,7 @@ const LEAST_SUPPORT = { comb: 0.4, tick: 0.33 } as const
 const LEAST_AHEAD = 0
 /** How far from its neighbours' word a field is looked for, mm: more, the farther they are; never as far as the next box. */
 const combReach = (distance_mm: number) => Math.min(2.4, 0.7 + 0.05 * distance_mm)
-const TICK_REACH_MM = 0.9
+const tickReach = (distance_mm: number) => Math.min(1.7, 0.6 + 0.04 * distance_mm)
 
 export interface FramedPicture extends Picture {
   /** Contrast of a pale frame in it. */
@@ -81,7 +81,7 @@ export function placeOutwards(
     let next = 0
     for (let i = 1; i < left.length; i++) if (near.get(left[i]!)! < near.get(left[next]!)!) next = i
     const placing = left.splice(next, 1)[0]!
-    const reach = placing.tick ? TICK_REACH_MM : combReach(near.get(placing)!)
+    const reach = (placing.tick ? tickReach : combReach)(near.get(placing)!)
     const marks = place(picture, homography, all, placing, reach)
     all.push(...marks)
     for (const mark of marks) {

@@ -10,12 +10,14 @@ export interface PlacedPart {
   displacement: Displacement
   /** Found on its own lines, or between neighbours that leave no room for doubt. */
   found: boolean
+  /** Its own lines were seen. */
+  seen: boolean
   /** How far it may be off, mm: by its own lines where they are plain, else by its neighbours. */
   fit_mm: number
 }
 
 /** Neighbours vouch for a field whose own lines are covered by ink: so many, so near, agreeing so well (median, mm). */
-const VOUCH = { count: 4, within_mm: 32, agree_mm: 0.25 } as const
+const VOUCH = { count: 4, within_mm: 32, agree_mm: 0.45 } as const
 /** A field between its neighbours may be off by this much more than they are from each other. */
 const BETWEEN = 1.5
 
@@ -33,12 +35,19 @@ export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[])
     const around = displacementAt(marks, center, (other) => other !== mark && (other as Mark).field === part.key)
     if (!mark) {
       const fit_mm = vouched(part, center, off)
-      return { part, center, displacement: around, found: fit_mm !== null, fit_mm: fit_mm ?? Number.NaN }
+      return { part, center, displacement: around, found: fit_mm !== null, seen: false, fit_mm: fit_mm ?? Number.NaN }
     }
-    const { dx, dy, slope, plain, spread_mm } = mark
-    const displacement = { ...around, dx, dy, dxx: slope?.dxx ?? around.dxx, dyx: slope?.dyx ?? around.dyx }
+    const { dx, dy, slope, plain, spread_mm, dyy } = mark
+    const displacement = {
+      ...around,
+      dx,
+      dy,
+      dxx: slope?.dxx ?? around.dxx,
+      dyx: slope?.dyx ?? around.dyx,
+      dyy: dyy ?? around.dyy,
+    }
     const fit_mm = plain && spread_mm !== undefined && !Number.isNaN(spread_mm) ? spread_mm : off.get(mark)!
-    return { part, center, displacement, found: true, fit_mm }
+    return { part, center, displacement, found: true, seen: true, fit_mm }
   })
 }
 
