@@ -8,6 +8,8 @@ import type { z } from 'zod'
 export interface Asked {
   method: string
   path: string
+  /** What stands after the question mark. */
+  query: URLSearchParams
   body: unknown
 }
 
@@ -34,18 +36,24 @@ export interface FakeApi {
   on: (method: string, path: string | RegExp, handler: Handler) => void
   /** Requests that change something, in order. */
   writes: () => Asked[]
+  /** Requests of one address that change nothing, in order. */
+  reads: (path: string) => Asked[]
 }
 
 export function fakeApi(): FakeApi {
   const handlers: Array<{ method: string; path: string | RegExp; handler: Handler }> = []
   const asked: Asked[] = []
   const fetched = async (input: RequestInfo | URL, init: RequestInit = {}): Promise<Response> => {
-    const path =
-      String(input)
-        .replace(/^\/api/, '')
-        .split('?')[0] ?? ''
+    const [path = '', query = ''] = String(input)
+      .replace(/^\/api/, '')
+      .split('?')
     const method = init.method ?? 'GET'
-    const one: Asked = { method, path, body: typeof init.body === 'string' ? JSON.parse(init.body) : null }
+    const one: Asked = {
+      method,
+      path,
+      query: new URLSearchParams(query),
+      body: typeof init.body === 'string' ? JSON.parse(init.body) : null,
+    }
     asked.push(one)
     const found = handlers.findLast(
       (h) => h.method === method && (typeof h.path === 'string' ? h.path === path : h.path.test(path)),
@@ -62,5 +70,6 @@ export function fakeApi(): FakeApi {
       handlers.push({ method, path, handler })
     },
     writes: () => asked.filter((one) => one.method !== 'GET'),
+    reads: (path) => asked.filter((one) => one.method === 'GET' && one.path === path),
   }
 }

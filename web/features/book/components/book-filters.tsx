@@ -26,7 +26,10 @@ export function BookFilterBar({
   const places = useQuery(registerQueries.rows('places'))
   const set = (name: keyof BookFilters) => (value: string) => onChange(name, value)
   return (
-    <search className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5 max-sm:grid max-sm:grid-cols-2">
+    <section
+      aria-label="Filters"
+      className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5 max-sm:grid max-sm:grid-cols-2"
+    >
       <Pick label="tractor" value={filters.tractor} choices={tractors.data?.map(named) ?? []} onPick={set('tractor')} />
       <Pick label="implement" value={filters.implement} choices={tools.data?.map(named) ?? []} onPick={set('implement')} />
       <Pick label="operation" value={filters.operation} choices={OPERATIONS.map(words)} onPick={set('operation')} />
@@ -34,7 +37,7 @@ export function BookFilterBar({
       <Pick label="soil" value={filters.soil} choices={['fine', 'medium', 'coarse'].map(words)} onPick={set('soil')} />
       <Day label="from" value={filters.from} onPick={set('from')} />
       <Day label="to" value={filters.to} onPick={set('to')} />
-    </search>
+    </section>
   )
 }
 
