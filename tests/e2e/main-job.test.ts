@@ -97,7 +97,7 @@ describe.sequential('from plan to download', () => {
 
   test('the analyst finds the golden result, its ink, and takes the data away', async () => {
     const page = await app.enter(301)
-    await page.getByText('1 run').waitFor()
+    await page.getByRole('heading', { name: /1 run stands/ }).waitFor()
     await expectAccessible(page)
     await page.getByRole('link', { name: '0001' }).click()
     await page.getByRole('heading', { name: /Tarnfold 50 with plough/ }).waitFor()

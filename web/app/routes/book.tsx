@@ -26,7 +26,7 @@ export function Component() {
     })
   const total = book.data?.total ?? 0
   const said = book.data
-    ? `${counted(total, 'run', 'runs')} ${filtered ? 'in this view of' : 'stand in'} the trial book.`
+    ? `${counted(total, 'run', 'runs')} ${filtered ? 'in this view of' : total === 1 ? 'stands in' : 'stand in'} the trial book.`
     : 'The trial book.'
   return (
     <Page title="Trial book" sentence={said} aside={me.role !== 'demonstrator' && <Downloads filters={filters} />}>
