@@ -26,7 +26,7 @@ export function Folio({ home, links, children }: FolioProps) {
       </a>
       <Link to={home} className="flex items-center gap-1 pr-2 font-[760] no-underline">
         <Mark size={20} />
-        Sheafbook
+        <span className="max-sm:away">Sheafbook</span>
       </Link>
       <nav aria-label="Sections" className="order-2 flex max-sm:order-3 max-sm:basis-full">
         <ul className="flex flex-wrap">

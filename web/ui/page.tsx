@@ -25,7 +25,7 @@ export function Page({ title, sentence, over, aside, keys, note, children }: Pag
       <main id="work" tabIndex={-1} className="flex grow flex-col">
         <header className="flex flex-wrap items-end gap-x-6 gap-y-1 px-margin pt-3 pb-2">
           <div className="min-w-0 grow basis-[320px]">
-            {over && <p className="label mb-0.5">{over}</p>}
+            {over && <div className="label mb-0.5">{over}</div>}
             <h1 className="text-4 leading-[33px] max-sm:text-3 max-sm:leading-[27px]">{sentence ?? title}</h1>
           </div>
           {aside && <div className="flex flex-wrap items-center gap-x-3 gap-y-1">{aside}</div>}

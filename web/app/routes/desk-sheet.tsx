@@ -1,4 +1,5 @@
-import { useQuery } from '@tanstack/react-query'
+import { useQuery, useQueryClient } from '@tanstack/react-query'
+import { useEffect } from 'react'
 import { Link, useNavigate, useParams } from 'react-router-dom'
 import { findLayout } from '../../../shared/layouts/registry.ts'
 import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
@@ -17,6 +18,7 @@ export function Component() {
   const me = useMe()
   const navigate = useNavigate()
   const sheet = useQuery(deskQueries.detail(id))
+  useNextAhead(id, me.id)
   if (sheet.error && !sheet.data) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
   if (!sheet.data) return <Loading what="Taking the sheet in hand" />
   const { state, layout: key, layoutVersion } = sheet.data
@@ -40,6 +42,17 @@ export function Component() {
       onLeave={(next) => navigate(next ? paths.deskSheet.to(next) : paths.desk.to())}
     />
   )
+}
+
+/** The next sheet is fetched while this one is worked on, so that entering one opens the other at once. */
+function useNextAhead(id: string, meId: string): void {
+  const cache = useQueryClient()
+  const list = useQuery(deskQueries.list())
+  // The server names the oldest free one when a sheet is entered.
+  const next = list.data?.sheets.find((row) => row.id !== id && (row.inHand === null || row.inHand.userId === meId))?.id
+  useEffect(() => {
+    if (next) void cache.prefetchQuery({ ...deskQueries.detail(next), staleTime: 60_000 })
+  }, [next, cache])
 }
 
 const nameOf = (sheet: Sheet) => (sheet.code ? formatSheetCode(sheet.code) : 'Sheet without a code')
