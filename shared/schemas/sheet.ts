@@ -106,8 +106,6 @@ export const sheetRowSchema = z.object({
 })
 export type SheetRow = z.infer<typeof sheetRowSchema>
 
-export const DESK_GROUPS = ['answered', 'sums', 'ink', 'missing', 'place by hand', 'challenged', 'ready'] as const
-
 export const pageSchema = z.object({
   id: idSchema,
   number: z.number().int(),

@@ -102,11 +102,14 @@ async function takeInUnread(
   const reason = outcome.kind === 'take again' ? outcome.advice : outcome.reason
   const code = outcome.kind === 'take again' ? (outcome.sheetCode ?? null) : null
   const id =
-    page.sheetId ?? (await insertSheet(db, { code, state: 'unreadable', facts: {}, ownerId: upload.uploadedBy, origin: 'photo' }))
+    page.sheetId ??
+    (await insertSheet(db, { code, state: 'unreadable', facts: {}, ownerId: upload.uploadedBy, origin: originOf(upload) }))
   await noteOnSheet(db, id, { state: 'unreadable', reason, firstDoubt: reason, arrivedAt: upload.receivedAt })
   await addTrailLine(db, { actor: null, action: outcome.kind, subject: 'sheet', subjectId: id, text: reason })
   return id
 }
+
+const originOf = ({ kind }: UploadEntity) => (kind === 'xlsx' || kind === 'csv' ? 'spreadsheet' : 'photo')
 
 async function closeUpload(db: Db, uploadId: string): Promise<void> {
   await db.query(
