@@ -151,6 +151,8 @@ export function drawConditions(level: Level, chance: Chance): Conditions {
   const turned = (sideways ? (chance.odds(0.5) ? 1 : -1) * (Math.PI / 2) : 0) + (upsideDown ? Math.PI : 0)
   const cutBy = cut ? chance.between(0.05, 0.09) : 0
   const tilt = (spread: number) => Math.max(-2.1 * spread, Math.min(2.1 * spread, chance.normal(0, spread)))
+  // Turned enough that one corner alone stands out: moved to that side, it leaves the picture and the others stay.
+  const leanOut = (roll: number) => (cut ? Math.sign(roll) * (0.15 + Math.abs(roll) / 3) : roll)
   const side = () => (chance.odds(0.5) ? 1 : -1)
   return {
     shot: {
@@ -158,9 +160,9 @@ export function drawConditions(level: Level, chance: Chance): Conditions {
       height: sideways ? short : long,
       pitch: tilt(r.tilt),
       yaw: tilt(r.tilt * 0.75),
-      roll: turned + chance.normal(0, r.roll),
-      fill: cut ? 0.97 : range(r.fill),
-      off: cut ? [cutBy * side(), cutBy * side()] : [chance.normal(0, r.off / 2), chance.normal(0, r.off / 2)],
+      roll: turned + leanOut(chance.normal(0, r.roll)),
+      fill: cut ? 0.96 : range(r.fill),
+      off: cut ? [cutBy * side(), 0.2 * cutBy * side()] : [chance.normal(0, r.off / 2), chance.normal(0, r.off / 2)],
       focal: chance.between(0.58, 0.8),
       barrel: chance.normal(0, r.barrel),
     },
