@@ -65,3 +65,12 @@ const runsOf = (days: readonly Day[]): DemoRun[] =>
 export const ROW_RUNS: readonly DemoRun[] = runsOf(DAYS)
 /** Runs whose rows have something wrong with them: they wait at the desk. */
 export const TROUBLE_RUNS: readonly DemoRun[] = runsOf([['2026-11-19', 4, 103, [12, 15], 23, 33]])
+
+const DAY_MS = 86_400_000
+const SEASON_BEGINS = Date.UTC(2026, 8, 1)
+
+/** Hours on a tractor's meter when a run began: it only ever goes up over the season. */
+export function hourMeterAt(tractor: number, heldOn: string, run: number): number {
+  const days = (Date.parse(`${heldOn}T00:00:00Z`) - SEASON_BEGINS) / DAY_MS
+  return Math.round((1138.3 + 137 * (tractor - 11) + 6 * days + 2.6 * (run - 1)) * 10) / 10
+}

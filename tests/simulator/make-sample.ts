@@ -1,4 +1,5 @@
 /** Makes the files of one sample: the picture or PDF, and what was written. */
+import { hourMeterAt } from '../../server/demo/season.ts'
 import { findLayout } from '../../shared/layouts/registry.ts'
 import { goldenScenario } from './golden.ts'
 import { makePhoto, type Photo } from './make-photo.ts'
@@ -8,7 +9,7 @@ import type { SampleCase } from './sample-cases.ts'
 import { headOf, planLinesOf, SAMPLE_RUNS, type SampleRun } from './sample-season.ts'
 import { drawScanPlan } from './scan.ts'
 import { pagesToPdf } from './scan-pdf.ts'
-import type { Truth } from './scenario.ts'
+import type { Scenario, Truth } from './scenario.ts'
 import { MACHINES, tillageScenario } from './scenario-tillage.ts'
 
 export interface SampleFile {
@@ -30,8 +31,11 @@ async function sampleSheet(sample: SampleCase, run: SampleRun | undefined): Prom
       ? goldenScenario(head)
       : drawUntil(
           (n) => tillageScenario(chance.fork(`scenario ${n}`), { head, machine, worthwhile: true }),
-          (s) => sample.case !== 'four-sides' || (s.readings.side_cd_m !== null && s.readings.area_unit === 'acre'),
+          (s) =>
+            (sample.case !== 'four-sides' || (s.readings.side_cd_m !== null && s.readings.area_unit === 'acre')) &&
+            inItsTurn(s, run),
         )
+  if (run) setHourMeter(scenario, run)
   sample.change?.(scenario, LAYOUT)
   return makePhoto({
     layout: LAYOUT,
@@ -45,6 +49,24 @@ async function sampleSheet(sample: SampleCase, run: SampleRun | undefined): Prom
     writer: sample.writer,
     adjust: sample.adjust,
   })
+}
+
+/** A tractor works one run after the other: each has its part of the day. */
+const TURNS = [
+  ['07:00', '10:30'],
+  ['10:35', '13:20'],
+  ['13:25', '17:00'],
+] as const
+
+function inItsTurn({ readings }: Scenario, run: SampleRun | undefined): boolean {
+  const [from, to] = TURNS[(run?.run ?? 0) - 1] ?? ['00:00', '23:59']
+  return String(readings.t_start) >= from && String(readings.t_end) <= to
+}
+
+function setHourMeter({ readings }: Scenario, run: SampleRun): void {
+  const span = Number(readings.hour_meter_end) - Number(readings.hour_meter_start)
+  const start = hourMeterAt(run.ids.tractor_id, run.trial_date, run.run)
+  Object.assign(readings, { hour_meter_start: start, hour_meter_end: Math.round((start + span) * 10) / 10 })
 }
 
 function drawUntil<T>(draw: (n: number) => T, fits: (value: T) => boolean): T {

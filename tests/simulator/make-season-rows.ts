@@ -4,7 +4,7 @@
  */
 import { mkdir, writeFile } from 'node:fs/promises'
 import { IMPLEMENTS, KITS, TRACTORS } from '../../server/demo/registers.ts'
-import { type DemoRun, ROW_RUNS, TROUBLE_RUNS } from '../../server/demo/season.ts'
+import { type DemoRun, hourMeterAt, ROW_RUNS, TROUBLE_RUNS } from '../../server/demo/season.ts'
 import { csvLine } from '../../server/print/csv-text.ts'
 import { judgeSheet } from '../../shared/checks/judge-sheet.ts'
 import { csvHeading, FORM_HEAD, formRows } from '../../shared/layouts/form.ts'
@@ -15,8 +15,6 @@ import type { Written } from './scenario.ts'
 import { MACHINES, tillageScenario } from './scenario-tillage.ts'
 
 const TRIES = 5000
-/** Hours on the meter at the season's start, by tractor; each run goes on where the last one ended. */
-const meters = new Map<number, number>()
 /** When a tractor was last done on a day: its next run starts later. */
 const ends = new Map<string, string>()
 
@@ -52,9 +50,8 @@ function rowOf(run: DemoRun): Record<string, Written> {
     if (String(readings.t_start) <= (ends.get(`${run.heldOn}|${run.tractor}`) ?? '')) continue
     if (run.run === 1 && String(readings.t_start) > '08:30') continue
     if (run.run === 2 && String(readings.t_start) > '11:30') continue
-    const before = meters.get(run.tractor) ?? 200 + 61 * run.tractor
     const span = Number(readings.hour_meter_end) - Number(readings.hour_meter_start)
-    const start = Math.round((before + 1.4) * 10) / 10
+    const start = hourMeterAt(run.tractor, run.heldOn, run.run)
     Object.assign(readings, {
       hour_meter_start: start,
       hour_meter_end: Math.round((start + span) * 10) / 10,
@@ -64,7 +61,6 @@ function rowOf(run: DemoRun): Record<string, Written> {
     })
     if (judgeSheet(tillage1, readings, factsOf(run)).findings.some((f) => f.severity !== 'note')) continue
     ends.set(`${run.heldOn}|${run.tractor}`, String(readings.t_end))
-    meters.set(run.tractor, Number(readings.hour_meter_end))
     return readings
   }
   throw new Error(`no draw of ${run.sheetCode} passes the rules after ${TRIES} tries`)
