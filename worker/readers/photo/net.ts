@@ -10,10 +10,22 @@ import { CELL_HEIGHT_PX, CELL_PX, CELL_WIDTH_PX, CLASS_COUNT, type DigitNet } fr
 /** Cells a run: enough to keep the kernels busy, small enough to stay in the cache. */
 const BATCH = 64
 
-const cardSchema = z.object({ temperature: z.number().positive() })
+const cardSchema = z.object({
+  temperature: z.number().positive(),
+  /** Cells whose best class is below this are looked at again, cut a pixel off to each side. */
+  secondLook: z.object({ below: z.number(), temperature: z.number().positive() }),
+})
+
+/** A pixel right, left, down and up, as in training's figures. */
+const SHIFTS = [
+  [1, 0],
+  [-1, 0],
+  [0, 1],
+  [0, -1],
+] as const
 
 /**
- * Loads digits.onnx and the temperature from card.json beside it.
+ * Loads digits.onnx and the temperatures from card.json beside it.
  * @throws when either file is missing or is not what it should be; without its net the worker must not start.
  */
 export async function createNet(modelPath: string): Promise<DigitNet> {
@@ -25,30 +37,67 @@ export async function createNet(modelPath: string): Promise<DigitNet> {
     executionMode: 'sequential',
     graphOptimizationLevel: 'all',
   })
+
+  async function logitsOf(cells: Float32Array, count: number): Promise<Float32Array> {
+    const out = new Float32Array(count * CLASS_COUNT)
+    for (let start = 0; start < count; start += BATCH) {
+      const n = Math.min(BATCH, count - start)
+      const part = cells.subarray(start * CELL_PX, (start + n) * CELL_PX)
+      const { logits } = await session.run({ cells: new Tensor('float32', part, [n, 1, CELL_HEIGHT_PX, CELL_WIDTH_PX]) })
+      if (!(logits?.data instanceof Float32Array)) throw new Error('The digit net gave no logits.')
+      out.set(logits.data, start * CLASS_COUNT)
+    }
+    return out
+  }
+
   return {
     async classify(cells, count) {
       if (cells.length !== count * CELL_PX)
         throw new RangeError(`${count} cells need ${count * CELL_PX} values, not ${cells.length}.`)
-      const out = new Float32Array(count * CLASS_COUNT)
-      for (let start = 0; start < count; start += BATCH) {
-        const n = Math.min(BATCH, count - start)
-        const part = cells.subarray(start * CELL_PX, (start + n) * CELL_PX)
-        const { logits } = await session.run({ cells: new Tensor('float32', part, [n, 1, CELL_HEIGHT_PX, CELL_WIDTH_PX]) })
-        if (!logits || !(logits.data instanceof Float32Array)) throw new Error('The digit net gave no logits.')
-        softmaxInto(logits.data, card.temperature, out, start * CLASS_COUNT)
+      const logits = await logitsOf(cells, count)
+      const out = new Float32Array(logits.length)
+      const unsure: number[] = []
+      for (let cell = 0; cell < count; cell++) {
+        if (softmaxInto(logits, card.temperature, out, cell) < card.secondLook.below) unsure.push(cell)
       }
+      const again = await logitsOf(shiftedCells(cells, unsure), unsure.length * SHIFTS.length)
+      unsure.forEach((cell, i) => {
+        for (let k = 0; k < CLASS_COUNT; k++) {
+          let sum = logits[cell * CLASS_COUNT + k]!
+          for (let s = 0; s < SHIFTS.length; s++) sum += again[(i * SHIFTS.length + s) * CLASS_COUNT + k]!
+          logits[cell * CLASS_COUNT + k] = sum / (SHIFTS.length + 1)
+        }
+        softmaxInto(logits, card.secondLook.temperature, out, cell)
+      })
       return out
     },
   }
 }
 
-/** Softmax of each row of logits / temperature, written to `out` from `offset`. */
-function softmaxInto(logits: Float32Array, temperature: number, out: Float32Array, offset: number): void {
-  for (let row = 0; row < logits.length; row += CLASS_COUNT) {
-    const values = logits.subarray(row, row + CLASS_COUNT)
-    const top = Math.max(...values)
-    let sum = 0
-    for (let k = 0; k < CLASS_COUNT; k++) sum += out[offset + row + k] = Math.exp((values[k]! - top) / temperature)
-    for (let k = 0; k < CLASS_COUNT; k++) out[offset + row + k]! /= sum
+/** The cells named, each at every shift, their edge repeated. */
+function shiftedCells(cells: Float32Array, named: readonly number[]): Float32Array {
+  const out = new Float32Array(named.length * SHIFTS.length * CELL_PX)
+  let at = 0
+  for (const cell of named) {
+    for (const [right, down] of SHIFTS) {
+      for (let y = 0; y < CELL_HEIGHT_PX; y++) {
+        const row = cell * CELL_PX + within(y + down, CELL_HEIGHT_PX) * CELL_WIDTH_PX
+        for (let x = 0; x < CELL_WIDTH_PX; x++) out[at++] = cells[row + within(x + right, CELL_WIDTH_PX)]!
+      }
+    }
   }
+  return out
+}
+
+const within = (place: number, size: number) => Math.min(size - 1, Math.max(0, place))
+
+/** Softmax of one cell's logits / temperature into `out`; gives the highest probability. */
+function softmaxInto(logits: Float32Array, temperature: number, out: Float32Array, cell: number): number {
+  const from = cell * CLASS_COUNT
+  const values = logits.subarray(from, from + CLASS_COUNT)
+  const top = Math.max(...values)
+  let sum = 0
+  for (let k = 0; k < CLASS_COUNT; k++) sum += out[from + k] = Math.exp((values[k]! - top) / temperature)
+  for (let k = 0; k < CLASS_COUNT; k++) out[from + k]! /= sum
+  return 1 / sum
 }
