@@ -55,3 +55,8 @@ export function errorFromAnswer(status: number, body: unknown, retryAfter: strin
 }
 
 export const isLineDown = (error: unknown): boolean => error instanceof ApiError && error.code === 'line_down'
+
+/** What was asked for is not there, or its address is none: to the reader both are the same. */
+export const isNowhere = (error: unknown): boolean =>
+  error instanceof ApiError &&
+  (error.status === 404 || (error.code === 'invalid' && error.issues.every((i) => /(^|\.)(id|number)$/.test(i.path))))

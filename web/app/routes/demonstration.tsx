@@ -11,7 +11,7 @@ import { hasArrived, TrialRuns } from '../../features/demonstrations/components/
 import { WithdrawConsent } from '../../features/demonstrations/components/withdraw-consent.tsx'
 import { demonstrationQueries, useWithdrawConsent } from '../../features/demonstrations/demonstrations.queries.ts'
 import { STATE_WORDS } from '../../features/sheets/sheet-words.ts'
-import { ApiError } from '../../lib/api-error.ts'
+import { isNowhere } from '../../lib/api-error.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
 import { dateText, weekdayOf } from '../../lib/time.ts'
@@ -28,10 +28,13 @@ const LAYOUT = 'tillage'
 export function Component() {
   const { id = '' } = useParams()
   const day = useQuery(demonstrationQueries.detail(id))
-  if (day.error instanceof ApiError && day.error.status === 404) return <NotFound />
-  if (day.error) return <ErrorState error={day.error} again={() => day.refetch()} />
-  if (!day.data) return <Loading what="Opening the demonstration" />
-  return <DayPage day={day.data} />
+  if (isNowhere(day.error)) return <NotFound />
+  if (day.data) return <DayPage day={day.data} />
+  return (
+    <Page title="Demonstration">
+      {day.error ? <ErrorState error={day.error} again={() => day.refetch()} /> : <Loading what="Opening the demonstration" />}
+    </Page>
+  )
 }
 
 function DayPage({ day }: { day: Demonstration }) {
@@ -49,7 +52,7 @@ function DayPage({ day }: { day: Demonstration }) {
           Demonstrations
         </Link>
       }
-      sentence={`${day.place.name}, ${weekdayOf(`${day.heldOn}T12:00`)} ${dateText(day.heldOn)}: ${counted(day.trials.length, 'trial')}, ${counted(runs.length, 'run')}, ${entered} in the book.`}
+      sentence={`${day.place.name}, ${weekdayOf(`${day.heldOn}T12:00`)} ${dateText(day.heldOn)}: ${counted(day.trials.length, 'trial')}, ${counted(runs.length, 'run')}, ${entered === 0 ? 'none' : entered} in the book.`}
       aside={mayPlan && <ButtonLink to={paths.editDemonstration.to(day.id)}>Change the plan</ButtonLink>}
     >
       <div className="grid grid-cols-[minmax(0,8fr)_minmax(0,4fr)] max-lg:grid-cols-1">
@@ -91,10 +94,13 @@ function DayPage({ day }: { day: Demonstration }) {
 
 const sheetPathOf = (role: Role) => (role === 'demonstrator' ? paths.mySheet.to : role === 'analyst' ? null : paths.deskSheet.to)
 
+const NOT_IN = { glyph: 'printed', says: 'not come in yet' } as const
+
 function stateMark(state: string) {
   const known = sheetStateSchema.safeParse(state)
   if (!known.success) return state
-  const { glyph, says } = STATE_WORDS[known.data]
+  // In a plan the state says only that the paper has not come in: whether it was printed nobody knows.
+  const { glyph, says } = known.data === 'printed' ? NOT_IN : STATE_WORDS[known.data]
   return (
     <span className="whitespace-nowrap">
       <Glyph name={glyph} /> {says}

@@ -5,7 +5,7 @@ import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
 import { PlanForm } from '../../features/demonstrations/components/plan-form.tsx'
 import { demonstrationQueries, useSavePlan } from '../../features/demonstrations/demonstrations.queries.ts'
 import { blankPlan, planOf } from '../../features/demonstrations/plan-model.ts'
-import { ApiError } from '../../lib/api-error.ts'
+import { isNowhere } from '../../lib/api-error.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
 import { registerQueries } from '../../lib/register-rows.ts'
@@ -31,10 +31,13 @@ export function Component() {
 
 function ChangePlan({ id }: { id: string }) {
   const day = useQuery(demonstrationQueries.detail(id))
-  if (day.error instanceof ApiError && day.error.status === 404) return <NotFound />
-  if (day.error) return <ErrorState error={day.error} again={() => day.refetch()} />
-  if (!day.data) return <Loading what="Opening the plan" />
-  return <Planning day={day.data} />
+  if (isNowhere(day.error)) return <NotFound />
+  if (day.data) return <Planning day={day.data} />
+  return (
+    <Page title="Change a plan">
+      {day.error ? <ErrorState error={day.error} again={() => day.refetch()} /> : <Loading what="Opening the plan" />}
+    </Page>
+  )
 }
 
 function Planning({ day }: { day: Demonstration | null }) {

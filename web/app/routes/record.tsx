@@ -13,18 +13,21 @@ import { RecordHistory } from '../../features/record/components/record-history.t
 import { RecordNotes } from '../../features/record/components/record-notes.tsx'
 import { type OtherRun, Tape } from '../../features/record/components/tape.tsx'
 import { sourcesOf } from '../../features/record/record-model.ts'
+import { isNowhere } from '../../lib/api-error.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
 import { dateText } from '../../lib/time.ts'
 import { Glyph } from '../../ui/glyphs.tsx'
 import { Page } from '../../ui/page.tsx'
 import { ErrorState, Loading } from '../../ui/says.tsx'
+import { NotFound } from './route-error.tsx'
 
 export function Component() {
   const number = Number(useParams().number)
   const version = useSearchParams()[0].get('version')
   const record = useQuery(bookQueries.detail(number, version ? Number(version) : undefined))
   const title = `Record ${String(number).padStart(4, '0')}`
+  if (isNowhere(record.error)) return <NotFound />
   if (record.error) {
     return (
       <Page title={title}>

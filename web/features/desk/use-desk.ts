@@ -48,7 +48,12 @@ export function useDesk(given: Sheet, layout: Layout, me: string) {
     saver,
     saved,
     go,
-    takeCell: (cellKey: string) => go(item?.cells.includes(cellKey) ? item.id : null, cellKey),
+    /** Takes a cell in hand: its own doubt where it has one, else the cell within the doubt in hand, else the cell alone. */
+    takeCell: (cellKey: string) => {
+      const own = items.find((i) => i.reading?.key === cellKey)
+      if (own) go(own.id)
+      else go(item?.cells.includes(cellKey) ? item.id : null, cellKey)
+    },
     /** Settles the cell in hand and goes to the next doubt. */
     settle: (how: Settlement, value: Value, why = '') => {
       if (key === null) return

@@ -1,3 +1,4 @@
+import { memo } from 'react'
 import { boxesOf, cellBounds } from '../../../../shared/layouts/geometry.ts'
 import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
 import type { Reading, Values } from '../../../../shared/schemas/sheet.ts'
@@ -12,7 +13,7 @@ interface CellMarkProps {
 }
 
 /** A reading over its ink: hung small on the lower frame, digit under digit, with the mark of how it was settled. Millimetres. */
-export function CellMark({ cell, reading, values, inBox }: CellMarkProps) {
+export const CellMark = memo(function CellMark({ cell, reading, values, inBox }: CellMarkProps) {
   const bounds = cellBounds(cell)
   const pen = reading.origin === 'person'
   return (
@@ -25,7 +26,7 @@ export function CellMark({ cell, reading, values, inBox }: CellMarkProps) {
       <SettledMark reading={reading} bounds={bounds} />
     </g>
   )
-}
+})
 
 function CombDigits({ cell, reading, values, inBox }: CellMarkProps) {
   if (!isComb(cell)) return null

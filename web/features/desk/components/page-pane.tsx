@@ -1,4 +1,4 @@
-import type { RefObject } from 'react'
+import { memo, type RefObject, useCallback, useLayoutEffect, useRef } from 'react'
 import { formatValue } from '../../../../shared/layouts/cell-value.ts'
 import { cellBounds } from '../../../../shared/layouts/geometry.ts'
 import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
@@ -16,14 +16,30 @@ interface PagePaneProps {
 /** The sheet itself is the form: the picture with its values over their ink. */
 export function PagePane({ desk, picture, pane }: PagePaneProps) {
   const { layout } = desk
+  const latest = useRef(desk)
+  useLayoutEffect(() => {
+    latest.current = desk
+  })
+  const take = useCallback((key: string) => latest.current.takeCell(key), [])
   return (
     <section ref={pane} aria-label="The sheet" className="relative min-h-0 overflow-y-auto bg-board lg:pl-1">
       <div className="relative bg-leaf lg:my-[60vh]" style={{ aspectRatio: `${layout.page.width} / ${layout.page.height}` }}>
         {picture && <img src={picture} alt="The sheet, flattened" className="absolute inset-0 h-full w-full" />}
         <SheetMarks desk={desk} inBox={picture === null} />
-        {layout.cells.map((cell) => (
-          <CellButton key={cell.key} cell={cell} desk={desk} />
-        ))}
+        {layout.cells.map((cell) => {
+          const reading = desk.view.readings.get(cell.key)
+          if (!reading || (desk.sheet.planned && isComb(cell) && cell.planned)) return null
+          return (
+            <CellButton
+              key={cell.key}
+              cell={cell}
+              reading={reading}
+              page={layout.page}
+              tabStop={cell.key === (desk.key ?? desk.item?.cells[0] ?? layout.cells[0]?.key)}
+              onTake={take}
+            />
+          )
+        })}
       </div>
     </section>
   )
@@ -35,31 +51,35 @@ export function rowInHand({ layout, key, item }: Desk): number | null {
   return cell ? rowOf(cell).low / layout.page.height : null
 }
 
-/** Takes a cell in hand with the mouse; with the keyboard the same is "/" and its name. */
-function CellButton({ cell, desk }: { cell: LayoutCell; desk: Desk }) {
-  const reading = desk.view.readings.get(cell.key)
-  if (!reading || (desk.sheet.planned && isComb(cell) && cell.planned)) return null
-  const { width, height } = desk.layout.page
+interface CellButtonProps {
+  cell: LayoutCell
+  reading: Reading
+  page: { width: number; height: number }
+  tabStop: boolean
+  onTake: (key: string) => void
+}
+
+/** Takes a cell in hand with the mouse; with the keyboard the same is "/" and its name. Kept from drawing again: there are 150. */
+const CellButton = memo(function CellButton({ cell, reading, page, tabStop, onTake }: CellButtonProps) {
   const bounds = cellBounds(cell)
   const percent = (mm: number, of: number) => `${(100 * mm) / of}%`
-  const doubt = desk.items.find((item) => item.reading?.key === cell.key)
   return (
     <button
       type="button"
       // One tab stop for the whole sheet: the cell in hand.
-      tabIndex={cell.key === (desk.key ?? desk.item?.cells[0] ?? desk.layout.cells[0]?.key) ? 0 : -1}
+      tabIndex={tabStop ? 0 : -1}
       aria-label={`${cell.label}: ${saidOf(cell, reading)}`}
-      onClick={() => (doubt ? desk.go(doubt.id) : desk.takeCell(cell.key))}
+      onClick={() => onTake(cell.key)}
       className="absolute hover:outline-2 hover:outline-ink hover:outline-solid"
       style={{
-        left: percent(bounds.x, width),
-        top: percent(bounds.y, height),
-        width: percent(bounds.width, width),
-        height: percent(bounds.height, height),
+        left: percent(bounds.x, page.width),
+        top: percent(bounds.y, page.height),
+        width: percent(bounds.width, page.width),
+        height: percent(bounds.height, page.height),
       }}
     />
   )
-}
+})
 
 const saidOf = (cell: LayoutCell, reading: Reading) =>
   `${formatValue(cell, reading.value)}${reading.unit ? ` ${reading.unit}` : ''}, ${reading.settlement ?? reading.state}`

@@ -1,8 +1,9 @@
+import { memo } from 'react'
 import { boxesOf, layComb } from '../../../../shared/layouts/geometry.ts'
 import { isComb, type Layout, type LayoutCell } from '../../../../shared/layouts/layout.ts'
 
 /** The printed form as lines, in millimetres: stands under the values where there is no picture. */
-export function SheetDrawing({ layout, planned }: { layout: Layout; planned: boolean }) {
+export const SheetDrawing = memo(function SheetDrawing({ layout, planned }: { layout: Layout; planned: boolean }) {
   return (
     <g>
       <rect width={layout.page.width} height={layout.page.height} fill="var(--leaf)" />
@@ -45,7 +46,7 @@ export function SheetDrawing({ layout, planned }: { layout: Layout; planned: boo
         ))}
     </g>
   )
-}
+})
 
 function DrawnCell({ cell }: { cell: LayoutCell }) {
   const boxes = boxesOf(cell)
