@@ -114,7 +114,7 @@ test('a day shows where each run stands; consent is withdrawn only with a reason
   renderApp(`/demonstrations/${id(100)}`)
 
   expect((await screen.findByRole('link', { name: '0231' })).getAttribute('href')).toBe('/book/231')
-  expect(screen.getByText('printed, not photographed yet')).toBeDefined()
+  expect(screen.getByText('not come in yet')).toBeDefined()
   expect(screen.getByRole('link', { name: /sheet of run 2/ }).getAttribute('href')).toBe(`/api/sheets/${id(105)}/sheet.pdf`)
   expect(screen.queryByRole('link', { name: /sheet of run 1/ })).toBeNull()
 
