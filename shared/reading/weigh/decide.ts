@@ -1,7 +1,7 @@
 /** From posteriors to clear or in doubt, with reasons in plain words. */
 import type { TickCell } from '../../layouts/layout.ts'
 import type { TickDist } from '../classes.ts'
-import { CLEAR, CLEAR_BESIDE_A_WRONG_SUM, DIGIT_ALLOWED, GAP_DOUBT, TICK_CLEAR, VOID_DOUBT } from './thresholds.ts'
+import { CLEAR, CLEAR_BESIDE_A_WRONG_SUM, CLEAR_TIED, DIGIT_ALLOWED, GAP_DOUBT, TICK_CLEAR, VOID_DOUBT } from './thresholds.ts'
 import type { Candidate, Reason, ReasonRule, Value, Weighed } from './types.ts'
 import type { Option, Variable } from './variable.ts'
 import type { Chosen, WrongSum } from './wrong-sum.ts'
@@ -22,8 +22,14 @@ const percent = (p: number) => (p >= 0.9995 ? 'over 99.9 %' : p < 0.001 ? 'under
 const said = (value: Value) => (value === null ? 'blank' : String(value))
 
 /** @param posterior of the options, `other` last; null where the reading's group was not decided. */
-export function decideComb(variable: Variable, posterior: Float64Array | null, wrongSums: ReadonlyArray<WrongSum>): Weighed {
+export function decideComb(
+  variable: Variable,
+  posterior: Float64Array | null,
+  tied: boolean,
+  wrongSums: ReadonlyArray<WrongSum>,
+): Weighed {
   const p = posterior ?? Float64Array.from(variable.options.map((o) => o.weight))
+  const clear = tied ? CLEAR_TIED : CLEAR
   const best = argMax(variable.options, (_, k) => p[k]!)
   const byInk = argMax(variable.options, (o) => o.ink)
   const value = variable.options[best]!
@@ -36,13 +42,13 @@ export function decideComb(variable: Variable, posterior: Float64Array | null, w
   if (posterior === null)
     add('R05', `${variable.label} was not weighed against the sheet's sums: there were too many ways to read them.`)
   // Plain ink whose sum does not hold is no question of reading: the wrong sum is the reason.
-  const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= CLEAR
+  const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= clear
   if (value !== inkBest) {
     add(
       'R03',
       `The ink of ${variable.label} reads ${said(inkBest.value)} (${percent(inkBest.ink)}); what else is known speaks for ${said(value.value)} (${percent(p[best]!)}).`,
     )
-  } else if (!explained && (p[best]! < CLEAR || value.weakest < DIGIT_ALLOWED)) {
+  } else if (!explained && (p[best]! < clear || value.weakest < DIGIT_ALLOWED)) {
     add('R02', unsure(variable, p))
   }
   for (const sum of wrongSums) {

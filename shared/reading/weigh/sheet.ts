@@ -52,7 +52,8 @@ export function weighSheet(
     const failing = factors.flatMap((factor, f) =>
       factor.readings.includes(i) ? wrongSum(factor, joint.ties[f] ?? null, variables, decided, i) : [],
     )
-    out.set(variable.key, decideComb(variable, posterior, failing))
+    const tied = factors.some((factor) => factor.readings.includes(i))
+    out.set(variable.key, decideComb(variable, posterior, tied, failing))
   })
   for (const cell of ticks) out.set(cell.key, decideTick(cell, ink.ticks.get(cell.key)![0]!))
   for (const cell of combs) {
