@@ -122,8 +122,8 @@ function Entered({ record, title }: { record: TrialRecord; title: string }) {
   const others = record.versions.filter((v) => v.version !== record.version)
   return (
     <>
-      {title}, version {record.version} <Glyph name="entered" /> entered {dateText(record.enteredAt)} by {record.enteredBy}, from
-      sheet{' '}
+      {title}, version {record.version} <Glyph name={record.state === 'challenged' ? 'challenged' : 'entered'} /> entered{' '}
+      {dateText(record.enteredAt)} by {record.enteredBy}, from sheet{' '}
       {sheetPath ? (
         <Link className="word figures" to={sheetPath}>
           {sheet}

@@ -1,4 +1,4 @@
-import { type KeyboardEvent, type MouseEvent, useState } from 'react'
+import { type KeyboardEvent, type MouseEvent, useRef, useState } from 'react'
 
 /** In pixels of the picture. */
 export type Corner = readonly [number, number]
@@ -18,11 +18,13 @@ export function CornerPicker({ src, corners, onCorners }: CornerPickerProps) {
   const [size, setSize] = useState({ width: 0, height: 0 })
   const [cross, setCross] = useState<Corner>([0.1, 0.1])
   const [failed, setFailed] = useState(false)
+  const [focused, setFocused] = useState(false)
+  const picture = useRef<HTMLImageElement>(null)
   const add = (x: number, y: number) => corners.length < 4 && onCorners([...corners, [Math.round(x), Math.round(y)]])
   const click = (event: MouseEvent<HTMLButtonElement>) => {
     // A click by Enter or space has no place: those keys set the cross.
-    if (event.detail === 0) return
-    const box = event.currentTarget.getBoundingClientRect()
+    const box = picture.current?.getBoundingClientRect()
+    if (event.detail === 0 || !box) return
     add(((event.clientX - box.left) / box.width) * size.width, ((event.clientY - box.top) / box.height) * size.height)
   }
   const pressed = (event: KeyboardEvent) => {
@@ -50,38 +52,48 @@ export function CornerPicker({ src, corners, onCorners }: CornerPickerProps) {
       <button
         type="button"
         aria-label={`The picture; ${corners.length} of 4 corners set. Arrow keys move the cross, Enter sets a corner, Backspace takes the last back.`}
-        className="relative block cursor-crosshair"
+        className="block cursor-crosshair p-8"
+        onFocus={() => setFocused(true)}
+        onBlur={() => setFocused(false)}
         onClick={click}
         onKeyDown={pressed}
       >
-        <img
-          src={src}
-          alt=""
-          className="block max-h-[calc(100dvh-160px)] max-w-full"
-          onLoad={({ currentTarget: { naturalWidth, naturalHeight } }) => setSize({ width: naturalWidth, height: naturalHeight })}
-          onError={() => setFailed(true)}
-        />
-        {size.width > 0 && (
-          <svg
-            aria-hidden="true"
-            viewBox={`0 0 ${size.width} ${size.height}`}
-            className="pointer-events-none absolute inset-0 h-full w-full"
-          >
-            <CornerMarks corners={corners} unit={size.width / 100} />
-            <path
-              d={`M${cross[0] * size.width} 0V${size.height}M0 ${cross[1] * size.height}H${size.width}`}
-              stroke="var(--ink)"
-              strokeWidth={size.width / 500}
-              strokeDasharray={size.width / 80}
-            />
-          </svg>
-        )}
+        <span className="relative block">
+          <img
+            ref={picture}
+            src={src}
+            alt=""
+            className="block max-h-[calc(100dvh-250px)] max-w-full"
+            onLoad={({ currentTarget: { naturalWidth, naturalHeight } }) =>
+              setSize({ width: naturalWidth, height: naturalHeight })
+            }
+            onError={() => setFailed(true)}
+          />
+          {size.width > 0 && (
+            <svg
+              aria-hidden="true"
+              viewBox={`0 0 ${size.width} ${size.height}`}
+              className="pointer-events-none absolute inset-0 h-full w-full overflow-visible"
+            >
+              <CornerMarks corners={corners} unit={size.width / 100} />
+              {focused && (
+                <path
+                  d={`M${cross[0] * size.width} 0V${size.height}M0 ${cross[1] * size.height}H${size.width}`}
+                  stroke="var(--ink)"
+                  strokeWidth={size.width / 500}
+                  strokeDasharray={size.width / 80}
+                />
+              )}
+            </svg>
+          )}
+        </span>
       </button>
     </div>
   )
 }
 
-const within = (share: number) => Math.min(1, Math.max(0, share))
+/** A corner may lie outside the picture, as far as there is room around it. */
+const within = (share: number) => Math.min(1.1, Math.max(-0.1, share))
 
 function CornerMarks({ corners, unit }: { corners: readonly Corner[]; unit: number }) {
   return (

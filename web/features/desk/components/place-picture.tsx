@@ -42,7 +42,8 @@ export function PlacePicture({ sheet, busy, error, onPlace }: PlacePictureProps)
         </p>
         <p className="mt-2">
           Click the corners of the sheet’s paper: <strong>{WHICH[corners.length] ?? 'all four are set'}</strong>. With the
-          keyboard: focus the picture, move the cross by the arrow keys, set a corner by Enter.
+          keyboard: focus the picture, move the cross by the arrow keys, set a corner by Enter. A corner outside the picture is
+          set outside it.
         </p>
         <div className="mt-2 border-t-2 border-ink">
           <FieldChoice

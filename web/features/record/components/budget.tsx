@@ -1,5 +1,23 @@
 import { roundByUncertainty } from '../../../../shared/trial/format.ts'
-import { budgetOf, type Sources } from '../record-model.ts'
+import { type BudgetLine, budgetOf, type Sources } from '../record-model.ts'
+
+/** What would make a part smaller, in the field. */
+const SMALLER: Record<string, string> = {
+  'reading the jar': 'A jar with finer marks, or refilling it to the same line, makes it smaller.',
+  'edge of the plot': 'A larger plot makes it smaller.',
+  'filling the jug': 'Fewer top-ups, or a jug with finer marks, make it smaller.',
+}
+
+/** The variance, in one sentence: what to do first for a surer figure. */
+function LargestPart({ lines }: { lines: readonly BudgetLine[] }) {
+  const [most] = [...lines].sort((a, b) => b.share - a.share)
+  if (!most || most.share < 0.4) return null
+  return (
+    <p className="pt-1 text-2 leading-[27px] font-[600]">
+      {Math.round(most.share * 100)} % of it is {most.name}. {SMALLER[most.name]}
+    </p>
+  )
+}
 
 /** Which part of the ± is the jar, which the edge of the plot. */
 export function Budget({ sources }: { sources: Sources }) {
@@ -51,6 +69,7 @@ export function Budget({ sources }: { sources: Sources }) {
           </tr>
         </tfoot>
       </table>
+      <LargestPart lines={lines} />
     </section>
   )
 }
