@@ -4,10 +4,11 @@
  */
 import type { Layout } from '../../layouts/layout.ts'
 import type { BlackMark } from '../cells/black-level.ts'
-import { fitHomography, type Homography, multiply, type Pair, project } from '../geometry/homography.ts'
+import { fitHomography, type Homography, multiply, type Pair, project, scaleAt } from '../geometry/homography.ts'
 import type { Anchor } from '../geometry/residual-field.ts'
 import { frameContrast } from './lines.ts'
 import { keyOf, type Mark, refuseOutliers } from './marks.ts'
+import { stepFor } from './measure-part.ts'
 import type { Picture } from './patch.ts'
 import { type Placing, placeOutwards, placings } from './place-fields.ts'
 import { codeMarks, placeSquares } from './place-squares.ts'
@@ -33,6 +34,8 @@ export interface Alignment {
 
 /** Fields refused or not found are looked for again, from neighbours that are surer by then. */
 const SECOND_LOOKS = 2
+/** How much paler frames are thought to be with each further look. */
+const PALE = 0.65
 /** Points that four whole corner codes give. */
 const FOUR_CODES = 20
 
@@ -57,7 +60,8 @@ export function alignPage(
   const { homography, marks } = steady(pairs, squares.marks, first)
   marks.push(...traceRules(picture, layout, homography, marks))
   const edge_mm = median(squares.edges_mm) ?? null
-  const framed = { ...picture, frameContrast: frameContrast(edge_mm) }
+  const px_per_mm = scaleAt(homography, layout.page.width / 2, layout.page.height / 2)
+  const framed = { ...picture, frameContrast: frameContrast(edge_mm), step_mm: stepFor(px_per_mm) }
 
   const all = placings(layout, planned)
   const combs = all.filter((p) => !p.tick)
@@ -69,7 +73,9 @@ export function alignPage(
       if (again.length === 0) break
       const keys = new Set(again.flatMap((p) => p.parts.map(keyOf)))
       known = known.filter((mark) => !keys.has(mark.key))
-      known = refuseOutliers([...known, ...placeOutwards(framed, homography, known, again)])
+      // A copy of a copy, or a tired cartridge, prints paler frames than ours.
+      const pale = { ...framed, pale: true, frameContrast: framed.frameContrast * PALE ** (round + 1) }
+      known = refuseOutliers([...known, ...placeOutwards(pale, homography, known, again)])
     }
   }
 

@@ -46,7 +46,7 @@ export const centerOf = (part: FieldPart): Point => {
 export const keyOf = (part: FieldPart) => `${part.key} ${part.part}`
 
 /** Where a fit puts the middle of a part: the shift is in the field's own, slightly turned and stretched, frame. */
-export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boolean): Mark {
+export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boolean, mayBePlain = true): Mark {
   const center = centerOf(part)
   const u = center.x - map.center.x
   const v = center.y - map.center.y
@@ -59,7 +59,7 @@ export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boole
     dx: d.dx + d.dxx * (u + fit.dx) + d.dxy * (v + fit.dy) + fit.dx,
     dy: d.dy + d.dyx * (u + fit.dx) + d.dyy * (v + fit.dy) + fit.dy,
     weight: tick ? TICK_WEIGHT : 1,
-    plain: !tick && Math.min(fit.supportX, fit.supportY) >= PLAIN.support && fit.ahead >= PLAIN.ahead,
+    plain: mayBePlain && !tick && Math.min(fit.supportX, fit.supportY) >= PLAIN.support && fit.ahead >= PLAIN.ahead,
     spread_mm: fit.spread_mm,
     ahead: fit.ahead,
     dyy: d.dyy + fit.growth,

@@ -4,7 +4,7 @@ import { paperLevel } from '../pixels/paper.ts'
 import { combRects, drawGrey } from '../testing/draw.ts'
 import { fieldParts } from './field-lines.ts'
 import { frameContrast } from './lines.ts'
-import { fieldPatch, measureParts } from './measure-part.ts'
+import { fieldPatch, measureParts, stepFor } from './measure-part.ts'
 
 const PX_PER_MM = 7
 const PAGE = { width: 90, height: 40 }
@@ -39,7 +39,7 @@ function measured(format: string, dx: number, dy: number, reach_mm: number, lean
   const center = { x: field.x + field.width / 2, y: field.y + field.height / 2 }
   const none = { dx: 0, dy: 0, dxx: 0, dxy: 0, dyx: 0, dyy: 0 }
   const map = { homography: [PX_PER_MM, 0, 0, 0, PX_PER_MM, 0, 0, 0, 1], center, displacement: none }
-  return measureParts(fieldPatch(picture, map, field, reach_mm), parts, reach_mm, frameContrast(0.2))
+  return measureParts(fieldPatch(picture, map, field, reach_mm, stepFor(PX_PER_MM)), parts, reach_mm, frameContrast(0.2))
 }
 
 test.each(['999', '9999', '99.9', '99:99'])('a comb %s printed 0.8 mm right and 0.5 mm low is found there', (format) => {

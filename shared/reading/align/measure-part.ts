@@ -22,7 +22,6 @@ export interface PartFit {
   growth: number
 }
 
-const STEP_MM = 0.16
 /** Frames are the palest lines: whatever is darker counts no more than a little above them. */
 const CLIP = 0.42
 /** A line counts where it is dark over this share of its length; writing rarely is. */
@@ -33,12 +32,16 @@ const INSET_MM = 0.75
 const PART_REACH_MM = 0.7
 const PART_LEVEL_REACH_MM = 0.35
 
+/** A little finer than the picture's own pixels (thin frames may not fall between samples), and never coarser than this, mm. */
+const COARSEST_MM = 0.2
+export const stepFor = (px_per_mm: number): number => Math.min(COARSEST_MM, 1.15 / px_per_mm)
+
 /** The patch of a whole field with room for the search. */
-export function fieldPatch(picture: Picture, map: FieldMap, field: FieldPart['field'], reach_mm: number): Patch {
+export function fieldPatch(picture: Picture, map: FieldMap, field: FieldPart['field'], reach_mm: number, step_mm: number): Patch {
   const side = reach_mm + 1.6
   const above = reach_mm + 1.9
   const area = { x: field.x - side, y: field.y - above, width: field.width + 2 * side, height: field.height + 2 * above }
-  return samplePatch(picture, map, area, STEP_MM)
+  return samplePatch(picture, map, area, step_mm)
 }
 
 /** Darkness by column, over the rows inside the boxes once they are shifted by `down`. */

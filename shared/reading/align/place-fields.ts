@@ -20,6 +20,10 @@ const tickReach = (distance_mm: number) => Math.min(1.7, 0.6 + 0.04 * distance_m
 export interface FramedPicture extends Picture {
   /** Contrast of a pale frame in it. */
   frameContrast: number
+  /** Frames are looked for that are paler than they should be: none is then plain enough to stand against its neighbours. */
+  pale?: boolean
+  /** Samples of a field lie so far apart. */
+  step_mm: number
 }
 
 /** What is looked for in one go: a comb with its parts, or one tick box. */
@@ -63,8 +67,8 @@ function place(
   const map = { homography, center, displacement: displacementAt(marks, center, (a) => own.has((a as Mark).key)) }
   const fits = tick
     ? parts.map((part) => measureTickPlace(picture, map, part, reach_mm))
-    : measureParts(fieldPatch(picture, map, parts[0]!.field, reach_mm), parts, reach_mm, picture.frameContrast)
-  return fits.flatMap((fit, i) => (isGood(fit, tick) ? [markOf(parts[i]!, map, fit, tick)] : []))
+    : measureParts(fieldPatch(picture, map, parts[0]!.field, reach_mm, picture.step_mm), parts, reach_mm, picture.frameContrast)
+  return fits.flatMap((fit, i) => (isGood(fit, tick) ? [markOf(parts[i]!, map, fit, tick, !picture.pale)] : []))
 }
 
 /** Nearest to what is known first; what is found helps to find the next. Gives the marks of what was found. */
