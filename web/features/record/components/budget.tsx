@@ -14,7 +14,7 @@ function LargestPart({ lines }: { lines: readonly BudgetLine[] }) {
   if (!most || most.share < 0.4) return null
   return (
     <p className="pt-1 text-2 leading-[27px] font-[600]">
-      {Math.round(most.share * 100)} % of it is {most.name}. {SMALLER[most.name]}
+      {Math.round(most.share * 100)} % of the variance is {most.name}. {SMALLER[most.name]}
     </p>
   )
 }
