@@ -4,6 +4,7 @@ import type { Sheet, Value } from '../../shared/schemas/sheet.ts'
 import type { User } from '../../shared/schemas/user.ts'
 import { listSheetRows } from '../db/desk/sheet-rows.ts'
 import { getSheet } from '../features/sheets/change-sheet.ts'
+import { sendBack } from '../features/sheets/desk.service.ts'
 import { enterSheet } from '../features/sheets/enter.service.ts'
 import { settleOneDoubt, settleOneReading } from '../features/sheets/settle.service.ts'
 import type { Deps } from '../http/route.ts'
@@ -58,6 +59,18 @@ async function letDoubtsStand(deps: Deps, clerk: User, sheet: Sheet): Promise<vo
       doubtId: doubt.id,
       why: 'asked the demonstrator: it was so',
     })
+  }
+}
+
+/** The sheet with too many blanks goes back to its demonstrator, with the reason by mail. */
+export async function sendBackBlanks(deps: Deps, clerk: User, samples: readonly SampleSheet[]): Promise<void> {
+  const blanks = samples.find((s) => s.case === 'blanks')
+  if (!blanks) return
+  const { rows } = await listSheetRows(deps.source.manager, { desk: true, search: blanks.sheetCode })
+  for (const row of rows) {
+    const sheet = await getSheet(deps, clerk, row.id)
+    const reason = 'Tyre pressures have no unit, and several cells are blank. What was measured, and what was not?'
+    await sendBack(deps, clerk, row.id, { version: sheet.version, reason, cells: [] })
   }
 }
 

@@ -13,10 +13,10 @@ import { createBoss } from '../db/queue.ts'
 import { listSent, takeFiles } from '../features/uploads/uploads.service.ts'
 import type { Deps } from '../http/route.ts'
 import type { FileStore } from '../storage/store.ts'
-import { enterSettled, settleByPaper } from './demo-clerk.ts'
+import { enterSettled, sendBackBlanks, settleByPaper } from './demo-clerk.ts'
 import { addPeople, fillRegisters, type People, planRuns } from './plan-season.ts'
 import { listSampleFiles, readSampleSheets, sampleRuns } from './sample-sheets.ts'
-import { ROW_RUNS, TROUBLE_RUNS } from './season.ts'
+import { ROW_RUNS, runsToCome, TROUBLE_RUNS } from './season.ts'
 
 export interface DemoSignIn {
   role: string
@@ -47,10 +47,11 @@ export async function loadDemoSeason({ settings, store, startWorker, say }: Demo
     const people = await addPeople(deps, DEMO_PASSWORD)
     const ids = await fillRegisters(deps, people.get(401)!)
     const samples = await readSampleSheets()
-    await planRuns(deps, people, ids, [...ROW_RUNS, ...TROUBLE_RUNS, ...sampleRuns(samples)])
+    await planRuns(deps, people, ids, [...ROW_RUNS, ...TROUBLE_RUNS, ...sampleRuns(samples), ...runsToCome(new Date())])
     await sendIn(deps, people, ['samples/season/rows.csv', 'samples/season/trouble.csv', ...(await listSampleFiles())], say)
     const clerk = people.get(201)!
     await settleByPaper(deps, clerk, samples)
+    await sendBackBlanks(deps, clerk, samples)
     say(`   ${await enterSettled(deps, clerk)} records entered`)
     return signIns(people)
   } finally {

@@ -74,3 +74,12 @@ export function hourMeterAt(tractor: number, heldOn: string, run: number): numbe
   const days = (Date.parse(`${heldOn}T00:00:00Z`) - SEASON_BEGINS) / DAY_MS
   return Math.round((1138.3 + 137 * (tractor - 11) + 6 * days + 2.6 * (run - 1)) * 10) / 10
 }
+
+/** Planned and not yet held: a day next week and one the week after, seen from the day the season is loaded. */
+export const runsToCome = (today: Date): readonly DemoRun[] => {
+  const inDays = (days: number) => new Date(today.getTime() + days * DAY_MS).toISOString().slice(0, 10)
+  return runsOf([
+    [inDays(6), 3, 101, [11, 14], 23, 31],
+    [inDays(13), 5, 104, [12, 15], 21, 33],
+  ])
+}
