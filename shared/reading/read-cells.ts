@@ -20,7 +20,7 @@ interface Watch {
 }
 
 /** A field farther than this from its neighbours' word is shown to a person, whatever the net says. */
-const FIT_LIMIT_MM = 0.65
+const FIT_LIMIT_MM = 0.6
 
 interface PlacedBox {
   box: Box

@@ -85,12 +85,12 @@ export function alignPage(
   )
   return {
     homography: scaled(homography, 1 / scale),
-    anchors: known.map(({ key: _k, field: _f, plain: _p, spread_mm: _s, ahead: _a, dyy: _d, ...anchor }) => anchor),
+    anchors: known.map(({ key: _k, field: _f, plain: _p, spread_mm: _s, ahead: _a, isComb: _c, dyy: _d, ...anchor }) => anchor),
     parts,
     foundShare: parts.length === 0 ? 0 : parts.filter((p) => p.found).length / parts.length,
     edge_mm,
     blacks: squares.blacks,
-    ahead: median(known.flatMap((m) => (m.slope && m.ahead !== undefined ? [m.ahead] : []))) ?? 0,
+    ahead: median(known.flatMap((m) => (m.isComb && m.ahead !== undefined ? [m.ahead] : []))) ?? 0,
   }
 }
 

@@ -16,6 +16,8 @@ export interface Mark extends Anchor {
   /** How its displacement changes downwards, by its own lines. */
   dyy?: number
   ahead?: number
+  /** Several boxes: it can be told from one box to the side. */
+  isComb?: boolean
 }
 
 /** Disagreement with the neighbours that is refused, mm: at least this, or some times the page's usual one. */
@@ -62,9 +64,11 @@ export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boole
     plain: mayBePlain && !tick && Math.min(fit.supportX, fit.supportY) >= PLAIN.support && fit.ahead >= PLAIN.ahead,
     spread_mm: fit.spread_mm,
     ahead: fit.ahead,
+    isComb: part.pitch_mm !== null,
     dyy: d.dyy + fit.growth,
   }
-  if (part.pitch_mm === null) return mark
+  // Only plain lines tell of stretch and lean: a wrong line among few tilts them far.
+  if (part.pitch_mm === null || !mark.plain) return mark
   const width = part.boxes.at(-1)!.x + part.boxes.at(-1)!.width - part.boxes[0]!.x
   return { ...mark, slope: { dxx: d.dxx + fit.stretch, dyx: d.dyx + fit.lean, worth_mm2: (width / 4) ** 2 } }
 }

@@ -42,11 +42,13 @@ export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[])
       ...around,
       dx,
       dy,
-      dxx: slope?.dxx ?? around.dxx,
-      dyx: slope?.dyx ?? around.dyx,
-      dyy: dyy ?? around.dyy,
+      dxx: (plain ? slope?.dxx : null) ?? around.dxx,
+      dyx: (plain ? slope?.dyx : null) ?? around.dyx,
+      dyy: (plain ? dyy : null) ?? around.dyy,
     }
-    const fit_mm = plain && spread_mm !== undefined && !Number.isNaN(spread_mm) ? spread_mm : off.get(mark)!
+    const own_mm = spread_mm === undefined || Number.isNaN(spread_mm) ? 0 : spread_mm
+    // Lines that are not plain and do not fit well among themselves may be others' lines.
+    const fit_mm = plain ? own_mm : off.get(mark)! + own_mm
     return { part, center, displacement, found: true, seen: true, fit_mm }
   })
 }

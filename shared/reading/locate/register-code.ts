@@ -1,6 +1,6 @@
 /**
- * Sets a corner code's known pattern onto the picture (its middle to a tenth of a pixel, its corners to a tenth of a module): Gauss-Newton on an affine correction,
- * with the print's contrast and the paper's level as two further unknowns.
+ * Sets a corner code's known pattern onto the picture, its middle to about a tenth of a pixel and its corners to a tenth of a
+ * module: Gauss-Newton on an affine correction, with the print's contrast and the paper's level as two further unknowns.
  */
 import { type Homography, multiply, project } from '../geometry/homography.ts'
 import { LeastSquares } from '../geometry/linear.ts'
