@@ -61,5 +61,6 @@ test.each(['9999', '99.9'])('a comb %s one box off does not pass for the comb: i
   const off = measured(format, 5.6, 0, 0.7)
   const right = measured(format, 0, 0, 0.7)
   expect(right[0]!.ahead).toBeGreaterThan(0.3)
-  expect(off[0]!.ahead).toBeLessThan(0)
+  // A page whose combs are ahead by less than 0.15 (median) is refused as a whole.
+  expect(off[0]!.ahead).toBeLessThan(0.1)
 })
