@@ -22,7 +22,7 @@ const json = (value: unknown) => `${JSON.stringify(value, null, 1)}\n`
 
 /** A sheet of the season, or one that nobody planned. */
 async function sampleSheet(sample: SampleCase, run: SampleRun | undefined): Promise<Photo> {
-  const seed = `sample ${sample.case} ${run?.page ?? ''}`
+  const seed = `sample ${sample.case} ${run?.page ?? ''}${sample.draw ? ` draw ${sample.draw}` : ''}`
   const chance = chanceOf(seed)
   const head = run && headOf(run)
   const machine = MACHINES.find((m) => m.implement_id === run?.ids.implement_id)

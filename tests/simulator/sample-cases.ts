@@ -9,6 +9,8 @@ export interface SampleCase {
   level: Level
   /** What makes the case worth keeping, for samples/README. */
   why: string
+  /** Which draw: another one was taken where a digit of the set could not be told even by a person (a 7 like a 4). */
+  draw?: number
   writer?: Partial<Writer>
   adjust?: (drawn: Conditions) => Conditions
   /** Changes what is written. */
@@ -96,7 +98,7 @@ export const SAMPLE_CASES: readonly SampleCase[] = [
       scan: { dpi: 300, grey: true, skew: -0.009, scale: 0.97, copied: true, contrast: 1.2, jpegQuality: 70 },
     }),
   }),
-  make('curled', 'ordinary', 'paper that was rolled up', { adjust: (c) => ({ ...c, shot: upright(c), curl_mm: 13 }) }),
+  make('curled', 'ordinary', 'paper that was rolled up', { draw: 2, adjust: (c) => ({ ...c, shot: upright(c), curl_mm: 13 }) }),
   make('turned', 'ordinary', 'upside down, stored lying with a tag', {
     adjust: (c) => ({ ...c, shot: upright(c, { roll: Math.PI + 0.05 }), optics: { ...c.optics, storedLying: true } }),
   }),
@@ -143,7 +145,7 @@ export const SAMPLE_CASES: readonly SampleCase[] = [
       thumb: true,
     }),
   }),
-  make('three-pages', 'easy', 'three sheets scanned into one PDF'),
+  make('three-pages', 'easy', 'three sheets scanned into one PDF', { draw: 2 }),
   make('nothing', 'ordinary', 'no sheet in the picture'),
   make('too-blurred', 'hard', 'out of focus: to be taken again', {
     adjust: (c) => ({ ...c, shot: upright(c, { fill: 0.8 }), optics: { ...c.optics, defocus_px: 9, shake_px: 6 } }),

@@ -60,7 +60,7 @@ function writeComb(desk: Desk, layout: Layout, cell: CombCell, scenario: Scenari
     fill()
     return
   }
-  const inked = boxes.filter((_, i) => written[i] !== null)
+  const inked = new Map(boxes.flatMap((box, i) => (typeof written[i] === 'number' ? [[box, written[i]] as const] : [])))
   const beside = besideBoxes(layout, cell)
   const correct =
     beside &&
@@ -89,18 +89,19 @@ function besideBoxes(layout: Layout, cell: CombCell): Box[] | null {
 function spoilComb(
   { ink, writer, chance }: Desk,
   cell: CombCell,
-  inked: readonly Box[],
+  inked: ReadonlyMap<Box, number>,
   fill: () => void,
   put: (box: Box, digit: number) => void,
   correct: (() => void) | null,
   scenario: Scenario,
 ): void {
   const way = chance.pick(['struck', 'struck', 'struck', 'one struck', 'scribbled', 'two in a box', 'written over'] as const)
-  const one = chance.pick(inked)
+  const places = [...inked.keys()]
+  const one = chance.pick(places)
   fill()
   if (way === 'struck') {
-    const last = inked[inked.length - 1]!
-    strikeThrough(ink, { ...inked[0]!, width: last.x + last.width - inked[0]!.x }, writer.pen, chance)
+    const [first, last] = [places[0]!, places.at(-1)!]
+    strikeThrough(ink, { ...first, width: last.x + last.width - first.x }, writer.pen, chance)
     if (!(correct && chance.odds(0.6))) scenario.readings[cell.key] = null
     else correct()
   } else if (way === 'one struck') {
@@ -114,7 +115,8 @@ function spoilComb(
     put({ ...half, x: one.x + one.width * 0.45 }, chance.whole(0, 9))
     scenario.readings[cell.key] = null
   } else {
-    put(one, chance.whole(0, 9))
+    // The same digit written twice is no mistake; another over it is.
+    put(one, chance.pick([0, 1, 2, 3, 4, 5, 6, 7, 8, 9].filter((digit) => digit !== inked.get(one))))
     scenario.readings[cell.key] = null
   }
 }
