@@ -2,6 +2,7 @@
 import { type PageMap, toPhoto } from '../../../shared/reading/geometry/page-map.ts'
 import { sharpOnce } from './decode.ts'
 import type { Raster } from './raster.ts'
+import { whiten } from './whiten.ts'
 
 export const FLAT_DPI = 150
 export const FLAT_PX_PER_MM = FLAT_DPI / 25.4
@@ -58,6 +59,7 @@ export async function flattenPage(raster: Raster, map: PageMap, page: { width: n
       }
     }
   }
+  whiten(data, channels)
   const sharp = await sharpOnce()
   return sharp(data, { raw: { width, height, channels } }).jpeg({ quality: QUALITY }).toBuffer()
 }
