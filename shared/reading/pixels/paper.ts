@@ -82,8 +82,3 @@ export function paperLevel(grey: Grey, block_px: number): PaperLevel {
 /** Brightness of bare paper at a place in pixels of the picture. */
 export const paperAt = (paper: PaperLevel, x: number, y: number): number =>
   Math.max(12, brightnessAt(paper.level, x / paper.block_px, y / paper.block_px))
-
-/** 0 on bare paper, 1 on black. */
-export function darknessAt(grey: Grey, paper: PaperLevel, x: number, y: number): number {
-  return Math.min(1, Math.max(0, 1 - brightnessAt(grey, x, y) / paperAt(paper, x, y)))
-}
