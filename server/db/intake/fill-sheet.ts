@@ -37,7 +37,8 @@ export async function fillSheet(db: Db, sheet: Target, page: PageEntity, upload:
     ...(read.sheetCode ? { code: read.sheetCode } : {}),
   })
   const clear = read.readings.filter((r) => r.state === 'clear').length
-  const text = `${upload.fileName}, page ${page.number}: ${clear} readings clear, ${read.readings.length - clear} in doubt`
+  const inDoubt = read.readings.length - clear
+  const text = `read from ${upload.fileName}, page ${page.number}: ${clear} readings clear${inDoubt > 0 ? `, ${inDoubt} in doubt` : ''}`
   const details = before.length > 0 ? { before: before.map(({ key, value, origin }) => ({ key, value, origin })) } : {}
   await addTrailLine(db, {
     actor: null,
