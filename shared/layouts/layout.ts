@@ -13,6 +13,8 @@ interface CellBase {
   key: string
   /** Words on the sheet, on the desk and in messages. */
   label: string
+  /** Words for a sentence, where the printed label leans on what stands beside it ("in work") and says too little alone. */
+  said?: string
   need: Need
   /** The section (by its number) the cell stands in; 0 is the head. */
   section: number
@@ -120,3 +122,6 @@ export const TICK = { size: 4.2 } as const
 
 export const isComb = (cell: LayoutCell): cell is CombCell =>
   cell.kind === 'digits' || cell.kind === 'time' || cell.kind === 'date'
+
+/** What a sentence or a heading calls the cell, its first letter small. */
+export const wordsFor = (cell: LayoutCell): string => cell.said ?? cell.label

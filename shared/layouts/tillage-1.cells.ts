@@ -7,11 +7,15 @@ import type { ChoiceCell, LayoutCell, Need } from './layout.ts'
 
 const head: LayoutCell[] = [
   comb(0, 'date')('trial_date', 'date', 32, 18.6, '99-99-9999', { planned: true }),
-  comb(0)('demonstrator_id', 'demonstrator no.', 86, 18.6, '9999', { planned: true, register: 'people' }),
-  comb(0)('place_id', 'place no.', 115, 18.6, '9999', { planned: true, register: 'places' }),
-  comb(0)('tractor_id', 'tractor no.', 144, 18.6, '9999', { planned: true, register: 'tractors' }),
-  comb(0)('implement_id', 'implement no.', 16.6, 31, '9999', { planned: true, register: 'implements' }),
-  comb(0)('kit_id', 'kit no.', 45.6, 31, '9999', { planned: true, register: 'kits' }),
+  comb(0)('demonstrator_id', 'demonstrator no.', 86, 18.6, '9999', {
+    said: 'demonstrator number',
+    planned: true,
+    register: 'people',
+  }),
+  comb(0)('place_id', 'place no.', 115, 18.6, '9999', { said: 'place number', planned: true, register: 'places' }),
+  comb(0)('tractor_id', 'tractor no.', 144, 18.6, '9999', { said: 'tractor number', planned: true, register: 'tractors' }),
+  comb(0)('implement_id', 'implement no.', 16.6, 31, '9999', { said: 'implement number', planned: true, register: 'implements' }),
+  comb(0)('kit_id', 'kit no.', 45.6, 31, '9999', { said: 'kit number', planned: true, register: 'kits' }),
 ]
 
 const checkColumns = [14, 60, 104, 150] as const
@@ -33,7 +37,7 @@ const CHECKS: Array<[string, string]> = [
 ]
 const before: LayoutCell[] = [
   ...CHECKS.map(([key, label], i) => tick(1, key, label, checkColumns[i % 4]!, 45.9 + 5.1 * Math.floor(i / 4))),
-  choice(1, 'fuel_method', 'fuel measured by', 'mandatory', 'none', 61.2, [
+  choice(1, 'fuel_method', 'fuel measured by', 'way of measuring fuel', 'mandatory', 'none', 61.2, [
     ['D', 'difference', 118],
     ['L', 'same line', 144],
     ['W', 'weighing', 168],
@@ -41,8 +45,8 @@ const before: LayoutCell[] = [
 ]
 
 const TYRE_SCALE = { by: 'tyre_p_unit', factors: { psi: 1, kPa: 1, bar: 0.01, 'kgf/cm2': 0.01 } }
-const tyre = (key: string, label: string, x: number) =>
-  comb(2)(key, label, x, 87.2, '999', { unit: null, scale: TYRE_SCALE, instrument: 'tyre gauge' })
+const tyre = (key: string, label: string, said: string, x: number) =>
+  comb(2)(key, label, x, 87.2, '999', { said, unit: null, scale: TYRE_SCALE, instrument: 'tyre gauge' })
 const tractor: LayoutCell[] = [
   comb(2)('hour_meter_start', 'hour meter, start', 16.6, 75.6, '99999.9', {
     unit: 'h',
@@ -54,7 +58,7 @@ const tractor: LayoutCell[] = [
     hard: [0, 99999.9],
     instrument: 'hour meter',
   }),
-  choice(2, 'gear_range', 'range', 'mandatory', 'above', 77.05, [
+  choice(2, 'gear_range', 'range', 'gear range', 'mandatory', 'above', 77.05, [
     ['L', 'L', 103],
     ['M', 'M', 112],
     ['H', 'H', 121],
@@ -62,16 +66,17 @@ const tractor: LayoutCell[] = [
   comb(2)('gear', 'gear', 132.6, 75.6, '9', { hard: [1, 9] }),
   comb(2)('warmup_min', 'warm-up', 147.6, 75.6, '99', { unit: 'min', hard: [0, 99], plausible: [10, 60], instrument: 'watch' }),
   comb(2)('bystander_line_m', 'crowd line', 168.6, 75.6, '99', {
+    said: 'line of the audience',
     unit: 'm',
     hard: [0, 99],
     plausible: [20, 99],
     instrument: 'tape',
   }),
-  tyre('tyre_p_fl', 'tyre front left', 16.6),
-  tyre('tyre_p_fr', 'front right', 42.6),
-  tyre('tyre_p_rl', 'rear left', 68.6),
-  tyre('tyre_p_rr', 'rear right', 94.6),
-  choice(2, 'tyre_p_unit', 'pressures in', 'mandatory', 'above', 88.65, [
+  tyre('tyre_p_fl', 'tyre front left', 'front left tyre', 16.6),
+  tyre('tyre_p_fr', 'front right', 'front right tyre', 42.6),
+  tyre('tyre_p_rl', 'rear left', 'rear left tyre', 68.6),
+  tyre('tyre_p_rr', 'rear right', 'rear right tyre', 94.6),
+  choice(2, 'tyre_p_unit', 'pressures in', 'unit of the tyre pressures', 'mandatory', 'above', 88.65, [
     ['psi', 'psi', 122],
     ['kPa', 'kPa', 137],
     ['bar', 'bar', 152],
@@ -85,10 +90,16 @@ const fuelRow = (
   row: number,
   names: { t: string; temp: string; ml: string },
   label: string,
+  clock: string,
   need: Need,
   instrument: string,
 ): LayoutCell[] => [
-  time(3)(names.t, `${label}: clock`, 42.6, FUEL_ROWS[row]!, '99:99', { need, labelShown: false, instrument: 'watch' }),
+  time(3)(names.t, `${label}: clock`, 42.6, FUEL_ROWS[row]!, '99:99', {
+    said: clock,
+    need,
+    labelShown: false,
+    instrument: 'watch',
+  }),
   comb(3)(names.temp, `${label}: fuel temperature`, 73.6, FUEL_ROWS[row]!, '99', {
     unit: '°C',
     need: 'optional',
@@ -100,14 +111,40 @@ const fuelRow = (
   comb(3)(names.ml, label, 91.6, FUEL_ROWS[row]!, '9999', { ...levelOptions, need, labelShown: false, instrument }),
 ]
 const fuel: LayoutCell[] = [
-  ...fuelRow(0, { t: 'jar_start_t', temp: 'fuel_temp_start_c', ml: 'jar_start_ml' }, 'jar, start', 'mandatory', 'jar'),
+  ...fuelRow(
+    0,
+    { t: 'jar_start_t', temp: 'fuel_temp_start_c', ml: 'jar_start_ml' },
+    'jar, start',
+    'clock of the first jar reading',
+    'mandatory',
+    'jar',
+  ),
   ...numbered(3, (n) =>
-    fuelRow(n, { t: `topup_t[${n}]`, temp: `topup_temp_c[${n}]`, ml: `topup_ml[${n}]` }, `top-up ${n}`, 'conditional', 'jug'),
+    fuelRow(
+      n,
+      { t: `topup_t[${n}]`, temp: `topup_temp_c[${n}]`, ml: `topup_ml[${n}]` },
+      `top-up ${n}`,
+      `top-up ${n}, clock`,
+      'conditional',
+      'jug',
+    ),
   ).flat(),
-  ...fuelRow(4, { t: 'jar_end_t', temp: 'fuel_temp_end_c', ml: 'jar_end_ml' }, 'jar, end', 'mandatory', 'jar'),
-  comb(3)('fuel_used_written_ml', 'fuel used, by hand', 91.6, 148.8, '9999', { unit: 'mL', labelShown: false, hard: [0, 9999] }),
-  time(3)('t_start', 'run, start', 128.6, FUEL_ROWS[0], '99:99', { instrument: 'watch' }),
-  time(3)('t_end', 'run, end', 160.6, FUEL_ROWS[0], '99:99', { instrument: 'watch' }),
+  ...fuelRow(
+    4,
+    { t: 'jar_end_t', temp: 'fuel_temp_end_c', ml: 'jar_end_ml' },
+    'jar, end',
+    'clock of the last jar reading',
+    'mandatory',
+    'jar',
+  ),
+  comb(3)('fuel_used_written_ml', 'fuel used, by hand', 91.6, 148.8, '9999', {
+    said: 'fuel by hand',
+    unit: 'mL',
+    labelShown: false,
+    hard: [0, 9999],
+  }),
+  time(3)('t_start', 'run, start', 128.6, FUEL_ROWS[0], '99:99', { said: 'start of the run', instrument: 'watch' }),
+  time(3)('t_end', 'run, end', 160.6, FUEL_ROWS[0], '99:99', { said: 'end of the run', instrument: 'watch' }),
   ...numbered(3, (n, i) => [
     time(3)(`stop_from[${n}]`, `stop ${n}, from`, 128.6, FUEL_ROWS[i + 2]! - 2.4, '99:99', {
       ...conditional,
@@ -122,20 +159,24 @@ const fuel: LayoutCell[] = [
     tick(3, `stop_engine_off[${n}]`, `stop ${n}, engine off`, 189.4, FUEL_ROWS[i + 2]! - 0.95, 'conditional', false),
   ]).flat(),
   comb(3)('pass_count', 'passes', 128.6, 148.8, '999', { hard: [1, 999] }),
-  comb(3)('l_per_ha_written', 'litres per hectare, by hand', 160.6, 148.8, '99.99', { unit: 'L/ha', hard: [0, 99.99] }),
+  comb(3)('l_per_ha_written', 'litres per hectare, by hand', 160.6, 148.8, '99.99', {
+    said: 'litres per hectare by hand',
+    unit: 'L/ha',
+    hard: [0, 99.99],
+  }),
 ]
 
 const side = (key: string, label: string, x: number, y: number, options: CombOptions = {}) =>
   comb(4)(key, label, x, y, '999.9', { unit: 'm', hard: [2, 2000], plausible: [20, 300], instrument: '30 m tape', ...options })
 const plot: LayoutCell[] = [
   side('side_ab_m', 'side A–B', 50.6, 167.4),
-  side('side_bc_m', 'B–C', 84.6, 167.4),
-  side('side_cd_m', 'C–D', 118.6, 167.4, conditional),
-  side('side_da_m', 'D–A', 152.6, 167.4, conditional),
+  side('side_bc_m', 'B–C', 84.6, 167.4, { said: 'side B–C' }),
+  side('side_cd_m', 'C–D', 118.6, 167.4, { said: 'side C–D', ...conditional }),
+  side('side_da_m', 'D–A', 152.6, 167.4, { said: 'side D–A', ...conditional }),
   side('diag_ac_m', 'diagonal A–C', 50.6, 179.2, conditional),
   side('diag_bd_m', 'diagonal B–D', 84.6, 179.2, optional),
-  comb(4)('area_written', 'area, by hand', 118.6, 179.2, '99.999', { unit: null, hard: [0, 99.999] }),
-  choice(4, 'area_unit', 'area in', 'mandatory', 'above', 180.65, [
+  comb(4)('area_written', 'area, by hand', 118.6, 179.2, '99.999', { said: 'area by hand', unit: null, hard: [0, 99.999] }),
+  choice(4, 'area_unit', 'area in', 'unit of the area', 'mandatory', 'above', 180.65, [
     ['ha', 'ha', 155],
     ['acre', 'acre', 170],
   ]),
@@ -160,26 +201,42 @@ const work: LayoutCell[] = [
     }),
   ),
   comb(5)('rpm_noload', 'engine, no load', 142.6, 196.8, '9999', {
+    said: 'engine speed without load',
     unit: 'r/min',
     hard: [400, 3500],
     plausible: [1000, 2700],
     instrument: 'tachometer',
   }),
   comb(5)('rpm_load', 'in work', 172.4, 196.8, '9999', {
+    said: 'engine speed in work',
     unit: 'r/min',
     hard: [400, 3500],
     plausible: [1000, 2700],
     instrument: 'tachometer',
   }),
-  comb(5)('depth_mean_written_cm', 'mean depth, by hand', 142.6, 208, '99.9', { unit: 'cm', hard: [0.5, 80] }),
-  comb(5)('width_mean_written_m', 'mean width, by hand', 142.6, 219.2, '9.999', { unit: 'm', hard: [0.2, 12] }),
+  comb(5)('depth_mean_written_cm', 'mean depth, by hand', 142.6, 208, '99.9', {
+    said: 'mean depth by hand',
+    unit: 'cm',
+    hard: [0.5, 80],
+  }),
+  comb(5)('width_mean_written_m', 'mean width, by hand', 142.6, 219.2, '9.999', {
+    said: 'mean width by hand',
+    unit: 'm',
+    hard: [0.2, 12],
+  }),
 ]
 
 const pegs = { unit: 'm', instrument: '30 m tape' }
 const slip: LayoutCell[] = [
-  comb(6)('speed_dist_m', 'between pegs', 16.6, 236.4, '99.9', { ...pegs, hard: [5, 99.9], plausible: [10, 50] }),
+  comb(6)('speed_dist_m', 'between pegs', 16.6, 236.4, '99.9', {
+    said: 'timed distance',
+    ...pegs,
+    hard: [5, 99.9],
+    plausible: [10, 50],
+  }),
   ...numbered(3, (n, i) =>
     comb(6)(`speed_t_s[${n}]`, `time ${n}`, 42.6 + 32 * i, 236.4, '999.9', {
+      said: `timed run ${n}`,
       unit: 's',
       hard: [1, 600],
       instrument: 'stopwatch',
@@ -187,10 +244,16 @@ const slip: LayoutCell[] = [
   ),
   comb(6)('rev_n', 'wheel turns', 16.6, 247.6, '99', { hard: [3, 50], instrument: 'chalk mark', ...conditional }),
   ...numbered(2, (n, i) =>
-    comb(6)(`dist_load_m[${n}]`, `in work ${n}`, 42.6 + 32 * i, 247.6, '99.99', { ...pegs, ...conditional, hard: [0.5, 99.99] }),
+    comb(6)(`dist_load_m[${n}]`, `in work ${n}`, 42.6 + 32 * i, 247.6, '99.99', {
+      said: `way in work ${n}`,
+      ...pegs,
+      ...conditional,
+      hard: [0.5, 99.99],
+    }),
   ),
   ...numbered(2, (n, i) =>
     comb(6)(`dist_noload_m[${n}]`, `no load ${n}`, 110.6 + 32 * i, 247.6, '99.99', {
+      said: `way ${n}, no load`,
       ...pegs,
       ...conditional,
       hard: [0.5, 99.99],
@@ -198,27 +261,30 @@ const slip: LayoutCell[] = [
   ),
 ]
 
-const yesNo = (key: string, label: string, x: number): ChoiceCell =>
-  choice(7, key, label, 'mandatory', 'before', 258.6, [
+const yesNo = (key: string, label: string, said: string, x: number): ChoiceCell =>
+  choice(7, key, label, said, 'mandatory', 'before', 258.6, [
     ['yes', 'y', x],
     ['no', 'n', x + 8.4],
   ])
 const close: LayoutCell[] = [
-  choice(7, 'soil_class', 'soil', 'mandatory', 'before', 258.6, [
+  choice(7, 'soil_class', 'soil', 'soil', 'mandatory', 'before', 258.6, [
     ['fine', 'fine', 42],
     ['medium', 'medium', 56],
     ['coarse', 'coarse', 76],
   ]),
-  yesNo('consent_trial', 'trial', 127),
-  yesNo('consent_photo', 'photos', 155),
-  yesNo('consent_contact', 'a call', 180),
-  time(7)('circuit_restored_at', 'fuel circuit restored', 34.6, 267.2, '99:99', { instrument: 'watch' }),
+  yesNo('consent_trial', 'trial', 'consent to the trial', 127),
+  yesNo('consent_photo', 'photos', 'consent to photos', 155),
+  yesNo('consent_contact', 'a call', 'consent to a call', 180),
+  time(7)('circuit_restored_at', 'fuel circuit restored', 34.6, 267.2, '99:99', {
+    said: 'time the fuel circuit was restored',
+    instrument: 'watch',
+  }),
   time(7)('closed_at', 'sheet closed', 66.6, 267.2, '99:99', { ...optional, instrument: 'watch' }),
   area('line', 'circuit_restored_by', 'restored by', 96, 267.2, 38, 7.4, 'optional', true),
   area('line', 'remarks', 'remarks', 138, 267.2, 41, 7.4, 'optional'),
-  area('signature', 'sign_demonstrator', 'demonstrator', 31, 279, 35, 8, 'mandatory', true),
-  area('signature', 'sign_operator', 'driver', 69, 279, 35, 8, 'mandatory', true),
-  area('signature', 'sign_farmer', 'farmer (or thumb mark)', 107, 279, 35, 8, 'mandatory', true),
+  area('signature', 'sign_demonstrator', 'demonstrator', 31, 279, 35, 8, 'mandatory', true, 'signature of the demonstrator'),
+  area('signature', 'sign_operator', 'driver', 69, 279, 35, 8, 'mandatory', true, 'signature of the operator'),
+  area('signature', 'sign_farmer', 'farmer (or thumb mark)', 107, 279, 35, 8, 'mandatory', true, 'signature of the farmer'),
   area('signature', 'sign_witness', 'witness, dealer', 145, 279, 34, 8, 'optional', true),
 ]
 
