@@ -1,5 +1,5 @@
 /** What is not on the paper, or not fully. */
-import { CELLS, stemOf } from './cells.ts'
+import { stemOf } from './cells.ts'
 import type { Boxes, CheckContext } from './context.ts'
 import { AIR_TICKS, CIRCUIT_TICKS } from './fitting.ts'
 import type { LimitName } from './limits.ts'
@@ -111,7 +111,7 @@ const q56: Rule = {
   version: 1,
   name: 'blank or nought',
   severity: ['stop', 'doubt'],
-  cells: Object.keys(CELLS).filter((stem) => CELLS[stem]?.mandatory),
+  cells: [],
   why: 'Blank is not 0, and 0 is not blank: the sheet goes back, or a person says it is blank on purpose.',
   check: (ctx) => [...mandatory(ctx), ...conditional(ctx), ...noughts(ctx)],
 }

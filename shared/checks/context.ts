@@ -7,7 +7,7 @@ import { measureFuel } from '../trial/measure-fuel.ts'
 import { measurePlot, type Plot } from '../trial/measure-plot.ts'
 import { indexes, numberAt, type Readings, type Repeat, repeats, textAt } from '../trial/readings.ts'
 import type { Results } from '../trial/result.ts'
-import { CELLS, type CellInfo, labelOf, stemOf } from './cells.ts'
+import { type CellInfo, cellWithoutLayout } from './cells.ts'
 import { LIMITS, type LimitName } from './limits.ts'
 import { leading } from './text.ts'
 
@@ -15,10 +15,8 @@ import { leading } from './text.ts'
 export type Boxes = readonly (string | null)[]
 
 export interface CheckOptions {
-  /** Words of the layout for its cells. */
-  labels?: Readonly<Record<string, string>>
-  /** What the layout says of a cell; fills or replaces the defaults, key by key. */
-  cells?: Readonly<Record<string, Partial<CellInfo>>>
+  /** What the layout says of its cells, by key. */
+  cells?: Readonly<Record<string, CellInfo>>
   /** The combs box by box, where a reader saw them. */
   boxes?: Readonly<Record<string, Boxes>>
   /** Limits the office has set. */
@@ -42,6 +40,7 @@ export interface CheckContext {
   all: (stem: string) => Repeat[]
   /** Cells of a stem that are on the sheet, filled or not. */
   keys: (stem: string) => string[]
+  /** The name of a cell, to begin a sentence with. */
   label: (key: string) => string
   cell: (key: string) => CellInfo
   limit: (name: LimitName) => number
@@ -53,7 +52,7 @@ export function contextOf(readings: Readings, handedFacts: Facts, options: Check
   const facts = factsWithReadings(readings, handedFacts)
   const run = runOf(readings)
   const fuel = measureFuel(readings, facts)
-  const label = (key: string) => leading((CELLS[stemOf(key).stem]?.told ? undefined : options.labels?.[key]) ?? labelOf(key))
+  const cell = (key: string) => options.cells?.[key] ?? cellWithoutLayout(key)
   return {
     readings,
     facts,
@@ -69,8 +68,8 @@ export function contextOf(readings: Readings, handedFacts: Facts, options: Check
     text: (key) => textAt(readings, key),
     all: (stem) => repeats(readings, stem),
     keys: (stem) => (readings[stem] !== undefined ? [stem] : indexes(readings, stem).map((n) => `${stem}[${n}]`)),
-    label,
-    cell: (key) => ({ label: label(key), ...CELLS[stemOf(key).stem], ...options.cells?.[key] }),
+    label: (key) => leading(cell(key).label),
+    cell,
     limit: (name) => options.limits?.[name] ?? LIMITS[name].value,
     fuelCells: fuel.cells,
   }

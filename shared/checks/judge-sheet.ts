@@ -1,5 +1,5 @@
 /** The one way from a sheet's values to its findings and results: worker, server and desk call this, so they cannot differ. */
-import { isComb, type Layout } from '../layouts/layout.ts'
+import { isComb, type Layout, wordsFor } from '../layouts/layout.ts'
 import type { Facts } from '../trial/facts.ts'
 import type { Readings } from '../trial/readings.ts'
 import type { CellInfo } from './cells.ts'
@@ -9,15 +9,14 @@ import type { Finding } from './rule.ts'
 
 const optionsByLayout = new WeakMap<Layout, CheckOptions>()
 
-/** Labels, units, places and limits as the layout states them. */
+/** Words, units, places, needs and limits as the layout states them: its cells are their one definition. */
 export function checkOptions(layout: Layout): CheckOptions {
   const kept = optionsByLayout.get(layout)
   if (kept) return kept
-  const labels: Record<string, string> = {}
-  const cells: Record<string, Partial<CellInfo>> = {}
+  const cells: Record<string, CellInfo> = {}
   for (const cell of layout.cells) {
-    labels[cell.key] = cell.label
     cells[cell.key] = {
+      label: wordsFor(cell),
       mandatory: cell.need === 'mandatory',
       ...(isComb(cell) && cell.kind === 'digits' ? { decimals: cell.scale ? undefined : decimalsOf(cell.format) } : {}),
       ...(isComb(cell) && cell.unit ? { unit: cell.unit } : {}),
@@ -25,7 +24,7 @@ export function checkOptions(layout: Layout): CheckOptions {
       ...(isComb(cell) && cell.plausible ? { plausible: cell.plausible } : {}),
     }
   }
-  const options = { labels, cells }
+  const options = { cells }
   optionsByLayout.set(layout, options)
   return options
 }

@@ -1,10 +1,10 @@
 import { describe, expect, it } from 'vitest'
-import { buildFacts, buildReadings } from '../../tests/builders/readings.ts'
+import { buildFacts, buildOptions, buildReadings } from '../../tests/builders/readings.ts'
 import type { Readings } from '../trial/readings.ts'
 import { RESULT_KEYS, type ResultKey } from '../trial/result.ts'
 import { resultsUnderChecks } from './results-under-checks.ts'
 
-const judge = (changes: Readings = {}) => resultsUnderChecks(buildReadings(changes), buildFacts())
+const judge = (changes: Readings = {}) => resultsUnderChecks(buildReadings(changes), buildFacts(), buildOptions())
 const nulled = (changes: Readings) => RESULT_KEYS.filter((key) => judge(changes).results[key].value === null)
 
 const FUEL: ResultKey[] = [
@@ -56,6 +56,7 @@ describe('a stop', () => {
 
   it('a person has resolved takes nothing back', () => {
     const { results } = resultsUnderChecks(buildReadings({ vent_open: false }), buildFacts(), {
+      ...buildOptions(),
       resolved: (f) => f.rule === 'Q34',
     })
     expect(results.l_per_ha.value).toBeCloseTo(14.0741, 4)
@@ -85,15 +86,17 @@ describe('findings', () => {
     const { findings } = resultsUnderChecks(
       buildReadings({ jar_end_ml: 2050, fuel_used_written_ml: 3750, l_per_ha_written: 13.89 }),
       buildFacts(),
-      {
-        labels: { jar_end_ml: 'jar at the end' },
-      },
+      buildOptions({ cells: { jar_end_ml: { label: 'jar at the end', unit: 'mL' } } }),
     )
     expect(findings.map((f) => f.text)).toEqual(["Jar at the end 2050 mL is finer than the jar's marks of 200 mL."])
   })
 
   it('use the limits an office has set', () => {
-    const { findings } = resultsUnderChecks(buildReadings({ warmup_min: 12 }), buildFacts(), { limits: { warmup_min: 10 } })
+    const { findings } = resultsUnderChecks(
+      buildReadings({ warmup_min: 12 }),
+      buildFacts(),
+      buildOptions({ limits: { warmup_min: 10 } }),
+    )
     expect(findings).toEqual([])
   })
 })

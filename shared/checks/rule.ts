@@ -25,7 +25,7 @@ export interface Rule {
   name: string
   /** The severities it can find, highest first. */
   severity: readonly Severity[]
-  /** Cells it reads; a repeated cell by its stem. */
+  /** Cells it reads; a repeated cell by its stem. Empty: every cell of the sheet. */
   cells: readonly string[]
   /** Why it is asked, for the page of rules. [P] practice, [M] a standard from memory, [F] a published page. */
   why: string

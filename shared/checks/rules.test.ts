@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { buildFacts, buildFullReadings, buildReadings } from '../../tests/builders/readings.ts'
+import { buildFacts, buildFullReadings, buildOptions, buildReadings } from '../../tests/builders/readings.ts'
 import type { Sheet } from '../../tests/builders/rule-case.ts'
 import { FIELD_CASES } from '../../tests/builders/rule-cases-field.ts'
 import { FUEL_CASES } from '../../tests/builders/rule-cases-fuel.ts'
@@ -8,7 +8,7 @@ import { RULES, runChecks } from './run-checks.ts'
 
 const CASES = [...FUEL_CASES, ...FIELD_CASES, ...SHEET_CASES]
 
-const run = (s: Sheet) => runChecks(buildReadings(s.readings), buildFacts(s.facts), s.options)
+const run = (s: Sheet) => runChecks(buildReadings(s.readings), buildFacts(s.facts), buildOptions(s.options))
 
 describe('every rule', () => {
   it.each(CASES.map((c) => [c.id, c.severity, c] as const))(
@@ -50,8 +50,8 @@ describe('every rule', () => {
 
 describe('the golden sheets', () => {
   it('fire nothing', () => {
-    expect(runChecks(buildReadings(), buildFacts())).toEqual([])
-    expect(runChecks(buildFullReadings(), buildFacts())).toEqual([])
+    expect(runChecks(buildReadings(), buildFacts(), buildOptions())).toEqual([])
+    expect(runChecks(buildFullReadings(), buildFacts(), buildOptions())).toEqual([])
   })
 
   it('fire nothing for what is not on the sheet at all', () => {

@@ -2,6 +2,9 @@
  * The golden sheet of the method (a ploughing run with every figure worked out by hand), as readings and facts. Builders give
  * a valid sheet; a test names only what it changes.
  */
+import type { CheckOptions } from '../../shared/checks/context.ts'
+import { checkOptions } from '../../shared/checks/judge-sheet.ts'
+import { tillage1 } from '../../shared/layouts/tillage-1.ts'
 import type { Facts } from '../../shared/trial/facts.ts'
 import type { Readings, ReadingValue } from '../../shared/trial/readings.ts'
 
@@ -141,3 +144,9 @@ export const buildFullReadings = (changes: Readings = {}): Readings =>
 
 /** What registers and plan know of the golden run. */
 export const buildFacts = (changes: Facts = {}): Facts => ({ ...FACTS, ...changes })
+
+/** What the rules are told of the sheet: the cells of layout `tillage` 1, with changes. */
+export function buildOptions({ cells, ...changes }: CheckOptions = {}): CheckOptions {
+  const tillage = checkOptions(tillage1)
+  return { ...tillage, ...changes, cells: { ...tillage.cells, ...cells } }
+}

@@ -89,7 +89,7 @@ export const FUEL_CASES: readonly Case[] = [
   row('Q13', 'doubt', sheet({ width_mean_written_m: 0.909 }), sheet({ width_mean_written_m: 0.908 })),
   row('Q13', 'doubt', sheet({ width_mean_written_m: 0.92 }), {
     readings: { width_mean_written_m: 0.91 },
-    options: { cells: { width_mean_written_m: { decimals: 2 } } },
+    options: { cells: { width_mean_written_m: { label: 'mean width by hand', decimals: 2 } } },
   }),
   row('Q14', 'doubt', sheet({ area_written: 0.273 }), sheet({ area_written: 0.272 })),
   row('Q14', 'stop', sheet({ area_written: 0.298 }), sheet({ area_written: 0.297 }), 'apart'),

@@ -5,7 +5,7 @@ import { bookColumns } from '../../shared/layouts/book-columns.ts'
 import { valueProblem } from '../../shared/layouts/cell-value.ts'
 import { formRows } from '../../shared/layouts/form.ts'
 import { boxesOf, cellBounds, describeLayout } from '../../shared/layouts/geometry.ts'
-import { BOX, isComb } from '../../shared/layouts/layout.ts'
+import { BOX, isComb, wordsFor } from '../../shared/layouts/layout.ts'
 import { LAYOUTS } from '../../shared/layouts/registry.ts'
 import { cornerCodeText, makeSheetCode } from '../../shared/layouts/sheet-code.ts'
 import { createCodeFinder } from '../../worker/readers/photo/find-codes.ts'
@@ -58,9 +58,9 @@ test.each(LAYOUTS)(
     )
     expect(formRows(layout).map((r) => r.key)).toEqual(keys.filter((k) => !personal.has(k)))
     const columns = new Map(bookColumns([layout]).map((c) => [c.name, c]))
-    const { labels, cells } = checkOptions(layout)
+    const { cells } = checkOptions(layout)
     for (const cell of layout.cells) {
-      expect(labels?.[cell.key]).toBe(cell.label)
+      expect(cells?.[cell.key]?.label).toBe(wordsFor(cell))
       if (!personal.has(cell.key)) expect(columns.get(cell.key)?.unit ?? null).toBe(isComb(cell) ? cell.unit : null)
       if (isComb(cell) && cell.hard) expect(cells?.[cell.key]?.hard).toEqual(cell.hard)
       const row = formRows(layout).find((r) => r.key === cell.key)
@@ -68,6 +68,11 @@ test.each(LAYOUTS)(
     }
   },
 )
+
+test.each(LAYOUTS)('$key $version: no two cells are called the same in a sentence', (layout) => {
+  const words = layout.cells.map(wordsFor)
+  expect(words.filter((w, i) => words.indexOf(w) !== i)).toEqual([])
+})
 
 test.each(LAYOUTS)('$key $version: every tie names cells of the sheet', (layout) => {
   const keys = new Set(layout.cells.map((c) => c.key))
