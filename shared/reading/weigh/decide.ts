@@ -34,6 +34,8 @@ export function decideComb(
   const byInk = argMax(variable.options, (o) => o.ink)
   const value = variable.options[best]!
   const inkBest = variable.options[byInk]!
+  // Knowledge may choose between what the ink allows, never replace it: a value a box denies is offered, not proposed.
+  const denied = value !== inkBest && value.weakest < DIGIT_ALLOWED
   const reasons: Reason[] = []
   const add = (rule: ReasonRule, text: string, cells = [variable.key]) => reasons.push({ rule, text, cells })
 
@@ -55,14 +57,20 @@ export function decideComb(
     if (sum.isResult) add('R04', wrongText(sum), sum.cells)
     else if (sum.fails && value.ink < CLEAR_BESIDE_A_WRONG_SUM) add('R04', besideText(variable, sum, value), sum.cells)
   }
+  const candidates = candidatesOf(variable.options, p)
   return {
-    value: value.value,
+    value: denied ? inkBest.value : value.value,
     state: reasons.length === 0 ? 'clear' : 'in doubt',
-    candidates: candidatesOf(variable.options, p),
+    candidates: denied ? inkFirst(candidates, inkBest.value) : candidates,
     reasons,
-    posterior: p[best]!,
+    posterior: denied ? p[byInk]! : p[best]!,
   }
 }
+
+const inkFirst = (candidates: Candidate[], value: Value): Candidate[] => [
+  ...candidates.filter((c) => c.value === value),
+  ...candidates.filter((c) => c.value !== value),
+]
 
 function unsure(variable: Variable, p: ArrayLike<number>): string {
   const likely = candidatesOf(variable.options, p).slice(0, 3)

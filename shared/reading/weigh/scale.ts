@@ -1,5 +1,5 @@
 /** Readings whose unit is ticked: the digits stand for that many of a part of the unit (190 in bar is 1.90). */
-import type { CombCell } from '../../layouts/layout.ts'
+import { type CombCell, wordsFor } from '../../layouts/layout.ts'
 import type { Weighed } from './types.ts'
 
 /** Without a clear unit the digits stay as written and the reading is in doubt (rule Q16). A blank needs no unit. */
@@ -18,7 +18,7 @@ export function scaled(cell: CombCell, reading: Weighed, unit: Weighed | undefin
       ? reading.reasons
       : [
           ...reading.reasons,
-          { rule: 'Q16', text: `The unit of ${cell.label} is not ticked, or not plainly.`, cells: [cell.key, cell.scale.by] },
+          { rule: 'Q16', text: `The unit of ${wordsFor(cell)} is not ticked, or not plainly.`, cells: [cell.key, cell.scale.by] },
         ],
   }
 }

@@ -37,6 +37,17 @@ describe('the fuel balance', () => {
     for (const key of ['start', 'topup', 'end', 'used']) expect(read.get(key)!.state).toBe('clear')
   })
 
+  it('proposes what the ink says where the sum speaks for a value the ink denies', () => {
+    // A shaky 1 that is hardly a 2: the sums ask for 2400, no eye would read it.
+    const shaky = [box({ 1: 0.955, 7: 0.03, 2: 0.008 }), plain(4), plain(0), plain(0)]
+    const read = weigh(fuelCells, [FUEL], { start: written('4800'), topup: written('    '), end: written('2400'), used: shaky })
+    const used = read.get('used')!
+    expect(used.state).toBe('in doubt')
+    expect(used.value).toBe(1400)
+    expect(used.candidates[0]!.value).toBe(1400)
+    expect(used.candidates.map((c) => c.value)).toContain(2400)
+  })
+
   it('counts a blank top-up as nothing', () => {
     const read = weigh(fuelCells, [FUEL], {
       start: written('4800'),

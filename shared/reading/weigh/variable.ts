@@ -1,5 +1,5 @@
 /** One reading as a variable: its possible values with their ink and their weight before any tie is looked at. */
-import type { ChoiceCell, CombCell } from '../../layouts/layout.ts'
+import { type ChoiceCell, type CombCell, wordsFor } from '../../layouts/layout.ts'
 import type { Tie } from '../../layouts/tie.ts'
 import type { BoxDist, TickDist } from '../classes.ts'
 import { patternsOf } from './patterns.ts'
@@ -62,7 +62,7 @@ export function combVariable(cell: CombCell, boxes: ReadonlyArray<BoxDist>, ties
   const other = (patterns.gap + patterns.spoiled + patterns.leftOut) * scale + impossible * IMPOSSIBLE_FORMAT
   return normalised({
     key: cell.key,
-    label: cell.label,
+    label: wordsFor(cell),
     mandatory: cell.need === 'mandatory',
     places,
     options: [...options, blank],
@@ -82,7 +82,7 @@ export function choiceVariable(cell: ChoiceCell, ticks: ReadonlyArray<TickDist>)
   const spoiled = 1 - ticks.reduce((all, tick) => all * (1 - tick.spoiled), 1)
   return normalised({
     key: cell.key,
-    label: cell.label,
+    label: wordsFor(cell),
     mandatory: cell.need === 'mandatory',
     places: 0,
     options,
