@@ -3,7 +3,7 @@ import { isUsable } from '../trial/readings.ts'
 import { stemOf } from './cells.ts'
 import type { CheckContext } from './context.ts'
 import { type Found, found, type Rule } from './rule.ts'
-import { valued } from './text.ts'
+import { figure, valued } from './text.ts'
 
 /** Jar and jug (Q04, Q07), tyres (Q28): their limits come from registers. */
 const OWN_RULE = [
@@ -57,7 +57,7 @@ const l01: Rule = {
   why: 'Outside what the instrument shows (table of readings).',
   check: (ctx) =>
     outside(ctx, OWN_RULE, 'hard', (key, value, low, high) =>
-      found('stop', [key], `${said(ctx, key, value)} cannot be: ${low} to ${high}${unitOf(ctx, key)}.`, {
+      found('stop', [key], `${said(ctx, key, value)} cannot be: ${figure(low)} to ${high}${unitOf(ctx, key)}.`, {
         [key]: value,
         low,
         high,
@@ -75,7 +75,7 @@ const l02: Rule = {
   check: (ctx) => {
     const impossible = new Set(l01.check(ctx).flatMap((f) => f.cells))
     return outside(ctx, OWN_BAND, 'plausible', (key, value, low, high) =>
-      found('doubt', [key], `${said(ctx, key, value)}; ${low} to ${high}${unitOf(ctx, key)} is usual.`, {
+      found('doubt', [key], `${said(ctx, key, value)}; ${figure(low)} to ${high}${unitOf(ctx, key)} is usual.`, {
         [key]: value,
         low,
         high,

@@ -104,7 +104,7 @@ const fuelRow = (
     unit: '°C',
     need: 'optional',
     labelShown: false,
-    hard: [0, 80],
+    hard: [-5, 80],
     plausible: [15, 60],
     instrument: 'thermometer',
   }),
@@ -231,7 +231,7 @@ const slip: LayoutCell[] = [
   comb(6)('speed_dist_m', 'between pegs', 16.6, 236.4, '99.9', {
     said: 'timed distance',
     ...pegs,
-    hard: [5, 99.9],
+    hard: [5, 200],
     plausible: [10, 50],
   }),
   ...numbered(3, (n, i) =>

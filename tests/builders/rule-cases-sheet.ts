@@ -64,6 +64,7 @@ export const SHEET_CASES: readonly Case[] = [
   row('Q58', 'note', given({ photoTakenOn: '2026-10-15' }), given({ photoTakenOn: '2026-10-14' })),
   row('Q58', 'note', given({ photoDistance_km: 5.1 }), given({ photoDistance_km: 5 })),
   row('L01', 'stop', sheet({ rpm_load: 3600 }), sheet({ rpm_load: 3500 }), 'cannot be: 400 to 3500 r/min'),
+  row('L01', 'stop', sheet({ fuel_temp_end_c: 81 }), sheet({ fuel_temp_end_c: 80 }), 'cannot be: −5 to 80 °C'),
   row('L02', 'doubt', sheet({ side_bc_m: 19.9 }), sheet({ side_bc_m: 20 }), 'is usual'),
   row('L03', 'doubt', sheet({ audience_briefed: false }), sheet({ audience_briefed: true })),
   row('L04', 'doubt', given({ kitCheckedOn: '2025-08-14' }), given({ kitCheckedOn: '2025-10-14' }), '14 months'),
