@@ -1,5 +1,6 @@
 import type { ReactNode, RefObject } from 'react'
 import { formatValue } from '../../../../shared/layouts/cell-value.ts'
+import { wordsFor } from '../../../../shared/layouts/layout.ts'
 import { KeyCap } from '../../../ui/foot.tsx'
 import { LETTERS, openOf } from '../model/desk-items.ts'
 import type { Desk } from '../use-desk.ts'
@@ -83,7 +84,7 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
         <p className="mt-0.5 text-2 leading-[27px]">{item.text}</p>
         {acts.cell && item.doubt && item.cells.length > 1 && (
           <p className="mt-0.5">
-            In hand: <strong>{acts.cell.label}</strong>. What is typed here corrects it.
+            In hand: <strong>{wordsFor(acts.cell)}</strong>. What is typed here corrects it.
           </p>
         )}
         {acts.proposal?.split && item.reading && (
@@ -96,7 +97,7 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
   if (acts.cell) {
     return (
       <>
-        <h1 className="mt-0.5 text-5 leading-[36px] first-letter:uppercase">{acts.cell.label}</h1>
+        <h1 className="mt-0.5 text-5 leading-[36px] first-letter:uppercase">{wordsFor(acts.cell)}</h1>
         <p className="text-2">
           {acts.reading?.value === null && desk.sheet.origin === 'keyed'
             ? 'Key what stands on the paper; b where it is blank there too.'
@@ -154,7 +155,7 @@ function CellValue({ desk, cellKey }: { desk: Desk; cellKey: string }) {
   const reading = desk.view.readings.get(cellKey)
   return (
     <span>
-      {cell?.label ?? cellKey}{' '}
+      {cell ? wordsFor(cell) : cellKey}{' '}
       <span className={`figures ${reading?.origin === 'person' ? 'text-pen' : ''}`}>
         {formatValue(cell, reading?.value ?? null)}
       </span>{' '}

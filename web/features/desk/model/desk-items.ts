@@ -1,5 +1,5 @@
 /** The doubts of a sheet in order of work: ink first, in the order of the page, then what the rules still find, stops first. */
-import type { Layout } from '../../../../shared/layouts/layout.ts'
+import { type Layout, wordsFor } from '../../../../shared/layouts/layout.ts'
 import type { Reading } from '../../../../shared/schemas/sheet.ts'
 import type { DeskDoubt, DeskView } from './desk-view.ts'
 
@@ -24,10 +24,10 @@ export interface DeskItem {
 const isDoubtful = (r: Reading) => r.state === 'in doubt'
 
 export function itemsOf(view: DeskView, layout: Layout): DeskItem[] {
-  const labels = new Map(layout.cells.map((c) => [c.key, c.label]))
+  const labels = new Map(layout.cells.map((c) => [c.key, wordsFor(c)]))
   const inked = layout.cells.flatMap((cell) => {
     const reading = view.readings.get(cell.key)
-    return reading && isDoubtful(reading) ? [ofReading(reading, cell.label, view)] : []
+    return reading && isDoubtful(reading) ? [ofReading(reading, wordsFor(cell), view)] : []
   })
   const ruled = view.doubts.filter((d) => d.severity !== 'note').map((d) => ofDoubt(d, labels))
   return [...inked, ...ruled].map((item, i) => ({ ...item, number: i + 1 }))
