@@ -2,10 +2,12 @@
 import { type Box, boxesOf, cellBounds, unitOf } from '../layouts/geometry.ts'
 import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
 import type { Alignment, PlacedPart } from './align/align-page.ts'
+import { tickContrast } from './align/measure-tick.ts'
 import type { Picture } from './align/patch.ts'
 import { blackAt } from './cells/black-level.ts'
 import { cutCell, samplesFor } from './cells/cut.ts'
 import { inkWithin, signedBy } from './cells/signed.ts'
+import { fading, isVisible, leftOpen, usualContrast } from './cells/tick-print.ts'
 import { measureTick, tickDist, tickHabit } from './cells/ticks.ts'
 import { type BoxDist, boxDist, CELL_PX, type DigitNet, type TickDist } from './classes.ts'
 import { scaleAt } from './geometry/homography.ts'
@@ -64,23 +66,38 @@ export async function readCells(
       cell.key,
       own.map(() => boxDist(probabilities, next++)),
     )
-  const ticks = placed.filter(({ cell }) => cell.kind === 'tick' || cell.kind === 'choice')
-  const inks = ticks.map(({ boxes: own }) =>
-    own.map(({ box, map }) => measureTick(picture, map, box, blackAt(alignment.blacks, box))),
-  )
-  const habit = tickHabit(inks.flat())
-  const tickInk = new Map(
-    ticks.map(({ cell }, i): [string, TickDist[]] => [cell.key, inks[i]!.map((ink) => tickDist(ink, habit))]),
-  )
+  const { ticks, hidden } = readTicks(picture, alignment, placed)
   watch.lap('ticks')
-  const weighed = weighSheet(layout, { combs: combInk, ticks: tickInk }, facts)
+  const weighed = weighSheet(layout, { combs: combInk, ticks }, facts)
   watch.lap('weigh')
   const readings = placed.map((p): [string, CellReading] => {
     const own = weighed.get(p.cell.key) ?? seen(picture, alignment, p)
-    return [p.cell.key, withPlace(p, own)]
+    return [p.cell.key, withPlace(p, own, hidden.has(p.cell.key))]
   })
   watch.lap('ticks')
   return new Map(readings)
+}
+
+/** The chances of each tick box, and the cells with a box whose print hardly shows. */
+function readTicks(picture: Picture, alignment: Alignment, placed: readonly PlacedCell[]) {
+  const own = placed.filter(({ cell }) => cell.kind === 'tick' || cell.kind === 'choice')
+  const all = own.flatMap(({ cell, boxes }) =>
+    boxes.map(({ box, map }) => ({ key: cell.key, box, map, contrast: tickContrast(picture, map, box) })),
+  )
+  const usual = usualContrast(all.map((b) => b.contrast))
+  const inks = all.map(({ box, map, contrast }) =>
+    measureTick(picture, map, box, blackAt(alignment.blacks, box) * fading(contrast, usual)),
+  )
+  const habit = tickHabit(inks)
+  const ticks = new Map<string, TickDist[]>(own.map(({ cell }) => [cell.key, []]))
+  const hidden = new Set<string>()
+  all.forEach(({ key, contrast }, i) => {
+    const dist = tickDist(inks[i]!, habit)
+    const visible = isVisible(contrast, usual)
+    if (!visible) hidden.add(key)
+    ticks.get(key)!.push(visible ? dist : leftOpen(dist))
+  })
+  return { ticks, hidden }
 }
 
 function placeCells(alignment: Alignment, layout: Layout, planned: boolean): PlacedCell[] {
@@ -109,14 +126,15 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
 function seen(picture: Picture, alignment: Alignment, { cell, boxes }: PlacedCell): Weighed {
   const { box, map } = boxes[0]!
   if (cell.kind !== 'signature') return { value: null, state: 'clear', candidates: [], reasons: [], posterior: 1 }
-  const { signed, sure } = signedBy(inkWithin(picture, map, box, blackAt(alignment.blacks, box)))
-  const reasons: Weighed['reasons'] = sure
-    ? []
-    : [{ rule: 'R06', text: `Whether ${cell.label} signed is not plain.`, cells: [cell.key] }]
+  const { signed, sure, hidden } = signedBy(inkWithin(picture, map, box, blackAt(alignment.blacks, box)))
+  const text = hidden
+    ? `The printed line for ${cell.label} hardly shows in the photo, so a signature might not show either.`
+    : `Whether ${cell.label} signed is not plain.`
+  const reasons: Weighed['reasons'] = sure ? [] : [{ rule: 'R06', text, cells: [cell.key] }]
   return { value: signed, state: sure ? 'clear' : 'in doubt', candidates: [], reasons, posterior: sure ? 1 : 0.5 }
 }
 
-function withPlace({ cell, boxes, fit_mm, hasFrame, seen: framed }: PlacedCell, weighed: Weighed): CellReading {
+function withPlace({ cell, boxes, fit_mm, hasFrame, seen: framed }: PlacedCell, weighed: Weighed, hidden: boolean): CellReading {
   const reading: CellReading = {
     value: weighed.value,
     unit: unitOf(cell),
@@ -130,6 +148,11 @@ function withPlace({ cell, boxes, fit_mm, hasFrame, seen: framed }: PlacedCell, 
     const how = fit_mm === null ? 'were not found' : `stand ${fit_mm.toFixed(1)} mm from where the boxes around put them`
     reading.state = 'in doubt'
     reading.reasons.push({ rule: 'R07', text: `The printed boxes of ${cell.label} ${how}.`, cells: [cell.key] })
+  }
+  if (hidden) {
+    reading.state = 'in doubt'
+    const text = `The printed box of ${cell.label} hardly shows in the photo, so ink in it might not show either.`
+    reading.reasons.push({ rule: 'R07', text, cells: [cell.key] })
   }
   // Bright light takes frame and ink alike: what shows no frame is not known to be empty.
   if (hasFrame && !framed && (weighed.value === null || weighed.value === false)) {

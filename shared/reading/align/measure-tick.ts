@@ -84,6 +84,27 @@ export function measureTickPlace(picture: Picture, map: FieldMap, part: FieldPar
   return { dx, dy, supportX: best.value, supportY: best.value, ahead: 1, spread_mm: 0, stretch: 0, lean: 0, growth: 0 }
 }
 
+/**
+ * How dark the print of a placed box comes out in the photo, beside what was printed: about 1 in a sharp picture, less in blur
+ * and haze, near 0 where mirrored light, a dark corner or something on the page hides it.
+ */
+export function tickContrast(picture: Picture, map: FieldMap, box: { x: number; y: number }): number {
+  const side = template.side * STEP_MM
+  const area = { x: box.x - AROUND_MM, y: box.y - AROUND_MM, width: side, height: side }
+  const { darkness } = samplePatch(picture, map, area, STEP_MM)
+  const { value, index } = template
+  const mean = value.reduce((sum, v) => sum + v, 0) / value.length
+  let together = 0
+  let alone = 0
+  for (let i = 0; i < value.length; i++) {
+    const read = darkness[index[i]!]!
+    const off = value[i]! - mean
+    together += off * (Number.isNaN(read) ? 0 : Math.min(read, CLIP))
+    alone += off * off
+  }
+  return together / alone
+}
+
 function likenessAt(darkness: Float32Array, columns: number, left: number, top: number): number {
   const { value, row, column } = template
   const n = value.length

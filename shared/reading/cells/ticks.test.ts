@@ -63,3 +63,15 @@ test('the three chances add up to 1', () => {
     expect(dist.empty + dist.ticked + dist.spoiled).toBeCloseTo(1, 9)
   }
 })
+
+test('a line out on both sides takes back a cross that fills its box', () => {
+  const crosses = tickHabit([empty, empty, empty, cross, cross, cross])
+  const lined = ink([
+    [8.6, 8.6, 11.8, 11.8],
+    [11.8, 8.6, 8.6, 11.8],
+    [6.9, 10, 13.4, 10.2],
+  ])
+  expect(lined.through).toBe(true)
+  expect(cross.through).toBe(false)
+  expect(tickDist(lined, crosses).ticked).toBeLessThan(0.99)
+})

@@ -19,6 +19,8 @@ export interface TickInk {
   share: number
   /** Share of the width that a level stroke would cross: the most that any band of rows has. */
   across: number
+  /** A stroke leaves the box on both sides at about the same height. */
+  through: boolean
 }
 
 export function measureTick(picture: Picture, map: FieldMap, box: Box, black: number): TickInk {
@@ -47,7 +49,29 @@ export function measureTick(picture: Picture, map: FieldMap, box: Box, black: nu
       ink += value
     }
   }
-  return { ink_mm2: ink * STEP_MM * STEP_MM, share: seen === 0 ? 0 : ink / seen, across: mostAcross(inked, columns, rows) }
+  return {
+    ink_mm2: ink * STEP_MM * STEP_MM,
+    share: seen === 0 ? 0 : ink / seen,
+    across: mostAcross(inked, columns, rows),
+    through: goesThrough(picture, map, box, black),
+  }
+}
+
+/** Beside the box, clear of its heavy corner and of the label: from here, so wide, mm. */
+const BESIDE_MM = 0.42
+const BESIDE_WIDTH_MM = 0.28
+/** A line through a box rises or falls by less than this, mm. */
+const LEVEL_MM = 1
+
+function goesThrough(picture: Picture, map: FieldMap, box: Box, black: number): boolean {
+  const heights = [box.x - BESIDE_MM - BESIDE_WIDTH_MM, box.x + box.width + BESIDE_MM].map((x) => {
+    const area = { x, y: box.y + INSET_MM, width: BESIDE_WIDTH_MM, height: box.height - 2 * INSET_MM }
+    const { darkness, columns, rows } = samplePatch(picture, map, area, STEP_MM)
+    const inkedRow = (row: number) => darkness.subarray(row * columns, (row + 1) * columns).every((v) => v > INK_FULL * black)
+    return Array.from({ length: rows }, (_, row) => row).filter(inkedRow)
+  })
+  const [left = [], right = []] = heights
+  return left.some((a) => right.some((b) => Math.abs(a - b) * STEP_MM < LEVEL_MM))
 }
 
 /** Means of 3 x 3, so that grain is not taken for ink. */
@@ -129,11 +153,13 @@ const STEEP = 6.5
 const CROSSED = 1.58
 const CROSSED_STEEP = 40
 const LEVEL_STROKE = 0.35
+/** A stroke out on both sides counts as so much more ink: one line through a cross adds little to the cross's own. */
+const THROUGH = 0.3
 
 export function tickDist(ink: TickInk, habit: TickHabit): TickDist {
   const over = Math.max(0, ink.ink_mm2 - habit.empty_mm2) / Math.max(0.2, habit.usual_mm2 - habit.empty_mm2)
   const inked = logistic(STEEP * Math.log((over + 0.02) / (HALFWAY + 0.02)))
-  const more = over + LEVEL_STROKE * Math.max(0, ink.across - habit.across)
+  const more = over + LEVEL_STROKE * Math.max(0, ink.across - habit.across) + (ink.through ? THROUGH : 0)
   const crossed = logistic(CROSSED_STEEP * (more - CROSSED))
   return { empty: 1 - inked, ticked: inked * (1 - crossed), spoiled: inked * crossed }
 }
