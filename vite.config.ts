@@ -10,6 +10,8 @@ export default defineConfig({
     outDir: '.data/web',
     emptyOutDir: true,
     sourcemap: false,
+    // Which files each page is made of: the service worker keeps those of the phone's pages by it.
+    manifest: 'files.json',
     assetsInlineLimit: 0,
     // The service worker keeps its name and place: its scope is the folder it stands in.
     rollupOptions: {

@@ -19,13 +19,21 @@ const scope = globalThis as unknown as Scope
 const STORE = 'sheafbook-1'
 const PAGE = '/'
 
-scope.addEventListener('install', (event: Lasting) => event.waitUntil(scope.skipWaiting()))
+/** One file of the build, as its list of files tells of it. */
+interface Part {
+  file: string
+  imports?: string[]
+  css?: string[]
+  assets?: string[]
+}
+const PHONE_PAGES = ['send', 'my-sheets', 'my-sheet', 'demonstrations', 'demonstration', 'plan-demonstration', 'sign-in']
+
+scope.addEventListener('install', (event: Lasting) => event.waitUntil(keepPhonePages().then(() => scope.skipWaiting())))
 scope.addEventListener('activate', (event: Lasting) => event.waitUntil(scope.clients.claim()))
 
-/** The page tells which files it was made of: those it loaded before this worker listened. */
+/** A page that opened with a line asks for it: the app may be newer than this worker. */
 scope.addEventListener('message', (event: Lasting & { data: unknown }) => {
-  const { data } = event
-  if (Array.isArray(data)) event.waitUntil(keepAll(data.filter((url): url is string => typeof url === 'string' && isOurs(url))))
+  if (event.data === 'keep') event.waitUntil(keepPhonePages())
 })
 
 scope.addEventListener('fetch', (event: Asked) => {
@@ -64,9 +72,24 @@ async function keptFile(request: Request): Promise<Response> {
   return fresh
 }
 
-async function keepAll(urls: readonly string[]): Promise<void> {
+/** The pages a phone needs in a field, and the page they stand in, each with all it is made of: scripts, styles, fonts. */
+async function keepPhonePages(): Promise<void> {
+  const answer = await fetch('/files.json', { cache: 'no-cache' }).catch(() => null)
+  if (!answer?.ok) return
+  const parts: Record<string, Part> = await answer.json()
+  const urls = new Set<string>()
+  const seen = new Set<string>()
+  const take = (name: string) => {
+    const part = parts[name]
+    if (!part || seen.has(name)) return
+    seen.add(name)
+    for (const file of [part.file, ...(part.css ?? []), ...(part.assets ?? [])]) urls.add(`/${file}`)
+    for (const other of part.imports ?? []) take(other)
+  }
+  for (const name of ['index.html', ...PHONE_PAGES.map((page) => `web/app/routes/${page}.tsx`)]) take(name)
   const store = await caches.open(STORE)
-  for (const url of [PAGE, ...urls]) {
+  if (!(await store.match(PAGE))) await store.add(PAGE).catch(() => undefined)
+  for (const url of urls) {
     if (!(await store.match(url))) await store.add(url).catch(() => undefined)
   }
 }

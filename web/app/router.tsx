@@ -1,6 +1,7 @@
 import { createBrowserRouter, type RouteObject } from 'react-router-dom'
 import { paths } from '../lib/paths.ts'
 import { Loading } from '../ui/says.tsx'
+import { onDemand } from './on-demand.tsx'
 import { Home } from './routes/home.tsx'
 import { officeRoutes } from './routes/office.tsx'
 import { NotFound, RouteError } from './routes/route-error.tsx'
@@ -16,18 +17,18 @@ export const routes: RouteObject[] = [
     errorElement: <RouteError />,
     HydrateFallback: () => <Loading what="Opening the book" />,
     children: [
-      { path: paths.signIn.pattern, lazy: () => import('./routes/sign-in.tsx') },
-      { path: paths.forgotten.pattern, lazy: () => import('./routes/request-link.tsx') },
-      { path: paths.link.pattern, lazy: () => import('./routes/one-time-link.tsx') },
+      { path: paths.signIn.pattern, lazy: onDemand(() => import('./routes/sign-in.tsx')) },
+      { path: paths.forgotten.pattern, lazy: onDemand(() => import('./routes/request-link.tsx')) },
+      { path: paths.link.pattern, lazy: onDemand(() => import('./routes/one-time-link.tsx')) },
       {
         element: <Shell />,
         children: guarded([
           { path: paths.home.pattern, element: <Home /> },
-          { path: paths.send.pattern, lazy: () => import('./routes/send.tsx') },
-          { path: paths.mySheets.pattern, lazy: () => import('./routes/my-sheets.tsx') },
-          { path: paths.mySheet.pattern, lazy: () => import('./routes/my-sheet.tsx') },
-          { path: paths.desk.pattern, lazy: () => import('./routes/desk-list.tsx') },
-          { path: paths.deskSheet.pattern, lazy: () => import('./routes/desk-sheet.tsx') },
+          { path: paths.send.pattern, lazy: onDemand(() => import('./routes/send.tsx')) },
+          { path: paths.mySheets.pattern, lazy: onDemand(() => import('./routes/my-sheets.tsx')) },
+          { path: paths.mySheet.pattern, lazy: onDemand(() => import('./routes/my-sheet.tsx')) },
+          { path: paths.desk.pattern, lazy: onDemand(() => import('./routes/desk-list.tsx')) },
+          { path: paths.deskSheet.pattern, lazy: onDemand(() => import('./routes/desk-sheet.tsx')) },
           ...officeRoutes,
           { path: '*', element: <NotFound /> },
         ]),

@@ -13,15 +13,23 @@ import { counted } from '../../lib/words.ts'
 import { ButtonLink } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
 import { EmptyState, ErrorState, Loading } from '../../ui/says.tsx'
+import { AT_THE_DESK, DESK_SHUT, OnlyFor } from './only-for.tsx'
 
 const plain = (text: string | null) => (text ?? '').toLowerCase().replaceAll(/[^a-z0-9]/g, '')
 
-export function Component() {
+export const Component = () => (
+  <OnlyFor roles={AT_THE_DESK} title="Desk" says={DESK_SHUT}>
+    <DeskListPage />
+  </OnlyFor>
+)
+
+function DeskListPage() {
   const me = useMe()
   const navigate = useNavigate()
   const list = useQuery(deskQueries.list())
   const [params, setParams] = useSearchParams()
-  const find = params.get('find') ?? ''
+  // The box has its own text: the address follows it later than the next letter comes.
+  const [find, setFind] = useState(params.get('find') ?? '')
   const field = useRef<HTMLInputElement>(null)
   const sheets = (list.data?.sheets ?? []).filter((row) => foundIn(row, find))
   const groups = groupsOf(sheets)
@@ -43,11 +51,15 @@ export function Component() {
     { key: 'Enter', act: () => open(chosen) },
     { key: '/', act: () => field.current?.focus() },
   ]
+  const findBy = (text: string) => {
+    setFind(text)
+    setParams(text === '' ? {} : { find: text }, { replace: true })
+  }
   useKeys(Object.fromEntries(keys.map(({ key, act }) => [key, act])))
   return (
     <Page
       title="Desk"
-      sentence={list.data ? sentenceOf(rows) : 'The desk'}
+      sentence={list.data ? sentenceOf(rows, find) : 'The desk'}
       aside={
         <label className="flex items-center gap-1">
           <span className="label">find</span>
@@ -56,9 +68,13 @@ export function Component() {
             type="search"
             value={find}
             placeholder="code, place, name"
-            onChange={(event) => setParams(event.target.value === '' ? {} : { find: event.target.value }, { replace: true })}
+            onChange={(event) => findBy(event.target.value)}
             onKeyDown={(event) => {
-              if (event.key === 'Escape' || event.key === 'Enter') event.currentTarget.blur()
+              if (event.key === 'Enter') open(rows[0] ?? null)
+              if (event.key === 'Escape') {
+                findBy('')
+                event.currentTarget.blur()
+              }
             }}
             className="figures min-h-[36px] w-[216px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen placeholder:text-graphite"
           />
@@ -77,7 +93,7 @@ export function Component() {
           says={
             find === ''
               ? 'No sheet waits. What is sent and can be read without a doubt waits here only to be entered.'
-              : `No waiting sheet fits “${find}”.`
+              : 'Escape in the box shows all that wait.'
           }
           next={find === '' ? <ButtonLink to={paths.send.to()}>Send sheets</ButtonLink> : null}
         />
@@ -91,7 +107,8 @@ const foundIn = (row: SheetRow, find: string) =>
   find === '' ||
   [row.code, row.place, row.tractor, row.implement, row.demonstrator].some((text) => plain(text).includes(plain(find)))
 
-function sentenceOf(rows: readonly SheetRow[]): string {
+function sentenceOf(rows: readonly SheetRow[], find: string): string {
+  if (rows.length === 0 && find !== '') return 'No sheet at the desk fits that.'
   const [oldest] = [...rows].filter((row) => row.arrivedAt).sort((a, b) => (a.arrivedAt ?? '').localeCompare(b.arrivedAt ?? ''))
   if (rows.length === 0 || !oldest?.arrivedAt) return 'Nothing waits at the desk.'
   const doubts = rows.reduce((sum, row) => sum + row.openDoubts, 0)

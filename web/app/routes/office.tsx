@@ -1,17 +1,18 @@
 import type { RouteObject } from 'react-router-dom'
 import { paths } from '../../lib/paths.ts'
+import { onDemand } from '../on-demand.tsx'
 
 /** Demonstrations, registers, people, trial book, outbox and trail. */
 export const officeRoutes: RouteObject[] = [
-  { path: paths.demonstrations.pattern, lazy: () => import('./demonstrations.tsx') },
-  { path: paths.planDemonstration.pattern, lazy: () => import('./plan-demonstration.tsx') },
-  { path: paths.demonstration.pattern, lazy: () => import('./demonstration.tsx') },
-  { path: paths.editDemonstration.pattern, lazy: () => import('./plan-demonstration.tsx') },
-  { path: paths.book.pattern, lazy: () => import('./book.tsx') },
-  { path: paths.registers.pattern, lazy: () => import('./registers.tsx') },
-  { path: paths.register.pattern, lazy: () => import('./registers.tsx') },
-  { path: paths.people.pattern, lazy: () => import('./people.tsx') },
-  { path: paths.outbox.pattern, lazy: () => import('./outbox.tsx') },
-  { path: paths.trail.pattern, lazy: () => import('./trail.tsx') },
-  { path: paths.record.pattern, lazy: () => import('./record.tsx') },
+  { path: paths.demonstrations.pattern, lazy: onDemand(() => import('./demonstrations.tsx')) },
+  { path: paths.planDemonstration.pattern, lazy: onDemand(() => import('./plan-demonstration.tsx')) },
+  { path: paths.demonstration.pattern, lazy: onDemand(() => import('./demonstration.tsx')) },
+  { path: paths.editDemonstration.pattern, lazy: onDemand(() => import('./plan-demonstration.tsx')) },
+  { path: paths.book.pattern, lazy: onDemand(() => import('./book.tsx')) },
+  { path: paths.registers.pattern, lazy: onDemand(() => import('./registers.tsx')) },
+  { path: paths.register.pattern, lazy: onDemand(() => import('./registers.tsx')) },
+  { path: paths.people.pattern, lazy: onDemand(() => import('./people.tsx')) },
+  { path: paths.outbox.pattern, lazy: onDemand(() => import('./outbox.tsx')) },
+  { path: paths.trail.pattern, lazy: onDemand(() => import('./trail.tsx')) },
+  { path: paths.record.pattern, lazy: onDemand(() => import('./record.tsx')) },
 ]

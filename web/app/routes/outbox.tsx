@@ -5,8 +5,15 @@ import { momentText } from '../../lib/time.ts'
 import { counted } from '../../lib/words.ts'
 import { Page } from '../../ui/page.tsx'
 import { EmptyState, ErrorState, Loading } from '../../ui/says.tsx'
+import { ADMIN, OnlyFor } from './only-for.tsx'
 
-export function Component() {
+export const Component = () => (
+  <OnlyFor roles={ADMIN} title="Outbox" says="The outbox is open to the admin.">
+    <OutboxPage />
+  </OnlyFor>
+)
+
+function OutboxPage() {
   const mails = useQuery(mailQueries.list())
   const waiting = mails.data?.filter((m) => m.state === 'queued').length ?? 0
   const failed = mails.data?.filter((m) => m.state === 'failed').length ?? 0

@@ -8,8 +8,15 @@ import { counted } from '../../lib/words.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
 import { ErrorNote, ErrorState, Loading } from '../../ui/says.tsx'
+import { ADMIN, OnlyFor } from './only-for.tsx'
 
-export function Component() {
+export const Component = () => (
+  <OnlyFor roles={ADMIN} title="People" says="People are managed by the admin.">
+    <PeoplePage />
+  </OnlyFor>
+)
+
+function PeoplePage() {
   const me = useMe()
   const [inviting, setInviting] = useState(false)
   const people = useQuery(peopleQueries.list())

@@ -6,6 +6,7 @@ import { Button } from '../../ui/button.tsx'
 import { type LedgerColumn, LedgerTable } from '../../ui/ledger-table.tsx'
 import { Page } from '../../ui/page.tsx'
 import { ErrorState, Loading } from '../../ui/says.tsx'
+import { ADMIN, OnlyFor } from './only-for.tsx'
 
 const columns: LedgerColumn<TrailEntry>[] = [
   {
@@ -19,7 +20,13 @@ const columns: LedgerColumn<TrailEntry>[] = [
   { key: 'text', head: 'in words', stack: 'lead', cell: (e) => e.text },
 ]
 
-export function Component() {
+export const Component = () => (
+  <OnlyFor roles={ADMIN} title="Trail" says="The trail is open to the admin.">
+    <TrailPage />
+  </OnlyFor>
+)
+
+function TrailPage() {
   const trail = useInfiniteQuery(trailQueries.lines())
   return (
     <Page title="Trail" sentence="Every change, newest first. Nobody can alter or take out a line.">
