@@ -115,7 +115,8 @@ function LedgerRow<Row>({ row, columns, held, quiet, stacked, onRow }: LedgerRow
   const look = held ? 'border-y-[1.5px] border-ink bg-straw-pale' : 'border-b border-feint'
   return (
     <tr
-      className={`${look} ${quiet ? 'text-graphite' : ''} ${onRow ? 'cursor-pointer' : ''} ${stacked ? STACKED_ROW : ''}`}
+      aria-current={held || undefined}
+      className={`${look} scroll-my-[80px] ${quiet ? 'text-graphite' : ''} ${onRow ? 'cursor-pointer' : ''} ${stacked ? STACKED_ROW : ''}`}
       onClick={onRow ? () => onRow(row) : undefined}
     >
       {columns.map((column) => {

@@ -38,14 +38,14 @@ export function Tally({ settled, waiting, inHand = false }: { settled: number; w
   )
 }
 
-/** As many leaning stalks as there are doubts, in groups of five; the count stands beside it. */
+/** As many leaning stalks as there are doubts, in groups of five, beyond ten a plus; the count stands beside it. */
 export function Stalks({ doubts, held = false }: { doubts: number; held?: boolean }) {
   const shown = Math.min(doubts, 10)
   const places = Array.from({ length: shown }, (_, i) => 3 + i * 5 + Math.floor(i / 5) * 4)
   return (
     <svg
       aria-hidden="true"
-      width={(places.at(-1) ?? 0) + 8}
+      width={(places.at(-1) ?? 0) + (doubts > shown ? 18 : 8)}
       height="14"
       className="inline-block align-[-2px]"
       stroke="var(--ink)"
@@ -54,6 +54,7 @@ export function Stalks({ doubts, held = false }: { doubts: number; held?: boolea
       {places.map((x, i) => (
         <path key={x} d={held && i === 0 ? `M${x} 13V1` : `M${x - 2} 13 ${x + 2} 1`} />
       ))}
+      {doubts > shown && <path d={`M${(places.at(-1) ?? 0) + 6} 7h8m-4 -4v8`} />}
     </svg>
   )
 }

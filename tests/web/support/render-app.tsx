@@ -12,6 +12,7 @@ configure({ asyncUtilTimeout: 8_000 })
 /** What jsdom has not, and the page asks for on its way. */
 beforeEach(() => {
   vi.stubGlobal('scrollTo', () => undefined)
+  Element.prototype.scrollIntoView = () => undefined
   vi.stubGlobal('matchMedia', (query: string) => ({
     matches: false,
     media: query,

@@ -12,8 +12,15 @@ import { paths } from '../../lib/paths.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
 import { ErrorState, Loading } from '../../ui/says.tsx'
+import { AT_THE_DESK, DESK_SHUT, OnlyFor } from './only-for.tsx'
 
-export function Component() {
+export const Component = () => (
+  <OnlyFor roles={AT_THE_DESK} title="Desk" says={DESK_SHUT}>
+    <DeskSheetPage />
+  </OnlyFor>
+)
+
+function DeskSheetPage() {
   const { id = '' } = useParams()
   const me = useMe()
   const navigate = useNavigate()

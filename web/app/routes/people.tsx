@@ -7,7 +7,7 @@ import { useMe } from '../../lib/me.ts'
 import { counted } from '../../lib/words.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
-import { ErrorNote, ErrorState, Loading } from '../../ui/says.tsx'
+import { ErrorNote, ErrorState, Loading, Saved } from '../../ui/says.tsx'
 import { ADMIN, OnlyFor } from './only-for.tsx'
 
 export const Component = () => (
@@ -19,6 +19,7 @@ export const Component = () => (
 function PeoplePage() {
   const me = useMe()
   const [inviting, setInviting] = useState(false)
+  const [saved, setSaved] = useState<string | null>(null)
   const people = useQuery(peopleQueries.list())
   const update = useUpdatePerson()
   const again = useInviteAgain()
@@ -33,20 +34,28 @@ function PeoplePage() {
           <ErrorNote error={update.error ?? again.error} />
         </div>
       )}
-      {again.isSuccess && (
-        <p role="status" className="px-margin py-1">
-          The invitation went out again.
-        </p>
-      )}
+      {saved && <Saved says={saved} />}
       {people.error && <ErrorState error={people.error} again={() => people.refetch()} />}
       {people.isPending && <Loading what="Looking up who works here" />}
       {people.data && (
         <PeopleTable
           people={people.data}
           me={me}
-          onRole={({ id }, role) => update.mutate({ id, change: { role } })}
-          onActive={({ id }, active) => update.mutate({ id, change: { active } })}
-          onInvite={({ id }) => again.mutate(id)}
+          onRole={({ id, name }, role) =>
+            update.mutate({ id, change: { role } }, { onSuccess: () => setSaved(`Saved: ${name} works as ${role}.`) })
+          }
+          onActive={({ id, name }, active) =>
+            update.mutate(
+              { id, change: { active } },
+              {
+                onSuccess: () =>
+                  setSaved(`Saved: ${name} ${active ? 'may sign in again' : 'is disabled and can no longer sign in'}.`),
+              },
+            )
+          }
+          onInvite={({ id, name }) =>
+            again.mutate(id, { onSuccess: () => setSaved(`The invitation of ${name} went out again.`) })
+          }
         />
       )}
     </Page>

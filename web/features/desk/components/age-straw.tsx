@@ -1,6 +1,6 @@
 import { DAY_MS, dayOf, weekdayOf } from '../../../lib/time.ts'
 
-export const AGE_PX = 180
+export const AGE_PX = 110
 const EAR_PX = 20
 /** Older sheets begin at the left edge. */
 const MOST_DAYS = 14
@@ -28,7 +28,7 @@ export function AgeHead({ from, now }: { from: Date; now: Date }) {
       {days.map((day) => {
         const x = placeOf(day.getTime(), from, now)
         const room = placeOf(day.getTime() + DAY_MS, from, now) - x
-        return room > 26 && x < AGE_PX - 60 ? (
+        return room > 26 && x < AGE_PX - 50 ? (
           <text key={day.getTime()} x={x + 3} y="16">
             {weekdayOf(day)}
           </text>

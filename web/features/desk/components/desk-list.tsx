@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react'
 import { Link } from 'react-router-dom'
 import { formatSheetCode } from '../../../../shared/layouts/sheet-code.ts'
 import type { SheetRow } from '../../../../shared/schemas/sheet.ts'
@@ -20,6 +21,11 @@ interface DeskListProps {
 /** Sheets that wait, grouped by why; each with its age as a straw from the day it came to now. */
 export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
   const now = new Date()
+  const table = useRef<HTMLDivElement>(null)
+  // The row's scroll margin keeps it clear of the foot, which lies over the list.
+  useEffect(() => {
+    if (chosen) table.current?.querySelector('tr[aria-current]')?.scrollIntoView({ block: 'nearest' })
+  }, [chosen])
   const rows = groups.flatMap((group) => group.rows)
   const from = ageFrom(
     rows.flatMap((row) => row.arrivedAt ?? []),
@@ -66,16 +72,18 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
     { key: 'why', head: 'why it waits', cell: (row) => <Why row={row} meId={meId} /> },
   ]
   return (
-    <LedgerTable
-      caption="Sheets that wait at the desk, grouped by why they wait"
-      columns={columns}
-      groups={groups.map((group) => ({ key: group.key, says: <GroupSays group={group} />, rows: group.rows }))}
-      rowKey={(row) => row.id}
-      inHand={(row) => row.id === chosen}
-      quiet={withOther}
-      onRow={onOpen}
-      stacked
-    />
+    <div ref={table}>
+      <LedgerTable
+        caption="Sheets that wait at the desk, grouped by why they wait"
+        columns={columns}
+        groups={groups.map((group) => ({ key: group.key, says: <GroupSays group={group} />, rows: group.rows }))}
+        rowKey={(row) => row.id}
+        inHand={(row) => row.id === chosen}
+        quiet={withOther}
+        onRow={onOpen}
+        stacked
+      />
+    </div>
   )
 }
 
