@@ -66,4 +66,5 @@ test('choosing a role changes nothing until it is saved', async () => {
   await user.click(screen.getByRole('button', { name: 'Save: Lene Osk works as analyst' }))
   await waitFor(() => expect(api.writes()).toHaveLength(1))
   expect(api.writes()[0]).toMatchObject({ method: 'PATCH', body: { role: 'analyst' } })
+  expect(await screen.findByText('Saved: Lene Osk works as analyst.')).toHaveProperty('role', 'status')
 })

@@ -11,6 +11,15 @@ export function Loading({ what }: { what: string }) {
   )
 }
 
+/** What was saved just now, for eyes and ears. */
+export function Saved({ says }: { says: string }) {
+  return (
+    <p role="status" className="border-b border-line bg-straw-pale px-margin py-1">
+      {says}
+    </p>
+  )
+}
+
 /** Nothing is here: why, and what to do next. */
 export function EmptyState({ says, next }: { says: string; next?: ReactNode }) {
   return (

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query'
-import { Link, useParams } from 'react-router-dom'
+import { Link, useLocation, useParams } from 'react-router-dom'
+import { z } from 'zod'
 import { findLayout } from '../../../shared/layouts/registry.ts'
 import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
 import { sheetStateSchema } from '../../../shared/schemas/sheet.ts'
@@ -14,13 +15,16 @@ import { STATE_WORDS } from '../../features/sheets/sheet-words.ts'
 import { isNowhere } from '../../lib/api-error.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
-import { dateText, weekdayOf } from '../../lib/time.ts'
+import { dateText, todayText, weekdayOf } from '../../lib/time.ts'
 import { counted } from '../../lib/words.ts'
 import { ButtonLink } from '../../ui/button.tsx'
 import { Glyph } from '../../ui/glyphs.tsx'
 import { Page } from '../../ui/page.tsx'
-import { ErrorState, Loading } from '../../ui/says.tsx'
+import { ErrorState, Loading, Saved } from '../../ui/says.tsx'
 import { NotFound } from './route-error.tsx'
+
+/** What the plan page hands over when it was saved. */
+const savedSchema = z.object({ saved: z.string() })
 
 /** The sheet that planned runs are printed on. */
 const LAYOUT = 'tillage'
@@ -40,7 +44,10 @@ export function Component() {
 function DayPage({ day }: { day: Demonstration }) {
   const me = useMe()
   const withdraw = useWithdrawConsent(day.id)
+  const { state } = useLocation()
+  const arrivedWith = savedSchema.safeParse(state)
   const layout = findLayout(LAYOUT)
+  const mayPrint = me.role !== 'analyst'
   const mayPlan = me.role === 'demonstrator' || me.role === 'admin'
   const runs = day.trials.flatMap((trial) => trial.runs)
   const entered = runs.filter((run) => run.recordNumber !== null).length
@@ -55,23 +62,25 @@ function DayPage({ day }: { day: Demonstration }) {
       sentence={`${day.place.name}, ${weekdayOf(`${day.heldOn}T12:00`)} ${dateText(day.heldOn)}: ${counted(day.trials.length, 'trial')}, ${counted(runs.length, 'run')}, ${entered === 0 ? 'none' : entered} in the book.`}
       aside={mayPlan && <ButtonLink to={paths.editDemonstration.to(day.id)}>Change the plan</ButtonLink>}
     >
+      {withdraw.isSuccess ? (
+        <Saved says="Consent is withdrawn: the farmer is erased here and in the pictures of these sheets." />
+      ) : (
+        arrivedWith.success && <Saved says={arrivedWith.data.saved} />
+      )}
       <div className="grid grid-cols-[minmax(0,8fr)_minmax(0,4fr)] max-lg:grid-cols-1">
         <div className="border-r-[3px] border-double border-line max-lg:border-r-0">
           <TakeAlong
             id={day.id}
             runs={runs.length}
-            toCome={runs.filter((run) => !hasArrived(run)).length}
-            mayPrint={me.role !== 'analyst'}
+            first={day.heldOn >= todayText() && runs.some((run) => !hasArrived(run))}
+            mayPrint={mayPrint}
             layout={LAYOUT}
           />
           <section aria-labelledby="trials" className="pt-2 pb-3">
             <h2 id="trials" className="away">
               Trials and runs
             </h2>
-            <TrialRuns
-              trials={day.trials}
-              links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint: me.role !== 'analyst' }}
-            />
+            <TrialRuns trials={day.trials} links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint }} />
           </section>
           {layout && <CheckList layout={layout} />}
         </div>

@@ -10,6 +10,7 @@ import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
 import { registerQueries } from '../../lib/register-rows.ts'
 import { dateText } from '../../lib/time.ts'
+import { counted } from '../../lib/words.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
 import { EmptyState, ErrorState, Loading } from '../../ui/says.tsx'
@@ -84,11 +85,19 @@ function Planning({ day }: { day: Demonstration | null }) {
           error={save.error}
           saveWords={day ? 'Save the plan' : 'Save the plan and make its sheets'}
           onSave={(plan) =>
-            save.mutate(plan, { onSuccess: ({ id }) => navigate(paths.demonstration.to(id)), onError: () => refresh() })
+            save.mutate(plan, {
+              onSuccess: ({ id, trials }) => navigate(paths.demonstration.to(id), { state: { saved: planSaved(trials) } }),
+              onError: () => refresh(),
+            })
           }
           onLeave={() => navigate(day ? paths.demonstration.to(day.id) : paths.demonstrations.to())}
         />
       )}
     </Page>
   )
+}
+
+function planSaved(trials: Demonstration['trials']): string {
+  const runs = trials.reduce((sum, trial) => sum + trial.runs.length, 0)
+  return `The plan is saved: ${counted(trials.length, 'trial')}, ${counted(runs, 'run')}, each with its own sheet.`
 }

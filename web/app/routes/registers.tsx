@@ -10,7 +10,7 @@ import { paths } from '../../lib/paths.ts'
 import { registerQueries } from '../../lib/register-rows.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
-import { EmptyState, ErrorState, Loading } from '../../ui/says.tsx'
+import { EmptyState, ErrorState, Loading, Saved } from '../../ui/says.tsx'
 
 export function Component() {
   const name = registerNameSchema.safeParse(useParams().name)
@@ -21,6 +21,11 @@ export function Component() {
 function RegisterPage({ name }: { name: RegisterName }) {
   const me = useMe()
   const [open, setOpen] = useState<RegisterRow | 'new' | null>(null)
+  const [saved, setSaved] = useState<string | null>(null)
+  const edit = (row: RegisterRow | 'new') => {
+    setSaved(null)
+    setOpen(row)
+  }
   const rows = useQuery(registerQueries.rows(name))
   const { title, one, says } = REGISTER_WORDS[name]
   const admin = me.role === 'admin'
@@ -29,21 +34,26 @@ function RegisterPage({ name }: { name: RegisterName }) {
       title={title}
       over={<Which />}
       sentence={says}
-      aside={admin && <Button onClick={() => setOpen('new')}>Add a {one}</Button>}
+      aside={admin && <Button onClick={() => edit('new')}>Add a {one}</Button>}
     >
       {open && (
         <RowForm
           key={open === 'new' ? 'new' : open.id}
           register={name}
           row={open === 'new' ? null : open}
-          onDone={() => setOpen(null)}
+          onSaved={(says) => {
+            setSaved(says)
+            setOpen(null)
+          }}
+          onLeave={() => setOpen(null)}
         />
       )}
+      {saved && <Saved says={saved} />}
       {rows.error && <ErrorState error={rows.error} again={() => rows.refetch()} />}
       {rows.isPending && <Loading what={`Opening the register of ${title.toLowerCase()}`} />}
       {rows.data?.length === 0 && <EmptyState says={`No ${one} is registered yet. Sheets name it by its number.`} />}
       {rows.data && rows.data.length > 0 && (
-        <RegisterTable register={name} rows={rows.data as unknown as RegisterRow[]} {...(admin ? { onChange: setOpen } : {})} />
+        <RegisterTable register={name} rows={rows.data as unknown as RegisterRow[]} {...(admin ? { onChange: edit } : {})} />
       )}
     </Page>
   )

@@ -5,8 +5,8 @@ import { counted } from '../../../lib/words.ts'
 interface TakeAlongProps {
   id: string
   runs: number
-  /** Sheets of the plan that have not come in yet. */
-  toCome: number
+  /** The day is to come and sheets are missing: printing them is what to do next. */
+  first: boolean
   mayPrint: boolean
   layout: string
 }
@@ -14,28 +14,35 @@ interface TakeAlongProps {
 const FIRST =
   'mb-1 inline-flex min-h-[48px] items-center bg-ink px-4 text-2 font-[650] text-white no-underline max-sm:w-full max-sm:justify-center'
 
-export function TakeAlong({ id, runs, toCome, mayPrint, layout }: TakeAlongProps) {
+export function TakeAlong({ id, runs, first, mayPrint, layout }: TakeAlongProps) {
+  const print = (
+    <a
+      href={`/api/demonstrations/${id}/sheets.pdf`}
+      target="_blank"
+      rel="noreferrer"
+      className={first ? FIRST : 'word max-sm:min-h-[44px]'}
+    >
+      Print {runs === 1 ? 'the sheet' : `all ${counted(runs, 'sheet')}`}
+    </a>
+  )
   return (
     <section aria-labelledby="take-along" className="px-margin pt-3">
       <h2 id="take-along" className="pb-1 text-2">
         Papers for the day
       </h2>
-      {mayPrint && (
-        <a
-          href={`/api/demonstrations/${id}/sheets.pdf`}
-          target="_blank"
-          rel="noreferrer"
-          className={toCome > 0 ? FIRST : 'word mb-1 inline-block max-sm:min-h-[44px]'}
-        >
-          Print {runs === 1 ? 'the sheet' : `all ${counted(runs, 'sheet')}`}
-        </a>
-      )}
+      {mayPrint && first && <p>{print}</p>}
       <p className="flex flex-wrap gap-x-3 pb-1">
         <span className="label">for a run nobody planned</span>
         <Paper href={`/api/layouts/${layout}/blank.pdf`}>a blank sheet</Paper>
         <Paper href={`/api/layouts/${layout}/form.xlsx`}>spreadsheet form, XLSX</Paper>
         <Paper href={`/api/layouts/${layout}/form.csv`}>CSV</Paper>
       </p>
+      {mayPrint && !first && (
+        <p className="flex flex-wrap gap-x-3 pb-1">
+          <span className="label">the sheets of the plan once more</span>
+          {print}
+        </p>
+      )}
     </section>
   )
 }

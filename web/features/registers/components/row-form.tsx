@@ -11,15 +11,29 @@ import { useSaveRow } from '../registers.queries.ts'
 
 type Row = Record<string, unknown> & { id: string; version: number }
 
+interface RowFormProps {
+  register: RegisterName
+  row: Row | null
+  /** Told what was saved, in words. */
+  onSaved: (says: string) => void
+  onLeave: () => void
+}
+
 /** Adds a row of a register, or changes one. What was typed stays when it is refused. */
-export function RowForm({ register: name, row, onDone }: { register: RegisterName; row: Row | null; onDone: () => void }) {
+export function RowForm({ register: name, row, onSaved, onLeave }: RowFormProps) {
   const resolver = zodResolver(REGISTERS[name].save as never, { error: plainIssue } as never) as unknown as Resolver<
     Record<string, unknown>
   >
   const form = useForm<Record<string, unknown>>({ resolver, defaultValues: row ?? newRow(name) })
   const save = useSaveRow(name)
   const submit = form.handleSubmit((values) =>
-    save.mutate({ id: row?.id ?? null, values: { ...values, ...(row ? { version: row.version } : {}) } }, { onSuccess: onDone }),
+    save.mutate(
+      { id: row?.id ?? null, values: { ...values, ...(row ? { version: row.version } : {}) } },
+      {
+        onSuccess: () =>
+          onSaved(`${row ? 'Saved' : 'Added'}: ${REGISTER_WORDS[name].one} ${String(values.number)}, ${String(values.name)}.`),
+      },
+    ),
   )
   // The form opens above a long table: the cursor goes where the next key belongs.
   const { setFocus } = form
@@ -60,7 +74,7 @@ export function RowForm({ register: name, row, onDone }: { register: RegisterNam
         <Button look="ink" type="submit" disabled={save.isPending}>
           Save
         </Button>
-        <Button look="word" onClick={onDone}>
+        <Button look="word" onClick={onLeave}>
           Leave it
         </Button>
       </div>
