@@ -7,7 +7,9 @@ export function listed(parts: readonly string[]): string {
   return `${parts.slice(0, -1).join(', ')} and ${parts.at(-1)}`
 }
 
-/** 12.1 MB, 340 kB. */
+/** 12.1 MB, 340 kB; only an empty file has 0 kB. */
 export function bytesText(bytes: number): string {
-  return bytes >= 1_000_000 ? `${(bytes / 1_000_000).toFixed(1)} MB` : `${Math.max(1, Math.round(bytes / 1000))} kB`
+  return bytes >= 1_000_000
+    ? `${(bytes / 1_000_000).toFixed(1)} MB`
+    : `${bytes === 0 ? 0 : Math.max(1, Math.round(bytes / 1000))} kB`
 }

@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
 import { Link, useParams } from 'react-router-dom'
-import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import { MySheetDetail } from '../../features/sheets/components/my-sheet-detail.tsx'
+import { sheetName } from '../../features/sheets/sheet-words.ts'
 import { mySheetQueries } from '../../features/sheets/sheets.queries.ts'
 import { ApiError } from '../../lib/api-error.ts'
 import { paths } from '../../lib/paths.ts'
@@ -15,13 +15,13 @@ export function Component() {
   if (sheet.error instanceof ApiError && sheet.error.status === 404) return <NotFound />
   if (sheet.error) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
   if (!sheet.data) return <Loading what="Looking up the sheet" />
-  const { code, tractor, implement, runNumber } = sheet.data
-  const name = code ? formatSheetCode(code) : 'Sheet without a code'
+  const { tractor, implement, runNumber } = sheet.data
+  const name = sheetName(sheet.data)
   const what = [tractor, implement, runNumber ? `run ${runNumber}` : null].filter(Boolean).join(', ')
   return (
     <Page
       title={name}
-      over={<span className="figures">{name}</span>}
+      over={<span className={sheet.data.code ? 'figures' : ''}>{name}</span>}
       sentence={what || name}
       aside={
         <Link className="word" to={paths.mySheets.to()}>

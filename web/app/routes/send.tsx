@@ -1,6 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
 import { Link, useSearchParams } from 'react-router-dom'
 import type { Role } from '../../../shared/schemas/user.ts'
+import { Question } from '../../features/sheets/components/question.tsx'
 import { BeforeYouShoot } from '../../features/uploads/components/before-you-shoot.tsx'
 import { NotYetSentList } from '../../features/uploads/components/not-yet-sent.tsx'
 import { PickFiles } from '../../features/uploads/components/pick-files.tsx'
@@ -23,6 +24,7 @@ export function Component() {
   const shown = justSentFirst(uploads.data ?? [], answers)
   return (
     <Page title="Send sheets" sentence={sentenceFor(me.role, forSheet)}>
+      {forSheet && <Question sheetId={forSheet} />}
       <PickFiles onFiles={(files) => void outbox.add(files, forSheet)} />
       <BeforeYouShoot />
       <NotYetSentList />
@@ -49,6 +51,6 @@ export function Component() {
 }
 
 function sentenceFor(role: Role, forSheet: string | null): string {
-  if (forSheet) return 'Send what answers the sheet that came back.'
+  if (forSheet) return 'Answer the sheet that came back with a new photo.'
   return role === 'demonstrator' ? 'Photograph each sheet before you leave the field.' : 'Send photos, scans or filled forms.'
 }

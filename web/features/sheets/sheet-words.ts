@@ -1,5 +1,7 @@
 /** The states of a sheet as the demonstrator is told them: what it means for the field. */
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { SheetState } from '../../../shared/schemas/sheet.ts'
+import { momentText } from '../../lib/time.ts'
 import type { GlyphName } from '../../ui/glyphs.tsx'
 
 export const STATE_WORDS: Record<SheetState, { glyph: GlyphName; says: string }> = {
@@ -13,6 +15,19 @@ export const STATE_WORDS: Record<SheetState, { glyph: GlyphName; says: string }>
   challenged: { glyph: 'challenged', says: 'challenged' },
   'set aside': { glyph: 'set aside', says: 'set aside' },
   unreadable: { glyph: 'unreadable', says: 'cannot be read' },
+}
+
+interface Named {
+  code: string | null
+  arrivedAt: string | null
+  pages?: ReadonlyArray<{ fileName: string }>
+}
+
+/** What a sheet is called: its code; else the file it came in, where that is known, or when it was sent. */
+export function sheetName({ code, arrivedAt, pages }: Named): string {
+  if (code) return formatSheetCode(code)
+  const told = pages?.at(-1)?.fileName ?? (arrivedAt ? `sent ${momentText(arrivedAt)}` : null)
+  return told ? `sheet without a code, ${told}` : 'sheet without a code'
 }
 
 /** What only the person in the field can answer. */

@@ -1,10 +1,9 @@
 import { Link } from 'react-router-dom'
-import { formatSheetCode } from '../../../../shared/layouts/sheet-code.ts'
 import type { SheetRow } from '../../../../shared/schemas/sheet.ts'
 import { paths } from '../../../lib/paths.ts'
 import { dateText } from '../../../lib/time.ts'
 import { Glyph } from '../../../ui/glyphs.tsx'
-import { STATE_WORDS } from '../sheet-words.ts'
+import { STATE_WORDS, sheetName } from '../sheet-words.ts'
 
 /** Rows for a thumb: what the sheet is of, its state in words, and the reason where it came back. */
 export function MySheetList({ rows }: { rows: readonly SheetRow[] }) {
@@ -16,7 +15,7 @@ export function MySheetList({ rows }: { rows: readonly SheetRow[] }) {
             to={paths.mySheet.to(row.id)}
             className="grid min-h-[64px] gap-x-3 px-margin py-1 no-underline sm:grid-cols-[180px_1fr_1fr]"
           >
-            <span className="figures">{row.code ? formatSheetCode(row.code) : 'without a code'}</span>
+            <span className={row.code ? 'figures' : ''}>{sheetName(row)}</span>
             <span>
               <strong>
                 {[row.tractor, row.implement].filter(Boolean).join(', ') || 'tractor not known yet'}

@@ -37,7 +37,7 @@ function FileOutcome({ upload, sheetLink }: { upload: Upload; sheetLink: SheetLi
   const progress = progressOf(upload)
   return (
     <>
-      {upload.seenBefore && <p>Sent before: it stays one sheet.</p>}
+      {upload.seenBefore && <SentBefore upload={upload} />}
       {progress && upload.pages.length > 1 && <p role="status">{progress}</p>}
       {whole ? (
         <Said outcome={whole} />
@@ -59,6 +59,16 @@ function FileOutcome({ upload, sheetLink }: { upload: Upload; sheetLink: SheetLi
         </ul>
       )}
     </>
+  )
+}
+
+/** The picture the desk already had answers nothing. */
+function SentBefore({ upload }: { upload: Upload }) {
+  if (!upload.pages.some((page) => page.sheet?.state === 'sent back')) return <p>Sent before: it stays one sheet.</p>
+  return (
+    <p role="status" className="border-l-[3px] border-ink pl-1 text-2">
+      Sent before: this picture was already with the sheet and does not answer the question. Take a new photo.
+    </p>
   )
 }
 
