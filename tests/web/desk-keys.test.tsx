@@ -74,7 +74,21 @@ test('Enter settles as proposed and goes on; where ink and sums disagree it take
   await user.keyboard('2')
   await heading('Ready to enter')
   await waitFor(() => expect(settled(api)).toHaveLength(2))
-  expect(settled(api)[1]?.body).toMatchObject({ key: 'depth_cm[5]', how: 'corrected', value: 15, version: 2 })
+  expect(settled(api)[1]?.body).toMatchObject({ key: 'depth_cm[5]', how: 'corrected', value: 15, why: 'by the ink', version: 2 })
+})
+
+test('the value shown, taken by the sums against the ink, is no keeping', async () => {
+  const api = fakeApi()
+  signedIn(api, 'clerk')
+  serve(api, twoDoubts())
+  const user = userEvent.setup()
+  renderApp(`/desk/${SHEET_ID}`)
+  await heading('Depth 4')
+  await user.keyboard('{ArrowDown}')
+  await heading('Depth 5')
+  await user.keyboard('1')
+  await waitFor(() => expect(settled(api)).toHaveLength(1))
+  expect(settled(api)[0]?.body).toMatchObject({ key: 'depth_cm[5]', how: 'corrected', value: 16, why: 'by the sums' })
 })
 
 test('typed digits fill the comb from its right end, and a changed value carries its reason', async () => {
@@ -131,6 +145,82 @@ test('when another clerk wrote first, what they changed is said and what was typ
   await waitFor(() => expect(screen.queryByRole('alert')).toBeNull())
 })
 
+test('when another clerk settled the same value first, theirs stands and nothing is asked', async () => {
+  const api = fakeApi()
+  signedIn(api, 'clerk')
+  serve(api, twoDoubts())
+  const user = userEvent.setup()
+  renderApp(`/desk/${SHEET_ID}`)
+  await heading('Depth 4')
+  const served = twoDoubts()
+  const readings = served.readings.map((r) =>
+    r.key === 'depth_cm[4]' ? { ...r, settlement: 'kept' as const, settledBy: 'R. Imhaut' } : r,
+  )
+  api.on('POST', `/sheets/${SHEET_ID}/settle-reading`, () => {
+    serve(api, { ...served, readings, version: 5 })
+    return refusal(412, 'changed', 'Not saved: R. Imhaut: depth 4: 14.0, kept.')
+  })
+  await user.keyboard('{Enter}')
+  await waitFor(() => expect(settled(api)).toHaveLength(1))
+  await waitFor(() => expect(localStorage.getItem(`sheafbook.desk.${SHEET_ID}`)).toBeNull())
+  expect(screen.queryByRole('button', { name: 'Mine stands' })).toBeNull()
+})
+
+test('a sheet in another hand is only looked at, until it is free', async () => {
+  const api = fakeApi()
+  signedIn(api, 'clerk')
+  const since = new Date(2026, 9, 14, 9, 40).toISOString()
+  const other = { userId: '00000000-0000-4000-8000-0000000000bb', name: 'R. Imhaut', since }
+  serve(api, { ...twoDoubts(), inHand: other })
+  api.on('POST', `/sheets/${SHEET_ID}/take`, () => refusal(409, 'conflict', 'R. Imhaut has this sheet in hand.'))
+  const user = userEvent.setup()
+  renderApp(`/desk/${SHEET_ID}`)
+  await screen.findByText('R. Imhaut has this sheet in hand since 09:40.')
+  await user.keyboard('{Enter}u1s{Shift>}{Enter}{/Shift}')
+  expect(screen.queryByRole('textbox')).toBeNull()
+  const keys = screen.getByRole('list', { name: 'Keys of this page' })
+  expect(keys.textContent).not.toMatch(/unreadable|settle as|send back|undo/)
+  await user.keyboard('{ArrowDown}')
+  await heading('Depth 5')
+  expect(settled(api)).toEqual([])
+
+  api.on('POST', `/sheets/${SHEET_ID}/take`, () => answer(sheetSchema, twoDoubts()))
+  await waitFor(() => expect(screen.queryByText(/has this sheet in hand/)).toBeNull(), { timeout: 8_000 })
+  await user.keyboard('u')
+  await waitFor(() => expect(settled(api)).toHaveLength(1))
+}, 20_000)
+
+test('a digit alone is no reason', async () => {
+  const api = fakeApi()
+  signedIn(api, 'clerk')
+  serve(api, twoDoubts())
+  const user = userEvent.setup()
+  renderApp(`/desk/${SHEET_ID}`)
+  await heading('Depth 4')
+  await user.keyboard('a')
+  await user.type(await screen.findByLabelText(/Why is it set aside/), '1234{Enter}')
+  expect((await screen.findByRole('alert')).textContent).toMatch(/words are needed/)
+  expect(settled(api)).toEqual([])
+})
+
+test('Shift Enter opens the sheet the server names next', async () => {
+  const api = fakeApi()
+  signedIn(api, 'clerk')
+  const next = '00000000-0000-4000-8000-0000000000cc'
+  serve(api, twoDoubts())
+  api.on('POST', `/sheets/${SHEET_ID}/enter`, () => {
+    api.on('GET', `/sheets/${SHEET_ID}`, () => answer(sheetSchema, { ...twoDoubts(), state: 'entered', recordNumber: 7 }))
+    return answer(enteredSchema, { recordNumber: 7, version: 1, next })
+  })
+  const user = userEvent.setup()
+  const { router } = renderApp(`/desk/${SHEET_ID}`)
+  await heading('Depth 4')
+  await user.keyboard('{Enter}b')
+  await screen.findByText(/all saved/)
+  await user.keyboard('{Shift>}{Enter}{/Shift}')
+  await waitFor(() => expect(router.state.location.pathname).toBe(`/desk/${next}`))
+})
+
 test('Shift Enter enters nothing while a doubt is open, and enters the settled sheet', async () => {
   const api = fakeApi()
   signedIn(api, 'clerk')
@@ -144,9 +234,14 @@ test('Shift Enter enters nothing while a doubt is open, and enters the settled s
   await user.keyboard('{Enter}b')
   await heading('Ready to enter')
   await screen.findByText(/all saved/)
+  api.on('GET', `/sheets/${SHEET_ID}`, () =>
+    answer(sheetSchema, { ...twoDoubts(), state: 'entered', recordNumber: 7, version: 9 }),
+  )
   await user.keyboard('{Shift>}{Enter}{/Shift}')
-  await waitFor(() => expect(router.state.location.pathname).toBe('/desk'))
+  await screen.findByText('No other sheet waits at the desk.')
   expect(settled(api).at(-1)).toMatchObject({ path: `/sheets/${SHEET_ID}/enter`, body: { version: 3 } })
+  await user.keyboard('{Enter}')
+  await waitFor(() => expect(router.state.location.pathname).toBe('/desk'))
 })
 
 test('single letters can be switched off', async () => {

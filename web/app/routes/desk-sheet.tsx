@@ -9,6 +9,7 @@ import { PlacePicture } from '../../features/desk/components/place-picture.tsx'
 import { deskQueries, usePlace, useTakeUp } from '../../features/desk/desk.queries.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
+import { useKeys } from '../../lib/use-keys.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
 import { ErrorState, Loading } from '../../ui/says.tsx'
@@ -25,7 +26,7 @@ function DeskSheetPage() {
   const me = useMe()
   const navigate = useNavigate()
   const sheet = useQuery(deskQueries.detail(id))
-  useNextAhead(id, me.id)
+  const next = useNextAhead(id, me.id)
   if (sheet.error && !sheet.data) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
   if (!sheet.data) return <Loading what="Taking the sheet in hand" />
   const { state, layout: key, layoutVersion } = sheet.data
@@ -34,7 +35,7 @@ function DeskSheetPage() {
     return <Loading what="The sheet is being read again by its corners. A few seconds." />
   if (state === 'unreadable' || !layout) return <Placing sheet={sheet.data} />
   if (state === 'sent back' || state === 'set aside' || state === 'entered' || state === 'printed')
-    return <Away sheet={sheet.data} />
+    return <Away sheet={sheet.data} next={next} />
   return (
     <DeskSheet
       key={id}
@@ -46,13 +47,16 @@ function DeskSheetPage() {
           List
         </Link>
       }
-      onLeave={(next) => navigate(next ? paths.deskSheet.to(next) : paths.desk.to())}
+      onLeave={(to) => navigate(to ? paths.deskSheet.to(to) : paths.desk.to())}
+      // With none left it stays: the page says that it is entered.
+      onEntered={(to) => to && navigate(paths.deskSheet.to(to))}
+      next={next}
     />
   )
 }
 
 /** The next sheet is fetched while this one is worked on, so that entering one opens the other at once. */
-function useNextAhead(id: string, meId: string): void {
+function useNextAhead(id: string, meId: string): string | null {
   const cache = useQueryClient()
   const list = useQuery(deskQueries.list())
   // The server names the oldest free one when a sheet is entered.
@@ -60,6 +64,7 @@ function useNextAhead(id: string, meId: string): void {
   useEffect(() => {
     if (next) void cache.prefetchQuery({ ...deskQueries.detail(next), staleTime: 60_000 })
   }, [next, cache])
+  return next ?? null
 }
 
 const nameOf = (sheet: Sheet) => (sheet.code ? formatSheetCode(sheet.code) : 'Sheet without a code')
@@ -81,12 +86,22 @@ const SAID: Partial<Record<Sheet['state'], string>> = {
 }
 
 /** A sheet that is not at the desk: why, and the way back to it. */
-function Away({ sheet }: { sheet: Sheet }) {
+function Away({ sheet, next }: { sheet: Sheet; next: string | null }) {
+  const navigate = useNavigate()
   const takeUp = useTakeUp(sheet.id)
   const reason = sheet.state === 'sent back' ? sheet.sentBackReason : sheet.reason
+  const toList = () => navigate(paths.desk.to())
+  const toNext = next ? () => navigate(paths.deskSheet.to(next)) : null
+  useKeys({ Enter: toList, Escape: toList, ...(toNext ? { n: toNext } : {}) })
+  const keys = [
+    { keys: 'Enter', does: 'back to the list', press: toList },
+    ...(toNext ? [{ keys: 'n', does: 'next sheet', press: toNext }] : []),
+  ]
+  const said = SAID[sheet.state] ?? sheet.state
   return (
-    <Page title={nameOf(sheet)} over={nameOf(sheet)} sentence={SAID[sheet.state] ?? sheet.state} aside={<BackToList />}>
+    <Page title={nameOf(sheet)} over={nameOf(sheet)} sentence={said} aside={<BackToList />} keys={keys}>
       <div className="px-margin py-3">
+        {sheet.state === 'entered' && next === null && <p className="mb-1 text-2">No other sheet waits at the desk.</p>}
         {reason && <p className="text-2 text-pen">“{reason}”</p>}
         {takeUp.error && <ErrorState error={takeUp.error} />}
         <div className="mt-2 flex gap-3">

@@ -4,7 +4,7 @@
  */
 import type { Sheet } from '../../../shared/schemas/sheet.ts'
 import { ApiError, type ApiIssue } from '../../lib/api-error.ts'
-import { bodyOf, type DeskOp, type SettleBody } from './model/desk-op.ts'
+import { bodyOf, type DeskOp, isDoneIn, type SettleBody } from './model/desk-op.ts'
 
 export type Trouble =
   | { kind: 'line'; message: string }
@@ -75,12 +75,19 @@ export function createDeskSaver(ports: SaverPorts) {
     const known = error instanceof ApiError ? error : new ApiError('unknown', 'It could not be saved.')
     if (known.code === 'changed') {
       await ports.reload().catch(() => undefined)
+      const [op] = state.ops
+      const theirs = ports.current()
+      // Both did the same: theirs stands, and there is nothing to ask.
+      if (op && theirs && isDoneIn(op, theirs)) {
+        show({ ops: state.ops.slice(1), trouble: null })
+        return true
+      }
       show({ trouble: { kind: 'changed', message: known.message, issues: known.issues } })
       return false
     }
     if (known.status >= 400 && known.status < 500 && known.code !== 'not_signed_in' && known.code !== 'too_many') {
-      await ports.reload().catch(() => undefined)
       show({ ops: state.ops.slice(1), trouble: { kind: 'refused', message: known.message } })
+      await ports.reload().catch(() => undefined)
       return true
     }
     show({ trouble: { kind: 'line', message: known.message } })

@@ -44,7 +44,8 @@ function useAct<Input, Answer>(act: (input: Input) => Promise<Answer>) {
   const cache = useQueryClient()
   return useMutation({
     mutationFn: act,
-    onSuccess: () => cache.invalidateQueries({ queryKey: deskQueries.all() }),
+    // Not waited for: once this sheet is looked up again its desk is gone, and with it whoever wants to go on from here.
+    onSuccess: () => void cache.invalidateQueries({ queryKey: deskQueries.all() }),
   })
 }
 

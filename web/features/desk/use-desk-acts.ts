@@ -3,11 +3,10 @@ import { isComb, type LayoutCell } from '../../../shared/layouts/layout.ts'
 import type { Value } from '../../../shared/schemas/sheet.ts'
 import { type DeskMode, LOOK } from './desk-mode.ts'
 import { openOf } from './model/desk-items.ts'
-import { type Proposal, proposalOf } from './model/proposal.ts'
+import { type Offer, type Proposal, proposalOf, whyTaken } from './model/proposal.ts'
 import { typedValue } from './model/typed-value.ts'
 import type { Desk } from './use-desk.ts'
 
-const OF_CANDIDATES = 'taken from what the reader allows'
 const KEYED = 'keyed beside the picture'
 
 export type DeskActs = ReturnType<typeof useDeskActs>
@@ -29,18 +28,19 @@ export function useDeskActs(desk: Desk) {
     act()
   }
 
-  const take = (value: Value) => {
-    if (!reading) return
-    if (value === reading.value) doing(() => desk.settle('kept', value))
+  const take = (offer: Offer) => {
+    if (!reading || !proposal || desk.readOnly) return
+    const { value } = offer
+    const why = whyTaken(offer, proposal.offers, reading.value)
+    if (why === null) doing(() => desk.settle('kept', value))
     else if (value === null) doing(() => desk.settle('blank on purpose', null))
-    else doing(() => desk.settle('corrected', value, desk.sheet.origin === 'keyed' ? KEYED : OF_CANDIDATES))
+    else doing(() => desk.settle('corrected', value, desk.sheet.origin === 'keyed' ? KEYED : why))
   }
 
   const asProposed = () => {
-    if (item?.doubt && !desk.key) setMode({ kind: 'let stand' })
+    if (item?.doubt) setMode({ kind: 'let stand' })
     else if (proposal?.split) setSays('The ink and the sums favour different values: Enter takes neither. Choose one.')
-    else if (item?.reading && proposal?.taken) take(proposal.taken.value)
-    else if (item?.doubt) setMode({ kind: 'let stand' })
+    else if (item?.reading && proposal?.taken) take(proposal.taken)
     else if (reading) setSays('No value is proposed here: type it, or mark it unreadable or blank on purpose.')
   }
 
@@ -53,8 +53,20 @@ export function useDeskActs(desk: Desk) {
     else setMode({ kind: 'why', value })
   }
 
+  const types = cell !== null && (isComb(cell) || cell.kind === 'line')
+  const type = (text = '') => types && setMode({ kind: 'type', text, problem: null })
+  const takeNumber = (n: number): boolean => {
+    const offer = proposal?.offers[n - 1]
+    const named = item?.doubt && !desk.key ? item.cells[n - 1] : undefined
+    if (offer) take(offer)
+    else if (named) desk.takeCell(named)
+    return offer !== undefined || named !== undefined
+  }
+
   return {
     mode,
+    /** The cell in hand is one that is typed into. */
+    types,
     setMode,
     says,
     cell,
@@ -62,15 +74,15 @@ export function useDeskActs(desk: Desk) {
     proposal,
     back,
     take,
-    takeNumber: (n: number): boolean => {
-      const offer = proposal?.offers[n - 1]
-      if (offer) take(offer.value)
-      else if (item?.doubt && !desk.key && item.cells[n - 1]) desk.takeCell(item.cells[n - 1] ?? '')
-      else return false
-      return true
-    },
+    takeNumber,
     asProposed,
-    type: (text = '') => cell && (isComb(cell) || cell.kind === 'line') && setMode({ kind: 'type', text, problem: null }),
+    type,
+    /** A digit takes what it numbers, else it begins to type; what it does is in the foot. */
+    digit: (digit: string) => {
+      if (takeNumber(Number(digit))) return
+      if (types) type(digit)
+      else if (cell || item) setSays(`Nothing here has the number ${digit}.`)
+    },
     retype: (text: string) => setMode({ kind: 'type', text, problem: null }),
     typed,
     correct: (value: Value, why: string) => doing(() => desk.settle('corrected', value, why)),

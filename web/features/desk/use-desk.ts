@@ -9,10 +9,13 @@ import { useSaver } from './use-saver.ts'
 export type Desk = ReturnType<typeof useDesk>
 
 /** Which doubt and which cell are in hand, and what can be done with them. */
-export function useDesk(given: Sheet, layout: Layout, me: string) {
-  const { saver, saved } = useSaver(given.id)
+export function useDesk(given: Sheet, layout: Layout, me: string, readOnly: boolean) {
+  const { saver, saved } = useSaver(given.id, !readOnly)
   const sheet = saved.answered && saved.answered.version >= given.version ? saved.answered : given
-  const view = useMemo(() => viewOf(sheet, layout, saved.ops, me), [sheet, layout, saved.ops, me])
+  // What was refused is not shown as settled: it is asked about. Nor is anything of ours while another has the sheet.
+  const refused = saved.trouble?.kind === 'changed'
+  const shown = useMemo(() => (readOnly ? [] : refused ? saved.ops.slice(1) : saved.ops), [readOnly, refused, saved.ops])
+  const view = useMemo(() => viewOf(sheet, layout, shown, me), [sheet, layout, shown, me])
   const items = useMemo(() => itemsOf(view, layout), [view, layout])
   const [chosen, setChosen] = useState<{ itemId: string | null; key: string | null }>({ itemId: null, key: null })
   const done = useRef<DeskOp[]>([])
@@ -39,6 +42,8 @@ export function useDesk(given: Sheet, layout: Layout, me: string) {
   return {
     sheet,
     layout,
+    /** Somebody else has it: it may be looked at. */
+    readOnly,
     view,
     items,
     /** The doubt in hand, or null when a clear cell (or nothing) is. */

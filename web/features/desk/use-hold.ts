@@ -1,36 +1,55 @@
 import { useQueryClient } from '@tanstack/react-query'
 import { useEffect, useState } from 'react'
+import type { Sheet } from '../../../shared/schemas/sheet.ts'
 import { ApiError } from '../../lib/api-error.ts'
+import { clockOf } from '../../lib/time.ts'
 import { deskQueries, letGo, takeInHand } from './desk.queries.ts'
 
 /** The lease is a minute long and renewed twice in it. */
 const RENEW_MS = 30_000
+/** While somebody else has it. */
+const AGAIN_MS = 5_000
 
-/** Takes the sheet in hand while the desk is open. Null while nobody else has it, else who does, in words. */
-export function useHold(sheetId: string, wanted: boolean): string | null {
+/**
+ * Takes the sheet in hand while the desk is open, and keeps asking while somebody else has it. Null while nobody else has it,
+ * else who does, in words: then it may only be looked at.
+ */
+export function useHold(sheet: Sheet, meId: string): string | null {
   const cache = useQueryClient()
-  const [held, setHeld] = useState<string | null>(null)
+  const [refused, setRefused] = useState<string | null>(
+    sheet.inHand && sheet.inHand.userId !== meId ? heldBy(sheet.inHand) : null,
+  )
+  const { id } = sheet
   useEffect(() => {
-    if (!wanted) return
     let open = true
+    let timer: ReturnType<typeof setTimeout> | null = null
+    const { queryKey } = deskQueries.detail(id)
     const take = async () => {
+      let again_ms = RENEW_MS
       try {
-        const sheet = await takeInHand(sheetId)
-        const { queryKey } = deskQueries.detail(sheetId)
+        const taken = await takeInHand(id)
         const known = cache.getQueryData(queryKey)
-        if (open && (!known || sheet.version >= known.version)) cache.setQueryData(queryKey, sheet)
-        if (open) setHeld(null)
+        if (open && (!known || taken.version >= known.version)) cache.setQueryData(queryKey, taken)
+        if (open) setRefused(null)
       } catch (error) {
-        if (open && error instanceof ApiError && error.code === 'conflict') setHeld(error.message)
+        if (error instanceof ApiError && error.code === 'conflict') {
+          again_ms = AGAIN_MS
+          // Who has it, and what they have done meanwhile.
+          if (open) await cache.refetchQueries({ queryKey }).catch(() => undefined)
+          const holder = cache.getQueryData(queryKey)?.inHand
+          if (open) setRefused(holder && holder.userId !== meId ? heldBy(holder) : error.message)
+        }
       }
+      if (open) timer = setTimeout(take, again_ms)
     }
     void take()
-    const timer = setInterval(take, RENEW_MS)
     return () => {
       open = false
-      clearInterval(timer)
-      void letGo(sheetId).catch(() => undefined)
+      if (timer) clearTimeout(timer)
+      void letGo(id).catch(() => undefined)
     }
-  }, [sheetId, wanted, cache])
-  return held
+  }, [id, meId, cache])
+  return refused
 }
+
+const heldBy = ({ name, since }: NonNullable<Sheet['inHand']>) => `${name} has this sheet in hand since ${clockOf(since)}.`

@@ -3,8 +3,8 @@ import { useEffect, useState, useSyncExternalStore } from 'react'
 import { deskQueries, postSettlement } from './desk.queries.ts'
 import { createDeskSaver, type DeskSaver, type SaverState } from './desk-saver.ts'
 
-/** The saver of one sheet; mount the desk with `key={sheetId}`. */
-export function useSaver(sheetId: string): { saver: DeskSaver; saved: SaverState } {
+/** The saver of one sheet; mount the desk with `key={sheetId}`. It sends nothing until it is on. */
+export function useSaver(sheetId: string, on: boolean): { saver: DeskSaver; saved: SaverState } {
   const cache = useQueryClient()
   const [saver] = useState(() => {
     const { queryKey } = deskQueries.detail(sheetId)
@@ -16,6 +16,6 @@ export function useSaver(sheetId: string): { saver: DeskSaver; saved: SaverState
       post: (body) => postSettlement(sheetId, body),
     })
   })
-  useEffect(() => saver.open(), [saver])
+  useEffect(() => (on ? saver.open() : undefined), [saver, on])
   return { saver, saved: useSyncExternalStore(saver.subscribe, saver.state) }
 }

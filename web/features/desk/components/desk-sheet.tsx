@@ -25,13 +25,17 @@ interface DeskSheetProps {
   back: ReactNode
   /** Where to go when the sheet leaves the desk: to the next one, or to the list. */
   onLeave: (next: string | null) => void
+  /** It stands in the trial book; `next` is the sheet the server names. */
+  onEntered: (next: string | null) => void
+  /** The next sheet that waits and is free, for when this one is not. */
+  next: string | null
 }
 
 /** One sheet at the desk. Made for a keyboard and a wide screen; on a narrow one the margin comes first. */
-export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) {
-  const desk = useDesk(sheet, layout, me.name)
+export function DeskSheet({ sheet, layout, me, back, onLeave, onEntered, next }: DeskSheetProps) {
+  const held = useHold(sheet, me.id)
+  const desk = useDesk(sheet, layout, me.name, held !== null)
   const acts = useDeskActs(desk)
-  const held = useHold(sheet.id, true)
   const crop = useRef<HTMLElement>(null)
   const pane = useRef<HTMLElement>(null)
   useAlignedRow({ pane, crop, share: rowInHand(desk) })
@@ -42,9 +46,10 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
   const entering = () => {
     const reason = acts.notYet()
     if (reason) acts.say(reason)
-    else enter.mutate({ version }, { onSuccess: ({ next }) => onLeave(next), onError: (error) => acts.say(error.message) })
+    else enter.mutate({ version }, { onSuccess: (answer) => onEntered(answer.next), onError: (error) => acts.say(error.message) })
   }
-  useKeys(deskKeyMap(desk, acts, { entering, leave: () => onLeave(null) }))
+  const whole = { entering, leave: () => onLeave(null), next: next ? () => onLeave(next) : null }
+  useKeys(deskKeyMap(desk, acts, whole))
 
   // A sheet with several pictures shows the one that holds the ink of the cell in hand.
   const page = sheet.pages.find((p) => p.flattened && p.id === acts.reading?.pageId) ?? sheet.pages.find((p) => p.flattened)
@@ -62,6 +67,7 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
         <div className="min-h-0 max-lg:order-first lg:flex lg:flex-col">
           <Margin
             desk={desk}
+            held={held}
             acts={acts}
             picture={picture}
             crop={crop}
@@ -71,7 +77,7 @@ export function DeskSheet({ sheet, layout, me, back, onLeave }: DeskSheetProps) 
         </div>
       </main>
       <ResultsStrip figures={figures} other={otherFigures(desk, acts)} />
-      <Foot keys={deskFootKeys(desk, acts, entering)} />
+      <Foot keys={deskFootKeys(desk, acts, whole)} />
     </div>
   )
 }

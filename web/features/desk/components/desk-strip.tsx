@@ -23,7 +23,7 @@ export function DeskStrip({ desk, held, back }: { desk: Desk; held: string | nul
       {where && <span>{where}</span>}
       {sheet.demonstrator && <span>from {sheet.demonstrator}</span>}
       <span className="ml-auto flex flex-wrap items-center gap-x-3">
-        {held ? <strong>{held}</strong> : <span>in your hand</span>}
+        <span>{held ? 'only to look at' : 'in your hand'}</span>
         <Tally settled={items.length - open} waiting={open} inHand={open > 0} />
         <span>
           <strong className="figures">{items.length - open}</strong> settled <strong className="figures">{open}</strong> wait

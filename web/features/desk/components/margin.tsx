@@ -14,6 +14,8 @@ import { TroubleNote } from './trouble-note.tsx'
 
 interface MarginProps {
   desk: Desk
+  /** Who else has the sheet, in words; null: it is in this person's hand. */
+  held: string | null
   acts: DeskActs
   picture: string | null
   crop: RefObject<HTMLElement | null>
@@ -24,7 +26,7 @@ interface MarginProps {
 
 /** Beside the sheet: the doubt in hand in one sentence, its ink enlarged, what may be taken, and the other doubts. */
 export function Margin(props: MarginProps) {
-  const { desk, acts, picture, crop } = props
+  const { desk, held, acts, picture, crop } = props
   const { item, items } = desk
   return (
     <section
@@ -32,7 +34,15 @@ export function Margin(props: MarginProps) {
       className="min-h-0 grow overflow-y-auto border-l-[3px] border-double border-line pb-2 max-lg:border-l-0"
     >
       <div className="px-3 pt-2 lg:min-h-[198px]">
+        {held && (
+          <p role="status" className="mb-2 border-l-[3px] border-ink bg-straw-pale py-1 pr-1 pl-2">
+            <strong>{held}</strong> You may look at it; it comes into your hand as soon as it is free.
+          </p>
+        )}
         <TroubleNote desk={desk} />
+        {desk.sheet.state === 'challenged' && desk.sheet.reason && (
+          <p className="mb-2 border-l-[3px] border-ink pl-2">Challenged after it was entered: “{desk.sheet.reason}”</p>
+        )}
         <p className="label flex flex-wrap justify-between gap-x-2">
           <span>
             {item ? (
@@ -59,7 +69,7 @@ export function Margin(props: MarginProps) {
       </div>
       <CropOrOrigin desk={desk} acts={acts} picture={picture} boxRef={crop} />
       <div className="px-3 pt-1">
-        {acts.mode.kind === 'look' ? (
+        {acts.mode.kind === 'look' || (desk.readOnly && acts.mode.kind !== 'find' && acts.mode.kind !== 'keys') ? (
           <>
             {acts.proposal && <OffersTable desk={desk} proposal={acts.proposal} onTake={acts.take} />}
             {item?.doubt && !desk.key && <NamedCells desk={desk} onTake={(n) => acts.takeNumber(n)} />}
@@ -82,12 +92,12 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
       <>
         <h1 className="mt-0.5 text-5 leading-[36px]">{item.label}</h1>
         <p className="mt-0.5 text-2 leading-[27px]">{item.text}</p>
-        {acts.cell && item.doubt && item.cells.length > 1 && (
+        {acts.cell && item.doubt && item.cells.length > 1 && !desk.readOnly && (
           <p className="mt-0.5">
             In hand: <strong>{wordsFor(acts.cell)}</strong>. What is typed here corrects it.
           </p>
         )}
-        {acts.proposal?.split && item.reading && (
+        {acts.proposal?.split && item.reading && !desk.readOnly && (
           <p className="mt-0.5 text-2">The ink favours one value, the sums another. You choose.</p>
         )}
         {item.reading && item.cells.length > 0 && <Letters desk={desk} />}
@@ -101,7 +111,9 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
         <p className="text-2">
           {acts.reading?.value === null && desk.sheet.origin === 'keyed'
             ? 'Key what stands on the paper; b where it is blank there too.'
-            : 'Nobody doubts it. It may be corrected all the same.'}
+            : desk.readOnly
+              ? 'Nobody doubts it.'
+              : 'Nobody doubts it. It may be corrected all the same.'}
         </p>
       </>
     )
@@ -109,8 +121,10 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
   const done = items.length > 0 ? 'Every doubt is settled.' : 'Nothing is in doubt here.'
   return (
     <>
-      <h1 className="mt-0.5 text-5 leading-[36px]">Ready to enter</h1>
-      <p className="text-2">{done} Shift Enter puts it into the trial book.</p>
+      <h1 className="mt-0.5 text-5 leading-[36px]">{desk.readOnly ? 'Nothing is open here' : 'Ready to enter'}</h1>
+      <p className="text-2">
+        {done} {!desk.readOnly && 'Shift Enter puts it into the trial book.'}
+      </p>
     </>
   )
 }
@@ -135,7 +149,7 @@ function NamedCells({ desk, onTake }: { desk: Desk; onTake: (n: number) => void 
       {(desk.item?.cells ?? []).map((key, i) => (
         <li key={key} className="border-b border-feint">
           <button type="button" className="flex min-h-[36px] w-full items-baseline gap-1 text-left" onClick={() => onTake(i + 1)}>
-            {i < 9 && <KeyCap>{i + 1}</KeyCap>}
+            {i < 9 && !desk.readOnly && <KeyCap>{i + 1}</KeyCap>}
             <Letter>{LETTERS[i]}</Letter>
             <CellValue desk={desk} cellKey={key} />
           </button>

@@ -1,5 +1,4 @@
 import { formatValue } from '../../../../shared/layouts/cell-value.ts'
-import type { Value } from '../../../../shared/schemas/sheet.ts'
 import { KeyCap } from '../../../ui/foot.tsx'
 import { judgeWith } from '../model/desk-view.ts'
 import type { Offer, Proposal } from '../model/proposal.ts'
@@ -7,7 +6,7 @@ import { figureText, toldBy } from '../model/strip.ts'
 import type { Desk } from '../use-desk.ts'
 
 /** What may be taken: each with what the ink says, what the sums say, and what it makes of the result. */
-export function OffersTable({ desk, proposal, onTake }: { desk: Desk; proposal: Proposal; onTake: (value: Value) => void }) {
+export function OffersTable({ desk, proposal, onTake }: { desk: Desk; proposal: Proposal; onTake: (offer: Offer) => void }) {
   const { key, layout, view } = desk
   const cell = layout.cells.find((c) => c.key === key)
   if (!cell || !key || proposal.offers.length === 0) return null
@@ -44,13 +43,15 @@ export function OffersTable({ desk, proposal, onTake }: { desk: Desk; proposal: 
       <tbody>
         {proposal.offers.map((offer, i) => (
           <tr key={String(offer.value)} className={`border-b border-feint ${offer === proposal.taken ? 'font-[700]' : ''}`}>
-            <td className="py-0.5">
-              <KeyCap>{i + 1}</KeyCap>
-            </td>
+            <td className="py-0.5">{!desk.readOnly && <KeyCap>{i + 1}</KeyCap>}</td>
             <td>
-              <button type="button" className="figures min-h-[36px] pr-1 text-3" onClick={() => onTake(offer.value)}>
-                {offer.words ?? formatValue(cell, offer.value)}
-              </button>
+              {desk.readOnly ? (
+                <span className="figures text-3">{offer.words ?? formatValue(cell, offer.value)}</span>
+              ) : (
+                <button type="button" className="figures min-h-[36px] pr-1 text-3" onClick={() => onTake(offer)}>
+                  {offer.words ?? formatValue(cell, offer.value)}
+                </button>
+              )}
             </td>
             {rated && (
               <>

@@ -23,8 +23,10 @@ export function ReasonForm({ asks, hint, starts = '', does, least, onReason, onC
     field.current?.select()
   }, [])
   const done = () => {
-    if (reason.trim().length < least) setShort(true)
-    else onReason(reason.trim())
+    // A digit pressed for a cell or an offer that has meanwhile gone is no reason.
+    const words = reason.trim()
+    if (words.length < least || (words !== '' && !/\p{L}/u.test(words))) setShort(true)
+    else onReason(words)
   }
   return (
     <form

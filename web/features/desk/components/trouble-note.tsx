@@ -1,3 +1,4 @@
+import { formatValue } from '../../../../shared/layouts/cell-value.ts'
 import { counted } from '../../../lib/words.ts'
 import { Button } from '../../../ui/button.tsx'
 import type { Desk } from '../use-desk.ts'
@@ -10,9 +11,10 @@ export function TroubleNote({ desk }: { desk: Desk }) {
     return <Note>Not saved yet: {counted(ops.length, 'cell')}. They are kept here and go when the line is back.</Note>
   }
   if (trouble.kind === 'refused') return <Note>{trouble.message}</Note>
+  const mine = mineIn(desk)
   return (
     <Note>
-      {trouble.message} What you typed is kept. Which stands?
+      {trouble.message} Yours is kept{mine && <>: {mine}</>}. Which stands?
       {trouble.issues.length > 1 && (
         <ul>
           {trouble.issues.map((issue) => (
@@ -30,6 +32,15 @@ export function TroubleNote({ desk }: { desk: Desk }) {
       </span>
     </Note>
   )
+}
+
+/** What the refused write was to make of its cell. */
+function mineIn({ saved, layout }: Desk): string | null {
+  const [op] = saved.ops
+  if (op?.kind !== 'settle') return null
+  const cell = layout.cells.find((c) => c.key === op.key)
+  const value = op.how === 'kept' || op.how === 'corrected' ? formatValue(cell, op.value) : op.how
+  return `${cell?.label ?? op.key} ${value}`
 }
 
 const Note = ({ children }: { children: React.ReactNode }) => (

@@ -35,6 +35,17 @@ export function bodyOf(op: DeskOp, sheet: Sheet): SettleBody | null {
   return { path: 'unsettle', json: { version, doubtId: doubt.id } }
 }
 
+/** Whether the sheet already says what an act was to make it say, whoever did it. */
+export function isDoneIn(op: DeskOp, sheet: Sheet): boolean {
+  if (op.kind === 'settle' || op.kind === 'take back') {
+    const reading = sheet.readings.find((r) => r.key === op.key)
+    if (op.kind === 'take back') return reading?.settlement === null
+    return reading !== undefined && reading.settlement !== null && reading.value === op.value
+  }
+  const doubt = sheet.doubts.find((d) => fingerprintOf(doubtAsFinding(d)) === op.fingerprint)
+  return op.kind === 'let stand' ? doubt?.settledBy !== null : doubt?.settledBy === null
+}
+
 /** A doubt of the server as the rule found it, so that both have one fingerprint. */
 export const doubtAsFinding = (doubt: Sheet['doubts'][number]) => ({
   rule: doubt.rule,

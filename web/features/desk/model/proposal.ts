@@ -48,3 +48,19 @@ function best(offers: readonly Offer[], share: (offer: Offer) => number | null):
   const rated = offers.filter((o) => share(o) !== null).sort((a, b) => (share(b) ?? 0) - (share(a) ?? 0))
   return rated[0] ?? null
 }
+
+/** By how much another's share by the ink must be higher before a person is said to have gone against the ink. */
+const CLEARLY = 0.1
+
+/**
+ * Why a person who takes an offer changes what was read; null where they only keep it: the value stands already, and the ink
+ * does not clearly say another.
+ */
+export function whyTaken(offer: Offer, offers: readonly Offer[], value: Value): string | null {
+  const inkBest = best(offers, (o) => o.byInk)
+  const againstInk = (inkBest?.byInk ?? 0) - (offer.byInk ?? 0) > CLEARLY
+  if (offer.value === value && !againstInk) return null
+  if (!againstInk && offer.byInk !== null) return 'by the ink'
+  if (best(offers, (o) => o.withSums)?.value === offer.value) return 'by the sums'
+  return 'taken from what the reader allows'
+}
