@@ -15,8 +15,10 @@ const DAMAGED: Record<ParsedKind, string> = {
   csv: 'This CSV file cannot be taken apart. Nothing was kept. Save it again as CSV in UTF-8 and send that.',
 }
 
+const keptNothing = (reason: string) => (reason.includes('Nothing was kept.') ? reason : `${reason} Nothing was kept.`)
+
 const asAnswer = (reading: SpreadsheetReading): ParserAnswer =>
-  reading.kind === 'blocks' ? reading : { kind: 'refused', reason: `${reading.reason} Nothing was kept.` }
+  reading.kind === 'blocks' ? reading : { kind: 'refused', reason: keptNothing(reading.reason) }
 
 async function parse(kind: ParsedKind, bytes: Buffer): Promise<ParserAnswer> {
   switch (kind) {

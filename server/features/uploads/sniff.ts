@@ -18,25 +18,8 @@ const BY_TYPE: Partial<Record<string, UploadKind>> = {
 /** Zip files start alike; whether one is a workbook is seen in its directory. */
 const ZIP_TYPES = new Set(['zip', 'xlsx', 'xlsm', 'xltx', 'ods', 'odt', 'docx', 'pptx'])
 /** A camera may give no name at all; a name that promises another kind of file is refused. */
-const EXTENSIONS = new Set([
-  '',
-  'jpg',
-  'jpeg',
-  'jpe',
-  'jfif',
-  'png',
-  'webp',
-  'heic',
-  'heif',
-  'hif',
-  'tif',
-  'tiff',
-  'pdf',
-  'xlsx',
-  'csv',
-  'txt',
-  'tsv',
-])
+const PICTURES = ['jpg', 'jpeg', 'jpe', 'jfif', 'png', 'webp', 'heic', 'heif', 'hif', 'tif', 'tiff']
+const EXTENSIONS = new Set(['', ...PICTURES, 'pdf', 'xlsx', 'csv', 'txt', 'tsv'])
 
 /** TIFF 6.0, section 2: byte order and 42. What else a TIFF is stands in its directory, often at its very end. */
 const TIFF = [Buffer.from('II*\0', 'latin1'), Buffer.from('MM\0*', 'latin1')]
@@ -50,7 +33,7 @@ const COMPOUND = [0xd0, 0xcf, 0x11, 0xe0, 0xa1, 0xb1, 0x1a, 0xe1]
 export async function sniffKind(head: Buffer, bytes: number, fileName: string): Promise<UploadKind | Refusal> {
   if (bytes === 0)
     return refuse('The file is empty.', 'Send it again; if it stays empty, take the photo anew or save the form once more.')
-  const extension = /\.([a-z0-9]{1,8})$/i.exec(fileName)?.[1]?.toLowerCase() ?? ''
+  const extension = extensionOf(fileName)
   if (!EXTENSIONS.has(extension)) return refuse(`A file of the kind ".${extension}" is not taken.`, TAKEN)
   if (COMPOUND.every((byte, i) => head[i] === byte)) {
     return refuse(
@@ -65,6 +48,10 @@ export async function sniffKind(head: Buffer, bytes: number, fileName: string): 
   if (ZIP_TYPES.has(type)) return 'xlsx'
   return BY_TYPE[type] ?? refuse(`By its content this file is of the kind "${type}", which is not taken.`, TAKEN)
 }
+
+const extensionOf = (fileName: string) => /\.([a-z0-9]{1,8})$/i.exec(fileName)?.[1]?.toLowerCase() ?? ''
+
+export const isNamedAsPicture = (fileName: string) => PICTURES.includes(extensionOf(fileName))
 
 /** Text has no zero bytes, unless it is UTF-16 and says so. */
 function isText(head: Buffer): boolean {

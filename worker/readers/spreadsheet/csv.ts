@@ -40,7 +40,7 @@ function collect(rows: string[][], headings: Array<ReturnType<typeof parseCsvHea
       block.problems.push(`${run.place} has ${extra.length} values more than the heading has columns: "${extra.join('", "')}".`)
     blocks.push(block)
   }
-  return blocks.length > 0 ? { kind: 'blocks', blocks } : notAForm('It holds no run: nothing is typed below its heading.')
+  return blocks.length > 0 ? { kind: 'blocks', blocks } : BLANK
 }
 
 function toRun(row: string[], headings: Array<ReturnType<typeof parseCsvHeading>>, line: number): RawRun {
@@ -81,6 +81,12 @@ function decode(bytes: Uint8Array): string | null {
   } catch {
     return null
   }
+}
+
+const BLANK: SpreadsheetReading = {
+  kind: 'not a form',
+  reason:
+    'This is our form, but no run is filled in. Nothing was kept. Fill in a row below the heading, one run a row, and send it again.',
 }
 
 const notAForm = (reason: string): SpreadsheetReading => ({

@@ -28,7 +28,7 @@ export async function readXlsx(bytes: Uint8Array): Promise<SpreadsheetReading> {
       `None of its sheets has "${FORM_HEAD.layout}" and "${FORM_HEAD.version}" in column C. Take a fresh form from the layout's page.`,
     )
   }
-  return blocks.length > 0 ? { kind: 'blocks', blocks } : notAForm('It holds no run: nothing is typed from column D on.')
+  return blocks.length > 0 ? { kind: 'blocks', blocks } : BLANK
 }
 
 /** Where each key stands: rows may have been moved or inserted, the keys of column C tell them. */
@@ -94,6 +94,12 @@ function fromValue(value: CellValue): Cell {
     }
   }
   return fromValue(value.result as CellValue)
+}
+
+const BLANK: SpreadsheetReading = {
+  kind: 'not a form',
+  reason:
+    'This is our form, but no run is filled in. Nothing was kept. Fill in a column from D on, one run a column, and send it again.',
 }
 
 const notAForm = (reason: string): SpreadsheetReading => ({
