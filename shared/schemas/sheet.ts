@@ -114,6 +114,8 @@ export const pageSchema = z.object({
   /** Flattened page in layout millimetres (/api/pages/ID/picture), or only the original (/api/pages/ID/original). */
   flattened: z.boolean(),
   takeAgain: z.object({ code: z.string(), advice: z.string() }).nullable(),
+  /** Corners a person set, clockwise from the sheet's upper left, in pixels of the upright picture. */
+  placedCorners: z.array(z.tuple([z.number(), z.number()])).nullable(),
 })
 export type Page = z.infer<typeof pageSchema>
 

@@ -7,16 +7,15 @@ import { listReadings, toReading } from '../repositories/reading.ts'
 import { findSheet } from '../repositories/sheet.ts'
 import { findSheetRow } from './sheet-rows.ts'
 
-export async function findSheetDetail(db: Db, id: string): Promise<{ sheet: Sheet; ownerId: string | null } | null> {
+export async function findSheetDetail(db: Db, id: string): Promise<Sheet | null> {
   const row = await findSheetRow(db, id)
   const entity = await findSheet(db, id)
   if (!row || !entity) return null
   const readings = await listReadings(db, id)
   const doubts = await listDoubts(db, id)
   const names = await namesOf(db, [...readings.map((r) => r.settledBy), ...doubts.map((d) => d.settledBy)])
-  const { ownerId, ...fields } = row
-  const sheet: Sheet = {
-    ...fields,
+  return {
+    ...row,
     layoutVersion: entity.layoutVersion,
     planned: entity.planned,
     pages: await listPages(db, id),
@@ -26,7 +25,6 @@ export async function findSheetDetail(db: Db, id: string): Promise<{ sheet: Shee
     reason: entity.reason,
     history: await historyOf(db, id),
   }
-  return { sheet, ownerId }
 }
 
 export async function namesOf(db: Db, ids: ReadonlyArray<string | null>): Promise<Map<string, string>> {
@@ -39,7 +37,7 @@ export async function namesOf(db: Db, ids: ReadonlyArray<string | null>): Promis
 export async function listPages(db: Db, sheetId: string): Promise<Page[]> {
   return db.query(
     `SELECT p.id, p.number, p.upload_id AS "uploadId", u.file_name AS "fileName", p.picture_key IS NOT NULL AS flattened,
-       p.take_again AS "takeAgain" FROM pages p JOIN uploads u ON u.id = p.upload_id
+       p.take_again AS "takeAgain", nullif(p.placed->'corners', 'null') AS "placedCorners" FROM pages p JOIN uploads u ON u.id = p.upload_id
      WHERE p.sheet_id = $1 ORDER BY u.received_at, p.number`,
     [sheetId],
   )

@@ -1,6 +1,7 @@
 /** Sheets as lists show them: with the names behind their numbers. */
 import type { ListSheets, SheetRow, SheetState } from '../../../shared/schemas/sheet.ts'
 import type { Db } from '../database.ts'
+import { ofPerson } from '../repositories/sheet-people.ts'
 
 interface Row {
   id: string
@@ -25,7 +26,6 @@ interface Row {
   version: number
   sentBackReason: string | null
   answered: boolean
-  ownerId: string | null
 }
 
 /** The number on the sheet wins over the plan: a clerk may have corrected it. */
@@ -34,10 +34,12 @@ const named = (table: string, key: string, alias: string) =>
    LEFT JOIN ${table} ${alias} ON to_jsonb(${alias}.number) = r_${alias}.value`
 
 const SELECT = `
-SELECT s.id, s.code, s.state, s.layout_key AS layout, s.origin, s.arrived_at AS "arrivedAt", s.owner_id AS "ownerId",
+SELECT s.id, s.code, s.state, s.layout_key AS layout, s.origin, s.arrived_at AS "arrivedAt",
   coalesce(d.name, o.name) AS demonstrator, coalesce(p.name, pp.name) AS place, coalesce(t.name, pt.name) AS tractor,
   coalesce(i.name, pi.name) AS implement, coalesce(rd.value #>> '{}', pd.held_on::text) AS "trialDate", run.number AS "runNumber",
-  s.open_doubts AS "openDoubts", s.stops, coalesce(s.first_doubt, s.reason) AS why, s.sent_back_reason AS "sentBackReason", s.answered,
+  s.open_doubts AS "openDoubts", s.stops,
+  CASE WHEN s.state = 'challenged' THEN coalesce(s.reason, s.first_doubt) ELSE coalesce(s.first_doubt, s.reason) END AS why,
+  s.sent_back_reason AS "sentBackReason", s.answered,
   CASE WHEN s.held_until > now() THEN s.held_by END AS "heldBy", h.name AS "heldName", s.held_since AS "heldSince",
   (SELECT max(number) FROM records WHERE sheet_id = s.id) AS "recordNumber", s.version
 FROM sheets s
@@ -55,12 +57,12 @@ const PAGE = 200
 /** Oldest first for the desk, newest first elsewhere; `after` is "arrivedAt|id" of the last row seen. */
 export async function listSheetRows(
   db: Db,
-  filter: ListSheets & { ownerId?: string },
+  filter: ListSheets & { demonstratorId?: string },
 ): Promise<{ rows: SheetRow[]; next: string | null }> {
   const values: unknown[] = []
   const bind = (value: unknown) => `$${values.push(value)}`
   const where = ["s.state <> 'printed'"]
-  if (filter.ownerId) where.push(`s.owner_id = ${bind(filter.ownerId)}`)
+  if (filter.demonstratorId) where.push(ofPerson(bind(filter.demonstratorId)))
   if (filter.state) where.push(`s.state = ${bind(filter.state)}`)
   if (filter.desk) where.push(`s.state = ANY(${bind([...DESK_STATES])})`)
   if (filter.search) {
@@ -83,17 +85,14 @@ export async function listSheetRows(
   }
 }
 
-export async function findSheetRow(
-  db: Db,
-  id: string,
-): Promise<(SheetRow & { ownerId: string | null; sentBackReason: string | null }) | null> {
+export async function findSheetRow(db: Db, id: string): Promise<(SheetRow & { sentBackReason: string | null }) | null> {
   const rows: Row[] = await db.query(`${SELECT} WHERE s.id = $1`, [id])
   const row = rows[0]
-  return row ? { ...toRow(row), ownerId: row.ownerId, sentBackReason: row.sentBackReason } : null
+  return row ? { ...toRow(row), sentBackReason: row.sentBackReason } : null
 }
 
 function toRow(row: Row): SheetRow {
-  const { heldBy, heldName, heldSince, arrivedAt, ownerId: _owner, sentBackReason, ...same } = row
+  const { heldBy, heldName, heldSince, arrivedAt, sentBackReason, ...same } = row
   return {
     ...same,
     why: row.state === 'sent back' ? sentBackReason : row.why,

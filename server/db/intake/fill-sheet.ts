@@ -2,15 +2,16 @@
 import type { Db } from '../database.ts'
 import type { ReadingEntity } from '../entities/reading.ts'
 import type { SheetEntity } from '../entities/sheet.ts'
-import type { PageEntity, UploadEntity } from '../entities/upload.ts'
+import { type PageEntity, PageEntity as Pages, type UploadEntity } from '../entities/upload.ts'
 import { isOpen, listReadings, putReadings, type ReadingRow } from '../repositories/reading.ts'
 import { noteOnSheet } from '../repositories/sheet.ts'
 import { addTrailLine } from '../repositories/trail.ts'
 import type { PageOutcome } from './page-outcome.ts'
 import { planOfRun, planValues } from './plan-of-run.ts'
+import { type OpenDoubts, recheckSheet } from './recheck-sheet.ts'
 
 type ReadPage = Extract<PageOutcome, { kind: 'read' }>
-type Target = Pick<SheetEntity, 'id' | 'state' | 'ownerId' | 'runId'>
+type Target = Pick<SheetEntity, 'id' | 'state' | 'runId'>
 
 export async function fillSheet(db: Db, sheet: Target, page: PageEntity, upload: UploadEntity, read: ReadPage): Promise<string> {
   const plan = sheet.runId ? await planOfRun(db, sheet.runId) : null
@@ -30,15 +31,15 @@ export async function fillSheet(db: Db, sheet: Target, page: PageEntity, upload:
     layoutVersion: read.layoutVersion,
     planned: read.planned,
     origin: read.origin,
-    ownerId: sheet.ownerId ?? plan?.demonstratorId ?? upload.uploadedBy,
     arrivedAt: upload.receivedAt,
     reason: null,
     ...(answer ? { answered: true } : {}),
     ...(read.sheetCode ? { code: read.sheetCode } : {}),
   })
-  const clear = read.readings.filter((r) => r.state === 'clear').length
-  const inDoubt = read.readings.length - clear
-  const text = `read from ${upload.fileName}, page ${page.number}: ${clear} readings clear${inDoubt > 0 ? `, ${inDoubt} in doubt` : ''}`
+  // Before the line in the trail, which tells how many doubts there are.
+  await db.update(Pages, { id: page.id }, { sheetId: sheet.id })
+  const open = await recheckSheet(db, sheet.id)
+  const text = `read from ${upload.fileName}, page ${page.number}: ${countsSaid(read, open)}`
   const details = before.length > 0 ? { before: before.map(({ key, value, origin }) => ({ key, value, origin })) } : {}
   await addTrailLine(db, {
     actor: null,
@@ -50,6 +51,15 @@ export async function fillSheet(db: Db, sheet: Target, page: PageEntity, upload:
   })
   return sheet.id
 }
+
+/** With the rules' own doubts, so that the line agrees with the count the desk shows. */
+function countsSaid(read: ReadPage, open: OpenDoubts): string {
+  const inDoubt = read.readings.filter((r) => open.readings.has(r.key)).length
+  const rules = open.byRules === 0 ? '' : `; the rules add ${counted(open.byRules, 'doubt')}`
+  return `${counted(read.readings.length - inDoubt, 'reading')} clear${inDoubt > 0 ? `, ${inDoubt} in doubt` : ''}${rules}`
+}
+
+const counted = (n: number, noun: string) => `${n} ${noun}${n === 1 ? '' : 's'}`
 
 /** Another picture of the same ink: what was in doubt and is clear in this one is taken from it, nothing else changes. */
 export async function joinSheet(
@@ -63,6 +73,8 @@ export async function joinSheet(
   const open = new Set(['waiting', 'settled'].includes(sheet.state) ? readings.filter(isOpen).map((r) => r.key) : [])
   const better = read.readings.filter((r) => r.state === 'clear' && open.has(r.key))
   await putReadings(db, readRows(sheet.id, page.id, { ...read, readings: better }))
+  await db.update(Pages, { id: page.id }, { sheetId: sheet.id })
+  await recheckSheet(db, sheet.id)
   const text = `${upload.fileName} shows the same ink and joins the sheet; ${better.length} readings in doubt are clear in it`
   await addTrailLine(db, {
     actor: null,

@@ -13,15 +13,27 @@ import { findSheet, noteOnSheet } from '../repositories/sheet.ts'
 import { planFindings } from './plan-findings.ts'
 import { planOfRun } from './plan-of-run.ts'
 import { factsOf, namedOnSheet, registerFindings } from './sheet-facts.ts'
+import { ownerOf } from './sheet-owner.ts'
 
 /** Not "being read": until the page is taken in, what stands there is not what the picture says. */
 const FOLLOWS_DOUBTS: readonly SheetState[] = ['arrived', 'waiting', 'settled']
 
-export async function recheckSheet(db: Db, sheetId: string): Promise<void> {
+export interface OpenDoubts {
+  /** Keys of readings in doubt. */
+  readings: ReadonlySet<string>
+  /** Doubts that rules raised. */
+  byRules: number
+}
+
+const NONE: OpenDoubts = { readings: new Set(), byRules: 0 }
+
+export async function recheckSheet(db: Db, sheetId: string): Promise<OpenDoubts> {
   const sheet = await findSheet(db, sheetId)
   const layout = sheet?.layoutKey ? findLayout(sheet.layoutKey, sheet.layoutVersion ?? undefined) : null
-  if (!sheet || !layout) return
+  if (!sheet || !layout) return NONE
   const readings = await listReadings(db, sheetId)
+  // Not read yet, or not to be read: there is nothing to judge.
+  if (readings.length === 0) return NONE
   const values = valuesOf(readings)
   const named = await namedOnSheet(db, values)
   const facts = await factsOf(db, sheet, values, named)
@@ -40,11 +52,14 @@ export async function recheckSheet(db: Db, sheetId: string): Promise<void> {
   const openDoubts = doubts.length + inDoubt.length
   await noteOnSheet(db, sheetId, {
     facts: { ...facts },
+    ownerId: await ownerOf(db, sheet, readings),
     openDoubts,
     stops: doubts.filter((d) => d.severity === 'stop').length,
-    firstDoubt: doubts[0]?.text ?? firstReason(inDoubt, layout.cells),
+    // What keeps it from being read comes before what was once read.
+    firstDoubt: sheet.state === 'unreadable' ? sheet.reason : (doubts[0]?.text ?? firstReason(inDoubt, layout.cells)),
     ...(FOLLOWS_DOUBTS.includes(sheet.state) ? { state: openDoubts > 0 ? 'waiting' : 'settled' } : {}),
   })
+  return { readings: new Set(inDoubt.map((r) => r.key)), byRules: doubts.length }
 }
 
 /** A sheet whose typed block was recognised is held against its plan as it stands now. */

@@ -2,8 +2,9 @@
  * A page that was read becomes part of a sheet. One transaction, fenced: an attempt that lost its token writes nothing, so a
  * page that was handed out twice is taken in once.
  */
+import { shortReasonOf } from '../../../shared/reading/locate/take-again.ts'
 import type { Db } from '../database.ts'
-import type { SheetEntity } from '../entities/sheet.ts'
+import { type SheetEntity, SheetEntity as Sheets } from '../entities/sheet.ts'
 import type { PageEntity } from '../entities/upload.ts'
 import { PageEntity as Pages, UploadEntity } from '../entities/upload.ts'
 import { listReadings } from '../repositories/reading.ts'
@@ -11,7 +12,6 @@ import { insertSheet, lockSheetsByCode, noteOnSheet, setAsideUnread } from '../r
 import { addTrailLine } from '../repositories/trail.ts'
 import { fillSheet, joinSheet } from './fill-sheet.ts'
 import type { PageOutcome } from './page-outcome.ts'
-import { recheckSheet } from './recheck-sheet.ts'
 import { sameInk } from './same-ink.ts'
 
 type ReadPage = Extract<PageOutcome, { kind: 'read' }>
@@ -45,8 +45,7 @@ export async function takeInPage(db: Db, input: { pageId: string; attemptToken: 
   const upload = await db.findOneOrFail(UploadEntity, { where: { id: page.uploadId } })
   const sheetId =
     outcome.kind === 'read' ? await takeInRead(db, page, upload, outcome) : await takeInUnread(db, page, upload, outcome)
-  await db.update(Pages, { id: pageId }, { sheetId })
-  await recheckSheet(db, sheetId)
+  if (outcome.kind !== 'read') await db.update(Pages, { id: pageId }, { sheetId })
   await closeUpload(db, upload.id)
   return { written: true, sheetId }
 }
@@ -83,13 +82,14 @@ async function takeInRead(db: Db, page: PageEntity, upload: UploadEntity, read: 
     planned: read.planned,
     facts: {},
   })
-  return fillSheet(db, { id, state: 'arrived', ownerId: null, runId: first?.runId ?? null }, page, upload, read)
+  return fillSheet(db, { id, state: 'arrived', runId: first?.runId ?? null }, page, upload, read)
 }
 
 /** A page that a clerk placed by hand, or that is read again, belongs to its sheet already. */
 async function refill(db: Db, sheetId: string, page: PageEntity, read: ReadPage): Promise<string> {
   const upload = await db.findOneOrFail(UploadEntity, { where: { id: page.uploadId } })
-  return fillSheet(db, { id: sheetId, state: 'being read', ownerId: null, runId: null }, page, upload, read)
+  const { runId } = await db.findOneOrFail(Sheets, { where: { id: sheetId } })
+  return fillSheet(db, { id: sheetId, state: 'being read', runId }, page, upload, read)
 }
 
 /** No reading, but nothing is lost: the picture waits at the desk, where a person can place it by hand. */
@@ -99,14 +99,21 @@ async function takeInUnread(
   upload: UploadEntity,
   outcome: Exclude<PageOutcome, ReadPage>,
 ): Promise<string> {
-  const reason = outcome.kind === 'take again' ? outcome.advice : outcome.reason
+  const reason = page.placed ? reasonForDesk(outcome) : outcome.kind === 'take again' ? outcome.advice : outcome.reason
   const code = outcome.kind === 'take again' ? (outcome.sheetCode ?? null) : null
-  const id =
-    page.sheetId ??
-    (await insertSheet(db, { code, state: 'unreadable', facts: {}, ownerId: upload.uploadedBy, origin: originOf(upload) }))
+  const known = code && !page.sheetId ? await lockSheetsByCode(db, code) : []
+  const ownerId = known.find((s) => s.runId !== null)?.ownerId ?? upload.uploadedBy
+  const origin = originOf(upload)
+  const id = page.sheetId ?? (await insertSheet(db, { code, state: 'unreadable', facts: {}, ownerId, origin }))
   await noteOnSheet(db, id, { state: 'unreadable', reason, firstDoubt: reason, arrivedAt: upload.receivedAt })
   await addTrailLine(db, { actor: null, action: outcome.kind, subject: 'sheet', subjectId: id, text: reason })
   return id
+}
+
+/** The advice to whoever holds the phone is of no use to a clerk who has set the corners. */
+function reasonForDesk(outcome: Exclude<PageOutcome, ReadPage>): string {
+  const why = outcome.kind === 'take again' ? shortReasonOf(outcome.code) : null
+  return `It could not be read from these corners${why ? `: ${why}` : ''}. Key it beside the picture, or send it back.`
 }
 
 const originOf = ({ kind }: UploadEntity) => (kind === 'xlsx' || kind === 'csv' ? 'spreadsheet' : 'photo')

@@ -70,7 +70,7 @@ export async function takePage(db: Db, pageId: string): Promise<TakenPage | null
 export interface ShownPage {
   id: string
   uploadedBy: string
-  sheetOwnerId: string | null
+  sheetId: string | null
   fileName: string
   kind: UploadKind
   storageKey: string | null
@@ -79,9 +79,9 @@ export interface ShownPage {
 
 export async function findShownPage(db: Db, pageId: string): Promise<ShownPage | null> {
   const rows: ShownPage[] = await db.query(
-    `SELECT p.id, u.uploaded_by AS "uploadedBy", s.owner_id AS "sheetOwnerId", u.file_name AS "fileName", u.kind,
+    `SELECT p.id, u.uploaded_by AS "uploadedBy", p.sheet_id AS "sheetId", u.file_name AS "fileName", u.kind,
        u.storage_key AS "storageKey", p.picture_key AS "pictureKey"
-     FROM pages p JOIN uploads u ON u.id = p.upload_id LEFT JOIN sheets s ON s.id = p.sheet_id WHERE p.id = $1`,
+     FROM pages p JOIN uploads u ON u.id = p.upload_id WHERE p.id = $1`,
     [pageId],
   )
   return rows[0] ?? null

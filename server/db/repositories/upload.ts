@@ -89,6 +89,7 @@ interface PageRow {
   takeAgain: { code: string; advice: string } | null
   problem: string | null
   sheetId: string | null
+  sheetOwnerId: string | null
   code: string | null
   sheetState: SheetState
   openDoubts: number
@@ -97,8 +98,9 @@ interface PageRow {
 const COLUMNS =
   'id, file_name AS "fileName", kind, bytes, sha256, received_at AS "receivedAt", state, reason, uploaded_by AS "uploadedBy"'
 
-/** An upload as it is answered, and who sent it. */
-export type SentUpload = Upload & { uploadedBy: string }
+type SentPage = Upload['pages'][number] & { sheetOwnerId: string | null }
+/** An upload as it is answered, with who sent it and whose its sheets are. */
+export type SentUpload = Omit<Upload, 'pages'> & { uploadedBy: string; pages: SentPage[] }
 
 /** In the order of `ids`; those that do not exist are left out. */
 export async function listUploadsById(db: Db, ids: readonly string[]): Promise<SentUpload[]> {
@@ -119,7 +121,7 @@ export async function listUploads(db: Db, options: { uploadedBy: string | null; 
 async function withPages(db: Db, uploads: UploadRow[]): Promise<SentUpload[]> {
   const pages: PageRow[] = await db.query(
     `SELECT p.id, p.upload_id AS "uploadId", p.number, p.state, p.take_again AS "takeAgain", p.problem,
-       s.id AS "sheetId", s.code, s.state AS "sheetState", s.open_doubts AS "openDoubts"
+       s.id AS "sheetId", s.owner_id AS "sheetOwnerId", s.code, s.state AS "sheetState", s.open_doubts AS "openDoubts"
      FROM pages p LEFT JOIN sheets s ON s.id = p.sheet_id WHERE p.upload_id = ANY($1) ORDER BY p.number`,
     [uploads.map((upload) => upload.id)],
   )
@@ -132,10 +134,11 @@ async function withPages(db: Db, uploads: UploadRow[]): Promise<SentUpload[]> {
   }))
 }
 
-function toPage(row: PageRow): Upload['pages'][number] {
-  const { id, number, state, takeAgain, problem } = row
+function toPage(row: PageRow): SentPage {
+  const { id, number, state, takeAgain, problem, sheetOwnerId } = row
   return {
     id,
+    sheetOwnerId,
     number,
     state,
     // A page nobody could read has its reason where the advice stands: one place to look for what to do.
@@ -145,12 +148,4 @@ function toPage(row: PageRow): Upload['pages'][number] {
         ? null
         : { id: row.sheetId, code: row.code, state: row.sheetState, openDoubts: Number(row.openDoubts) },
   }
-}
-
-/** Whose sheet a file is to answer; null when there is no such sheet. */
-export async function findSheetOwner(db: Db, sheetId: string): Promise<{ ownerId: string | null } | null> {
-  const rows: Array<{ ownerId: string | null }> = await db.query('SELECT owner_id AS "ownerId" FROM sheets WHERE id = $1', [
-    sheetId,
-  ])
-  return rows[0] ?? null
 }

@@ -7,6 +7,7 @@ import { changesSince, findSheetDetail } from '../../db/desk/sheet-detail.ts'
 import type { SheetEntity } from '../../db/entities/sheet.ts'
 import { recheckSheet } from '../../db/intake/recheck-sheet.ts'
 import { changeSheet, findSheet, noteOnSheet, type SheetChange } from '../../db/repositories/sheet.ts'
+import { isSheetOf } from '../../db/repositories/sheet-people.ts'
 import { addTrailLine, type TrailLine } from '../../db/repositories/trail.ts'
 import type { Deps } from '../../http/route.ts'
 
@@ -53,9 +54,11 @@ async function staleOrMissing(db: Db, id: string, version: number): Promise<User
 
 const missing = () => new UserError('not_found', 'There is no such sheet.')
 
-/** The sheet as this person may see it: a demonstrator only their own; another's does not exist for them. */
+/** The sheet as this person may see it: a demonstrator theirs and those they sent a page of; another's does not exist for them. */
 export async function getSheet(deps: Deps, actor: User, id: string): Promise<Sheet> {
-  const found = await findSheetDetail(deps.source.manager, id)
-  if (!found || (actor.role === 'demonstrator' && found.ownerId !== actor.id)) throw missing()
-  return found.sheet
+  const { manager } = deps.source
+  if (actor.role === 'demonstrator' && !(await isSheetOf(manager, id, actor.id))) throw missing()
+  const found = await findSheetDetail(manager, id)
+  if (!found) throw missing()
+  return found
 }

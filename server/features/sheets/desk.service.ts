@@ -3,6 +3,9 @@
 import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { SendBack, SetAside, Sheet } from '../../../shared/schemas/sheet.ts'
 import type { User } from '../../../shared/schemas/user.ts'
+import type { Db } from '../../db/database.ts'
+import type { SheetEntity } from '../../db/entities/sheet.ts'
+import { senderIdsOf } from '../../db/repositories/sheet-people.ts'
 import { findUser } from '../../db/repositories/user.ts'
 import type { Deps } from '../../http/route.ts'
 import { queueMail } from '../mails/mails.service.ts'
@@ -14,16 +17,17 @@ export async function sendBack(deps: Deps, actor: User, id: string, input: SendB
   await writeOnSheet(
     { deps, actor, id, version: input.version, from: ['waiting', 'settled', 'challenged', 'unreadable'] },
     async (db, sheet) => {
-      const owner = sheet.ownerId ? await findUser(db, sheet.ownerId) : null
+      const people = await peopleToAsk(db, sheet)
       const name = sheet.code ? formatSheetCode(sheet.code) : 'without a code'
-      if (owner) {
+      for (const { email } of people) {
         await queueMail(deps, db, {
-          to: owner.email,
+          to: email,
           subject: `Sheet ${name} comes back to you`,
           text: `${input.reason}\n\nAnswer with a new picture or with what you know, at ${deps.settings.publicUrl}/sheets/${id}\nThe first picture is kept.\n\n${actor.name}`,
         })
       }
-      const text = `sent back${owner ? ` to ${owner.name}` : ''}: “${input.reason}”`
+      const to = people.map((person) => person.name).join(' and ')
+      const text = `sent back${to ? ` to ${to}` : ''}: “${input.reason}”`
       return {
         sheet: { ...LET_GO, state: 'sent back', sentBackReason: input.reason, answered: false },
         trail: { action: 'sent back', text, details: { cells: input.cells } },
@@ -31,6 +35,14 @@ export async function sendBack(deps: Deps, actor: User, id: string, input: SendB
     },
   )
   return getSheet(deps, actor, id)
+}
+
+/** Whose sheet it is, and who sent its latest page: either may hold the paper. */
+async function peopleToAsk(db: Db, sheet: SheetEntity): Promise<User[]> {
+  const [sender] = await senderIdsOf(db, sheet.id)
+  const ids = new Set([sheet.ownerId, sender].filter((id) => typeof id === 'string'))
+  const people = await Promise.all([...ids].map((id) => findUser(db, id)))
+  return people.filter((person) => person !== null)
 }
 
 export async function setAside(deps: Deps, actor: User, id: string, input: SetAside): Promise<Sheet> {

@@ -30,12 +30,12 @@ export const sheetRoutes: Route[] = [
   route({
     method: 'get',
     path: '/sheets',
-    summary: 'Sheets that arrived; a demonstrator sees their own',
+    summary: 'Sheets that arrived; a demonstrator sees their own, and those they sent a page of',
     access: READERS,
     query: listSheetsSchema,
     response: sheetListSchema,
     handle: async ({ deps, actor, query }) => {
-      const own = actor.role === 'demonstrator' ? { ownerId: actor.id } : {}
+      const own = actor.role === 'demonstrator' ? { demonstratorId: actor.id } : {}
       const { rows, next } = await listSheetRows(deps.source.manager, { ...query, ...own })
       return { sheets: rows, next }
     },

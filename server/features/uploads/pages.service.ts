@@ -4,6 +4,7 @@ import { UserError } from '../../../shared/errors.ts'
 import type { UploadKind } from '../../../shared/schemas/upload.ts'
 import type { User } from '../../../shared/schemas/user.ts'
 import { findShownPage, type ShownPage } from '../../db/repositories/page.ts'
+import { isSheetOf } from '../../db/repositories/sheet-people.ts'
 import type { Deps } from '../../http/route.ts'
 import { uprightKey } from '../../storage/upright-key.ts'
 
@@ -18,11 +19,12 @@ const TYPES: Record<UploadKind, string> = {
   csv: 'text/csv; charset=utf-8',
 }
 
-/** @throws UserError not_found, also for a demonstrator who neither sent the file nor owns its sheet */
+/** @throws UserError not_found, also for a demonstrator who neither sent the file nor may open its sheet */
 async function getShownPage(deps: Deps, actor: User, pageId: string): Promise<ShownPage> {
-  const page = await findShownPage(deps.source.manager, pageId)
-  const own = page && (page.uploadedBy === actor.id || page.sheetOwnerId === actor.id)
-  if (page && (actor.role !== 'demonstrator' || own)) return page
+  const { manager } = deps.source
+  const page = await findShownPage(manager, pageId)
+  if (page && (actor.role !== 'demonstrator' || page.uploadedBy === actor.id)) return page
+  if (page?.sheetId && (await isSheetOf(manager, page.sheetId, actor.id))) return page
   throw new UserError('not_found', 'There is no such page.')
 }
 

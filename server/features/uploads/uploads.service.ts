@@ -46,6 +46,7 @@ export async function checkPace(deps: Deps, actor: User): Promise<void> {
  * @throws TransientError when the store or the database cannot take them now: nothing of the file in hand was kept
  */
 export async function takeFiles(deps: Deps, sender: Sender, files: readonly ReceivedFile[]): Promise<Upload[]> {
+  const { actor } = sender
   if (files.length === 0) throw new UserError('invalid', 'There is no file in the request. Put it in the field "files".')
   const outcomes: Array<{ id: string; seenBefore: boolean }> = []
   for (const file of files) outcomes.push(await takeFile(deps, sender, file))
@@ -53,9 +54,10 @@ export async function takeFiles(deps: Deps, sender: Sender, files: readonly Rece
     deps.source.manager,
     outcomes.map(({ id }) => id),
   )
-  return outcomes.flatMap(({ id, seenBefore }) => {
+  return outcomes.flatMap(({ id, seenBefore }, i) => {
     const upload = uploads.find((found) => found.id === id)
-    return upload ? [{ ...toUpload(upload), seenBefore }] : []
+    if (!upload) return []
+    return [mayFollow(actor, upload) ? { ...toUpload(upload, actor), seenBefore } : strangers(upload, files[i]!.fileName)]
   })
 }
 
@@ -110,17 +112,35 @@ const rowOf = ({ actor, forSheetId }: Sender, { fileName, bytes, sha256 }: Recei
   forSheetId,
 })
 
-const toUpload = ({ uploadedBy: _, ...upload }: SentUpload): Upload => upload
+/** A demonstrator follows what they sent; the office follows all. */
+const mayFollow = (actor: User, upload: SentUpload) => actor.role !== 'demonstrator' || upload.uploadedBy === actor.id
+
+/** A sheet is named only to who may open it: a link to it is never dead. */
+const toUpload = ({ uploadedBy, ...upload }: SentUpload, actor: User): Upload => ({
+  ...upload,
+  pages: upload.pages.map(({ sheetOwnerId, sheet, ...page }) => ({
+    ...page,
+    sheet: actor.role !== 'demonstrator' || [uploadedBy, sheetOwnerId].includes(actor.id) ? sheet : null,
+  })),
+})
+
+/** A file somebody else sent before: how far it is, and nothing that is theirs. */
+const strangers = ({ uploadedBy: _, ...upload }: SentUpload, fileName: string): Upload => ({
+  ...upload,
+  fileName,
+  seenBefore: true,
+  pages: upload.pages.map(({ id, number, state }) => ({ id, number, state, takeAgain: null, sheet: null })),
+})
 
 /** Newest first; a demonstrator's own. */
 export async function listSent(deps: Deps, actor: User): Promise<Upload[]> {
   const uploadedBy = actor.role === 'demonstrator' ? actor.id : null
-  return (await listUploads(deps.source.manager, { uploadedBy, limit: LIST_LIMIT })).map(toUpload)
+  return (await listUploads(deps.source.manager, { uploadedBy, limit: LIST_LIMIT })).map((upload) => toUpload(upload, actor))
 }
 
 /** @throws UserError not_found, also for a demonstrator asking for somebody else's */
 export async function getSent(deps: Deps, actor: User, id: string): Promise<Upload> {
   const [upload] = await listUploadsById(deps.source.manager, [id])
-  if (upload && (actor.role !== 'demonstrator' || upload.uploadedBy === actor.id)) return toUpload(upload)
+  if (upload && mayFollow(actor, upload)) return toUpload(upload, actor)
   throw new UserError('not_found', 'There is no such file.')
 }

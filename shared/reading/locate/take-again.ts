@@ -31,6 +31,22 @@ const ADVICE: Record<Exclude<TakeAgainCode, 'corner missing'>, string> = {
   'cannot place': 'The printed boxes could not be found. Lay the sheet flat, without folds, and take it from straight above.',
 }
 
+/** The same for a clerk, as the end of a sentence. */
+const SHORT: Record<TakeAgainCode, string> = {
+  'no sheet': 'no sheet was found in the picture',
+  'corner missing': 'a corner of the sheet is missing or covered',
+  'too blurred': 'the picture is blurred',
+  'too dark': 'the picture is too dark',
+  glare: 'light is mirrored on the paper',
+  'too small': 'the sheet is too small in the picture',
+  'two sheets': 'two sheets are in the picture',
+  'unknown layout': 'this kind of sheet is not known',
+  'cannot place': 'the printed boxes are not where they must be',
+}
+
+/** null for a code that is not one of the reader's own. */
+export const shortReasonOf = (code: string): string | null => (SHORT as Partial<Record<string, string>>)[code] ?? null
+
 export const takeAgain = (code: keyof typeof ADVICE): TakeAgain => ({ code, advice: ADVICE[code] })
 
 /** `corners`: 0 to 3 clockwise from the upper left; `outside`: whether they lie outside the picture, or are covered. */
