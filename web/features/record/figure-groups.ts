@@ -1,7 +1,6 @@
 /** The figures of a run in the order they are read, and those that are missing by their reason. Pure. */
 import type { ResultValue } from '../../../shared/schemas/record.ts'
 import { roundByUncertainty } from '../../../shared/trial/format.ts'
-import { formulaOf } from '../../../shared/trial/formulas.ts'
 import type { ResultKey } from '../../../shared/trial/result.ts'
 
 export const FIGURE_GROUPS: ReadonlyArray<{ says: string; keys: readonly ResultKey[] }> = [
@@ -26,18 +25,6 @@ export function shownFigure(result: ResultValue): { value: string; U: string | n
   if (result.U === null && TWO_FIGURES.test(result.key)) return { value: String(Number(value.toPrecision(2))), U: null }
   return roundByUncertainty(value, result.U)
 }
-
-/** How a figure is computed, in words; where its formula serves several, only what made this one. */
-export function howOf(result: ResultValue): string {
-  const says = formulaOf(result.formula)?.says ?? result.formula
-  const parts = says.split('; ')
-  if (parts.length < 2) return says
-  if (result.key.startsWith('area_')) return parts[areaShape(result.from)] ?? says
-  return parts[result.key.includes('_cv_') ? 2 : result.key.includes('_sd_') ? 1 : 0] ?? says
-}
-
-const areaShape = (from: readonly string[]): number =>
-  from.some((key) => key.startsWith('diag_')) ? 1 : from.includes('pass_count') ? 2 : 0
 
 /** Missing figures that share a reason are told once. */
 export function missingByReason(results: readonly ResultValue[]): Array<{ reason: string; labels: string[] }> {

@@ -1,11 +1,11 @@
 import { useState } from 'react'
 import type { ResultValue } from '../../../../shared/schemas/record.ts'
-import { formulaOf } from '../../../../shared/trial/formulas.ts'
+import { howOf, sourceWords } from '../../../../shared/trial/how.ts'
 import { RESULT_KEYS } from '../../../../shared/trial/result.ts'
 import { counted, listed } from '../../../lib/words.ts'
 import { Ink } from '../../../ui/ink.tsx'
 import { PlusMinus } from '../../../ui/plus-minus.tsx'
-import { FIGURE_GROUPS, howOf, missingByReason, shownFigure } from '../figure-groups.ts'
+import { FIGURE_GROUPS, missingByReason, shownFigure } from '../figure-groups.ts'
 import { byHandCount, pictureOf, type Sources } from '../record-model.ts'
 import { Source } from './source.tsx'
 
@@ -14,8 +14,6 @@ const HEAD = 'label h-[30px] px-1 text-left font-normal'
 /** Every figure of the run with its ±, how it is computed, and the readings it leads back to. */
 export function FiguresTable({ sources }: { sources: Sources }) {
   const { results } = sources.record
-  // Ink stands in the row where there is a picture; else the words that make the figure.
-  const inked = sources.record.pages.some((page) => page.flattened)
   const missing = missingByReason(RESULT_KEYS.flatMap((key) => results[key] ?? []))
   const groups = FIGURE_GROUPS.map(({ says, keys }) => ({
     says,
@@ -31,7 +29,7 @@ export function FiguresTable({ sources }: { sources: Sources }) {
         <thead className="max-sm:hidden">
           <tr className="border-b-[1.5px] border-ink">
             <th scope="col" className={`${HEAD} pl-margin`}>
-              figure
+              figure, and how
             </th>
             <th scope="col" className={`${HEAD} text-right`}>
               value
@@ -42,11 +40,6 @@ export function FiguresTable({ sources }: { sources: Sources }) {
             <th scope="col" className={HEAD}>
               unit
             </th>
-            {!inked && (
-              <th scope="col" className={`${HEAD} max-xl:hidden`}>
-                how
-              </th>
-            )}
             <th scope="col" className={`${HEAD} pr-margin`}>
               leads back to
             </th>
@@ -55,12 +48,12 @@ export function FiguresTable({ sources }: { sources: Sources }) {
         {groups.map(({ says, known }) => (
           <tbody key={says} className="max-sm:block">
             <tr className="border-b border-line max-sm:block">
-              <th scope="rowgroup" colSpan={inked ? 5 : 6} className="px-1 pt-1.5 pb-0.5 pl-margin font-[700] max-sm:block">
+              <th scope="rowgroup" colSpan={5} className="px-1 pt-1.5 pb-0.5 pl-margin font-[700] max-sm:block">
                 {says}
               </th>
             </tr>
             {known.map((result) => (
-              <FigureRow key={result.key} sources={sources} result={result} inked={inked} />
+              <FigureRow key={result.key} sources={sources} result={result} />
             ))}
           </tbody>
         ))}
@@ -82,7 +75,7 @@ export function FiguresTable({ sources }: { sources: Sources }) {
   )
 }
 
-function FigureRow({ sources, result, inked }: { sources: Sources; result: ResultValue; inked: boolean }) {
+function FigureRow({ sources, result }: { sources: Sources; result: ResultValue }) {
   const [open, setOpen] = useState(false)
   const { value, U } = shownFigure(result)
   const keys = result.from.filter((key) => sources.readings.has(key))
@@ -94,16 +87,18 @@ function FigureRow({ sources, result, inked }: { sources: Sources; result: Resul
       >
         <th
           scope="row"
-          className="h-[30px] px-1 pl-margin font-[600] sm:whitespace-nowrap max-sm:h-auto max-sm:basis-full max-sm:p-0"
+          className="h-[30px] px-1 py-0.5 pl-margin leading-[20px] font-[600] max-sm:h-auto max-sm:basis-full max-sm:p-0"
         >
           {result.label}
+          <span className="label block leading-[18px] font-normal" title={formulaWords(result)}>
+            {howOf(result)}
+          </span>
         </th>
         <td className="figures px-1 text-right whitespace-nowrap max-sm:p-0">{value}</td>
         <td className="px-1 whitespace-nowrap max-sm:p-0">
           <PlusMinus U={U} />
         </td>
         <td className="px-1 whitespace-nowrap max-sm:p-0">{result.unit}</td>
-        {!inked && <td className="label px-1 leading-[18px] max-xl:hidden">{howOf(result)}</td>}
         <td className="px-1 pr-margin whitespace-nowrap max-sm:ml-auto max-sm:p-0">
           <span className="flex items-center gap-x-2">
             <button
@@ -122,7 +117,7 @@ function FigureRow({ sources, result, inked }: { sources: Sources; result: Resul
       </tr>
       {open && (
         <tr className="border-b-[1.5px] border-ink bg-straw-pale max-sm:block">
-          <td colSpan={inked ? 5 : 6} className="px-margin py-1 max-sm:block">
+          <td colSpan={5} className="px-margin py-1 max-sm:block">
             <Behind sources={sources} result={result} keys={keys} />
           </td>
         </tr>
@@ -131,17 +126,14 @@ function FigureRow({ sources, result, inked }: { sources: Sources; result: Resul
   )
 }
 
+const formulaWords = ({ formula }: ResultValue): string => `formula ${formula}, from: ${sourceWords(formula)}`
+
 /** How the figure was computed, and each reading it stands on. */
 function Behind({ sources, result, keys }: { sources: Sources; result: ResultValue; keys: readonly string[] }) {
-  const formula = formulaOf(result.formula)
   return (
     <>
       <p>
-        <strong>{result.label}</strong>: {howOf(result)}{' '}
-        <span className="label">
-          ({result.formula}
-          {formula ? `; ${formula.source}` : ''})
-        </span>
+        <strong>{result.label}</strong>: {howOf(result)} <span className="label">({formulaWords(result)})</span>
       </p>
       <ul className="grid grid-cols-2 gap-x-3 max-xl:grid-cols-1">
         {keys.map((key) => (

@@ -13,14 +13,16 @@ export function RecordNotes({ record, layout }: { record: TrialRecord; layout: L
       <ul className="border-t-[1.5px] border-ink">
         {record.notes.map((note) => (
           <li key={note.id} className="border-b border-feint py-0.5">
-            <span className="figures text-[13.5px]">{note.rule}</span> {note.text}
+            {note.text}
             {note.settledBy && (
               <span className="text-pen">
                 {' '}
                 {note.settledBy} let it stand{note.why ? `: “${note.why}”` : ''}.
               </span>
             )}
-            <span className="label block">{note.cells.map((key) => labels.get(key) ?? key).join(', ')}</span>
+            <span className="label block">
+              {[note.cells.map((key) => labels.get(key) ?? key).join(', '), `rule ${note.rule}`].filter(Boolean).join('; ')}
+            </span>
           </li>
         ))}
       </ul>
