@@ -1,12 +1,12 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query'
-import { useEffect } from 'react'
+import { useEffect, useState } from 'react'
 import { Link, useNavigate, useParams } from 'react-router-dom'
 import { findLayout } from '../../../shared/layouts/registry.ts'
 import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { Sheet } from '../../../shared/schemas/sheet.ts'
 import { DeskSheet } from '../../features/desk/components/desk-sheet.tsx'
-import { PlacePicture } from '../../features/desk/components/place-picture.tsx'
-import { deskQueries, usePlace, useTakeUp } from '../../features/desk/desk.queries.ts'
+import { type Placed, PlacePicture } from '../../features/desk/components/place-picture.tsx'
+import { deskQueries, usePlace, useSendBack, useSetAside, useTakeUp } from '../../features/desk/desk.queries.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
 import { useKeys } from '../../lib/use-keys.ts'
@@ -27,13 +27,23 @@ function DeskSheetPage() {
   const navigate = useNavigate()
   const sheet = useQuery(deskQueries.detail(id))
   const next = useNextAhead(id, me.id)
+  // Held here: the page of the picture goes while it is read again.
+  const [placing, setPlacing] = useState<{ id: string; placed: Placed }>({ id, placed: UNPLACED })
   if (sheet.error && !sheet.data) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
   if (!sheet.data) return <Loading what="Taking the sheet in hand" />
   const { state, layout: key, layoutVersion } = sheet.data
   const layout = key ? findLayout(key, layoutVersion ?? undefined) : null
   if (state === 'being read' || state === 'arrived')
     return <Loading what="The sheet is being read again by its corners. A few seconds." />
-  if (state === 'unreadable' || !layout) return <Placing sheet={sheet.data} />
+  if (state === 'unreadable' || !layout)
+    return (
+      <Placing
+        key={id}
+        sheet={sheet.data}
+        placed={placing.id === id ? placing.placed : UNPLACED}
+        onPlaced={(placed) => setPlacing({ id, placed })}
+      />
+    )
   if (state === 'sent back' || state === 'set aside' || state === 'entered' || state === 'printed')
     return <Away sheet={sheet.data} next={next} />
   return (
@@ -69,12 +79,27 @@ function useNextAhead(id: string, meId: string): string | null {
 
 const nameOf = (sheet: Sheet) => (sheet.code ? formatSheetCode(sheet.code) : 'Sheet without a code')
 
-function Placing({ sheet }: { sheet: Sheet }) {
-  const place = usePlace(sheet.id)
+const UNPLACED: Placed = { corners: [], tried: false }
+
+function Placing({ sheet, placed, onPlaced }: { sheet: Sheet; placed: Placed; onPlaced: (placed: Placed) => void }) {
+  const navigate = useNavigate()
+  const { id, version } = sheet
+  const [place, sendBack, setAside] = [usePlace(id), useSendBack(id), useSetAside(id)]
+  const toList = () => navigate(paths.desk.to())
   return (
-    <Page title={nameOf(sheet)} over={nameOf(sheet)} sentence="Where is the sheet in this picture?" aside={<BackToList />}>
-      <PlacePicture sheet={sheet} busy={place.isPending} error={place.error} onPlace={place.mutate} />
-    </Page>
+    <PlacePicture
+      sheet={sheet}
+      name={nameOf(sheet)}
+      aside={<BackToList />}
+      placed={placed}
+      onPlaced={onPlaced}
+      busy={place.isPending}
+      error={place.error ?? sendBack.error ?? setAside.error}
+      onPlace={place.mutate}
+      onSendBack={(reason) => sendBack.mutate({ version, reason, cells: [] }, { onSuccess: toList })}
+      onSetAside={(reason) => setAside.mutate({ version, reason }, { onSuccess: toList })}
+      onLeave={toList}
+    />
   )
 }
 

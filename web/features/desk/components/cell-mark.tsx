@@ -21,7 +21,7 @@ export const CellMark = memo(function CellMark({ cell, reading, values, inBox }:
       {isComb(cell) ? (
         <CombDigits cell={cell} reading={reading} values={values} inBox={inBox} />
       ) : (
-        <TickMarks cell={cell} reading={reading} />
+        <TickMarks cell={cell} reading={reading} inBox={inBox} />
       )}
       <SettledMark reading={reading} bounds={bounds} />
     </g>
@@ -63,25 +63,26 @@ function CombDigits({ cell, reading, values, inBox }: CellMarkProps) {
   )
 }
 
-/** A solid square on the corner of what is taken as ticked. */
-function TickMarks({ cell, reading }: Pick<CellMarkProps, 'cell' | 'reading'>) {
+/** What is taken as ticked: a small leaf in the box's lower right corner, or a whole one where no ink shows the tick. */
+function TickMarks({ cell, reading, inBox }: Pick<CellMarkProps, 'cell' | 'reading' | 'inBox'>) {
+  if (cell.kind === 'signature') return null
   const ticked = boxesOf(cell).filter((box) => (box.option === undefined ? reading.value === true : box.option === reading.value))
   return (
     <>
       {ticked.map((box) => (
-        <rect
-          key={box.x}
-          x={box.x + box.width - 1.5}
-          y={box.y + box.height - 0.8}
-          width="2"
-          height="2"
-          stroke="var(--leaf)"
-          strokeWidth="0.4"
-          paintOrder="stroke"
-        />
+        <path key={`${box.x} ${box.y}`} d={LEAF} transform={leafIn(box, inBox)} opacity={inBox ? 1 : 0.62} />
       ))}
     </>
   )
+}
+
+/** A stalk bent like a tick, with a blade at its long end; one millimetre square. */
+const LEAF = 'M0 0.5L0.34 0.98C0.45 0.66 0.66 0.32 1 0C0.6 0.12 0.36 0.4 0.29 0.7L0.12 0.42Z'
+
+function leafIn(box: { x: number; y: number; width: number; height: number }, whole: boolean): string {
+  const size = whole ? box.width * 0.86 : box.width * 0.5
+  const inset = whole ? (box.width - size) / 2 : 0.15
+  return `translate(${box.x + box.width - size - inset} ${box.y + box.height - size - inset}) scale(${size})`
 }
 
 type Bounds = ReturnType<typeof cellBounds>
@@ -100,8 +101,8 @@ function SettledMark({ reading, bounds }: { reading: Reading; bounds: Bounds }) 
         </g>
       )
     case 'corrected':
-      // Where nothing was read there is nothing to strike out.
-      return reading.readValue === null ? null : (
+      // Where nothing was read, or the same stands, there is nothing to strike out.
+      return reading.readValue === null || reading.readValue === reading.value ? null : (
         <path d={`M${x} ${y + height / 2 + 1}L${right} ${y + height / 2 - 1}`} stroke="var(--pen)" strokeWidth="0.6" />
       )
     case 'unreadable':

@@ -78,26 +78,36 @@ function HandFrame({ cell }: { cell: LayoutCell }) {
   return <rect x={x - 1} y={y - 1} width={width + 2} height={height + 2} fill="none" stroke="var(--ink)" strokeWidth="0.9" />
 }
 
-/** A hatched tab at the left end, numbered in order of work. */
+/** A hatched tab at the left end, numbered in order of work; left of the boxes, so that their label stays readable. */
 function DoubtTab({ item, cells, held }: { item: DeskItem; cells: Cells; held: boolean }) {
   const cell = cells.get(item.reading?.key ?? item.cells[0] ?? '')
   if (!cell || !item.open || (held && item.reading)) return null
   const { x, y, height } = cellBounds(cell)
   const number = String(item.number)
+  const width = 0.9 + number.length * 1.55
+  const middle = y + height / 2
   return (
     <g>
       <rect x={x - 2.6} y={y} width="2.4" height={height} fill="var(--leaf)" />
       <rect x={x - 2.6} y={y} width="2.4" height={height} fill="url(#hatch)" stroke="var(--ink)" strokeWidth="0.3" />
       <rect
-        x={x - 2.6}
-        y={y - 3.6}
-        width={1.6 + number.length * 1.6}
-        height="3.6"
+        x={x - 0.2 - width}
+        y={middle - 1.7}
+        width={width}
+        height="3.4"
         fill="var(--leaf)"
         stroke="var(--ink)"
         strokeWidth="0.3"
       />
-      <text x={x - 1.8} y={y - 0.9} fontSize="2.8" fontWeight="700" className="figures" fill="var(--ink)">
+      <text
+        x={x - 0.2 - width / 2}
+        y={middle + 0.95}
+        fontSize="2.6"
+        fontWeight="700"
+        textAnchor="middle"
+        className="figures"
+        fill="var(--ink)"
+      >
         {number}
       </text>
     </g>
@@ -106,11 +116,14 @@ function DoubtTab({ item, cells, held }: { item: DeskItem; cells: Cells; held: b
 
 function Lettered({ cell, letter }: { cell: LayoutCell; letter: string }) {
   const { x, y, width, height } = cellBounds(cell)
+  const middle = y + height / 2
+  // At the right end; a tick box has its label there, so its letter stands before it.
+  const left = cell.kind === 'tick' ? x - 3.8 : x + width + 0.6
   return (
     <g>
       <rect x={x - 0.6} y={y - 0.6} width={width + 1.2} height={height + 1.2} fill="none" stroke="var(--ink)" strokeWidth="0.5" />
-      <rect x={x + width - 0.6} y={y - 1.2} width="3.2" height="3.6" fill="var(--ink)" />
-      <text x={x + width + 1} y={y + 1.6} fontSize="2.8" fontWeight="700" textAnchor="middle" fill="#fff">
+      <rect x={left} y={middle - 1.8} width="3.2" height="3.6" fill="var(--ink)" />
+      <text x={left + 1.6} y={middle + 1} fontSize="2.8" fontWeight="700" textAnchor="middle" fill="#fff">
         {letter}
       </text>
     </g>
