@@ -1,6 +1,7 @@
 /** Whether a picture is good enough, and if not, which advice helps. */
 import type { Alignment } from './align/align-page.ts'
 import { project } from './geometry/homography.ts'
+import { isBlurred } from './locate/blur.ts'
 import { cornersMissing, type TakeAgain, takeAgain } from './locate/take-again.ts'
 import { type Grey, isInside } from './pixels/grey.ts'
 import { type PaperLevel, paperAt } from './pixels/paper.ts'
@@ -50,8 +51,9 @@ export function judgePlacing({ picture, scale, alignment, corners, pageCorners }
   return takeAgain('cannot place')
 }
 
-/** A picture without any readable code: dark, or simply without a sheet. */
-export function judgeNothingFound(paper: PaperLevel): TakeAgain {
+/** A picture, at half size, without any readable code: dark, blurred, or simply without a sheet. */
+export function judgeNothingFound(half: Grey, paper: PaperLevel): TakeAgain {
   const levels = Array.from(paper.level.data).sort((a, b) => a - b)
-  return takeAgain((levels[Math.floor(levels.length * 0.9)] ?? 0) < DARK_PAPER ? 'too dark' : 'no sheet')
+  if ((levels[Math.floor(levels.length * 0.9)] ?? 0) < DARK_PAPER) return takeAgain('too dark')
+  return takeAgain(isBlurred(half) ? 'too blurred' : 'no sheet')
 }

@@ -68,7 +68,7 @@ export async function readSheet(full: Grey, tools: ReadingTools, facts: Facts = 
   const half = halve(full)
   const outcome = await findSheet(full, half, tools.findCodes, tools.layoutOf)
   watch.lap('locate')
-  if (outcome.kind === 'none') return nothing(judgeNothingFound(paperLevel(half, 16)), watch.ms)
+  if (outcome.kind === 'none') return nothing(judgeNothingFound(half, paperLevel(half, 16)), watch.ms)
   if (outcome.kind !== 'found') return nothing(takeAgain(outcome.kind), watch.ms)
   const { layout, code, corners, homography } = outcome.sheet
   const located: Located = {
