@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { tillage1 } from '../../shared/layouts/tillage-1.ts'
+import { fitValue, type Setting, VALUE_SETTINGS } from './fit-value.ts'
 import { mm, newPage } from './page.ts'
-import { FARMER_LINE, type PrintedPlan, planLines, VALUE_CHARS } from './plan-lines.ts'
+import { FARMER_LINE, type PrintedPlan, planLines } from './plan-lines.ts'
 
 const plan: PrintedPlan = {
   heldOn: '2026-04-09',
@@ -25,6 +26,11 @@ const plan: PrintedPlan = {
   driver: 'S. Dolm',
 }
 
+const page = newPage({ title: '', width_mm: 210, height_mm: 297 })
+const widthOf = (text: string, { face, size }: Setting) => page.font(face).fontSize(size).widthOfString(text) / mm(1)
+/** Labels take 14 mm of a column, and 1 mm stands free before the next. */
+const ROOM_MM = tillage1.planBlock.columnWidth - 15
+
 describe('the typed block', () => {
   it('says what the plan knows, with units', () => {
     expect(planLines(plan).map(({ label, value }) => `${label}: ${value}`)).toEqual([
@@ -43,6 +49,12 @@ describe('the typed block', () => {
     ])
   })
 
+  it('cuts no value of a common length, though it is set narrower for it', () => {
+    const [line] = planLines({ ...plan, implement: { number: 21, name: 'plough, 3 bottoms', ratedWidth_m: 0.9 } }).slice(6)
+    expect(fitValue(line!, ROOM_MM, widthOf).text).toBe('21 plough, 3 bottoms 0.90 m')
+    expect(fitValue({ value: '21 Tarnfold 45' }, ROOM_MM, widthOf).setting).toBe(VALUE_SETTINGS[0])
+  })
+
   it('never runs into the next column, and keeps the number and the unit of a value it cuts', () => {
     const long = 'a name that somebody made very long indeed'
     const lines = planLines({
@@ -56,18 +68,10 @@ describe('the typed block', () => {
       demonstrator: { number: 9999, name: long },
       driver: long,
     })
-    for (const { value } of lines) expect(value.length).toBeLessThanOrEqual(VALUE_CHARS)
-    expect(lines[6]?.value).toMatch(/^9999 .+… 11\.55 m$/)
-  })
-
-  it('fits its column in the face it is printed in', () => {
-    const { columnWidth } = tillage1.planBlock
-    const page = newPage({ title: '', width_mm: 210, height_mm: 297 })
-    // As drawn by the sheet's printer: labels in 6.6 pt, values from 14 mm on in bold 7 pt mono.
-    const value_mm = page.font('mono-bold').fontSize(7).widthOfString('W'.repeat(VALUE_CHARS)) / mm(1)
-    expect(14 + value_mm).toBeLessThan(columnWidth - 1)
-    const labels = planLines({ ...plan, kit: { ...plan.kit, number: 9999 } }).map(({ label }) => label)
-    for (const label of labels) expect(page.font('regular').fontSize(6.6).widthOfString(label) / mm(1), label).toBeLessThan(13.5)
+    const fitted = lines.map((line) => fitValue(line, ROOM_MM, widthOf))
+    for (const { text, setting } of fitted) expect(widthOf(text, setting), text).toBeLessThanOrEqual(ROOM_MM)
+    expect(fitted[6]?.text).toMatch(/^9999 .{8,}… 11\.55 m$/)
+    for (const { label } of lines) expect(widthOf(label, { face: 'regular', size: 6.6 }), label).toBeLessThan(13.5)
   })
 
   it('leaves the farmer out once the name is erased', () => {

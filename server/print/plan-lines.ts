@@ -26,15 +26,12 @@ export interface PrintedPlan {
   driver: string
 }
 
-/** 34 of the 36 mm a value has in 7 pt mono, at 1.56 mm a character: the next column's label begins after it. */
-export const VALUE_CHARS = 22
-
-/** Cuts in the middle of a value, so that number and unit at its ends always stand. */
-function cut(before: string, text: string, after = ''): string {
-  const room = VALUE_CHARS - before.length - after.length
-  const kept = text.length <= room ? text : `${text.slice(0, Math.max(0, room - 1)).trimEnd()}…`
-  return `${before}${kept}${after}`
-}
+/** A line whose number and unit, at the value's ends, stand also where what is between them must be cut. */
+const between = (label: string, before: string, text: string, after = ''): PlanLine => ({
+  label,
+  value: `${before}${text}${after}`,
+  ends: { before, after },
+})
 
 export function planLines(plan: PrintedPlan): PlanLine[] {
   const { place, tractor, implement, kit, demonstrator } = plan
@@ -43,17 +40,17 @@ export function planLines(plan: PrintedPlan): PlanLine[] {
   const tools = [kit.tapeSerial, kit.gaugeSerial].filter(Boolean).join(', ')
   return [
     { label: 'date', value: `${day}-${month}-${year} run ${plan.run}/${plan.runs}` },
-    { label: 'place', value: cut(`${place.number} `, place.name) },
-    { label: 'farmer', value: cut('', plan.farmer ?? '') },
-    { label: 'plot', value: cut('', plan.plot) },
-    { label: 'tractor', value: cut(`${tractor.number} `, tractor.name) },
-    { label: 'engine', value: cut('', `${tractor.ratedPower_kw} kW ${tractor.ratedRpm}/min ${tractor.drive}`) },
-    { label: 'implement', value: cut(`${implement.number} `, implement.name, ` ${implement.ratedWidth_m.toFixed(2)} m`) },
-    { label: 'tyres', value: cut('', tyres) },
+    between('place', `${place.number} `, place.name),
+    { label: 'farmer', value: plan.farmer ?? '' },
+    { label: 'plot', value: plan.plot },
+    between('tractor', `${tractor.number} `, tractor.name),
+    { label: 'engine', value: `${tractor.ratedPower_kw} kW ${tractor.ratedRpm}/min ${tractor.drive}` },
+    between('implement', `${implement.number} `, implement.name, ` ${implement.ratedWidth_m.toFixed(2)} m`),
+    { label: 'tyres', value: tyres },
     { label: `kit ${kit.number}`, value: `jar ${kit.jarCapacity_ml} jug ${kit.jugCapacity_ml} mL` },
-    { label: 'tape, gauge', value: cut('', tools) },
-    { label: 'demonstr.', value: cut(`${demonstrator.number} `, demonstrator.name) },
-    { label: 'driver', value: cut('', plan.driver) },
+    { label: 'tape, gauge', value: tools },
+    between('demonstr.', `${demonstrator.number} `, demonstrator.name),
+    { label: 'driver', value: plan.driver },
   ]
 }
 

@@ -2,6 +2,7 @@
 import { boxesOf, cellBounds, layComb } from '../../shared/layouts/geometry.ts'
 import { type CombCell, isComb, type Layout, type LayoutCell, TICK } from '../../shared/layouts/layout.ts'
 import { formatSheetCode } from '../../shared/layouts/sheet-code.ts'
+import { fitValue, type Setting } from './fit-value.ts'
 import { finish, GREY, INK, mm, newPage, textAt } from './page.ts'
 import { drawFigure, drawMark, drawWriting } from './sheet-decor.ts'
 import { drawCodes, drawComb, drawTick } from './sheet-marks.ts'
@@ -12,6 +13,8 @@ type Pdf = PDFKit.PDFDocument
 export interface PlanLine {
   label: string
   value: string
+  /** What stands at the value's ends even where the rest must be cut. */
+  ends?: { before: string; after: string }
 }
 
 export interface SheetToPrint {
@@ -126,12 +129,18 @@ function drawChoice(pdf: Pdf, cell: Extract<LayoutCell, { kind: 'choice' }>): vo
   if (cell.labelAt === 'above') textAt(pdf, cell.label, x, y - 2.55, { size: 7 })
 }
 
+/** Values of the typed block begin here in their column, and end this far before the next one's labels. */
+const VALUE_AT_MM = 14
+const COLUMN_GAP_MM = 1
+
 function drawPlan(pdf: Pdf, layout: Layout, plan: readonly PlanLine[]): void {
   const { x, y, columnWidth, columns, rows, rowHeight } = layout.planBlock
+  const widthOf = (text: string, { face, size }: Setting) => pdf.font(face).fontSize(size).widthOfString(text) / mm(1)
   plan.slice(0, columns * rows).forEach((line, i) => {
     const left = x + Math.floor(i / rows) * columnWidth
     const base = y + (i % rows) * rowHeight + 2
     textAt(pdf, line.label, left, base, { size: 6.6, color: GREY })
-    textAt(pdf, line.value, left + 14, base, { size: 7, face: 'mono-bold' })
+    const { text, setting } = fitValue(line, columnWidth - VALUE_AT_MM - COLUMN_GAP_MM, widthOf)
+    textAt(pdf, text, left + VALUE_AT_MM, base, setting)
   })
 }
