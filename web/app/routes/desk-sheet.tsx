@@ -28,7 +28,7 @@ function DeskSheetPage() {
   const sheet = useQuery(deskQueries.detail(id))
   const next = useNextAhead(id, me.id)
   // Held here: the page of the picture goes while it is read again.
-  const [placing, setPlacing] = useState<{ id: string; placed: Placed }>({ id, placed: UNPLACED })
+  const [placing, setPlacing] = useState<{ id: string; placed: Placed } | null>(null)
   if (sheet.error && !sheet.data) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
   if (!sheet.data) return <Loading what="Taking the sheet in hand" />
   const { state, layout: key, layoutVersion } = sheet.data
@@ -40,7 +40,7 @@ function DeskSheetPage() {
       <Placing
         key={id}
         sheet={sheet.data}
-        placed={placing.id === id ? placing.placed : UNPLACED}
+        placed={placing?.id === id ? placing.placed : placedOn(sheet.data)}
         onPlaced={(placed) => setPlacing({ id, placed })}
       />
     )
@@ -79,7 +79,11 @@ function useNextAhead(id: string, meId: string): string | null {
 
 const nameOf = (sheet: Sheet) => (sheet.code ? formatSheetCode(sheet.code) : 'Sheet without a code')
 
-const UNPLACED: Placed = { corners: [], tried: false }
+/** The corners a person set before, if it could not be read by them. */
+function placedOn({ pages: [page] }: Sheet): Placed {
+  const corners = page?.placedCorners ?? []
+  return { corners, tried: corners.length > 0 }
+}
 
 function Placing({ sheet, placed, onPlaced }: { sheet: Sheet; placed: Placed; onPlaced: (placed: Placed) => void }) {
   const navigate = useNavigate()

@@ -64,9 +64,9 @@ function askFoot({ mode, back }: DeskActs): FootKey[] {
 
 /** What the digits do with the cell in hand: take an offer, and beyond the offers type. */
 function digitKeys(offers: number, types: boolean, type: () => void): FootKey[] {
-  const taking = offers > 0 ? [{ keys: offers === 1 ? '1' : `1 to ${offers}`, does: 'take one' }] : []
+  const taking = offers > 0 ? [{ keys: offers === 1 ? '1' : `1 to ${offers}`, does: 'take' }] : []
   if (!types) return taking
-  const rest = offers === 0 ? 'F2 or a digit' : offers > 7 ? 'F2' : `F2, or ${offers + 1} to 9`
+  const rest = offers === 0 ? 'F2 or a digit' : offers > 7 ? 'F2' : `F2, ${offers + 1} to 9`
   return [...taking, { keys: rest, does: 'type it', press: type }]
 }
 
@@ -96,7 +96,7 @@ export function deskFootKeys(desk: Desk, acts: DeskActs, whole: WholeActs): Foot
   }
   const taken = proposal?.taken && item?.reading ? formatValue(acts.cell ?? undefined, proposal.taken.value) : null
   return [
-    ...(taken ? [{ keys: 'Enter', does: `settle as ${taken}, next doubt`, press: acts.asProposed }] : []),
+    ...(taken ? [{ keys: 'Enter', does: `settle as ${taken}, next`, press: acts.asProposed }] : []),
     ...(item?.doubt ? [{ keys: 'Enter', does: 'let it stand, with the reason', press: acts.asProposed }] : []),
     ...digitKeys(offers, acts.types, () => acts.type()),
     { keys: 'u', does: 'unreadable', press: acts.unreadable },

@@ -54,7 +54,9 @@ export function DeskList({ groups, chosen, meId, onOpen }: DeskListProps) {
     {
       key: 'what',
       head: 'tractor and implement',
-      cell: (row) => [row.tractor, row.implement].filter(Boolean).join(', ') || 'not known',
+      cell: (row) => (
+        <span className="xl:whitespace-nowrap">{[row.tractor, row.implement].filter(Boolean).join(', ') || 'not known'}</span>
+      ),
     },
     { key: 'place', tight: true, head: 'place', cell: (row) => row.place ?? '' },
     { key: 'from', tight: true, head: 'from', cell: (row) => row.demonstrator ?? '' },
