@@ -41,7 +41,7 @@ describe('the registers', () => {
     expect(stale).toMatchObject({ status: 412, body: { error: { code: 'changed' } } })
     const { message, issues } = (stale.body as { error: { message: string; issues: unknown[] } }).error
     expect(message).toContain(other.user.name)
-    expect(issues).toContainEqual({ path: 'ratedRpm', message: 'now 2300' })
+    expect(issues).toContainEqual({ path: 'ratedRpm', message: 'rated speed is now 2300 r/min' })
     const rows = (await admin.get('/registers/tractors')).body as Tractor[]
     expect(rows.find((tractor) => tractor.id === id)).toMatchObject({ ratedRpm: 2300, tyreRear: row.tyreRear })
   })
@@ -72,6 +72,6 @@ describe('the registers', () => {
     await admin.put(`/registers/implements/${id}`, { ...row, ratedWidth_m: 1.05 })
     const { entries } = (await admin.get('/trail')).body as { entries: { subjectId: string; text: string }[] }
     const [latest] = entries.filter(({ subjectId }) => subjectId === id)
-    expect(latest?.text).toContain('ratedWidth_m 0.9 to 1.05')
+    expect(latest?.text).toContain('rated width 0.9 to 1.05 m')
   })
 })

@@ -12,6 +12,7 @@ import {
 import { findLastActor } from '../../db/repositories/trail.ts'
 import type { Deps } from '../../http/route.ts'
 import { writeTrail } from '../trail/trail.service.ts'
+import { changeWords, type FieldChange, nowWords } from './field-words.ts'
 
 /** What one row of each register is called. */
 const NOUNS: Record<RegisterName, string> = { places: 'place', tractors: 'tractor', implements: 'implement', kits: 'kit' }
@@ -39,14 +40,14 @@ export async function saveInRegister(
     if (!(await changeRegisterRow(db, name, { id, version }, input))) throw await changedMeanwhile(db, before, input)
     const after = await getRegisterRow(db, name, id)
     const changes = differences(before, after)
-    const said = changes.map(({ key, from, to }) => `${key} ${from} to ${to}`).join(', ')
+    const said = changes.map(changeWords).join(', ')
     const text = `${NOUNS[name]} no. ${before.number}, ${before.name}: ${said || 'saved unchanged'}`
     await writeTrail(db, { actor, action: 'change', subject: NOUNS[name], subjectId: id, text, details: { changes } })
     return after
   })
 }
 
-function differences(before: RegisterRow, after: RegisterInput | RegisterRow) {
+function differences(before: RegisterRow, after: RegisterInput | RegisterRow): FieldChange[] {
   const [from, to] = [before as Record<string, unknown>, after as Record<string, unknown>]
   const keys = Object.keys(to).filter((key) => key !== 'version' && from[key] !== to[key])
   return keys.map((key) => ({ key, from: from[key], to: to[key] }))
@@ -54,6 +55,6 @@ function differences(before: RegisterRow, after: RegisterInput | RegisterRow) {
 
 async function changedMeanwhile(db: Db, standing: RegisterRow, input: RegisterInput): Promise<UserError> {
   const who = (await findLastActor(db, standing.id)) ?? 'Somebody'
-  const issues: Issue[] = differences(standing, input).map(({ key, from }) => ({ path: key, message: `now ${from}` }))
+  const issues: Issue[] = differences(standing, input).map((change) => ({ path: change.key, message: nowWords(change) }))
   return new UserError('changed', `${who} changed this row after you loaded it. Yours was not saved.`, { issues })
 }

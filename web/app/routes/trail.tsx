@@ -1,6 +1,7 @@
 import { useInfiniteQuery } from '@tanstack/react-query'
 import type { TrailEntry } from '../../../shared/schemas/trail.ts'
 import { trailQueries } from '../../features/trail/trail.queries.ts'
+import { actWords } from '../../features/trail/trail-words.ts'
 import { momentText } from '../../lib/time.ts'
 import { Button } from '../../ui/button.tsx'
 import { type LedgerColumn, LedgerTable } from '../../ui/ledger-table.tsx'
@@ -16,7 +17,7 @@ const columns: LedgerColumn<TrailEntry>[] = [
     cell: (e) => <span className="figures text-[13.5px] font-normal">{momentText(e.at)}</span>,
   },
   { key: 'who', head: 'who', tight: true, cell: (e) => e.who },
-  { key: 'what', head: 'what', tight: true, cell: (e) => `${e.action}, ${e.subject}` },
+  { key: 'what', head: 'what', tight: true, cell: actWords },
   { key: 'text', head: 'in words', stack: 'lead', cell: (e) => e.text },
 ]
 
