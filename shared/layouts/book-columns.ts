@@ -43,6 +43,25 @@ const RECORD_COLUMNS: BookColumn[] = [
 export const headerOf = (column: Pick<BookColumn, 'name' | 'unit'>) =>
   column.unit ? `${column.name} [${column.unit}]` : column.name
 
+/** A spread and a variation say how readings scatter; they are given without an uncertainty of their own. */
+const hasU = (key: ResultKey): boolean => !/_(sd|cv)_/.test(key)
+
+const figureOf = (key: ResultKey): BookColumn => ({
+  name: key,
+  unit: RESULTS[key].unit,
+  kind: 'number',
+  description: `${RESULTS[key].label}, formula ${RESULTS[key].formula}, not rounded`,
+  source: { from: 'result', key, part: 'value' },
+})
+
+const uncertaintyOf = (key: ResultKey): BookColumn => ({
+  name: `${key}_U`,
+  unit: RESULTS[key].unit,
+  kind: 'number',
+  description: `expanded uncertainty of ${RESULTS[key].label}, k = 2`,
+  source: { from: 'result', key, part: 'U' },
+})
+
 export function bookColumns(layouts: readonly Layout[]): BookColumn[] {
   const readings = new Map<string, BookColumn>()
   for (const layout of layouts) {
@@ -60,21 +79,8 @@ export function bookColumns(layouts: readonly Layout[]): BookColumn[] {
       })
     }
   }
-  const results = (Object.keys(RESULTS) as ResultKey[]).flatMap((key): BookColumn[] => [
-    {
-      name: key,
-      unit: RESULTS[key].unit,
-      kind: 'number',
-      description: `${RESULTS[key].label}, formula ${RESULTS[key].formula}, not rounded`,
-      source: { from: 'result', key, part: 'value' },
-    },
-    {
-      name: `${key}_U`,
-      unit: RESULTS[key].unit,
-      kind: 'number',
-      description: `expanded uncertainty of ${RESULTS[key].label}, k = 2`,
-      source: { from: 'result', key, part: 'U' },
-    },
-  ])
+  const results = (Object.keys(RESULTS) as ResultKey[]).flatMap((key) =>
+    hasU(key) ? [figureOf(key), uncertaintyOf(key)] : [figureOf(key)],
+  )
   return [...RECORD_COLUMNS, ...readings.values(), ...results]
 }

@@ -182,4 +182,9 @@ test('the book downloads as CSV with units in the header, numbers untouched and 
   expect(header).toContain('l_per_ha [L/ha]')
   expect(first).toContain("'=HYPERLINK(1)")
   expect(csv).toContain('14.074074074074')
+  // The code as people see it on the sheet and on every screen.
+  expect(first).toMatch(/,[0-9A-Z]{5}-[0-9A-Z]{5}-[0-9A-Z],/)
+  const dictionary = (await analyst.get('/records/dictionary.csv')).bytes.toString().split('\r\n').slice(1, -1)
+  expect(dictionary.map((line) => line.split(',')[0])).toEqual(header?.split(','))
+  expect(header).not.toMatch(/_(sd|cv)_\w+_U/)
 })

@@ -1,4 +1,5 @@
 /** The book for downloads: one line a record, fetched a few hundred at a time so that memory stays flat. */
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { Value } from '../../../shared/schemas/sheet.ts'
 import type { Db } from '../database.ts'
 import { RecordEntity } from '../entities/record.ts'
@@ -37,7 +38,7 @@ export async function* bookLines(db: Db, filter: RecordFilter): AsyncGenerator<B
           record: row.number,
           version: row.version,
           state: row.state,
-          sheet: row.sheetCode,
+          sheet: row.sheetCode && formatSheetCode(row.sheetCode),
           layout: layouts.get(row.sheetId) ?? null,
           place: row.place.name,
           demonstrator: row.demonstrator.name,

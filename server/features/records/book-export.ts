@@ -50,5 +50,5 @@ const xlsxCell = (value: Value) => (typeof value === 'string' ? safeText(value) 
 
 export const dictionaryRows = (): string[][] => [
   ['column', 'unit', 'type', 'description'],
-  ...columns().map((c) => [c.name, c.unit ?? '', c.kind, c.description]),
+  ...columns().map((c) => [headerOf(c), c.unit ?? '', c.kind, c.description]),
 ]
