@@ -28,12 +28,15 @@ export function deskKeyMap(desk: Desk, acts: DeskActs, whole: WholeActs): KeyMap
     ['b', acts.blank],
     ['k', acts.keep],
     ['s', () => acts.setMode({ kind: 'send back' })],
-    ['a', () => acts.setMode({ kind: 'set aside' })],
+    ['a', () => mayBeSetAside(desk) && acts.setMode({ kind: 'set aside' })],
     ['Ctrl+z', acts.undo],
     ['Escape', goBack],
   ]
   return { ...lookKeys(desk, acts, { ...whole, next: null }), ...digits, ...Object.fromEntries(acted) }
 }
+
+/** A record stands on a challenged sheet: it is entered again or sent back. */
+const mayBeSetAside = (desk: Desk) => desk.sheet.state !== 'challenged'
 
 /** What a sheet may be asked for without changing it. */
 function lookKeys(desk: Desk, acts: DeskActs, { next }: WholeActs): KeyMap {
@@ -80,13 +83,13 @@ export function deskFootKeys(desk: Desk, acts: DeskActs, whole: WholeActs): Foot
   const named = Math.min(9, item?.cells.length ?? 0)
   const always: FootKey[] = [
     { keys: 's', does: 'send back', press: () => acts.setMode({ kind: 'send back' }) },
-    { keys: 'a', does: 'set aside', press: () => acts.setMode({ kind: 'set aside' }) },
+    ...(mayBeSetAside(desk) ? [{ keys: 'a', does: 'set aside', press: () => acts.setMode({ kind: 'set aside' }) }] : []),
     { keys: 'Shift Enter', does: 'enter, next', press: entering },
     { keys: 'Ctrl z', does: 'undo', press: acts.undo },
     { keys: '?', does: 'all keys', press: () => acts.setMode({ kind: 'keys' }) },
   ]
   if (!reading) {
-    if (!item) return always
+    if (!item) return [{ keys: '/', does: 'find a cell', press: () => acts.setMode({ kind: 'find' }) }, ...always]
     return [
       { keys: 'Enter', does: 'let it stand, with the reason', press: acts.asProposed },
       ...(named > 0 ? [{ keys: named === 1 ? '1' : `1 to ${named}`, does: 'take a cell in hand' }] : []),

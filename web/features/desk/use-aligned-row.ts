@@ -18,7 +18,12 @@ export function useAlignedRow({ pane, crop, share }: AlignedRow): void {
   useLayoutEffect(() => {
     const box = pane.current
     const leaf = box?.firstElementChild
-    if (!box || !(leaf instanceof HTMLElement) || share === null) return
+    if (!box || !(leaf instanceof HTMLElement)) return
+    if (share === null) {
+      // Opened with nothing in hand: the head of the sheet, not the room above it.
+      if (box.scrollTop === 0) box.scrollTop = leaf.offsetTop
+      return
+    }
     const align = () => {
       const top = box.getBoundingClientRect().top
       const wanted_px = crop.current ? crop.current.getBoundingClientRect().bottom - top : box.clientHeight / 2

@@ -63,14 +63,23 @@ function CombDigits({ cell, reading, values, inBox }: CellMarkProps) {
   )
 }
 
-/** What is taken as ticked: a small leaf in the box's lower right corner, or a whole one where no ink shows the tick. */
+/** What is taken as ticked: a small leaf on the box's frame, clear of the ink, or a whole one where no ink shows the tick. */
 function TickMarks({ cell, reading, inBox }: Pick<CellMarkProps, 'cell' | 'reading' | 'inBox'>) {
   if (cell.kind === 'signature') return null
   const ticked = boxesOf(cell).filter((box) => (box.option === undefined ? reading.value === true : box.option === reading.value))
   return (
     <>
       {ticked.map((box) => (
-        <path key={`${box.x} ${box.y}`} d={LEAF} transform={leafIn(box, inBox)} opacity={inBox ? 1 : 0.62} />
+        <path
+          key={`${box.x} ${box.y}`}
+          d={LEAF}
+          transform={leafIn(box, inBox)}
+          opacity={inBox ? 1 : 0.8}
+          stroke={inBox ? 'none' : 'var(--leaf)'}
+          strokeWidth="0.4"
+          strokeLinejoin="round"
+          paintOrder="stroke"
+        />
       ))}
     </>
   )
@@ -80,8 +89,8 @@ function TickMarks({ cell, reading, inBox }: Pick<CellMarkProps, 'cell' | 'readi
 const LEAF = 'M0 0.5L0.34 0.98C0.45 0.66 0.66 0.32 1 0C0.6 0.12 0.36 0.4 0.29 0.7L0.12 0.42Z'
 
 function leafIn(box: { x: number; y: number; width: number; height: number }, whole: boolean): string {
-  const size = whole ? box.width * 0.86 : box.width * 0.5
-  const inset = whole ? (box.width - size) / 2 : 0.15
+  const size = whole ? box.width * 0.86 : box.width * 0.46
+  const inset = whole ? (box.width - size) / 2 : -0.5
   return `translate(${box.x + box.width - size - inset} ${box.y + box.height - size - inset}) scale(${size})`
 }
 
