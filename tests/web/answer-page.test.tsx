@@ -9,6 +9,17 @@ import { renderApp, signedIn } from './support/render-app.tsx'
 
 const CODE = '7K4QM2K9TAX'
 const ID = '00000000-0000-4000-8000-000000000001'
+const UPLOAD = {
+  id: ID,
+  fileName: 'old.jpg',
+  kind: 'jpeg' as const,
+  bytes: 4_100_000,
+  sha256: 'a',
+  receivedAt: '2026-10-13T10:16:00.000Z',
+  state: 'done' as const,
+  reason: null,
+  seenBefore: true,
+}
 
 test('who answers sees which sheet it is and what the clerk asks, and that an old picture answers nothing', async () => {
   const api = fakeApi()
@@ -17,15 +28,7 @@ test('who answers sees which sheet it is and what the clerk asks, and that an ol
   api.on('GET', `/sheets/${SHEET_ID}`, () => answer(sheetSchema, buildDeskSheet([], asked)))
   const page = { id: ID, number: 1, state: 'read' as const, takeAgain: null }
   const upload = uploadSchema.parse({
-    id: ID,
-    fileName: 'old.jpg',
-    kind: 'jpeg',
-    bytes: 4_100_000,
-    sha256: 'a',
-    receivedAt: '2026-10-13T10:16:00.000Z',
-    state: 'done',
-    reason: null,
-    seenBefore: true,
+    ...UPLOAD,
     pages: [{ ...page, sheet: { id: SHEET_ID, code: CODE, state: 'sent back', openDoubts: 1 } }],
   })
   api.on('GET', '/uploads', () => answer(uploadListSchema, { uploads: [upload] }))
@@ -35,11 +38,15 @@ test('who answers sees which sheet it is and what the clerk asks, and that an ol
   await screen.findByText(/already with the sheet and does not answer the question/)
 })
 
-test('a sheet without a code is told apart by when it was sent', async () => {
+test('a sheet without a code is told apart by its file, or by when it was sent', async () => {
   const api = fakeApi()
   signedIn(api, 'demonstrator')
   const sheet = buildDeskSheet([], { code: null, state: 'waiting', arrivedAt: new Date(2026, 9, 13, 10, 16).toISOString() })
-  api.on('GET', '/sheets', () => answer(sheetListSchema, { sheets: [sheet], next: null }))
+  api.on('GET', '/sheets', () => answer(sheetListSchema, { sheets: [sheet, { ...sheet, id: ID }], next: null }))
+  const page = { id: ID, number: 1, state: 'read' as const, takeAgain: null }
+  const uploads = [{ ...UPLOAD, pages: [{ ...page, sheet: { id: ID, code: null, state: 'waiting' as const, openDoubts: 1 } }] }]
+  api.on('GET', '/uploads', () => answer(uploadListSchema, { uploads }))
   renderApp('/sheets')
   await screen.findByText(/^sheet without a code, sent .*10:16$/)
+  await screen.findByText('sheet without a code, old.jpg')
 })

@@ -29,13 +29,13 @@ export function Folio({ home, links, children }: FolioProps) {
         <span className="max-sm:away">Sheafbook</span>
       </Link>
       <nav aria-label="Sections" className="order-2 flex max-sm:order-3 max-sm:basis-full">
-        <ul className="flex flex-wrap">
+        <ul className="flex flex-wrap max-sm:-mx-1">
           {links.map(({ to, words }) => (
             <li key={to} className="flex">
               <NavLink
                 to={to}
                 className={({ isActive }) =>
-                  `flex min-h-[42px] items-center border-t-[4px] px-1.5 no-underline ${isActive ? 'border-ink font-[700]' : 'border-transparent'}`
+                  `flex min-h-[42px] items-center border-t-[4px] px-1.5 no-underline max-sm:px-1 ${isActive ? 'border-ink font-[700]' : 'border-transparent'}`
                 }
               >
                 {words}

@@ -16,7 +16,7 @@ export function Component() {
   if (sheet.error) return <ErrorState error={sheet.error} again={() => sheet.refetch()} />
   if (!sheet.data) return <Loading what="Looking up the sheet" />
   const { tractor, implement, runNumber } = sheet.data
-  const name = sheetName(sheet.data)
+  const name = sheetName(sheet.data, sheet.data.pages.at(-1)?.fileName)
   const what = [tractor, implement, runNumber ? `run ${runNumber}` : null].filter(Boolean).join(', ')
   return (
     <Page

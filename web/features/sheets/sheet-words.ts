@@ -20,13 +20,12 @@ export const STATE_WORDS: Record<SheetState, { glyph: GlyphName; says: string }>
 interface Named {
   code: string | null
   arrivedAt: string | null
-  pages?: ReadonlyArray<{ fileName: string }>
 }
 
 /** What a sheet is called: its code; else the file it came in, where that is known, or when it was sent. */
-export function sheetName({ code, arrivedAt, pages }: Named): string {
+export function sheetName({ code, arrivedAt }: Named, fileName?: string): string {
   if (code) return formatSheetCode(code)
-  const told = pages?.at(-1)?.fileName ?? (arrivedAt ? `sent ${momentText(arrivedAt)}` : null)
+  const told = fileName ?? (arrivedAt ? `sent ${momentText(arrivedAt)}` : null)
   return told ? `sheet without a code, ${told}` : 'sheet without a code'
 }
 

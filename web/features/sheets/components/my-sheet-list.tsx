@@ -6,7 +6,7 @@ import { Glyph } from '../../../ui/glyphs.tsx'
 import { STATE_WORDS, sheetName } from '../sheet-words.ts'
 
 /** Rows for a thumb: what the sheet is of, its state in words, and the reason where it came back. */
-export function MySheetList({ rows }: { rows: readonly SheetRow[] }) {
+export function MySheetList({ rows, fileNames }: { rows: readonly SheetRow[]; fileNames: ReadonlyMap<string, string> }) {
   return (
     <ul className="border-t-[1.5px] border-ink">
       {rows.map((row) => (
@@ -15,7 +15,7 @@ export function MySheetList({ rows }: { rows: readonly SheetRow[] }) {
             to={paths.mySheet.to(row.id)}
             className="grid min-h-[64px] gap-x-3 px-margin py-1 no-underline sm:grid-cols-[180px_1fr_1fr]"
           >
-            <span className={row.code ? 'figures' : ''}>{sheetName(row)}</span>
+            <span className={row.code ? 'figures' : ''}>{sheetName(row, fileNames.get(row.id))}</span>
             <span>
               <strong>
                 {[row.tractor, row.implement].filter(Boolean).join(', ') || 'tractor not known yet'}

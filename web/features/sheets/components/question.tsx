@@ -23,7 +23,7 @@ export function Question({ sheetId }: { sheetId: string }) {
     <section aria-label="What is asked" className="border-b border-line bg-straw-pale px-margin py-2">
       <p>
         <Link className="word figures" to={paths.mySheet.to(sheetId)}>
-          {sheetName(sheet.data)}
+          {sheetName(sheet.data, sheet.data.pages.at(-1)?.fileName)}
         </Link>{' '}
         {what}
       </p>
