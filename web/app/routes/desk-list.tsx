@@ -59,7 +59,7 @@ function DeskListPage() {
   return (
     <Page
       title="Desk"
-      sentence={list.data ? sentenceOf(rows, find) : 'The desk'}
+      sentence={list.data ? sentenceOf(rows, list.data.sheets.length) : 'The desk'}
       aside={
         <label className="flex items-center gap-1">
           <span className="label">find</span>
@@ -91,11 +91,11 @@ function DeskListPage() {
       {list.data && rows.length === 0 && (
         <EmptyState
           says={
-            find === ''
+            list.data.sheets.length === 0
               ? 'No sheet waits. What is sent and can be read without a doubt waits here only to be entered.'
               : 'Escape in the box shows all that wait.'
           }
-          next={find === '' ? <ButtonLink to={paths.send.to()}>Send sheets</ButtonLink> : null}
+          next={list.data.sheets.length === 0 ? <ButtonLink to={paths.send.to()}>Send sheets</ButtonLink> : null}
         />
       )}
       {rows.length > 0 && <DeskList groups={groups} chosen={chosen?.id ?? null} meId={me.id} onOpen={open} />}
@@ -107,8 +107,8 @@ const foundIn = (row: SheetRow, find: string) =>
   find === '' ||
   [row.code, row.place, row.tractor, row.implement, row.demonstrator].some((text) => plain(text).includes(plain(find)))
 
-function sentenceOf(rows: readonly SheetRow[], find: string): string {
-  if (rows.length === 0 && find !== '') return 'No sheet at the desk fits that.'
+function sentenceOf(rows: readonly SheetRow[], waiting: number): string {
+  if (rows.length === 0 && waiting > 0) return 'No sheet at the desk fits that.'
   const [oldest] = [...rows].filter((row) => row.arrivedAt).sort((a, b) => (a.arrivedAt ?? '').localeCompare(b.arrivedAt ?? ''))
   if (rows.length === 0 || !oldest?.arrivedAt) return 'Nothing waits at the desk.'
   const doubts = rows.reduce((sum, row) => sum + row.openDoubts, 0)
