@@ -28,7 +28,7 @@ test('a refused sign-in says why and keeps what was typed; the next one goes bac
     return answer(sessionSchema, { user: buildPerson('clerk') })
   })
   await user.click(screen.getByRole('button', { name: 'Open the book' }))
-  await screen.findByRole('heading', { name: 'No sheet at the desk fits that.' })
+  await screen.findByRole('heading', { name: 'Nothing waits at the desk.' })
   expect(router.state.location.pathname + router.state.location.search).toBe('/desk?find=7K')
 })
 
