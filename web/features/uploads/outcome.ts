@@ -48,6 +48,8 @@ function doubtsSaid({ sheet }: UploadPage): string {
   if (!sheet) return 'It is kept.'
   if (sheet.state === 'set aside') return 'It joined a sheet that was here before.'
   if (sheet.state === 'entered') return 'The sheet is entered.'
+  if (sheet.state === 'sent back') return 'The desk has sent the sheet back with a question. Answer it before you leave.'
+  if (sheet.state === 'challenged') return 'The record was challenged; the sheet is at the desk again.'
   if (sheet.openDoubts === 0) return 'No doubts. You can leave.'
   return `${counted(sheet.openDoubts, 'doubt')} ${sheet.openDoubts === 1 ? 'goes' : 'go'} to the desk. You can leave.`
 }
