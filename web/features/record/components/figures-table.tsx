@@ -100,7 +100,7 @@ function FigureRow({ sources, result }: { sources: Sources; result: ResultValue 
         </td>
         <td className="px-1 whitespace-nowrap max-sm:p-0">{result.unit}</td>
         <td className="px-1 pr-margin whitespace-nowrap max-sm:ml-auto max-sm:p-0">
-          <span className="flex items-center gap-x-2">
+          <span className="flex flex-wrap items-center gap-x-2 gap-y-0.5">
             <button
               type="button"
               className="word min-h-[24px] max-sm:min-h-[44px]"
