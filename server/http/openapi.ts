@@ -41,7 +41,7 @@ export function describeRoutes(routes: readonly Route[]) {
   })
 }
 
-function describe({ method, path, summary, access, params, query, body, response, status }: Route): RouteConfig {
+function describe({ method, path, summary, access, params, query, body, multipart, response, status }: Route): RouteConfig {
   const roles = typeof access === 'string' ? access : access.join(', ')
   return {
     method,
@@ -52,6 +52,7 @@ function describe({ method, path, summary, access, params, query, body, response
     request: {
       ...(params ? { params: params as Parameters } : {}),
       ...(query ? { query: query as Parameters } : {}),
+      ...(multipart ? { body: { required: true, content: { 'multipart/form-data': { schema: multipart } } } } : {}),
       ...(body ? { body: { required: true, content: { [JSON_TYPE]: { schema: body } } } } : {}),
     },
     responses: {

@@ -40,6 +40,8 @@ export interface Route<A extends Access = Access, P = unknown, Q = unknown, B = 
   params?: z.ZodType<P>
   query?: z.ZodType<Q>
   body?: z.ZodType<B>
+  /** What a multipart body holds, as JSON Schema; the handler receives the files itself. */
+  multipart?: Record<string, unknown>
   /** JSON answer. Without it the handler answers by itself (files, 204). */
   response?: z.ZodType<R>
   /** 200 unless told. */

@@ -25,6 +25,12 @@ describe('the OpenAPI document', () => {
   })
   afterAll(() => server.close())
 
+  it('says that files are sent as multipart, in the field "files"', () => {
+    expect(JSON.stringify(document.paths['/uploads']?.post?.requestBody)).toContain(
+      '"multipart/form-data":{"schema":{"type":"object","required":["files"]',
+    )
+  })
+
   it('is of version 3.1 and holds every route there is, and no other', () => {
     expect(document.openapi).toBe('3.1.0')
     const described = Object.entries(document.paths).flatMap(([path, methods]) => Object.keys(methods).map((m) => `${m} ${path}`))
@@ -32,13 +38,13 @@ describe('the OpenAPI document', () => {
   })
 
   it('says of each who may call it, what it takes and what it answers', () => {
-    for (const { method, path, access, params, body } of allRoutes) {
+    for (const { method, path, access, params, body, multipart } of allRoutes) {
       const operation = document.paths[documentPath(path)]?.[method]
       expect(operation?.summary, path).toBeTruthy()
       expect(operation?.security.length === 0, path).toBe(access === 'anyone')
       const inPath = (operation?.parameters ?? []).filter((p) => p.in === 'path').map((p) => p.name)
       expect(inPath, path).toEqual(params ? [...path.matchAll(/:(\w+)/g)].map((match) => match[1]) : [])
-      expect(operation?.requestBody !== undefined, path).toBe(body !== undefined)
+      expect(operation?.requestBody !== undefined, path).toBe(body !== undefined || multipart !== undefined)
       expect(Object.keys(operation?.responses ?? {}), path).toContain('default')
     }
   })

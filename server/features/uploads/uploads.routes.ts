@@ -15,12 +15,22 @@ const params = z.object({ id: idSchema })
 const uploadsSchema = z.object({ uploads: z.array(uploadSchema) })
 const fieldsSchema = z.object({ forSheet: idSchema.optional() })
 
+const MULTIPART = {
+  type: 'object',
+  required: ['files'],
+  properties: {
+    files: { type: 'array', items: { type: 'string', format: 'binary' } },
+    forSheet: { type: 'string', format: 'uuid', description: 'the sheet that was sent back and is answered' },
+  },
+}
+
 export const uploadRoutes: Route[] = [
   route({
     method: 'post',
     path: '/uploads',
     summary: 'Send files: multipart, field "files", several at once; each has its own outcome',
     access: SENDERS,
+    multipart: MULTIPART,
     response: uploadsSchema,
     status: 201,
     handle: async ({ deps, actor, req, res }) => {
