@@ -2,11 +2,13 @@
  * The golden sheet of the method (a ploughing run with every figure worked out by hand), as readings and facts. Builders give
  * a valid sheet; a test names only what it changes.
  */
+
 import type { CheckOptions } from '../../shared/checks/context.ts'
 import { checkOptions } from '../../shared/checks/judge-sheet.ts'
 import { tillage1 } from '../../shared/layouts/tillage-1.ts'
 import type { Facts } from '../../shared/trial/facts.ts'
 import type { Readings, ReadingValue } from '../../shared/trial/readings.ts'
+import { CHECKS } from './checks.ts'
 
 /** All 20 depths and 10 widths of the golden sheet; the printed layout holds the first 10 and the first 5. */
 export const GOLDEN_DEPTHS_CM = [14.5, 15, 15.5, 14, 16, 15, 14.5, 15.5, 16.5, 15, 14, 15.5, 15, 14.5, 16, 15.5, 15, 14.5, 15, 16]
@@ -15,25 +17,7 @@ export const GOLDEN_WIDTHS_M = [0.88, 0.92, 0.9, 0.91, 0.93, 0.89, 0.9, 0.92, 0.
 export const numbered = (stem: string, values: readonly ReadingValue[]): Record<string, ReadingValue> =>
   Object.fromEntries(values.map((value, i) => [`${stem}[${i + 1}]`, value]))
 
-const TICKED = [
-  'supply_in_jar',
-  'tank_cock_shut',
-  'pump_return_in_jar',
-  'leakoff_return_in_jar',
-  'vent_open',
-  'air_bled',
-  'leak_check_ok',
-  'jar_upright_secure',
-  'clear_of_exhaust',
-  'jar_level_settled',
-  'pto_guard_ok',
-  'rops_belt_ok',
-  'extinguisher_near',
-  'audience_briefed',
-  'sign_demonstrator',
-  'sign_operator',
-  'sign_farmer',
-]
+const TICKED = [...CHECKS, 'sign_demonstrator', 'sign_operator', 'sign_farmer']
 
 /** The short golden sheet: what fits layout `tillage` 1. Depth 15.15 cm, width 0.908 m, 14.0741 L/ha, 9.28982 mL/m³. */
 const SHORT: Readings = {

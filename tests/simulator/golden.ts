@@ -2,34 +2,18 @@
  * The short golden sheet: the worked example of the readings reference, cut to what fits the layout (first 10 depths, first 5
  * widths). Known results: depth 15.15 cm, width 0.908 m, 14.0741 L/ha, 9.28982 mL of fuel a cubic metre of soil.
  */
+import { CHECKS } from '../builders/checks.ts'
 import type { Scenario, Written } from './scenario.ts'
 
 const DEPTHS_CM = [14.5, 15, 15.5, 14, 16, 15, 14.5, 15.5, 16.5, 15]
 const WIDTHS_M = [0.88, 0.92, 0.9, 0.91, 0.93]
-const SEEN = [
-  'supply_in_jar',
-  'tank_cock_shut',
-  'pump_return_in_jar',
-  'leakoff_return_in_jar',
-  'vent_open',
-  'air_bled',
-  'leak_check_ok',
-  'jar_upright_secure',
-  'clear_of_exhaust',
-  'jar_level_settled',
-  'pto_guard_ok',
-  'rops_belt_ok',
-  'extinguisher_near',
-  'audience_briefed',
-]
-
 const numbered = (stem: string, values: readonly Written[]) =>
   Object.fromEntries(values.map((value, i) => [`${stem}[${i + 1}]`, value]))
 
 export const goldenScenario = (head: Record<string, Written>): Scenario => ({
   readings: {
     ...head,
-    ...Object.fromEntries(SEEN.map((key) => [key, true])),
+    ...Object.fromEntries(CHECKS.map((key) => [key, true])),
     fuel_method: 'D',
     hour_meter_start: 1240.3,
     hour_meter_end: 1241.2,

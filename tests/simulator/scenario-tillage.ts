@@ -2,6 +2,7 @@
  * One run with a soil-working implement, consistent as a real one: the sums hold, the clock runs forward, the fuel suits the
  * work. Ranges are those of ordinary small tractors; what a sheet leaves open is left blank now and then.
  */
+import { CHECKS } from '../builders/checks.ts'
 import type { Chance } from './random.ts'
 import { clock, type Scenario, toPlaces, type Written } from './scenario.ts'
 
@@ -22,23 +23,6 @@ export const MACHINES: readonly Machine[] = [
   { implement_id: 24, width_m: 2, depth_cm: [7, 12], speed_kmh: [4.5, 6.5], fuel_l_ha: [5, 8] },
   { implement_id: 25, width_m: 1.6, depth_cm: [8, 14], speed_kmh: [2.4, 4], fuel_l_ha: [11, 17] },
   { implement_id: 26, width_m: 1, depth_cm: [32, 46], speed_kmh: [3, 4.4], fuel_l_ha: [16, 24] },
-]
-
-const CHECKS = [
-  'supply_in_jar',
-  'tank_cock_shut',
-  'pump_return_in_jar',
-  'leakoff_return_in_jar',
-  'vent_open',
-  'air_bled',
-  'leak_check_ok',
-  'jar_upright_secure',
-  'clear_of_exhaust',
-  'jar_level_settled',
-  'pto_guard_ok',
-  'rops_belt_ok',
-  'extinguisher_near',
-  'audience_briefed',
 ]
 
 export interface TillageOptions {
