@@ -5,10 +5,10 @@ import { join } from 'node:path'
 import { LEVELS } from '../simulator/levels.ts'
 import { makeSet } from '../simulator/make-set.ts'
 
-/** What a photo is made by. What only samples, plans or ties use does not change it. */
+/** What a photo is made by. What only samples, plans, ties or another layout use does not change it. */
 const SOURCES: ReadonlyArray<readonly [folder: string, files: RegExp]> = [
   ['tests/simulator', /^(?!.*sample|expected|golden|scan-pdf|foreign).*\.ts$/],
-  ['shared/layouts', /^(layout|geometry|sheet-code|corner-modules|.*-\d+)\.ts$/],
+  ['shared/layouts', /^(layout|geometry|sheet-code|corner-modules|tillage-\d+)\.ts$/],
   ['server/print', /^(page|sheet-.*)\.ts$/],
 ]
 
