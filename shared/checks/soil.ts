@@ -164,11 +164,11 @@ const l08: Rule = {
   },
 }
 
-const COUNTED: ReadonlyArray<{ stem: string; wanted: LimitName; word: string }> = [
-  { stem: 'depth_cm', wanted: 'depths_wanted', word: 'depths' },
-  { stem: 'width_m', wanted: 'widths_wanted', word: 'widths' },
-  { stem: 'dist_load_m', wanted: 'slips_wanted', word: 'ways in work' },
-  { stem: 'dist_noload_m', wanted: 'slips_wanted', word: 'ways without load' },
+const COUNTED: ReadonlyArray<{ stem: string; wanted: LimitName; word: string; one: string }> = [
+  { stem: 'depth_cm', wanted: 'depths_wanted', word: 'depths', one: 'depth' },
+  { stem: 'width_m', wanted: 'widths_wanted', word: 'widths', one: 'width' },
+  { stem: 'dist_load_m', wanted: 'slips_wanted', word: 'ways in work', one: 'way in work' },
+  { stem: 'dist_noload_m', wanted: 'slips_wanted', word: 'ways without load', one: 'way without load' },
 ]
 
 const q43: Rule = {
@@ -179,7 +179,7 @@ const q43: Rule = {
   cells: COUNTED.map((c) => c.stem),
   why: 'A mean of few says little about itself [P].',
   check: (ctx) =>
-    COUNTED.flatMap(({ stem, wanted, word }) => {
+    COUNTED.flatMap(({ stem, wanted, word, one }) => {
       const has = ctx.all(stem)
       const want = ctx.limit(wanted)
       if (has.length === 0 || has.length >= want) return []
@@ -187,7 +187,7 @@ const q43: Rule = {
         found(
           has.length < want / 2 ? 'doubt' : 'note',
           has.map((c) => c.key),
-          `${has.length} ${word}; ${want} are wanted.`,
+          `${has.length} ${has.length === 1 ? one : word}; ${want} are wanted.`,
           { readings: has.length, wanted: want },
         ),
       ]

@@ -1,74 +1,98 @@
 /** What registers and plan know of a run. All optional: a result that lacks a fact is null and says so. */
+import { z } from 'zod'
 import { numberAt, type Readings, textAt } from './readings.ts'
 
 export const OPERATIONS = ['plough', 'disc', 'cultivator', 'rotary_tiller', 'harrow', 'subsoiler'] as const
 export type Operation = (typeof OPERATIONS)[number]
 
-export interface Facts {
-  ratedWidth_m?: number | null
-  operation?: Operation | null
-  /** Greatest depth the implement can work. */
-  maxDepth_cm?: number | null
-  ratedPower_kw?: number | null
-  ptoPower_kw?: number | null
-  ratedRpm?: number | null
-  drive?: '2WD' | '4WD' | null
-  hourMeterKind?: 'electronic' | 'mechanical' | null
-  jarCapacity_ml?: number | null
-  jarMark_ml?: number | null
-  jugCapacity_ml?: number | null
-  jugMark_ml?: number | null
-  /** Half-width of the scale error of jar and jug by their calibration, %. */
-  kitScale_pct?: number | null
-  kitCheckedOn?: string | null
-  today?: string | null
-  /** The day the sheet arrived. */
-  arrivedOn?: string | null
-  density15_kgm3?: number | null
-  airTemp_c?: number | null
-  /** Makers' load table, kPa. */
-  tyreLimits_kpa?: { front?: readonly [number, number]; rear?: readonly [number, number] } | null
-  /** Speed in the gear written, at rated engine speed without slip. */
-  gearSpeed_km_h?: number | null
-  /** Way of one turn of the driven wheel. */
-  rollingCircumference_m?: number | null
-  /** Last hour meter reading known for this tractor at an earlier date. */
-  lastHourMeter_h?: number | null
-  /** The reach of the depth rule, cm (30 when not told). */
-  ruleReach_cm?: number | null
-  /** Usual L/ha of this operation here, a median of at least 8 records. */
-  usual_l_per_ha?: number | null
-  /** L/ha of earlier records with the same tractor, implement, gear and soil. */
-  peers_l_per_ha?: readonly number[] | null
-  /** Depths of earlier sheets by the same demonstrator, for the last-digit check. */
-  pooledDepths_cm?: readonly number[] | null
-  /** Local units of land of the district, as a person chose them. */
-  landUnits?: ReadonlyArray<{ name: string; size_m2: number }> | null
-  sheetCode?: string | null
-  tractorSerial?: string | null
-  imageHash?: string | null
-  photoTakenOn?: string | null
-  /** How far the photo was taken from the place, km. */
-  photoDistance_km?: number | null
-  /** Sheets this one may repeat or clash with: the same code, day, tractor or demonstrator. */
-  otherSheets?: readonly OtherSheet[] | null
-}
+const number = z.number().nullish()
+const text = z.string().nullish()
+const range_kpa = z.tuple([z.number(), z.number()]).readonly().nullish()
+
+const readingsSchema = z.record(z.string(), z.union([z.number(), z.string(), z.boolean(), z.null()]))
 
 /** Another sheet this one may be a copy of, or may clash with. */
-export interface OtherSheet {
-  sheetCode: string
+const otherSheetSchema = z.strictObject({
+  sheetCode: z.string(),
   /** Same code, other ink. */
-  sameCode?: boolean
-  tractorSerial?: string | null
-  demonstratorId?: number | null
-  trialDate?: string | null
-  start?: string | null
-  end?: string | null
-  imageHash?: string | null
+  sameCode: z.boolean().optional(),
+  tractorSerial: text,
+  demonstratorId: number,
+  trialDate: text,
+  start: text,
+  end: text,
+  imageHash: text,
   /** From this sheet's place to that one's. */
-  distance_km?: number | null
-  readings?: Readings | null
-}
+  distance_km: number,
+  readings: readingsSchema.nullish(),
+})
+export type OtherSheet = z.infer<typeof otherSheetSchema>
+
+/** A local unit of land. Only one a person confirmed for the district makes square metres. */
+const landUnitSchema = z.strictObject({ name: z.string(), size_m2: z.number().positive(), confirmedBy: text, confirmedOn: text })
+export type LandUnit = z.infer<typeof landUnitSchema>
+
+/** What registers and plan know of a run, all optional. Strict: a fact nobody knows is refused and not silently left out. */
+export const factsSchema = z.strictObject({
+  ratedWidth_m: number,
+  operation: z.enum(OPERATIONS).nullish(),
+  /** Bottoms, tines or discs. */
+  toolCount: number,
+  /** Greatest depth the implement can work. */
+  maxDepth_cm: number,
+  ratedPower_kw: number,
+  ptoPower_kw: number,
+  ratedRpm: number,
+  drive: z.enum(['2WD', '4WD']).nullish(),
+  hourMeterKind: z.enum(['electronic', 'mechanical']).nullish(),
+  jarCapacity_ml: number,
+  jarMark_ml: number,
+  jugCapacity_ml: number,
+  jugMark_ml: number,
+  /** Half-width of the scale error of jar and jug by their calibration, %. */
+  kitScale_pct: number,
+  /** Step of the balance a jar is weighed on, g. */
+  balanceStep_g: number,
+  kitCheckedOn: text,
+  today: text,
+  /** The day the sheet arrived. */
+  arrivedOn: text,
+  density15_kgm3: number,
+  /** Correct a hydrometer reading for the glass it is made of (off when not told). */
+  hydrometerGlass: z.boolean().nullish(),
+  airTemp_c: number,
+  /** Per litre, and per hour for driver and machine, in one currency. */
+  fuelPrice_per_l: number,
+  labour_per_h: number,
+  machine_per_h: number,
+  /** Makers' load table, kPa. */
+  tyreLimits_kpa: z.strictObject({ front: range_kpa, rear: range_kpa }).nullish(),
+  /** Speed in the gear written, at rated engine speed without slip. */
+  gearSpeed_km_h: number,
+  /** Way of one turn of the driven wheel. */
+  rollingCircumference_m: number,
+  /** Last hour meter reading known for this tractor at an earlier date. */
+  lastHourMeter_h: number,
+  /** The reach of the depth rule, cm (30 when not told). */
+  ruleReach_cm: number,
+  /** Usual L/ha of this operation here, a median of at least 8 records. */
+  usual_l_per_ha: number,
+  /** L/ha of earlier records with the same tractor, implement, gear and soil. */
+  peers_l_per_ha: z.array(z.number()).readonly().nullish(),
+  /** Depths of earlier sheets by the same demonstrator, for the last-digit check. */
+  pooledDepths_cm: z.array(z.number()).readonly().nullish(),
+  /** Local units of land of the district. */
+  landUnits: z.array(landUnitSchema).readonly().nullish(),
+  sheetCode: text,
+  tractorSerial: text,
+  imageHash: text,
+  photoTakenOn: text,
+  /** How far the photo was taken from the place, km. */
+  photoDistance_km: number,
+  /** Sheets this one may repeat or clash with: the same code, day, tractor or demonstrator. */
+  otherSheets: z.array(otherSheetSchema).readonly().nullish(),
+})
+export type Facts = z.infer<typeof factsSchema>
 
 /** Keys of readings that stand for a fact when the register is silent (a file handed in by itself). */
 const FROM_READINGS = {
