@@ -38,6 +38,8 @@ export interface PageScore {
   clearDigits: number
   /** Distance of each read cell's middle from where it lies, mm. */
   placement_mm: number[]
+  /** The same for the readings that came out clear, which may not be off by more than a millimetre. */
+  clearPlacement_mm: number[]
   cpuMs: number
   ms: Readonly<Record<string, number>>
 }
@@ -73,6 +75,7 @@ export function scorePage(
     missed: [],
     clearDigits: 0,
     placement_mm: [],
+    clearPlacement_mm: [],
     cpuMs,
     ms: page?.ms ?? {},
   }
@@ -103,7 +106,9 @@ export function scorePage(
     }
     if (isComb(cell) && holdsInk && reading.state === 'clear') score.clearDigits += digitsIn(written).length
     const off = map && placementOff(reading, map.cells[cell.key], boxesOf(cell))
-    if (off !== null) score.placement_mm.push(off)
+    if (off === null) continue
+    score.placement_mm.push(off)
+    if (reading.state === 'clear') score.clearPlacement_mm.push(off)
   }
   return score
 }

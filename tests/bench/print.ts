@@ -1,6 +1,6 @@
 /** The figures as a table for people. */
 import type { PageScore } from './compare.ts'
-import type { LevelFigures } from './figures.ts'
+import { type LevelFigures, levelFigures } from './figures.ts'
 import type { Peers } from './peers.ts'
 
 const percent = (share: number | null, places = 2) => (share === null ? 'none' : `${(100 * share).toFixed(places)} %`)
@@ -46,3 +46,32 @@ export const peerLines = (peers: Peers): string[] => [
       ]
     : []),
 ]
+
+const COLUMNS = ['photos', 'again', 'tied', 'untied', 'ticks', 'silent', 'caught', 'off', 'clear off', 'CPU ms'] as const
+const WIDTHS = [7, 6, 8, 8, 8, 11, 9, 7, 10, 7] as const
+const inColumns = (name: string, fields: readonly string[]) =>
+  `${name.padEnd(21)}${fields.map((field, i) => field.padStart(WIDTHS[i] ?? 0)).join('')}`
+
+/** Over `shapeLine`: doubt shares of tied and untied numbers and ticks, silent errors of clear readings, mm, CPU at the median. */
+export const shapeHead = inColumns('', COLUMNS)
+
+/** One condition in one line. */
+export function shapeLine(name: string, pages: readonly PageScore[]): string {
+  const f = levelFigures(pages)
+  const kinds = [f.numbers.tied, f.numbers.untied, f.ticks]
+  const wrong = kinds.reduce((sum, k) => sum + k.silentError.wrong, 0)
+  const clear = kinds.reduce((sum, k) => sum + k.silentError.clear, 0)
+  const mm = (value: number | undefined) => (value === undefined ? '-' : value.toFixed(2))
+  const again = pages.filter((p) => p.takeAgain).length
+  const codes = again > 0 ? `  ${JSON.stringify(f.takeAgainCodes)}` : ''
+  return `${inColumns(name, [
+    String(pages.length),
+    String(again),
+    ...kinds.map((k) => percent(k.doubtShare, 1)),
+    `${wrong}/${clear}`,
+    `${f.caught.hits}/${f.caught.count}`,
+    mm(f.placement_mm?.max),
+    mm(Math.max(...pages.flatMap((p) => p.clearPlacement_mm), Number.NEGATIVE_INFINITY)),
+    f.cpuMs.p50.toFixed(0),
+  ])}${codes}`
+}

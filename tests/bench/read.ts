@@ -1,7 +1,9 @@
 /**
  * npm run bench:read -- [FOLDER] [--final] [--json] [--peers] [--count N]
+ * npm run bench:read -- --shapes [--only NAME,...] [--count N]
  * Reads every NAME.jpg of a folder (and the folders in it) that has a NAME.truth.json, and prints how well and how fast. Without
- * a folder: the standard set, 60 photos a level, 200 with --final. All photos are simulated until real ones exist.
+ * a folder: the standard set, 60 photos a level, 200 with --final. --shapes: one line for each condition of paper, light, print
+ * and hand, 12 photos each. All photos are simulated until real ones exist.
  */
 import { readFile } from 'node:fs/promises'
 import { parseArgs } from 'node:util'
@@ -11,6 +13,7 @@ import { type Peers, tesseractDigits } from './peers.ts'
 import { levelLines, missedLines, mistakeLines, peerLines } from './print.ts'
 import { photosIn, readFolder } from './read-folder.ts'
 import { openReader } from './reader.ts'
+import { benchShapes, conditionsNamed, SHAPES_A_CONDITION } from './shapes.ts'
 import { standardSet } from './standard-set.ts'
 import { quantile } from './statistics.ts'
 
@@ -20,10 +23,20 @@ const { values, positionals } = parseArgs({
     json: { type: 'boolean', default: false },
     peers: { type: 'boolean', default: false },
     count: { type: 'string' },
+    shapes: { type: 'boolean', default: false },
+    only: { type: 'string' },
   },
   allowPositionals: true,
 })
 const say = (line: string) => process.stderr.write(`${line}\n`)
+
+if (values.shapes) {
+  const conditions = conditionsNamed(values.only)
+  const reader = await openReader()
+  await benchShapes(reader, conditions, Number(values.count ?? SHAPES_A_CONDITION), say)
+  await reader.close()
+  process.exit(0)
+}
 
 const folder = positionals[0] ?? (await standardSet(Number(values.count ?? (values.final ? 200 : 60)), values.final, say))
 const reader = await openReader()
