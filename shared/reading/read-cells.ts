@@ -12,7 +12,7 @@ import { measureTick, tickDist, tickHabit } from './cells/ticks.ts'
 import { type BoxDist, boxDist, CELL_PX, type DigitNet, type TickDist } from './classes.ts'
 import { scaleAt } from './geometry/homography.ts'
 import { type FieldMap, fieldToPhoto } from './geometry/page-map.ts'
-import { displacementAt } from './geometry/residual-field.ts'
+import { ResidualField } from './geometry/residual-field.ts'
 import type { CellReading } from './sheet-reading.ts'
 import { weighSheet } from './weigh/sheet.ts'
 import type { Facts, Weighed } from './weigh/types.ts'
@@ -104,6 +104,7 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
   const byKey = new Map<string, PlacedPart[]>()
   for (const placed of alignment.parts) byKey.set(placed.part.key, [...(byKey.get(placed.part.key) ?? []), placed])
   const { homography } = alignment
+  const field = new ResidualField(alignment.anchors)
   return layout.cells.flatMap((cell): PlacedCell[] => {
     if (planned && 'planned' in cell && cell.planned) return []
     const parts = byKey.get(cell.key)
@@ -116,7 +117,7 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
     }
     const boxes = boxesOf(cell).map((box) => {
       const center = { x: box.x + box.width / 2, y: box.y + box.height / 2 }
-      return { box, map: { homography, center, displacement: displacementAt(alignment.anchors, center) } }
+      return { box, map: { homography, center, displacement: field.at(center) } }
     })
     return [{ cell, boxes, fit_mm: null, hasFrame: false, seen: false }]
   })

@@ -85,7 +85,7 @@ export function alignPage(
   )
   return {
     homography: scaled(homography, 1 / scale),
-    anchors: known.map(({ key: _k, field: _f, plain: _p, spread_mm: _s, ahead: _a, isComb: _c, dyy: _d, ...anchor }) => anchor),
+    anchors: known.map(({ key: _k, plain: _p, spread_mm: _s, ahead: _a, isComb: _c, dyy: _d, ...anchor }) => anchor),
     parts,
     foundShare: parts.length === 0 ? 0 : parts.filter((p) => p.found).length / parts.length,
     edge_mm,
@@ -102,6 +102,6 @@ function steady(pairs: readonly Pair[], squares: readonly Mark[], first: Homogra
   const found = squares.map((s) => ({ from: { x: s.x, y: s.y }, to: project(first, s.x + s.dx, s.y + s.dy) }))
   const better = pairs.length < FOUR_CODES ? fitHomography([...pairs, ...found]) : null
   if (!better) return { homography: first, marks: [...codeMarks(pairs, first), ...squares] }
-  const again = codeMarks(found, better).map((mark) => ({ ...mark, key: 'square', field: 'square', weight: 1 }))
+  const again = codeMarks(found, better).map((mark) => ({ ...mark, key: 'square', weight: 1 }))
   return { homography: better, marks: [...codeMarks(pairs, better), ...again] }
 }

@@ -1,6 +1,6 @@
 /** Places on the page that are known, and whether they agree with each other. */
 import type { FieldMap } from '../geometry/page-map.ts'
-import { type Anchor, displacementAt } from '../geometry/residual-field.ts'
+import { type Anchor, ResidualField } from '../geometry/residual-field.ts'
 import type { Point } from '../pixels/grey.ts'
 import type { FieldPart } from './field-lines.ts'
 import type { PartFit } from './measure-part.ts'
@@ -8,8 +8,6 @@ import type { PartFit } from './measure-part.ts'
 export interface Mark extends Anchor {
   /** 'code', 'square', 'rule', or the field's key and part. */
   key: string
-  /** The field it belongs to: parts of one field stand or fall together, so they do not vouch for each other. */
-  field: string
   /** Its own lines leave no doubt where it is. */
   plain?: boolean
   spread_mm?: number
@@ -55,7 +53,7 @@ export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boole
   const d = map.displacement
   const mark = {
     key: keyOf(part),
-    field: part.key,
+    group: part.key,
     x: center.x,
     y: center.y,
     dx: d.dx + d.dxx * (u + fit.dx) + d.dxy * (v + fit.dy) + fit.dx,
@@ -73,27 +71,24 @@ export function markOf(part: FieldPart, map: FieldMap, fit: PartFit, tick: boole
   return { ...mark, slope: { dxx: d.dxx + fit.stretch, dyx: d.dyx + fit.lean, worth_mm2: (width / 4) ** 2 } }
 }
 
-const isField = (mark: Mark) => mark.key !== mark.field
-
-/** How far a mark is from where the others (not of its own field) put it, mm. */
-export function disagreement(marks: readonly Mark[], mark: Mark): number {
-  const { x, y } = apart(marks, mark)
-  return Math.hypot(x, y)
-}
-
-function apart(marks: readonly Mark[], mark: Mark): Point {
-  const d = displacementAt(marks, mark, (other) => other === mark || (isField(mark) && (other as Mark).field === mark.field))
-  return { x: d.dx - mark.dx, y: d.dy - mark.dy }
+/** How far each mark is from where the others (not of its own field) put it, mm; codes and rules stand as they are. */
+export function disagreements(marks: readonly Mark[]): Point[] {
+  const field = new ResidualField(marks)
+  return marks.map((mark, i) => {
+    if (mark.key === 'code' || mark.key === 'rule') return { x: 0, y: 0 }
+    const d = field.at(mark, mark.group ?? i)
+    return { x: d.dx - mark.dx, y: d.dy - mark.dy }
+  })
 }
 
 /** Takes out the worst marks again and again while they disagree with their neighbours. */
 export function refuseOutliers(marks: Mark[]): Mark[] {
   let kept = marks
   for (let round = 0; round < MOST_ROUNDS; round++) {
-    const off = kept.map((mark) => {
-      const { x, y } = mark.key === 'code' || mark.key === 'rule' ? { x: 0, y: 0 } : apart(kept, mark)
-      return { mm: Math.hypot(x, y), allowed: mark.plain && Math.abs(y) < DISAGREE_PLAIN_DOWN_MM }
-    })
+    const off = disagreements(kept).map(({ x, y }, i) => ({
+      mm: Math.hypot(x, y),
+      allowed: kept[i]!.plain && Math.abs(y) < DISAGREE_PLAIN_DOWN_MM,
+    }))
     const usual = off.map((o) => o.mm).sort((a, b) => a - b)[kept.length >> 1] ?? 0
     const limit = Math.max(DISAGREE_MM, DISAGREE_TIMES * usual)
     const worst = new Set(

@@ -1,10 +1,10 @@
 /** Looks for fields outwards from what is known. */
 import type { Layout, LayoutCell } from '../../layouts/layout.ts'
 import type { Homography } from '../geometry/homography.ts'
-import { displacementAt } from '../geometry/residual-field.ts'
+import { ResidualField } from '../geometry/residual-field.ts'
 import type { Point } from '../pixels/grey.ts'
 import { type FieldPart, fieldParts } from './field-lines.ts'
-import { distance, keyOf, type Mark, markOf, nearest } from './marks.ts'
+import { distance, type Mark, markOf, nearest } from './marks.ts'
 import { fieldPatch, measureParts, type PartFit } from './measure-part.ts'
 import { measureTickPlace } from './measure-tick.ts'
 import type { Picture } from './patch.ts'
@@ -58,13 +58,12 @@ const isGood = (fit: PartFit, tick: boolean): boolean => {
 function place(
   picture: FramedPicture,
   homography: Homography,
-  marks: readonly Mark[],
+  field: ResidualField,
   placing: Placing,
   reach_mm: number,
 ): Mark[] {
   const { parts, tick, center } = placing
-  const own = new Set(parts.map(keyOf))
-  const map = { homography, center, displacement: displacementAt(marks, center, (a) => own.has((a as Mark).key)) }
+  const map = { homography, center, displacement: field.at(center) }
   const fits = tick
     ? parts.map((part) => measureTickPlace(picture, map, part, reach_mm))
     : measureParts(fieldPatch(picture, map, parts[0]!.field, reach_mm, picture.step_mm), parts, reach_mm, picture.frameContrast)
@@ -78,22 +77,24 @@ export function placeOutwards(
   known: readonly Mark[],
   waiting: readonly Placing[],
 ): Mark[] {
-  const all = [...known]
+  const field = new ResidualField(known)
+  const found: Mark[] = []
   const left = [...waiting]
-  const near = new Map(left.map((p) => [p, nearest(all, p.center)]))
+  const near = new Map(left.map((p) => [p, nearest(known, p.center)]))
   while (left.length > 0) {
     let next = 0
     for (let i = 1; i < left.length; i++) if (near.get(left[i]!)! < near.get(left[next]!)!) next = i
     const placing = left.splice(next, 1)[0]!
     const reach = (placing.tick ? tickReach : combReach)(near.get(placing)!)
-    const marks = place(picture, homography, all, placing, reach)
-    all.push(...marks)
+    const marks = place(picture, homography, field, placing, reach)
+    found.push(...marks)
     for (const mark of marks) {
+      field.add(mark)
       for (const other of left) {
         const d = distance(mark, other.center)
         if (d < near.get(other)!) near.set(other, d)
       }
     }
   }
-  return all.slice(known.length)
+  return found
 }

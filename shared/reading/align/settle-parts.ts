@@ -1,8 +1,8 @@
 /** The last word on each part: found on its own lines, sure by its neighbours, or not found. */
-import { type Displacement, displacementAt } from '../geometry/residual-field.ts'
+import { type Displacement, ResidualField } from '../geometry/residual-field.ts'
 import type { Point } from '../pixels/grey.ts'
 import type { FieldPart } from './field-lines.ts'
-import { centerOf, disagreement, distance, keyOf, type Mark } from './marks.ts'
+import { centerOf, disagreements, distance, keyOf, type Mark } from './marks.ts'
 
 export interface PlacedPart {
   part: FieldPart
@@ -22,17 +22,15 @@ const VOUCH = { count: 4, within_mm: 32, agree_mm: 0.45 } as const
 const BETWEEN = 1.5
 
 export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[]): PlacedPart[] {
-  const byKey = new Map(marks.map((mark) => [mark.key, mark]))
-  const off = new Map(
-    parts.flatMap((part) => {
-      const mark = byKey.get(keyOf(part))
-      return mark ? [[mark, disagreement(marks, mark)] as const] : []
-    }),
-  )
+  const byKey = new Map(marks.map((mark, i) => [mark.key, i]))
+  const field = new ResidualField(marks)
+  const apart = disagreements(marks)
+  const off = new Map(marks.flatMap((mark, i) => (mark.group ? [[mark, Math.hypot(apart[i]!.x, apart[i]!.y)] as const] : [])))
   return parts.map((part): PlacedPart => {
     const center = centerOf(part)
-    const mark = byKey.get(keyOf(part))
-    const around = displacementAt(marks, center, (other) => other !== mark && (other as Mark).field === part.key)
+    const own = byKey.get(keyOf(part))
+    const mark = own === undefined ? undefined : marks[own]
+    const around = field.at(center, part.key, own)
     if (!mark) {
       const fit_mm = vouched(part, center, off)
       return { part, center, displacement: around, found: fit_mm !== null, seen: false, fit_mm: fit_mm ?? Number.NaN }
@@ -54,7 +52,7 @@ export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[])
 }
 
 function vouched(part: FieldPart, center: Point, off: ReadonlyMap<Mark, number>): number | null {
-  const near = [...off].flatMap(([mark, mm]) => (mark.field !== part.key && distance(mark, center) < VOUCH.within_mm ? [mm] : []))
+  const near = [...off].flatMap(([mark, mm]) => (mark.group !== part.key && distance(mark, center) < VOUCH.within_mm ? [mm] : []))
   if (near.length < VOUCH.count) return null
   const agree = near.sort((a, b) => a - b)[near.length >> 1]!
   return agree <= VOUCH.agree_mm ? BETWEEN * agree : null

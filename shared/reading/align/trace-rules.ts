@@ -4,7 +4,7 @@
  */
 import type { Layout } from '../../layouts/layout.ts'
 import type { Homography } from '../geometry/homography.ts'
-import { type Anchor, displacementAt } from '../geometry/residual-field.ts'
+import { type Anchor, ResidualField } from '../geometry/residual-field.ts'
 import type { Mark } from './marks.ts'
 import { type Picture, samplePatch } from './patch.ts'
 
@@ -65,7 +65,7 @@ function lineNear(picture: Picture, homography: Homography, at: Anchor, lean: nu
 function trace(
   picture: Picture,
   homography: Homography,
-  anchors: readonly Anchor[],
+  field: ResidualField,
   y: number,
   from: number,
   to: number,
@@ -76,7 +76,7 @@ function trace(
   let lean = 0
   let last: Step | null = null
   for (let x = from + (direction * WINDOW_MM) / 2; direction * (to - x) > 0; x += direction * WINDOW_MM) {
-    const guess = displacementAt(anchors, { x, y })
+    const guess = field.at({ x, y })
     const expected: number = last ? last.dy + lean * (x - last.x) : guess.dy
     const reach = last ? TURN_MM * (1 + gaps) : FIRST_REACH_MM
     const at = { x, y, dx: guess.dx, dy: expected, weight: 1 }
@@ -97,12 +97,13 @@ function trace(
 /** Heights of the rule under the head and of all section rules, where both traces agree or only one came by. */
 export function traceRules(picture: Picture, layout: Layout, homography: Homography, anchors: readonly Anchor[]): Mark[] {
   const sections = layout.sections.map(({ y }) => ({ y, left: MARGIN_MM, right: layout.page.width - MARGIN_MM }))
+  const field = new ResidualField(anchors)
   return [HEAD_RULE, ...sections].flatMap(({ y, left, right }) => {
-    const forth = trace(picture, homography, anchors, y, left, right)
-    const back = trace(picture, homography, anchors, y, right, left)
+    const forth = trace(picture, homography, field, y, left, right)
+    const back = trace(picture, homography, field, y, right, left)
     return thin(merge(forth, back)).map(({ x, dy }) => {
-      const { dx } = displacementAt(anchors, { x, y })
-      return { key: 'rule', field: 'rule', x, y, dx, dy, weight: 0.5, onlyDown: true as const }
+      const { dx } = field.at({ x, y })
+      return { key: 'rule', x, y, dx, dy, weight: 0.5, onlyDown: true as const }
     })
   })
 }

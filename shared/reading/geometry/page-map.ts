@@ -2,7 +2,7 @@
 import type { Point } from '../pixels/grey.ts'
 import { type Homography, project } from './homography.ts'
 import type { Anchor, Displacement } from './residual-field.ts'
-import { displacementAt } from './residual-field.ts'
+import { ResidualField } from './residual-field.ts'
 
 /** Plain numbers, so that it can be stored with the page and drawn again. */
 export interface PageMap {
@@ -21,11 +21,12 @@ export function makePageMap(
 ): PageMap {
   const columns = Math.ceil(page.width / MESH_STEP_MM) + 1
   const rows = Math.ceil(page.height / MESH_STEP_MM) + 1
+  const field = new ResidualField(anchors)
   const dx_mm: number[] = []
   const dy_mm: number[] = []
   for (let row = 0; row < rows; row++) {
     for (let column = 0; column < columns; column++) {
-      const d = displacementAt(anchors, { x: column * MESH_STEP_MM, y: row * MESH_STEP_MM })
+      const d = field.at({ x: column * MESH_STEP_MM, y: row * MESH_STEP_MM })
       dx_mm.push(round(d.dx, 1000))
       dy_mm.push(round(d.dy, 1000))
     }

@@ -16,6 +16,8 @@ export interface Anchor {
   onlyDown?: true
   /** How the displacement changes along x, where the anchor is wide enough to tell; worth so many mm² of spread. */
   slope?: { dxx: number; dyx: number; worth_mm2: number }
+  /** Anchors of one group may be left out together: parts of one field do not vouch for each other. */
+  group?: string
 }
 
 /** A displacement and how it changes: d(p) = (dx, dy) + (dxx, dyx)(p.x - x) + (dxy, dyy)(p.y - y). */
@@ -54,53 +56,91 @@ function solveAt(s: number, x: number, y: number, xx: number, xy: number, yy: nu
   return [mv - slopeX * mx - slopeY * my, slopeX, slopeY] as const
 }
 
-function fitNear(anchors: readonly Anchor[], at: Point, skip: ((anchor: Anchor) => boolean) | undefined, far2: number) {
-  let [s, sx, sy, sxx, sxy, syy, u, ux, uy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
-  let [t, tx, ty, txx, txy, tyy, v, vx, vy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
-  let across = 0
-  for (const anchor of anchors) {
-    const x = anchor.x - at.x
-    const y = anchor.y - at.y
-    const distance2 = x * x + y * y
-    if (distance2 > far2 || skip?.(anchor)) continue
-    const spread = distance2 + NEAR_MM * NEAR_MM
-    const w = anchor.weight / (spread * spread)
-    const [wx, wy] = [w * x, w * y]
-    t += w
-    tx += wx
-    ty += wy
-    txx += wx * x
-    txy += wx * y
-    tyy += wy * y
-    v += w * anchor.dy
-    vx += wx * anchor.dy
-    vy += wy * anchor.dy
-    const { slope } = anchor
-    if (slope) {
-      txx += w * slope.worth_mm2
-      vx += w * slope.worth_mm2 * slope.dyx
-      sxx += w * slope.worth_mm2
-      ux += w * slope.worth_mm2 * slope.dxx
-    }
-    if (anchor.onlyDown) continue
-    across++
-    s += w
-    sx += wx
-    sy += wy
-    sxx += wx * x
-    sxy += wx * y
-    syy += wy * y
-    u += w * anchor.dx
-    ux += wx * anchor.dx
-    uy += wy * anchor.dx
+/** Numbers an anchor takes in the packed list: x, y, dx, dy, weight, weight across, slope's worth, dxx, dyx, group. */
+const SIZE = 10
+
+/** Anchors packed for asking the displacement at many places. */
+export class ResidualField {
+  private packed = new Float64Array(64 * SIZE)
+  private count = 0
+  private readonly groups = new Map<string, number>()
+
+  constructor(anchors: readonly Anchor[]) {
+    for (const anchor of anchors) this.add(anchor)
   }
-  const [dx, dxx, dxy] = solveAt(s, sx, sy, sxx, sxy, syy, u, ux, uy)
-  const [dy, dyx, dyy] = solveAt(t, tx, ty, txx, txy, tyy, v, vx, vy)
-  return { across, displacement: { dx, dxx, dxy, dy, dyx, dyy } }
+
+  add({ x, y, dx, dy, weight, onlyDown, slope, group }: Anchor): void {
+    if (this.packed.length === this.count * SIZE) {
+      const larger = new Float64Array(2 * this.packed.length)
+      larger.set(this.packed)
+      this.packed = larger
+    }
+    const across = onlyDown ? 0 : weight
+    const own = [x, y, dx, dy, weight, across, slope?.worth_mm2 ?? 0, slope?.dxx ?? 0, slope?.dyx ?? 0, this.groupOf(group)]
+    this.packed.set(own, this.count++ * SIZE)
+  }
+
+  /**
+   * The displacement expected at a place. `without` leaves out the group of that name, or the anchor of that index; `but` is the
+   * index of an anchor of that group that counts all the same.
+   */
+  at(place: Point, without?: string | number, but = -1): Displacement {
+    const index = typeof without === 'number' ? without : -1
+    const group = typeof without === 'string' ? (this.groups.get(without) ?? -1) : -1
+    const near = this.fit(place, FAR_MM * FAR_MM, index, group, but)
+    return near.across >= FEW ? near.displacement : this.fit(place, Number.POSITIVE_INFINITY, index, group, but).displacement
+  }
+
+  private groupOf(name: string | undefined): number {
+    if (name === undefined) return -2
+    const known = this.groups.get(name)
+    if (known === undefined) this.groups.set(name, this.groups.size)
+    return known ?? this.groups.size - 1
+  }
+
+  private fit(place: Point, far2: number, index: number, group: number, but: number) {
+    let [s, sx, sy, sxx, sxy, syy, u, ux, uy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
+    let [t, tx, ty, txx, txy, tyy, v, vx, vy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
+    let across = 0
+    const { packed, count } = this
+    for (let i = 0, at = 0; i < count; i++, at += SIZE) {
+      const x = packed[at]! - place.x
+      const y = packed[at + 1]! - place.y
+      const distance2 = x * x + y * y
+      if (distance2 > far2 || i === index || (packed[at + 9] === group && i !== but)) continue
+      const spread = 1 / (distance2 + NEAR_MM * NEAR_MM)
+      const w = packed[at + 4]! * spread * spread
+      const wx = w * x
+      const wy = w * y
+      const dy = packed[at + 3]!
+      const wide = w * packed[at + 6]!
+      t += w
+      tx += wx
+      ty += wy
+      txx += wx * x + wide
+      txy += wx * y
+      tyy += wy * y
+      v += w * dy
+      vx += wx * dy + wide * packed[at + 8]!
+      vy += wy * dy
+      if (packed[at + 5] === 0) continue
+      const dx = packed[at + 2]!
+      across++
+      s += w
+      sx += wx
+      sy += wy
+      sxx += wx * x + wide
+      sxy += wx * y
+      syy += wy * y
+      u += w * dx
+      ux += wx * dx + wide * packed[at + 7]!
+      uy += wy * dx
+    }
+    const [dx, dxx, dxy] = solveAt(s, sx, sy, sxx, sxy, syy, u, ux, uy)
+    const [dy, dyx, dyy] = solveAt(t, tx, ty, txx, txy, tyy, v, vx, vy)
+    return { across, displacement: { dx, dxx, dxy, dy, dyx, dyy } }
+  }
 }
 
-/** The displacement expected at a place; `skip` leaves anchors out (to check one against its neighbours). */
-export function displacementAt(anchors: readonly Anchor[], at: Point, skip?: (anchor: Anchor) => boolean): Displacement {
-  const near = fitNear(anchors, at, skip, FAR_MM * FAR_MM)
-  return near.across >= FEW ? near.displacement : fitNear(anchors, at, skip, Number.POSITIVE_INFINITY).displacement
-}
+/** The same for a single place. */
+export const displacementAt = (anchors: readonly Anchor[], place: Point): Displacement => new ResidualField(anchors).at(place)

@@ -34,22 +34,24 @@ export async function countImagePages(bytes: Uint8Array): Promise<number> {
 }
 
 /**
- * Decodes JPEG, PNG, WebP or one page (from 0) of a TIFF, turned upright as its camera noted.
+ * Decodes JPEG, PNG, WebP or one page (from 0) of a TIFF, turned upright as its camera noted. Grey is the green of colours: true
+ * luma costs as much again as decoding, and green tells blue, black, red and pencil from paper as well.
  * @throws UserError too_large or not_accepted: what is wrong with the file, and what to do.
  */
 export async function decodeImage(bytes: Uint8Array, page: number, colour: boolean): Promise<Raster> {
   const sharp = await sharpOnce()
   try {
-    const upright = sharp(bytes, { ...OPEN, page })
-      .autoOrient()
-      .flatten({ background: '#ffffff' })
-    const wanted = colour ? upright.toColourspace('srgb') : upright.greyscale()
-    const { data, info } = await wanted.raw().toBuffer({ resolveWithObject: true })
-    const channels = info.channels === 1 || info.channels === 3 ? info.channels : 4
+    const image = sharp(bytes, { ...OPEN, page })
+    const { channels = 3 } = await image.metadata()
+    const upright = image.autoOrient().flatten({ background: '#ffffff' })
+    const wanted = channels < 3 ? upright.greyscale() : upright.toColourspace('srgb')
+    const { data, info } = await (colour || channels < 3 ? wanted : wanted.extractChannel('green'))
+      .raw()
+      .toBuffer({ resolveWithObject: true })
     return {
       width: info.width,
       height: info.height,
-      channels,
+      channels: info.channels === 1 || info.channels === 3 ? info.channels : 4,
       data: new Uint8Array(data.buffer, data.byteOffset, data.byteLength),
     }
   } catch (cause) {

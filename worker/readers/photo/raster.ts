@@ -9,12 +9,10 @@ export interface Raster {
   data: Uint8Array
 }
 
-/** Luma (ITU-R BT.601 weights in 256ths). A grey raster is taken as it is, without a copy. */
+/** Grey as `decodeImage` takes it: green. A grey raster is taken as it is, without a copy. */
 export function greyOf({ width, height, channels, data }: Raster): Grey {
   if (channels === 1) return { width, height, data }
   const grey = new Uint8Array(width * height)
-  for (let i = 0, at = 0; i < grey.length; i++, at += channels) {
-    grey[i] = (77 * data[at]! + 150 * data[at + 1]! + 29 * data[at + 2]! + 128) >> 8
-  }
+  for (let i = 0, at = 1; i < grey.length; i++, at += channels) grey[i] = data[at]!
   return { width, height, data: grey }
 }
