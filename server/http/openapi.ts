@@ -10,6 +10,8 @@ const FILES: Record<string, string> = {
   pdf: 'application/pdf',
   csv: 'text/csv',
   xlsx: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet',
+  parquet: 'application/vnd.apache.parquet',
+  zip: 'application/zip',
   picture: 'image/jpeg',
   original: 'application/octet-stream',
 }

@@ -1,5 +1,6 @@
 /** Every route there is. */
 import { demonstrationRoutes } from '../features/demonstrations/demonstrations.routes.ts'
+import { downloadRoutes } from '../features/downloads/downloads.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
 import { layoutRoutes } from '../features/layouts/layouts.routes.ts'
 import { mailRoutes } from '../features/mails/mails.routes.ts'
@@ -26,6 +27,7 @@ const routes: readonly Route[] = [
   ...layoutRoutes,
   ...sheetRoutes,
   ...recordRoutes,
+  ...downloadRoutes,
   ...mailRoutes,
   ...trailRoutes,
 ]

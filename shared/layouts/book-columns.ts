@@ -1,13 +1,9 @@
-/** The columns of the trial book's downloads, in order: who and what, every reading, every result with its U. One list makes CSV, XLSX and dictionary. */
+/** The columns of the wide download, in order: who and what, every reading, every result with its U. */
 import { RESULTS, type ResultKey } from '../trial/result.ts'
+import type { Column } from './column.ts'
 import { isComb, type Layout } from './layout.ts'
 
-export interface BookColumn {
-  /** Stable name; the header adds the unit in brackets. */
-  name: string
-  unit: string | null
-  kind: 'number' | 'integer' | 'text' | 'boolean' | 'date' | 'time'
-  description: string
+export interface BookColumn extends Column {
   source:
     | { from: 'record'; field: string }
     | { from: 'reading'; key: string }
@@ -35,13 +31,9 @@ const RECORD_COLUMNS: BookColumn[] = [
   record('operation', 'text', 'what the implement does'),
   record('rules_version', 'text', 'version of the checks that were run'),
   record('formula_version', 'text', 'version of the formulas that made the results'),
-  record('entered_at', 'text', 'when it was entered, ISO 8601, UTC'),
+  record('entered_at', 'moment', 'when it was entered, UTC'),
   record('entered_by', 'text', 'who entered it'),
 ]
-
-/** "l_per_ha [L/ha]" */
-export const headerOf = (column: Pick<BookColumn, 'name' | 'unit'>) =>
-  column.unit ? `${column.name} [${column.unit}]` : column.name
 
 /** A spread and a variation say how readings scatter; they are given without an uncertainty of their own. */
 const hasU = (key: ResultKey): boolean => !/_(sd|cv)_/.test(key)

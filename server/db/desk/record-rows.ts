@@ -31,7 +31,8 @@ FROM records rec JOIN sheets s ON s.id = rec.sheet_id
 
 export type RecordFilter = ListRecords & { demonstratorId?: string }
 
-function whereOf(filter: RecordFilter, values: unknown[]): string {
+/** What a filter lets through, as SQL over `rec`, `s` and `i`; what it binds is added to `values`. */
+export function whereOf(filter: RecordFilter, values: unknown[]): string {
   const bind = (value: unknown) => `$${values.push(value)}`
   const where = ["rec.state <> 'superseded'"]
   if (filter.demonstratorId) where.push(`s.owner_id = ${bind(filter.demonstratorId)}`)
