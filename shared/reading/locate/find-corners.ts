@@ -2,7 +2,7 @@
 import type { Layout } from '../../layouts/layout.ts'
 import { type CornerCode, parseCornerCode } from '../../layouts/sheet-code.ts'
 import { fitHomography, type Homography, type Pair } from '../geometry/homography.ts'
-import type { Grey } from '../pixels/grey.ts'
+import { type Grey, halve } from '../pixels/grey.ts'
 import type { CodeFinder, FoundCode } from './code-finder.ts'
 import { type PlacedCorner, readInWindow, searchByPattern, settleFound } from './corner-search.ts'
 
@@ -24,16 +24,22 @@ interface Decoded {
   at: FoundCode['corners']
 }
 
-/** Looks at half size first (as many found, a fifth of the time), then at full size. */
+/**
+ * Looks at a quarter of the size first, where most pictures show all four; then at half (as many found as at full size, a fifth
+ * of the time), then at full size.
+ */
 async function decode(full: Grey, half: Grey, find: CodeFinder): Promise<Decoded[]> {
-  const scan = async (grey: Grey, scale: number): Promise<Decoded[]> =>
+  const scan = async (grey: Grey): Promise<Decoded[]> =>
     (await find(grey)).flatMap(({ text, corners }) => {
       const code = parseCornerCode(text)
+      const scale = full.width / grey.width
       const at = corners.map(({ x, y }) => ({ x: x * scale, y: y * scale })) as unknown as FoundCode['corners']
       return code ? [{ code, at }] : []
     })
-  const found = await scan(half, full.width / half.width)
-  return found.length > 0 ? found : scan(full, 1)
+  const quick = await scan(halve(half))
+  if (new Set(quick.map(({ code }) => `${code.sheetCode} ${code.corner}`)).size === 4) return quick
+  const found = await scan(half)
+  return found.length > 0 ? found : scan(full)
 }
 
 const fitAll = (corners: readonly PlacedCorner[]) => fitHomography(corners.flatMap((c) => c.pairs))

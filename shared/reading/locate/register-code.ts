@@ -2,22 +2,27 @@
  * Sets a corner code's known pattern onto the picture, its middle to about a tenth of a pixel and its corners to a tenth of a
  * module: Gauss-Newton on an affine correction, with the print's contrast and the paper's level as two further unknowns.
  */
-import { type Homography, multiply, project } from '../geometry/homography.ts'
-import { LeastSquares } from '../geometry/linear.ts'
+import { type Homography, multiply } from '../geometry/homography.ts'
+import { solve } from '../geometry/linear.ts'
 import { brightnessAt, type Grey } from '../pixels/grey.ts'
 
 /** Samples a module and quiet modules around: enough to see edges from both sides. */
 const PER_MODULE = 3
 const QUIET = 2
+const UNKNOWNS = 8
 
 export interface Pattern {
   modules: number
   side: number
-  /** 1 dark, 0 light, smoothed; with its slopes a module. */
+  /** 1 dark, 0 light, smoothed. */
   value: Float32Array
-  slopeX: Float32Array
-  slopeY: Float32Array
+  /** What each sample says of the unknowns (a row of eight), and the sum of these rows times themselves. */
+  rows: Float64Array
+  normal: Float64Array
 }
+
+/** Sample to modules. */
+const place = (i: number) => (i + 0.5) / PER_MODULE - QUIET
 
 /** The pattern as samples, smoothed over about a module as a lens would. */
 export function makePattern(modules: readonly (readonly boolean[])[]): Pattern {
@@ -28,25 +33,32 @@ export function makePattern(modules: readonly (readonly boolean[])[]): Pattern {
     const row = modules[Math.floor(y / PER_MODULE) - QUIET]
     for (let x = 0; x < side; x++) sharp[y * side + x] = row?.[Math.floor(x / PER_MODULE) - QUIET] ? 1 : 0
   }
-  const at = (data: Float32Array, x: number, y: number) =>
-    data[Math.min(Math.max(y, 0), side - 1) * side + Math.min(Math.max(x, 0), side - 1)]!
-  const blur = (data: Float32Array, dx: number, dy: number) =>
-    data.map((v, i) => {
-      const x = i % side
-      const y = (i / side) | 0
-      return 0.5 * v + 0.25 * (at(data, x - dx, y - dy) + at(data, x + dx, y + dy))
-    })
-  const value = blur(blur(sharp, 1, 0), 0, 1)
-  const slope = (dx: number, dy: number) =>
-    value.map((_, i) => {
-      const x = i % side
-      const y = (i / side) | 0
-      return (at(value, x + dx, y + dy) - at(value, x - dx, y - dy)) * (PER_MODULE / 2)
-    })
-  return { modules: count, side, value, slopeX: slope(1, 0), slopeY: slope(0, 1) }
+  // The quiet zone is white, so what lies beyond it may be taken from the other end of the row.
+  const near = (data: Float32Array, i: number, by: number) => data[(i + by + data.length) % data.length]!
+  const blur = (data: Float32Array, by: number) => data.map((v, i) => 0.5 * v + 0.25 * (near(data, i, -by) + near(data, i, by)))
+  const value = blur(blur(sharp, 1), side)
+  const rows = new Float64Array(side * side * UNKNOWNS)
+  const normal = new Float64Array(UNKNOWNS * UNKNOWNS)
+  for (let i = 0; i < value.length; i++) {
+    const u = place(i % side) - count / 2
+    const v = place((i / side) | 0) - count / 2
+    const sx = (near(value, i, 1) - near(value, i, -1)) * (PER_MODULE / 2)
+    const sy = (near(value, i, side) - near(value, i, -side)) * (PER_MODULE / 2)
+    rows.set([sx, sx * u, sx * v, sy, sy * u, sy * v, value[i]!, 1], i * UNKNOWNS)
+    addRow(normal, rows, i, 1)
+  }
+  return { modules: count, side, value, rows, normal }
 }
 
-const place = (i: number) => (i + 0.5) / PER_MODULE - QUIET
+/** Adds (1) or takes away (-1) what one sample contributes to the normal equations. */
+function addRow(normal: Float64Array, rows: Float64Array, sample: number, sign: number): void {
+  const from = sample * UNKNOWNS
+  for (let i = 0; i < UNKNOWNS; i++) {
+    const own = sign * rows[from + i]!
+    if (own === 0) continue
+    for (let j = 0; j < UNKNOWNS; j++) normal[i * UNKNOWNS + j]! += own * rows[from + j]!
+  }
+}
 
 /** Correlation (-1 to 1) of the pattern with the picture under `toPhoto` (modules to px); every `stride`th sample. */
 export function correlate(grey: Grey, pattern: Pattern, toPhoto: Homography, stride = 1): number {
@@ -56,11 +68,16 @@ export function correlate(grey: Grey, pattern: Pattern, toPhoto: Homography, str
   let sp = 0
   let spp = 0
   let stp = 0
+  const h = toPhoto
   for (let y = stride >> 1; y < pattern.side; y += stride) {
+    const v = place(y)
     for (let x = stride >> 1; x < pattern.side; x += stride) {
-      const to = project(toPhoto, place(x), place(y))
-      if (to.x < 0 || to.y < 0 || to.x > grey.width || to.y > grey.height) continue
-      const p = -brightnessAt(grey, to.x, to.y)
+      const u = place(x)
+      const w = 1 / (h[6]! * u + h[7]! * v + h[8]!)
+      const px = (h[0]! * u + h[1]! * v + h[2]!) * w
+      const py = (h[3]! * u + h[4]! * v + h[5]!) * w
+      if (px < 0 || py < 0 || px > grey.width || py > grey.height) continue
+      const p = -brightnessAt(grey, px, py)
       const t = pattern.value[y * pattern.side + x]!
       n++
       st += t
@@ -84,36 +101,37 @@ export interface Registered {
 const ROUNDS = 7
 const STILL_MODULES = 0.002
 
+/** The eight unknowns of one round; null when the picture does not fix them. */
+function solveRound(grey: Grey, { side, rows, normal }: Pattern, h: Homography): Float64Array | null {
+  const own = Float64Array.from(normal)
+  const right = new Float64Array(UNKNOWNS)
+  for (let y = 0, sample = 0; y < side; y++) {
+    const v = place(y)
+    for (let x = 0; x < side; x++, sample++) {
+      const u = place(x)
+      const w = 1 / (h[6]! * u + h[7]! * v + h[8]!)
+      const px = (h[0]! * u + h[1]! * v + h[2]!) * w
+      const py = (h[3]! * u + h[4]! * v + h[5]!) * w
+      if (!(px >= 1 && py >= 1 && px <= grey.width - 1 && py <= grey.height - 1)) {
+        addRow(own, rows, sample, -1)
+        continue
+      }
+      const brightness = brightnessAt(grey, px, py) / 255
+      const from = sample * UNKNOWNS
+      for (let k = 0; k < UNKNOWNS; k++) right[k]! += rows[from + k]! * brightness
+    }
+  }
+  return solve(own, right)
+}
+
 /** Refines modules-to-pixels. Null when it runs away or ends without likeness. Catches about 0.7 of a module. */
 export function registerPattern(grey: Grey, pattern: Pattern, start: Homography): Registered | null {
   let toPhoto = start
   const middle = pattern.modules / 2
   let moved = 0
   for (let round = 0; round < ROUNDS; round++) {
-    const system = new LeastSquares(8)
-    const row = new Float64Array(8)
-    for (let y = 0; y < pattern.side; y++) {
-      for (let x = 0; x < pattern.side; x++) {
-        const i = y * pattern.side + x
-        const u = place(x)
-        const v = place(y)
-        const to = project(toPhoto, u, v)
-        if (to.x < 1 || to.y < 1 || to.x > grey.width - 1 || to.y > grey.height - 1) continue
-        const sx = pattern.slopeX[i]!
-        const sy = pattern.slopeY[i]!
-        row[0] = sx
-        row[1] = sx * (u - middle)
-        row[2] = sx * (v - middle)
-        row[3] = sy
-        row[4] = sy * (u - middle)
-        row[5] = sy * (v - middle)
-        row[6] = pattern.value[i]!
-        row[7] = 1
-        system.add(row, brightnessAt(grey, to.x, to.y) / 255)
-      }
-    }
     // Unknowns 0 to 5 come multiplied by the contrast (unknown 6).
-    const solved = system.solve()
+    const solved = solveRound(grey, pattern, toPhoto)
     if (!solved || solved[6]! > -0.04) return null
     const [a, b, c, d, e, f] = Array.from(solved.subarray(0, 6), (value) => value / solved[6]!) as [
       number,

@@ -6,11 +6,13 @@ import type { Grey } from '../../../shared/reading/pixels/grey.ts'
 
 const require = createRequire(import.meta.url)
 
-/** zxing turns RGBA to grey itself. */
-function asImageData({ width, height, data }: Grey): ImageData {
-  const rgba = new Uint32Array(width * height)
-  for (let i = 0; i < data.length; i++) rgba[i] = 0xff000000 | (data[i]! * 0x010101)
-  return { width, height, data: new Uint8ClampedArray(rgba.buffer), colorSpace: 'srgb' } as ImageData
+/** As a PGM file: zxing takes its bytes as grey, where ImageData would be spread to four channels and turned grey again. */
+function asPgm({ width, height, data }: Grey): Uint8Array {
+  const head = new TextEncoder().encode(`P5\n${width} ${height}\n255\n`)
+  const file = new Uint8Array(head.length + data.length)
+  file.set(head)
+  file.set(data, head.length)
+  return file
 }
 
 export async function createCodeFinder(): Promise<CodeFinder> {
@@ -18,7 +20,7 @@ export async function createCodeFinder(): Promise<CodeFinder> {
   const wasm = await readFile(require.resolve('zxing-wasm/reader/zxing_reader.wasm'))
   await prepareZXingModule({ overrides: { wasmBinary: new Uint8Array(wasm).buffer }, fireImmediately: true })
   return async (grey) => {
-    const found = await readBarcodes(asImageData(grey), {
+    const found = await readBarcodes(asPgm(grey), {
       formats: ['QRCode'],
       tryHarder: true,
       tryRotate: false,
