@@ -2,7 +2,7 @@
 import { z } from 'zod'
 import { type Issue, UserError } from '../errors.ts'
 import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
-import { findLayout, LAYOUTS } from '../layouts/registry.ts'
+import { findLayout, LAYOUTS, USUAL_LAYOUT } from '../layouts/registry.ts'
 import { type Facts, factsSchema } from '../trial/facts.ts'
 import { KEY_ALIASES, READING_KEYS, type ReadingKey } from '../trial/reading-keys.ts'
 import type { Readings, ReadingValue } from '../trial/readings.ts'
@@ -17,7 +17,7 @@ export interface TrialFile {
 }
 
 const fileSchema = z.object({
-  layout: z.string().default('tillage'),
+  layout: z.string().default(USUAL_LAYOUT),
   version: z.number().int().optional(),
   readings: z.record(z.string(), z.union([z.number(), z.string(), z.boolean(), z.null()])),
   facts: factsSchema.default({}),

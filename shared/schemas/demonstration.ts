@@ -12,6 +12,8 @@ export const saveTrialSchema = z.object({
   implementId: idSchema,
   kitId: idSchema,
   plot: nameSchema,
+  /** Key of the sheet its runs are written on; the usual one where none is named. */
+  layout: z.string().min(1).max(40).optional(),
   runs: z.coerce.number().int().min(1).max(RUNS_MAX),
 })
 export type SaveTrial = z.infer<typeof saveTrialSchema>
@@ -39,6 +41,7 @@ export const runSchema = z.object({
 export const trialSchema = z.object({
   id: idSchema,
   plot: z.string(),
+  layout: z.string(),
   tractor: z.object({ id: idSchema, number: z.number(), name: z.string() }),
   implement: z.object({ id: idSchema, number: z.number(), name: z.string() }),
   kit: z.object({ id: idSchema, number: z.number(), name: z.string() }),

@@ -120,6 +120,26 @@ describe('a demonstration', () => {
     expect(standing).toMatchObject({ version, trials: [{ runs: [{}, { sheetState: 'waiting' }] }] })
   })
 
+  it('prints each trial on the layout chosen; another choice makes new sheets, with new codes', async () => {
+    const { agent, input, planned } = await plan()
+    const [trial] = input.trials
+    const choose = (layout: string, version: number) =>
+      agent.put(`/demonstrations/${planned.id}`, { ...input, trials: [{ ...trial, layout }], version })
+    const layouts = async () =>
+      (await server.deps.source.query('SELECT layout_key FROM sheets WHERE code = ANY($1)', [codesOf(now)])) as unknown[]
+    const codesOf = (day: Demonstration) => runsOf(day).map((run) => run.sheetCode)
+    expect(planned.trials[0]?.layout).toBe('tillage')
+    let now = (await choose('haulage', planned.version)).body as Demonstration
+    expect(now.trials).toMatchObject([{ layout: 'haulage', runs: [{ number: 1 }, { number: 2 }] }])
+    expect(codesOf(now).filter((code) => codesOf(planned).includes(code))).toEqual([])
+    expect(await layouts()).toEqual([{ layout_key: 'haulage' }, { layout_key: 'haulage' }])
+    expect((await agent.get(`/demonstrations/${planned.id}/sheets.pdf`)).status).toBe(200)
+    now = (await choose('haulage', now.version)).body as Demonstration
+    await arrive(runsOf(now)[0]?.sheetId ?? null)
+    expect(await choose('tillage', now.version)).toMatchObject({ status: 409, body: { error: { code: 'conflict' } } })
+    expect(await choose('ploughing', now.version)).toMatchObject({ status: 400, body: { error: { code: 'invalid' } } })
+  })
+
   it('refuses a plan made on an old version, or on none', async () => {
     const { agent, input, planned } = await plan()
     await agent.put(`/demonstrations/${planned.id}`, { ...input, driver: 'T. Vesk', version: planned.version })

@@ -1,6 +1,7 @@
 import { screen, waitFor, within } from '@testing-library/react'
 import { userEvent } from '@testing-library/user-event'
 import { expect, test } from 'vitest'
+import { USUAL_LAYOUT } from '../../shared/layouts/registry.ts'
 import { demonstrationSchema } from '../../shared/schemas/demonstration.ts'
 import { buildDay, id, KIT, PLACE, PLOUGH, serveRegisters, TRACTORS } from './support/build-plan.ts'
 import { answer, fakeApi, refusal } from './support/fake-api.ts'
@@ -45,6 +46,8 @@ test('a demonstrator plans two trials for themselves; the second keeps implement
   expect(added.getByLabelText<HTMLSelectElement>('tractor').value).toBe('')
   await user.selectOptions(added.getByLabelText('tractor'), second?.id ?? '')
   await user.type(added.getByLabelText('plot'), 'lower')
+  await user.selectOptions(added.getByLabelText('sheet'), 'haulage and PTO work')
+  expect(added.getByText('This sheet has no plot: write the way or the yard.')).toBeDefined()
   await user.click(screen.getByRole('button', { name: 'Save the plan and make its sheets' }))
 
   await waitFor(() => expect(router.state.location.pathname).toBe(`/demonstrations/${id(100)}`))
@@ -56,8 +59,8 @@ test('a demonstrator plans two trials for themselves; the second keeps implement
     driver: '',
     farmer: { name: 'Matis Orrel', phone: '' },
     trials: [
-      { tractorId: first?.id, implementId: PLOUGH.id, kitId: KIT.id, plot: 'upper', runs: 3 },
-      { tractorId: second?.id, implementId: PLOUGH.id, kitId: KIT.id, plot: 'lower', runs: 3 },
+      { tractorId: first?.id, implementId: PLOUGH.id, kitId: KIT.id, plot: 'upper', layout: USUAL_LAYOUT, runs: 3 },
+      { tractorId: second?.id, implementId: PLOUGH.id, kitId: KIT.id, plot: 'lower', layout: 'haulage', runs: 3 },
     ],
   })
 })

@@ -15,6 +15,8 @@ const REFERENCE = (alias: string) => `json_build_object('id', ${alias}.id, 'numb
 export async function listTrials(db: Db, demonstrationId: string): Promise<PlannedTrial[]> {
   return db.query(
     `SELECT t.id, t.position, t.plot, ${REFERENCE('tr')} AS tractor, ${REFERENCE('i')} AS implement, ${REFERENCE('k')} AS kit,
+       (SELECT s.layout_key FROM runs r JOIN sheets s ON s.run_id = r.id AND s.planned
+         WHERE r.trial_id = t.id ORDER BY r.number, s.created_at LIMIT 1) AS layout,
        coalesce((SELECT json_agg(json_build_object('id', r.id, 'number', r.number, 'sheetId', s.id, 'sheetCode', s.code,
            'sheetState', s.state, 'recordNumber', (SELECT max(e.number) FROM records e WHERE e.sheet_id = s.id)) ORDER BY r.number)
          FROM runs r LEFT JOIN LATERAL (SELECT * FROM sheets WHERE run_id = r.id ORDER BY created_at LIMIT 1) s ON true

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { USUAL_LAYOUT } from '../../../shared/layouts/registry.ts'
 import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
 import { type Implement, type Kit, type Place, REGISTERS, type Tractor } from '../../../shared/schemas/register.ts'
 import { answer, type FakeApi } from './fake-api.ts'
@@ -73,6 +74,7 @@ export const buildDay = (change: Partial<Demonstration> = {}): Demonstration => 
     {
       id: id(101),
       plot: 'upper',
+      layout: USUAL_LAYOUT,
       tractor: named(tractor),
       implement: named(PLOUGH),
       kit: named(KIT),

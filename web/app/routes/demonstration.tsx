@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
 import { Link, useLocation, useParams } from 'react-router-dom'
 import { z } from 'zod'
-import { findLayout } from '../../../shared/layouts/registry.ts'
+import { NEWEST_LAYOUTS } from '../../../shared/layouts/registry.ts'
 import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
 import { sheetStateSchema } from '../../../shared/schemas/sheet.ts'
 import type { Role } from '../../../shared/schemas/user.ts'
@@ -26,9 +26,6 @@ import { NotFound } from './route-error.tsx'
 /** What the plan page hands over when it was saved. */
 const savedSchema = z.object({ saved: z.string() })
 
-/** The sheet that planned runs are printed on. */
-const LAYOUT = 'tillage'
-
 export function Component() {
   const { id = '' } = useParams()
   const day = useQuery(demonstrationQueries.detail(id))
@@ -46,7 +43,7 @@ function DayPage({ day }: { day: Demonstration }) {
   const withdraw = useWithdrawConsent(day.id)
   const { state } = useLocation()
   const arrivedWith = savedSchema.safeParse(state)
-  const layout = findLayout(LAYOUT)
+  const layouts = NEWEST_LAYOUTS.filter((layout) => day.trials.some((trial) => trial.layout === layout.key))
   const mayPrint = me.role !== 'analyst'
   const mayPlan = me.role === 'demonstrator' || me.role === 'admin'
   const runs = day.trials.flatMap((trial) => trial.runs)
@@ -74,7 +71,7 @@ function DayPage({ day }: { day: Demonstration }) {
             runs={runs.length}
             first={day.heldOn >= todayText() && runs.some((run) => !hasArrived(run))}
             mayPrint={mayPrint}
-            layout={LAYOUT}
+            layouts={NEWEST_LAYOUTS}
           />
           <section aria-labelledby="trials" className="pt-2 pb-3">
             <h2 id="trials" className="away">
@@ -82,7 +79,9 @@ function DayPage({ day }: { day: Demonstration }) {
             </h2>
             <TrialRuns trials={day.trials} links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint }} />
           </section>
-          {layout && <CheckList layout={layout} />}
+          {layouts.map((layout) => (
+            <CheckList key={layout.key} layout={layout} among={layouts.length} />
+          ))}
         </div>
         <div>
           <DayFacts day={day} mayKnowFarmer={me.role !== 'analyst'}>

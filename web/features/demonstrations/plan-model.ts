@@ -1,4 +1,5 @@
 /** What the plan form begins with, and what it says of a kit before the day. Pure. */
+import { findLayout, NEWEST_LAYOUTS, USUAL_LAYOUT, workOf } from '../../../shared/layouts/registry.ts'
 import type { Demonstration, SaveDemonstration, SaveTrial } from '../../../shared/schemas/demonstration.ts'
 import type { Kit } from '../../../shared/schemas/register.ts'
 import { leastFuel } from '../../../shared/trial/planning.ts'
@@ -8,7 +9,14 @@ const USUAL_RUNS = 3
 /** A farmer who withdrew has no name any more; the schema asks for one, and the server leaves it unsaved. */
 const ERASED = { name: 'erased', phone: '' }
 
-export const blankTrial: SaveTrial = { tractorId: '', implementId: '', kitId: '', plot: '', runs: USUAL_RUNS }
+export const blankTrial: SaveTrial = {
+  tractorId: '',
+  implementId: '',
+  kitId: '',
+  plot: '',
+  layout: USUAL_LAYOUT,
+  runs: USUAL_RUNS,
+}
 
 /** The next trial of a day: the same implement and kit, behind another tractor on another plot. */
 export const nextTrial = (last: SaveTrial | undefined): SaveTrial => (last ? { ...last, tractorId: '', plot: '' } : blankTrial)
@@ -28,11 +36,12 @@ export const planOf = (day: Demonstration): SaveDemonstration => ({
   demonstratorId: day.demonstrator.id,
   driver: day.driver,
   farmer: day.farmer ?? ERASED,
-  trials: day.trials.map(({ tractor, implement, kit, plot, runs }) => ({
+  trials: day.trials.map(({ tractor, implement, kit, plot, layout, runs }) => ({
     tractorId: tractor.id,
     implementId: implement.id,
     kitId: kit.id,
     plot,
+    layout,
     runs: runs.length,
   })),
 })
@@ -63,6 +72,13 @@ export function leastFuel_l(kit: Kit): number | null {
   const least = leastFuel({ ...WANTED, jarStep_ml: kit.jarMark_ml, jugMark_ml: kit.jugMark_ml })
   return least === null ? null : least / 1000
 }
+
+/** The sheets a run can be written on, by what they are for. */
+export const sheetChoices = NEWEST_LAYOUTS.map((layout) => ({ value: layout.key, words: workOf(layout) }))
+
+/** Said where the sheet chosen has no plot to peg out: the line is printed all the same. */
+export const plotNote = (layout: string | undefined): string | null =>
+  findLayout(layout ?? USUAL_LAYOUT)?.figure ? null : 'This sheet has no plot: write the way or the yard.'
 
 /** A row of a register, or a person, that a plan can name. */
 export interface Chosen {

@@ -1,4 +1,5 @@
 import type { Layout } from '../../../../shared/layouts/layout.ts'
+import { workOf } from '../../../../shared/layouts/registry.ts'
 
 /** The section of the sheet whose ticks are the kit and safety checks. */
 const BEFORE = 1
@@ -14,13 +15,14 @@ const CAUTIONS = [
   'Before the road: tank lines back, jar off and capped, leaks checked again, and the sheet says who did it and when.',
 ] as const
 
-/** What must be seen and ticked on each sheet before the first jar reading. */
-export function CheckList({ layout }: { layout: Layout }) {
+/** What must be seen and ticked on each sheet before the first jar reading. `among`: how many kinds of sheet the day has. */
+export function CheckList({ layout, among }: { layout: Layout; among: number }) {
+  const heading = `checks-${layout.key}`
   const checks = layout.cells.filter((cell) => cell.section === BEFORE && cell.kind === 'tick')
   return (
-    <section aria-labelledby="checks" className="px-margin py-3">
-      <h2 id="checks" className="text-2">
-        Before the first jar reading
+    <section aria-labelledby={heading} className="px-margin py-3">
+      <h2 id={heading} className="text-2">
+        Before the first jar reading{among > 1 && `: ${workOf(layout)}`}
       </h2>
       <p className="label pb-1">Each sheet asks for these {checks.length} ticks; a figure without them does not count.</p>
       <ul className="grid grid-cols-2 gap-x-3 border-t-[1.5px] border-ink max-sm:grid-cols-1">

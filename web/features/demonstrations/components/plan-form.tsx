@@ -130,6 +130,7 @@ export function PlanForm({ begin, choices, farmerKnown, pending, error, saveWord
               choices={rowChoices}
               kit={choices.kits.find((kit) => kit.id === trials[index]?.kitId)}
               heldOn={heldOn}
+              layout={trials[index]?.layout}
               onTakeOut={fields.length > 1 ? () => remove(index) : null}
             />
           ))}

@@ -1,4 +1,6 @@
 import type { ReactNode } from 'react'
+import type { Layout } from '../../../../shared/layouts/layout.ts'
+import { workOf } from '../../../../shared/layouts/registry.ts'
 import { counted } from '../../../lib/words.ts'
 
 /** Papers for the day. The day's own sheets carry the plan in print; the blank sheet and the form serve what nobody planned. */
@@ -8,13 +10,14 @@ interface TakeAlongProps {
   /** The day is to come and sheets are missing: printing them is what to do next. */
   first: boolean
   mayPrint: boolean
-  layout: string
+  /** Blank sheets and forms there are. */
+  layouts: readonly Layout[]
 }
 
 const FIRST =
   'mb-1 inline-flex min-h-[48px] items-center bg-ink px-4 text-2 font-[650] text-white no-underline max-sm:w-full max-sm:justify-center'
 
-export function TakeAlong({ id, runs, first, mayPrint, layout }: TakeAlongProps) {
+export function TakeAlong({ id, runs, first, mayPrint, layouts }: TakeAlongProps) {
   const print = (
     <a
       href={`/api/demonstrations/${id}/sheets.pdf`}
@@ -31,12 +34,12 @@ export function TakeAlong({ id, runs, first, mayPrint, layout }: TakeAlongProps)
         Papers for the day
       </h2>
       {mayPrint && first && <p>{print}</p>}
-      <p className="flex flex-wrap gap-x-3 pb-1">
-        <span className="label">for a run nobody planned</span>
-        <Paper href={`/api/layouts/${layout}/blank.pdf`}>a blank sheet</Paper>
-        <Paper href={`/api/layouts/${layout}/form.xlsx`}>spreadsheet form, XLSX</Paper>
-        <Paper href={`/api/layouts/${layout}/form.csv`}>CSV</Paper>
-      </p>
+      <p className="label">for a run nobody planned</p>
+      <ul className="pb-1">
+        {layouts.map((layout) => (
+          <BlankPapers key={layout.key} layout={layout} />
+        ))}
+      </ul>
       {mayPrint && !first && (
         <p className="flex flex-wrap gap-x-3 pb-1">
           <span className="label">the sheets of the plan once more</span>
@@ -46,6 +49,21 @@ export function TakeAlong({ id, runs, first, mayPrint, layout }: TakeAlongProps)
     </section>
   )
 }
+
+const BlankPapers = ({ layout }: { layout: Layout }) => (
+  <li className="flex flex-wrap gap-x-3">
+    <span>{workOf(layout)}</span>
+    <Paper href={`/api/layouts/${layout.key}/blank.pdf`}>
+      a blank sheet<span className="away">: {workOf(layout)}</span>
+    </Paper>
+    <Paper href={`/api/layouts/${layout.key}/form.xlsx`}>
+      spreadsheet form, XLSX<span className="away">: {workOf(layout)}</span>
+    </Paper>
+    <Paper href={`/api/layouts/${layout.key}/form.csv`}>
+      CSV<span className="away">: {workOf(layout)}</span>
+    </Paper>
+  </li>
+)
 
 const Paper = ({ href, children }: { href: string; children: ReactNode }) => (
   <a

@@ -3,7 +3,7 @@ import { RUNS_MAX, type SaveDemonstration } from '../../../../shared/schemas/dem
 import type { Kit } from '../../../../shared/schemas/register.ts'
 import { Button } from '../../../ui/button.tsx'
 import type { FieldOption } from '../../../ui/field.tsx'
-import { leastFuel_l, oldCheck } from '../plan-model.ts'
+import { leastFuel_l, oldCheck, plotNote, sheetChoices } from '../plan-model.ts'
 import { FormCell } from './form-cell.tsx'
 
 export interface TrialChoices {
@@ -20,11 +20,13 @@ interface TrialFieldsProps {
   /** The kit chosen, and the day, for what must be said of them. */
   kit: Kit | undefined
   heldOn: string
+  /** Key of the sheet chosen. */
+  layout: string | undefined
   onTakeOut: (() => void) | null
 }
 
-/** One trial as a ruled row of the form: which tractor, with what, on which plot, how often. */
-export function TrialFields({ index, register, errors, choices, kit, heldOn, onTakeOut }: TrialFieldsProps) {
+/** One trial as a ruled row of the form: which tractor, with what, on which plot and sheet, how often. */
+export function TrialFields({ index, register, errors, choices, kit, heldOn, layout, onTakeOut }: TrialFieldsProps) {
   const wrong = errors.trials?.[index]
   const name = <K extends keyof SaveDemonstration['trials'][number]>(key: K) => register(`trials.${index}.${key}`)
   return (
@@ -38,7 +40,7 @@ export function TrialFields({ index, register, errors, choices, kit, heldOn, onT
           </Button>
         )}
       </div>
-      <div className="grid grid-cols-[1.2fr_1.5fr_1.2fr_1.4fr_84px] items-start gap-x-2 gap-y-1 max-lg:grid-cols-2 max-sm:grid-cols-1">
+      <div className="grid grid-cols-[1.2fr_1.5fr_1.2fr_1.3fr_1.1fr_84px] items-start gap-x-2 gap-y-1 max-lg:grid-cols-2 max-sm:grid-cols-1">
         <FormCell label="tractor" error={wrong?.tractorId?.message}>
           {(tied) => <Options {...tied} {...name('tractorId')} options={choices.tractors} />}
         </FormCell>
@@ -48,8 +50,11 @@ export function TrialFields({ index, register, errors, choices, kit, heldOn, onT
         <FormCell label="kit" error={wrong?.kitId?.message} note={kit ? oldCheck(kit, heldOn) : null}>
           {(tied) => <Options {...tied} {...name('kitId')} options={choices.kits} />}
         </FormCell>
-        <FormCell label="plot" error={wrong?.plot?.message}>
+        <FormCell label="plot" error={wrong?.plot?.message} note={plotNote(layout)}>
           {(tied) => <input {...tied} {...name('plot')} autoComplete="off" />}
+        </FormCell>
+        <FormCell label="sheet" error={wrong?.layout?.message}>
+          {(tied) => <Options {...tied} {...name('layout')} options={sheetChoices} />}
         </FormCell>
         <FormCell label={`runs, 1 to ${RUNS_MAX}`} error={wrong?.runs?.message}>
           {(tied) => <input {...tied} {...name('runs')} inputMode="numeric" autoComplete="off" />}

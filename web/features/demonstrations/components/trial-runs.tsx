@@ -1,5 +1,6 @@
 import type { ReactNode } from 'react'
 import { Link } from 'react-router-dom'
+import { findLayout, workOf } from '../../../../shared/layouts/registry.ts'
 import { formatSheetCode } from '../../../../shared/layouts/sheet-code.ts'
 import type { Trial } from '../../../../shared/schemas/demonstration.ts'
 import { paths } from '../../../lib/paths.ts'
@@ -35,10 +36,16 @@ const TrialHead = ({ trial }: { trial: Trial }) => (
       {trial.tractor.name} with {trial.implement.name}
     </strong>{' '}
     <span className="text-graphite">
-      plot {trial.plot}, kit {trial.kit.number} ({trial.kit.name}), {counted(trial.runs.length, 'run')}
+      plot {trial.plot}, kit {trial.kit.number} ({trial.kit.name}), {sheetWords(trial)}, {counted(trial.runs.length, 'run')}
     </span>
   </>
 )
+
+/** "tillage sheet"; a layout this page does not know yet is called by its key. */
+function sheetWords({ layout }: Trial): string {
+  const known = findLayout(layout)
+  return `${known ? workOf(known) : layout} sheet`
+}
 
 function columnsFor({ sheetPath, stateMark, mayPrint }: RunLinks): LedgerColumn<Run>[] {
   return [
