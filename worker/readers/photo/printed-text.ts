@@ -1,15 +1,10 @@
 /** Printed and typed text by tesseract.js: the block of planned facts and the sheet's code in letters. Never hand-writing. */
-import { createRequire } from 'node:module'
-import { dirname, join } from 'node:path'
 import type { Layout } from '../../../shared/layouts/layout.ts'
 import { CODE_ALPHABET, parseSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import { type PageMap, toPhoto } from '../../../shared/reading/geometry/page-map.ts'
 import { brightnessAt, type Grey } from '../../../shared/reading/pixels/grey.ts'
-import { sharpOnce } from './decode.ts'
+import type { TextEngine, TextPicture } from './text-engine.ts'
 
-const require = createRequire(import.meta.url)
-/** The engine keeps what it has seen: it is made anew after so many pictures. */
-const RENEW_AFTER = 500
 /** Type of 7 points needs this to be read without mistakes. */
 const PX_PER_MM = 14
 
@@ -25,50 +20,14 @@ interface Area {
   height: number
 }
 
-const startEngine = async () => {
-  const { createWorker, OEM } = await import('tesseract.js')
-  const data = join(dirname(require.resolve('@tesseract.js-data/eng/package.json')), '4.0.0_best_int')
-  let failed: unknown = null
-  const worker = await createWorker('eng', OEM.LSTM_ONLY, {
-    langPath: data,
-    gzip: true,
-    cacheMethod: 'none',
-    errorHandler: (error: unknown) => {
-      failed = error
-    },
-  })
-  return { worker, failure: () => failed }
-}
-
 export interface PrintedText {
   /** Lines of the typed block, down its columns, as they were read. */
   planLines(grey: Grey, map: PageMap, layout: Layout): Promise<string[]>
   /** The sheet's code as printed in the head, or null when its check character does not agree. */
   sheetCode(grey: Grey, map: PageMap, layout: Layout): Promise<string | null>
-  close(): Promise<void>
 }
 
-/** The engine (0.7 s, 180 MB) is started with the first text and kept. */
-export function createPrintedText(): PrintedText {
-  let engine: ReturnType<typeof startEngine> | null = null
-  let seen = 0
-
-  async function recognise(picture: Buffer, whitelist: string): Promise<string> {
-    if (engine && ++seen > RENEW_AFTER) {
-      await (await engine).worker.terminate()
-      engine = null
-    }
-    if (!engine) {
-      engine = startEngine()
-      seen = 0
-    }
-    const { worker, failure } = await engine
-    await worker.setParameters({ tessedit_char_whitelist: whitelist })
-    const { data } = await worker.recognize(picture)
-    if (failure()) throw new Error('The text engine failed.', { cause: failure() })
-    return data.text
-  }
-
+export function createPrintedText(engine: TextEngine): PrintedText {
   return {
     async planLines(grey, map, layout) {
       const { x, y, columnWidth, columns, rows, rowHeight } = layout.planBlock
@@ -81,7 +40,7 @@ export function createPrintedText(): PrintedText {
         if (filled.length === 0) continue
         const height = (filled.at(-1)! + 1) * rowHeight + 0.8
         const piece = cutFlat(grey, map, { x: left, y: y - 1.2, width: columnWidth, height })
-        const text = await recognise(await asPng(piece), PLAN_CHARACTERS)
+        const text = await engine.text(piece, PLAN_CHARACTERS)
         lines.push(
           ...text
             .split('\n')
@@ -95,51 +54,31 @@ export function createPrintedText(): PrintedText {
       const { x, y } = layout.codeText
       const piece = cutFlat(grey, map, { x: x - 52, y: y - 6.6, width: 53, height: 6.4 })
       if (!hasInk(piece)) return null
-      const text = await recognise(await asPng(piece), `${CODE_ALPHABET}-`)
+      const text = await engine.text(piece, `${CODE_ALPHABET}-`)
       // The hyphens stand in known places: what has them elsewhere was read wrongly, even where the check agrees by chance.
       const found = /\b([0-9A-Z]{5})-([0-9A-Z]{5})-([0-9A-Z])\b/.exec(text.toUpperCase())
       return found ? parseSheetCode(found.slice(1).join('')) : null
     },
-    async close() {
-      if (engine) await (await engine).worker.terminate()
-      engine = null
-    },
   }
 }
 
-interface Piece {
-  width: number
-  height: number
-  data: Buffer
-}
-
 /** A piece of the page as it would lie flat. */
-function cutFlat(grey: Grey, map: PageMap, area: Area): Piece {
+function cutFlat(grey: Grey, map: PageMap, area: Area): TextPicture {
   const width = Math.round(area.width * PX_PER_MM)
   const height = Math.round(area.height * PX_PER_MM)
-  const data = Buffer.alloc(width * height)
+  const data = new Uint8Array(width * height)
   for (let row = 0; row < height; row++) {
     for (let column = 0; column < width; column++) {
       const to = toPhoto(map, area.x + (column + 0.5) / PX_PER_MM, area.y + (row + 0.5) / PX_PER_MM)
       data[row * width + column] = brightnessAt(grey, to.x, to.y)
     }
   }
-  return { width, height, data }
+  return { width, height, data, px_per_mm: PX_PER_MM }
 }
 
 /** The engine reads letters into grain, so it is never shown bare paper. */
-function hasInk({ data }: Piece): boolean {
+function hasInk({ data }: TextPicture): boolean {
   const sorted = Uint8Array.from(data).sort()
   const paper = sorted[Math.floor(sorted.length * 0.7)]!
   return sorted[Math.floor(sorted.length * INK_SHARE)]! < paper * INK_LEVEL
-}
-
-async function asPng({ width, height, data }: Piece): Promise<Buffer> {
-  const sharp = await sharpOnce()
-  const dpi = Math.round(PX_PER_MM * 25.4)
-  return sharp(data, { raw: { width, height, channels: 1 } })
-    .normalise()
-    .withMetadata({ density: dpi })
-    .png()
-    .toBuffer()
 }

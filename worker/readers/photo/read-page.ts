@@ -15,6 +15,8 @@ import { createNet } from './net.ts'
 import { openPages } from './pages.ts'
 import { createPrintedText } from './printed-text.ts'
 import { greyOf, type Raster } from './raster.ts'
+import { createTextEngine } from './text-engine.ts'
+import { readTyped } from './typed-sheet.ts'
 
 export interface PhotoReaderOptions {
   /** The project's folder; the net lies under it. Taken from where the process was started. */
@@ -64,7 +66,8 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
     createNet(join(options.root ?? process.cwd(), 'worker/model/digits.onnx')),
   ])
   const tools: ReadingTools = { findCodes, net, layoutOf: findLayoutByCode }
-  const text = createPrintedText()
+  const engine = createTextEngine()
+  const text = createPrintedText(engine)
 
   async function finish(
     raster: Raster,
@@ -75,6 +78,7 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
     reading: SheetReading,
     hooks: ReadHooks,
   ): Promise<PageReading> {
+    await readTyped(grey, reading, { engine, net }, hooks.known)
     if (hooks.onFlattened && reading.map && reading.layout) {
       const started = performance.now()
       await hooks.onFlattened(page, await flattenPage(raster, reading.map, reading.layout.page))
@@ -127,6 +131,6 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
         return finished
       }),
 
-    close: () => text.close(),
+    close: () => engine.close(),
   }
 }
