@@ -1,12 +1,14 @@
 /**
- * Pictures nobody should send: damaged files, no sheet, other people's codes, half a sheet, two sheets, a sheet put together
- * from pieces. Each is made from a number, so that a failure can be made again.
+ * Pictures nobody should send: damaged files, no sheet, text, other people's codes, half a sheet, two sheets, a sheet put
+ * together from pieces. Each is made from a number, so that a failure can be made again.
  */
 import encodeQR from 'qr'
 import sharp, { type Region, type Sharp } from 'sharp'
 import { findLayout } from '../../shared/layouts/registry.ts'
 import { cornerCodeText, makeSheetCode } from '../../shared/layouts/sheet-code.ts'
 import { makeGround } from './background.ts'
+import { claimHuge, loseMiddle, turnBits } from './foreign-damage.ts'
+import { screenshot, textPage, textPicture } from './foreign-pages.ts'
 import { makePhoto } from './make-photo.ts'
 import { type Chance, chanceOf } from './random.ts'
 
@@ -90,6 +92,12 @@ const MAKERS: Readonly<Record<string, Maker>> = {
   'random bytes': async (chance) => Buffer.from(Array.from({ length: chance.whole(0, 5000) }, () => chance.whole(0, 255))),
   'JPEG head, random body': async (chance, a) =>
     Buffer.concat([a.jpeg.subarray(0, 700), Buffer.from(Array.from({ length: 20_000 }, () => chance.whole(0, 255)))]),
+  'bits turned over': async (chance, a) => turnBits(a.jpeg, chance),
+  'a hole in the file': async (chance, a) => loseMiddle(a.jpeg, chance),
+  'claims to be huge': async (chance, a) => claimHuge(a.jpeg, chance),
+  'a page of text': (chance) => textPicture(chance),
+  'a PDF of text': (chance) => textPage(chance),
+  'a screenshot': (chance, a) => screenshot(chance, a.jpeg),
   'one tone': async (chance) => save(plain(chance.whole(1, 1600), chance.whole(1, 1600), chance.pick([0, 128, 255]))),
   noise: async (chance) => {
     const raw = Buffer.from(Uint8Array.from({ length: 900 * 1200 }, () => chance.whole(0, 255)))

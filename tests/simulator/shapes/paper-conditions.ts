@@ -12,5 +12,7 @@ export const PAPER_CONDITIONS: readonly Condition[] = [
   { name: 'corner-torn', lost: { folded: false, legs_mm: [14, 40] } },
   { name: 'thumb', thumb: true },
   { name: 'strong-tilt', shot: { tilt: [0.32, 0.55], fill: [0.85, 0.95] } },
-  { name: 'small-page', shot: { fill: [0.38, 0.42] } },
+  // Two fifths of the picture's area, then two fifths of its width.
+  { name: 'small-page', shot: { fill: [0.62, 0.68] } },
+  { name: 'tiny-page', shot: { fill: [0.38, 0.42] } },
 ]
