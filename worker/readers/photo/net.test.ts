@@ -65,6 +65,14 @@ describe('the digit net', () => {
     expect(best(p, 0)).toBe(BLANK)
   })
 
+  it('looks at the smallest mark, and gives cells between empty ones their own answer', async () => {
+    const cells = new Float32Array(3 * CELL_PX)
+    for (let y = 12; y < 28; y++) for (const x of [7, 8]) cells[CELL_PX + y * CELL_WIDTH_PX + x] = 0.4
+    const p = await net.classify(cells, 3)
+    expect([best(p, 0), best(p, 2)]).toEqual([BLANK, BLANK])
+    expect(p[CLASS_COUNT + BLANK]).toBeLessThan(0.9)
+  })
+
   it('refuses an array that does not hold the number of cells it is told', async () => {
     await expect(net.classify(new Float32Array(10), 1)).rejects.toThrow(RangeError)
   })

@@ -5,7 +5,8 @@
 import { readFile } from 'node:fs/promises'
 import { dirname, join } from 'node:path'
 import { z } from 'zod'
-import { CELL_HEIGHT_PX, CELL_PX, CELL_WIDTH_PX, CLASS_COUNT, type DigitNet } from '../../../shared/reading/classes.ts'
+import { inkFree } from '../../../shared/reading/cells/ink-free.ts'
+import { BLANK, CELL_HEIGHT_PX, CELL_PX, CELL_WIDTH_PX, CLASS_COUNT, type DigitNet } from '../../../shared/reading/classes.ts'
 
 /** Cells a run: enough to keep the kernels busy, small enough to stay in the cache. */
 const BATCH = 64
@@ -15,6 +16,9 @@ const cardSchema = z.object({
   /** Cells whose best class is below this are looked at again, cut a pixel off to each side. */
   secondLook: z.object({ below: z.number(), temperature: z.number().positive() }),
 })
+
+/** What is left to the other classes where a cell plainly holds no ink: as the net itself gives there. */
+const DOUBT_OF_BLANK = 0.0005
 
 /** A pixel right, left, down and up, as in training's figures. */
 const SHIFTS = [
@@ -54,32 +58,41 @@ export async function createNet(modelPath: string): Promise<DigitNet> {
     async classify(cells, count) {
       if (cells.length !== count * CELL_PX)
         throw new RangeError(`${count} cells need ${count * CELL_PX} values, not ${cells.length}.`)
-      const logits = await logitsOf(cells, count)
-      const out = new Float32Array(logits.length)
-      const unsure: number[] = []
+      const out = new Float32Array(count * CLASS_COUNT).fill(DOUBT_OF_BLANK / (CLASS_COUNT - 1))
+      const inked: number[] = []
       for (let cell = 0; cell < count; cell++) {
-        if (softmaxInto(logits, card.temperature, out, cell) < card.secondLook.below) unsure.push(cell)
+        if (inkFree(cells, cell)) out[cell * CLASS_COUNT + BLANK] = 1 - DOUBT_OF_BLANK
+        else inked.push(cell)
       }
-      const again = await logitsOf(shiftedCells(cells, unsure), unsure.length * SHIFTS.length)
-      unsure.forEach((cell, i) => {
+      const logits = await logitsOf(cutOff(cells, inked, [[0, 0]]), inked.length)
+      const unsure = inked
+        .map((cell, row) => ({ cell, row }))
+        .filter(({ cell, row }) => softmaxInto(logits, row, card.temperature, out, cell) < card.secondLook.below)
+      const shifted = cutOff(
+        cells,
+        unsure.map(({ cell }) => cell),
+        SHIFTS,
+      )
+      const again = await logitsOf(shifted, unsure.length * SHIFTS.length)
+      unsure.forEach(({ cell, row }, i) => {
         for (let k = 0; k < CLASS_COUNT; k++) {
-          let sum = logits[cell * CLASS_COUNT + k]!
+          let sum = logits[row * CLASS_COUNT + k]!
           for (let s = 0; s < SHIFTS.length; s++) sum += again[(i * SHIFTS.length + s) * CLASS_COUNT + k]!
-          logits[cell * CLASS_COUNT + k] = sum / (SHIFTS.length + 1)
+          logits[row * CLASS_COUNT + k] = sum / (SHIFTS.length + 1)
         }
-        softmaxInto(logits, card.secondLook.temperature, out, cell)
+        softmaxInto(logits, row, card.secondLook.temperature, out, cell)
       })
       return out
     },
   }
 }
 
-/** The cells named, each at every shift, their edge repeated. */
-function shiftedCells(cells: Float32Array, named: readonly number[]): Float32Array {
-  const out = new Float32Array(named.length * SHIFTS.length * CELL_PX)
+/** The cells named, each cut off by every shift, their edge repeated. */
+function cutOff(cells: Float32Array, named: readonly number[], shifts: ReadonlyArray<readonly [number, number]>): Float32Array {
+  const out = new Float32Array(named.length * shifts.length * CELL_PX)
   let at = 0
   for (const cell of named) {
-    for (const [right, down] of SHIFTS) {
+    for (const [right, down] of shifts) {
       for (let y = 0; y < CELL_HEIGHT_PX; y++) {
         const row = cell * CELL_PX + within(y + down, CELL_HEIGHT_PX) * CELL_WIDTH_PX
         for (let x = 0; x < CELL_WIDTH_PX; x++) out[at++] = cells[row + within(x + right, CELL_WIDTH_PX)]!
@@ -91,13 +104,13 @@ function shiftedCells(cells: Float32Array, named: readonly number[]): Float32Arr
 
 const within = (place: number, size: number) => Math.min(size - 1, Math.max(0, place))
 
-/** Softmax of one cell's logits / temperature into `out`; gives the highest probability. */
-function softmaxInto(logits: Float32Array, temperature: number, out: Float32Array, cell: number): number {
-  const from = cell * CLASS_COUNT
-  const values = logits.subarray(from, from + CLASS_COUNT)
+/** Softmax of one row of logits / temperature into a cell's place of `out`; gives the highest probability. */
+function softmaxInto(logits: Float32Array, row: number, temperature: number, out: Float32Array, cell: number): number {
+  const values = logits.subarray(row * CLASS_COUNT, (row + 1) * CLASS_COUNT)
+  const into = cell * CLASS_COUNT
   const top = Math.max(...values)
   let sum = 0
-  for (let k = 0; k < CLASS_COUNT; k++) sum += out[from + k] = Math.exp((values[k]! - top) / temperature)
-  for (let k = 0; k < CLASS_COUNT; k++) out[from + k]! /= sum
+  for (let k = 0; k < CLASS_COUNT; k++) sum += out[into + k] = Math.exp((values[k]! - top) / temperature)
+  for (let k = 0; k < CLASS_COUNT; k++) out[into + k]! /= sum
   return 1 / sum
 }
