@@ -14,6 +14,10 @@ const OTHER_TICKS = [
   'rops_belt_ok',
   'extinguisher_near',
   'audience_briefed',
+  'hitch_locked',
+  'load_tied',
+  'road_fit',
+  'driver_licensed',
 ]
 
 const unticked = (ctx: CheckContext, keys: readonly string[]) => keys.filter((key) => ctx.readings[key] === false)

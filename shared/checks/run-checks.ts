@@ -10,6 +10,7 @@ import { dateRules } from './dates.ts'
 import { fittingRules } from './fitting.ts'
 import { fuelRules } from './fuel.ts'
 import { fuelLoadRules } from './fuel-load.ts'
+import { haulRules } from './haul.ts'
 import { hourMeterRules } from './hour-meter.ts'
 import { instrumentRules } from './instrument.ts'
 import { jarRules } from './jar.ts'
@@ -21,7 +22,7 @@ import { tyreRules } from './tyres.ts'
 import { workTimeRules } from './work-time.ts'
 
 /** Version of the set of rules that judged a record. Change it with any change of a rule or a default limit. */
-export const RULES_VERSION = '1.0.0'
+export const RULES_VERSION = '1.1.0'
 
 /** Every rule, by id. */
 export const RULES: readonly Rule[] = [
@@ -33,6 +34,7 @@ export const RULES: readonly Rule[] = [
   fittingRules,
   fuelRules,
   fuelLoadRules,
+  haulRules,
   hourMeterRules,
   instrumentRules,
   jarRules,

@@ -78,6 +78,27 @@ export const SHEET_CASES: readonly Case[] = [
     'longer than 12 h',
   ),
   row('L07', 'stop', sheet({ jar_end_ml: 'two' }), sheet({ jar_end_ml: 2000 }), 'a number is needed'),
+  row(
+    'L10',
+    'doubt',
+    sheet({ work_kind: 'transport', distance_km: 15.2, load_kg: null, trip_count: 4 }),
+    sheet({ work_kind: 'transport', distance_km: 15.2, load_kg: 3450, trip_count: 4 }),
+    'left blank beside transport',
+  ),
+  row(
+    'L10',
+    'doubt',
+    sheet({ work_kind: 'pto', worked_kg: null, pto_rpm: null, distance_km: null }),
+    sheet({ work_kind: 'pto', worked_kg: 1860, pto_rpm: 540, distance_km: null }),
+    'left blank beside PTO work',
+  ),
+  row(
+    'L11',
+    'stop',
+    sheet({ distance_km: 7.6, distance_loaded_km: 15.2 }),
+    sheet({ distance_km: 15.2, distance_loaded_km: 15.2 }),
+    '15.2 km loaded of 7.6 km',
+  ),
   // n = 6: 1.972817 deviations at 1 %. One of six further off than that; and the same with peers that spread.
   row(
     'Q51',
