@@ -52,12 +52,13 @@ export function contextOf(readings: Readings, handedFacts: Facts, options: Check
   const facts = factsWithReadings(readings, handedFacts)
   const run = runOf(readings)
   const fuel = measureFuel(readings, facts)
+  const limit = (name: LimitName) => options.limits?.[name] ?? LIMITS[name].value
   const cell = (key: string) => options.cells?.[key] ?? cellWithoutLayout(key)
   return {
     readings,
     facts,
     kit: kitOf(facts),
-    results: computeResults(readings, facts),
+    results: computeResults(readings, facts, { ptoShare: limit('pto_share_of_rated') }),
     fuel,
     plot: measurePlot(readings, facts),
     run,
@@ -70,7 +71,7 @@ export function contextOf(readings: Readings, handedFacts: Facts, options: Check
     keys: (stem) => (readings[stem] !== undefined ? [stem] : indexes(readings, stem).map((n) => `${stem}[${n}]`)),
     label: (key) => leading(cell(key).label),
     cell,
-    limit: (name) => options.limits?.[name] ?? LIMITS[name].value,
+    limit,
     fuelCells: fuel.cells,
   }
 }

@@ -1,6 +1,5 @@
 /** The fuel rate against what the engine and the work can ask for. */
-import { draft_n, draftFiguresOf, drawbarPower, expectedFuel, TRACTION } from '../trial/draft.ts'
-import { kmh, quantity } from '../trial/quantity.ts'
+import { ptoPowerOf } from '../trial/facts.ts'
 import { above, below, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { found, type Rule } from './rule.ts'
@@ -8,11 +7,7 @@ import { figure } from './text.ts'
 
 const BALANCE = ['jar_start_ml', 'topup_ml', 'jar_end_ml']
 
-/** Rated PTO power, kW: from a test report, else a share of the engine's. */
-function ptoPower(ctx: CheckContext): number | null {
-  const { ptoPower_kw, ratedPower_kw } = ctx.facts
-  return ptoPower_kw ?? (ratedPower_kw == null ? null : ctx.limit('pto_share_of_rated') * ratedPower_kw)
-}
+const ptoPower = (ctx: CheckContext) => ptoPowerOf(ctx.facts, ctx.limit('pto_share_of_rated'))
 
 const RATE = [...BALANCE, 't_start', 't_end']
 
@@ -68,34 +63,6 @@ const q30: Rule = {
 /** L/ha by operation. Plough: Missouri G1208, 1.68 gal/acre; disc, cultivator, harrow: the same table; the others [P], middle of a range. */
 const USUAL_L_HA = { plough: 15.715, disc: 8.89, cultivator: 5.61, harrow: 3.74, rotary_tiller: 21, subsoiler: 22.5 } as const
 
-const SOILS = ['fine', 'medium', 'coarse'] as const
-
-/** C19 by C22 for the run: draft from tool, soil, speed, width and depth; throttle from the engine speed in work. */
-function modelled(ctx: CheckContext): number | null {
-  const { operation, drive, ratedRpm } = ctx.facts
-  const soil = SOILS.find((known) => known === ctx.text('soil_class'))
-  const { speed_km_h, width_mean_m, depth_mean_cm } = ctx.results
-  const [power, rpm, figures] = [ptoPower(ctx), ctx.number('rpm_load'), operation ? draftFiguresOf(operation) : null]
-  if (
-    !soil ||
-    !figures ||
-    !power ||
-    !ratedRpm ||
-    rpm === null ||
-    speed_km_h.value === null ||
-    width_mean_m.value === null ||
-    depth_mean_cm.value === null
-  )
-    return null
-  const speed = kmh(speed_km_h.value)
-  const drawbar_kw = drawbarPower(
-    draft_n(figures, soil, speed, width_mean_m.value, quantity(depth_mean_cm.value, 'cm')) / 1000,
-    speed,
-  )
-  const load = drawbar_kw / TRACTION[drive ?? '2WD'].tilled / power
-  return load > 0 && load <= 1 ? expectedFuel(load, Math.min(1, rpm / ratedRpm), quantity(power, 'kW')) : null
-}
-
 const q31: Rule = {
   id: 'Q31',
   version: 1,
@@ -104,7 +71,7 @@ const q31: Rule = {
   cells: [...RATE, 'soil_class', 'rpm_load'],
   why: 'Far from what draft and throttle would burn; the model is rough (D497.7 [F], draft bands [M]).',
   check: (ctx) => {
-    const [rate, expected] = [ctx.results.l_per_h, modelled(ctx)]
+    const [rate, expected] = [ctx.results.l_per_h, ctx.results.expected_l_per_h.value]
     if (rate.value === null || expected === null) return []
     if (!above((100 * Math.abs(rate.value - expected)) / expected, ctx.limit('load_model_pct'))) return []
     return [

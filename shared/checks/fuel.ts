@@ -56,18 +56,19 @@ const q47: Rule = {
   version: 1,
   name: 'density',
   severity: ['stop', 'note'],
-  cells: ['density_15'],
+  cells: ['density_15', 'density_obs', 'density_temp_c'],
   why: 'Diesel lies between; another figure is g/mL for kg/m³, or another fuel (EN 590 pages).',
   check: (ctx) => {
-    const rho = ctx.facts.density15_kgm3 ?? null
+    const { value, from } = ctx.results.density15_kgm3
+    const rho = value ?? ctx.facts.density15_kgm3 ?? null
     if (rho === null) return []
     const compared = { density15_kgm3: rho }
     if (rho < ctx.limit('density_low') || rho > ctx.limit('density_high'))
       return [
         found(
           'stop',
-          ['density_15'],
-          `Density ${rho} kg/m³ at 15 °C is no diesel: ${rho > 0.7 && rho < 1 ? 'written in g/mL?' : 'misread?'}`,
+          from,
+          `Density ${rough(rho, 4)} kg/m³ at 15 °C is no diesel: ${rho > 0.7 && rho < 1 ? 'written in g/mL?' : 'misread?'}`,
           compared,
         ),
       ]
@@ -75,8 +76,8 @@ const q47: Rule = {
       return [
         found(
           'note',
-          ['density_15'],
-          `Density ${rho} kg/m³ at 15 °C; ${ctx.limit('density_note_low')} to ${ctx.limit('density_note_high')} kg/m³ is usual.`,
+          from,
+          `Density ${rough(rho, 4)} kg/m³ at 15 °C; ${ctx.limit('density_note_low')} to ${ctx.limit('density_note_high')} kg/m³ is usual.`,
           compared,
         ),
       ]

@@ -2,6 +2,8 @@
  * The numbers rules compare with: defaults that an office may set otherwise, each with its source. [P] is common practice or
  * an engineer's judgement and no standard; [M] a named standard quoted from memory; [F] seen in a published page.
  */
+import { PTO_SHARE } from '../trial/facts.ts'
+
 interface Limit {
   value: number
   unit: string
@@ -46,12 +48,15 @@ export const LIMITS = {
   speed_high_kmh: limit(12, 'km/h', '[P]'),
   speed_doubt_low_kmh: limit(0.5, 'km/h', '[P]'),
   speed_doubt_high_kmh: limit(15, 'km/h', '[P]'),
+  road_low_kmh: limit(5, 'km/h', '[P] transport'),
+  road_high_kmh: limit(40, 'km/h', '[P] transport, a tractor on a road'),
+  road_doubt_high_kmh: limit(60, 'km/h', '[P] transport'),
   speed_band_share: limit(0.4, '', '[P] around the typical range of D497 table 3 [M]'),
   timed_cv_note_pct: limit(5, '%', '[P]'),
   timed_cv_doubt_pct: limit(10, '%', '[P]'),
   tyre_pair_doubt_pct: limit(10, '%', '[P]'),
   tyre_pair_unsafe_pct: limit(25, '%', '[P]'),
-  pto_share_of_rated: limit(0.86, '', '[P] where no test report is known'),
+  pto_share_of_rated: limit(PTO_SHARE, '', '[P] where no test report is known'),
   fuel_cap_l_kwh: limit(0.316 * 1.05, 'L/kWh', '[F] full load of D497.7, and 5 %'),
   fuel_cap_stop_l_kwh: limit(0.423, 'L/kWh', '[F] full load of D497.4'),
   fuel_floor_l_kwh: limit(0.05, 'L/kWh', '[P] near idle'),

@@ -101,8 +101,8 @@ const q25: Rule = {
   version: 1,
   name: 'speed band',
   severity: ['doubt', 'note'],
-  cells: SPEED_CELLS,
-  why: 'Field speeds by tool (D497 table 3, from memory).',
+  cells: [...SPEED_CELLS, 'work_kind'],
+  why: 'Field speeds by tool (D497 table 3, from memory); transport has those of a tractor on the road [P].',
   check: (ctx) => {
     const { value: v, from } = ctx.results.speed_km_h
     if (v === null) return []
@@ -113,10 +113,15 @@ const q25: Rule = {
         high_km_h: high,
       }),
     ]
-    if (outside(v, ctx.limit('speed_doubt_low_kmh'), ctx.limit('speed_doubt_high_kmh')))
-      return told('doubt', ctx.limit('speed_doubt_low_kmh'), ctx.limit('speed_doubt_high_kmh'))
-    if (outside(v, ctx.limit('speed_low_kmh'), ctx.limit('speed_high_kmh')))
-      return told('note', ctx.limit('speed_low_kmh'), ctx.limit('speed_high_kmh'))
+    const road = ctx.text('work_kind') === 'transport'
+    const possible = [ctx.limit('speed_doubt_low_kmh'), ctx.limit(road ? 'road_doubt_high_kmh' : 'speed_doubt_high_kmh')] as const
+    if (outside(v, ...possible)) return told('doubt', ...possible)
+    const usual = [
+      ctx.limit(road ? 'road_low_kmh' : 'speed_low_kmh'),
+      ctx.limit(road ? 'road_high_kmh' : 'speed_high_kmh'),
+    ] as const
+    if (outside(v, ...usual)) return told('note', ...usual)
+    if (road) return []
     const typical = ctx.facts.operation ? TYPICAL_KMH[ctx.facts.operation] : undefined
     if (!typical) return []
     const share = ctx.limit('speed_band_share')

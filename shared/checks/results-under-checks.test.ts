@@ -5,7 +5,10 @@ import { RESULT_KEYS, type ResultKey } from '../trial/result.ts'
 import { resultsUnderChecks } from './results-under-checks.ts'
 
 const judge = (changes: Readings = {}) => resultsUnderChecks(buildReadings(changes), buildFacts(), buildOptions())
-const nulled = (changes: Readings) => RESULT_KEYS.filter((key) => judge(changes).results[key].value === null)
+const without = (changes: Readings) => RESULT_KEYS.filter((key) => judge(changes).results[key].value === null)
+/** What this sheet does not measure, and what no register tells. */
+const NOT_MEASURED = without({})
+const nulled = (changes: Readings) => without(changes).filter((key) => !NOT_MEASURED.includes(key))
 
 const FUEL: ResultKey[] = [
   'fuel_ml',
@@ -17,11 +20,19 @@ const FUEL: ResultKey[] = [
   'mass_kg',
   'kg_per_h',
   'kg_per_ha',
+  'l_per_kwh',
+  'g_per_kwh',
 ]
 
 describe('a stop', () => {
   it('leaves every result standing on a sound sheet', () => {
-    expect(nulled({})).toEqual([])
+    const { results } = judge()
+    const why = NOT_MEASURED.map((key) => results[key].reason?.code)
+    expect(new Set(why)).toEqual(new Set(['not_on_sheet', 'missing_fact']))
+    expect(NOT_MEASURED.filter((key) => results[key].reason?.code === 'missing_fact')).toEqual([
+      'fuel_cost_per_ha',
+      'cost_per_ha',
+    ])
   })
 
   it.each([

@@ -34,5 +34,5 @@ const GUARDS = [...CIRCUIT_TICKS, ...AIR_TICKS, 'topup_ml[1]', 'topup_ml[2]', 't
 
 /** Cells a result stands on: the ones in its formula and, for all that is made of fuel, the fitting of the jar and every filling. */
 function dependsOn(from: readonly string[]): Set<string> {
-  return new Set(from.includes('jar_start_ml') ? [...from, ...GUARDS] : from)
+  return new Set(from.some((cell) => /^(jar_start|topup)_/.test(cell)) ? [...from, ...GUARDS] : from)
 }

@@ -3,10 +3,10 @@
 /** At most `decimals` decimals, without trailing zeros; no digits are added. */
 export const figure = (value: number, decimals = 2): string => String(Number(value.toFixed(decimals)) || 0).replace('-', '−')
 
-/** Three figures, whatever the size. */
-export function rough(value: number): string {
+/** Three figures, or as many as asked for, whatever the size. */
+export function rough(value: number, figures = 3): string {
   if (value === 0) return '0'
-  const decimals = Math.max(0, 2 - Math.floor(Math.log10(Math.abs(value))))
+  const decimals = Math.max(0, figures - 1 - Math.floor(Math.log10(Math.abs(value))))
   return figure(value, Math.min(6, decimals))
 }
 

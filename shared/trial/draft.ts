@@ -5,8 +5,7 @@
 
 import type { Operation } from './facts.ts'
 import { type Quantity, quantity } from './quantity.ts'
-
-export type Soil = 'fine' | 'medium' | 'coarse'
+import type { Soil } from './soil.ts'
 
 interface DraftFigures {
   a: number
@@ -17,25 +16,34 @@ interface DraftFigures {
   range_pct: number
   /** What the width stands for: metres, or a number of tools. */
   per: 'metre' | 'tool'
-  source: '[F]' | '[M]'
 }
 
-/** D497 table 1, SI. PTO-driven rotary tillers are not in this equation. */
-export const DRAFT: Readonly<Record<'plough' | 'subsoiler' | 'chisel' | 'tandem_disc' | 'field_cultivator', DraftFigures>> = {
-  plough: { a: 652, b: 0, c: 5.1, soil: { fine: 1, medium: 0.7, coarse: 0.45 }, range_pct: 40, per: 'metre', source: '[F]' },
-  subsoiler: { a: 226, b: 0, c: 1.8, soil: { fine: 1, medium: 0.7, coarse: 0.45 }, range_pct: 50, per: 'tool', source: '[M]' },
-  chisel: { a: 91, b: 5.4, c: 0, soil: { fine: 1, medium: 0.85, coarse: 0.65 }, range_pct: 50, per: 'tool', source: '[F]' },
-  tandem_disc: { a: 309, b: 16, c: 0, soil: { fine: 1, medium: 0.88, coarse: 0.78 }, range_pct: 50, per: 'metre', source: '[M]' },
-  field_cultivator: {
-    a: 46,
-    b: 2.8,
-    c: 0,
-    soil: { fine: 1, medium: 0.85, coarse: 0.65 },
-    range_pct: 30,
-    per: 'tool',
-    source: '[M]',
-  },
-}
+const HARD = { fine: 1, medium: 0.7, coarse: 0.45 }
+const TINED = { fine: 1, medium: 0.85, coarse: 0.65 }
+const DISCED = { fine: 1, medium: 0.88, coarse: 0.78 }
+
+const row = (a: number, b: number, c: number, soil: Record<Soil, number>, range_pct: number, per: DraftFigures['per']) =>
+  ({ a, b, c, soil, range_pct, per }) satisfies DraftFigures
+
+/**
+ * D497 table 1, SI. A, B, C of plough, chisel, secondary field cultivator and the soil factors were seen in pages and code [F];
+ * the other figures and all ranges are from memory [M]. PTO-driven rotary tillers are not in this equation.
+ */
+export const DRAFT = {
+  plough: row(652, 0, 5.1, HARD, 40, 'metre'),
+  subsoiler: row(226, 0, 1.8, HARD, 50, 'tool'),
+  winged_subsoiler: row(294, 0, 2.4, HARD, 50, 'tool'),
+  chisel: row(91, 5.4, 0, TINED, 50, 'tool'),
+  chisel_sweep: row(107, 6.3, 0, TINED, 50, 'tool'),
+  chisel_twisted: row(123, 7.3, 0, TINED, 50, 'tool'),
+  tandem_disc: row(309, 16, 0, DISCED, 50, 'metre'),
+  tandem_disc_secondary: row(216, 11.2, 0, DISCED, 30, 'metre'),
+  offset_disc: row(364, 18.8, 0, DISCED, 50, 'metre'),
+  offset_disc_secondary: row(254, 13.2, 0, DISCED, 30, 'metre'),
+  field_cultivator: row(46, 2.8, 0, TINED, 30, 'tool'),
+  field_cultivator_secondary: row(32, 1.9, 0, TINED, 25, 'tool'),
+  row_cultivator: row(140, 7, 0, TINED, 15, 'tool'),
+} as const satisfies Record<string, DraftFigures>
 
 /** C22, N: F·(A + B·S + C·S²)·W·T, with S in km/h, T in cm and W in metres or tools (as the figures say). */
 export function draft_n(
@@ -83,8 +91,17 @@ export const yearlyFuel = (rated: Quantity<'kW'>): Quantity<'L/h'> => quantity(0
 export const expectedPerHectare = (perHour: Quantity<'L/h'>, capacity: Quantity<'ha/h'>): Quantity<'L/ha'> =>
   quantity(perHour / capacity, 'L/ha')
 
-/** The draft figures of an operation whose width is in metres; null where the equation wants a number of tools, or does not hold. */
-export function draftFiguresOf(operation: Operation): DraftFigures | null {
-  if (operation === 'plough') return DRAFT.plough
-  return operation === 'disc' ? DRAFT.tandem_disc : null
+/** The usual tool of an operation; the others of the table are named by the implement's type. */
+const TOOL_OF: Partial<Record<Operation, keyof typeof DRAFT>> = {
+  plough: 'plough',
+  disc: 'tandem_disc',
+  cultivator: 'field_cultivator',
+  subsoiler: 'subsoiler',
+}
+
+/** The draft figures of a tool; null where the equation does not hold for it. */
+export function draftFiguresOf(operation: Operation | null, type: string | null = null): DraftFigures | null {
+  const named = type !== null && Object.hasOwn(DRAFT, type) ? (type as keyof typeof DRAFT) : null
+  const tool = named ?? (operation ? TOOL_OF[operation] : undefined)
+  return tool ? DRAFT[tool] : null
 }

@@ -1,5 +1,6 @@
 /** What registers and plan know of a run. All optional: a result that lacks a fact is null and says so. */
 import { z } from 'zod'
+import { convert, quantity, unitFromTick } from './quantity.ts'
 import { numberAt, type Readings, textAt } from './readings.ts'
 
 export const OPERATIONS = ['plough', 'disc', 'cultivator', 'rotary_tiller', 'harrow', 'subsoiler'] as const
@@ -101,14 +102,27 @@ const FROM_READINGS = {
   ptoPower_kw: 'pto_power_kw',
   ratedRpm: 'rated_rpm',
   density15_kgm3: 'density_15',
+  fuelPrice_per_l: 'fuel_price',
+  toolCount: 'tool_count',
   airTemp_c: 'air_temp_c',
 } as const
+
+/** Horsepower comes in two sizes, 1.4 % apart: the tick beside the number says which. */
+function ratedPower(readings: Readings): number | null {
+  const [power, unit] = [numberAt(readings, FROM_READINGS.ratedPower_kw), textAt(readings, 'rated_power_unit')]
+  return power === null || unit === null ? power : inKilowatts(power, unit)
+}
+
+function inKilowatts(power: number, text: string): number {
+  const unit = unitFromTick('power', text)
+  return convert(quantity(power, unit), unit, 'kW')
+}
 
 /** Facts with their gaps filled from readings that hold the same thing. The register wins. */
 export function factsWithReadings(readings: Readings, facts: Facts): Facts {
   const filled: Facts = { ...facts }
   for (const [fact, key] of Object.entries(FROM_READINGS) as Array<[keyof typeof FROM_READINGS, string]>) {
-    filled[fact] ??= numberAt(readings, key)
+    filled[fact] ??= fact === 'ratedPower_kw' ? ratedPower(readings) : numberAt(readings, key)
   }
   const drive = textAt(readings, 'drive')
   if (!filled.drive && (drive === '2WD' || drive === '4WD')) filled.drive = drive
@@ -116,6 +130,13 @@ export function factsWithReadings(readings: Readings, facts: Facts): Facts {
   filled.operation ??= OPERATIONS.find((known) => known === operation) ?? null
   return filled
 }
+
+/** PTO power over rated engine power where no test report is known [P]. */
+export const PTO_SHARE = 0.86
+
+/** Rated PTO power, kW: from a test report, else a share of the engine's; null when neither is known. */
+export const ptoPowerOf = (facts: Facts, share: number = PTO_SHARE): number | null =>
+  facts.ptoPower_kw ?? (facts.ratedPower_kw == null ? null : share * facts.ratedPower_kw)
 
 /** A kit no register tells of: common practice, a default and no standard. A result that leans on it says so. */
 export const USUAL_KIT = {

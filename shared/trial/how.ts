@@ -10,6 +10,7 @@ const HOW: Record<ResultKey, string> = {
   l_per_acre: 'fuel used ÷ area in acres',
   ml_per_m3: 'fuel used ÷ (area × mean depth)',
   fuel15_ml: 'each level brought to 15 °C by its own temperature, then the balance',
+  density15_kgm3: 'as it was told',
   mass_kg: 'fuel used at 15 °C × density at 15 °C',
   kg_per_h: 'mass of fuel ÷ time with the engine on',
   kg_per_ha: 'mass of fuel ÷ area',
@@ -29,7 +30,36 @@ const HOW: Record<ResultKey, string> = {
   width_cv_pct: '100 × spread ÷ mean width',
   speed_km_h: '3.6 × runs × distance ÷ all their times',
   slip_pct: 'way or turns in work against those without load',
+  draft_n: 'by tool, soil, speed, width and depth; the table is right within 15 to 50 %',
+  draft_low_n: 'draft to expect − the range of the table',
+  draft_high_n: 'draft to expect + the range of the table',
+  drawbar_kw: 'draft × speed',
+  pto_kw: '2π × PTO speed × torque',
+  load_pct: 'power asked of the PTO ÷ its rated power',
+  energy_kwh: 'draft × way of all passes',
+  l_per_kwh: 'fuel used, turns and all, ÷ work done',
+  g_per_kwh: 'mass of fuel ÷ work done',
+  expected_l_per_h: 'by load, engine speed and rated PTO power',
+  expected_older_l_per_h: 'by load and rated PTO power',
+  yearly_l_per_h: '0.223 × rated PTO power',
+  expected_l_per_ha: 'fuel to expect per hour ÷ effective field capacity',
+  soil_water_pct: '100 × (wet − dry) ÷ (dry − can), mean of the samples',
+  fuel_cost_per_ha: 'fuel per hectare × its price',
+  cost_per_ha: 'fuel per hectare × its price + driver and machine per hour ÷ field capacity',
+  l_per_100_km: 'fuel used ÷ distance driven × 100',
+  l_per_t: 'fuel used ÷ load of all trips',
+  l_per_t_km: 'fuel used ÷ (load × way it was carried)',
 }
+
+/** Words of a figure where a cell tells that it was made another way. */
+const OTHERWISE: ReadonlyArray<{ key: ResultKey; cell: string; says: string }> = [
+  { key: 'fuel_ml', cell: 'jar_start_g', says: '(jar before + top-ups − jar after, by mass) ÷ density' },
+  { key: 'fuel15_ml', cell: 'jar_start_g', says: '(jar before + top-ups − jar after, by mass) ÷ density' },
+  { key: 'mass_kg', cell: 'jar_start_g', says: 'jar before + top-ups − jar after, with what the air carried' },
+  { key: 'density15_kgm3', cell: 'density_obs', says: 'from the hydrometer at its temperature' },
+  { key: 'energy_kwh', cell: 'pto_torque_nm', says: 'PTO power × field time' },
+  { key: 'l_per_t', cell: 'worked_kg', says: 'fuel used ÷ mass that went through the machine' },
+]
 
 interface Made {
   key: string
@@ -42,6 +72,8 @@ interface Made {
 export function howOf({ key, formula, from }: Made): string {
   if (key === 'area_m2' || key === 'area_ha') return shapeOf(from)
   if (key === 'slip_pct') return formulaOf(formula)?.says ?? HOW.slip_pct
+  const other = OTHERWISE.find((way) => way.key === key && from.includes(way.cell))
+  if (other) return other.says
   return (HOW as Record<string, string>)[key] ?? `by formula ${formula}`
 }
 

@@ -2,6 +2,7 @@
 import { type Facts, kitAssumptions, kitOf } from './facts.ts'
 import { fuelAt15, fuelUsed } from './fuel.ts'
 import { type Known, known, lacking, type Measure, type Part } from './measure.ts'
+import { measureDensity } from './measure-density.ts'
 import { ml, quantity } from './quantity.ts'
 import { isBlank, numberAt, type Readings, type Repeat, repeats, textAt } from './readings.ts'
 import { jarStep_ml, rectangularU, SPREAD, stepDifferenceU, stepU } from './uncertainty.ts'
@@ -34,6 +35,10 @@ function balanceOf(readings: Readings): Balance | Measure {
   if (textAt(readings, 'fuel_method') === 'W') {
     return lacking('not_on_sheet', 'Fuel measured by weighing: this sheet holds no masses.', ['fuel_method', ...cells])
   }
+  // Refilled to the same line the jar's two levels are one, and need not be written.
+  const refilled =
+    textAt(readings, 'fuel_method') === 'L' && topups.length > 0 && LEVELS.every((key) => readings[key] === undefined)
+  if (refilled) return { start: 0, end: 0, topups, cells: topups.map((t) => t.key) }
   const start = numberAt(readings, 'jar_start_ml')
   const end = numberAt(readings, 'jar_end_ml')
   if (start === null || end === null) {
@@ -76,21 +81,18 @@ function fuelParts(balance: Balance, readings: Readings, facts: Facts): Part[] {
 export function measureFuelAt15(readings: Readings, facts: Facts): Measure {
   const balance = balanceOf(readings)
   if ('known' in balance) return balance
-  const density = facts.density15_kgm3 ?? null
-  if (density === null)
-    return lacking('missing_fact', 'The density of the fuel at 15 °C is not known.', [...balance.cells, 'density_15'])
+  const density = measureDensity(readings, facts)
+  if (!density.known) return { ...density, cells: [...balance.cells, ...density.cells] }
   const pairs = [
     { key: 'fuel_temp_start_c', volume: balance.start, sign: 1 },
     ...balance.topups.map((t) => ({ key: `topup_temp_c[${t.n}]`, volume: t.value, sign: 1 })),
     { key: 'fuel_temp_end_c', volume: balance.end, sign: -1 },
   ]
-  const cells = [...balance.cells, ...pairs.map((p) => p.key), 'density_15']
+  const cells = [...balance.cells, ...pairs.map((p) => p.key), ...density.cells]
   const levels = pairs.map((pair) => ({ ...pair, temp_c: numberAt(readings, pair.key) }))
   const cold = levels.find((level) => level.temp_c === null)
   if (cold) return lacking('blank', 'A fuel temperature is missing: each level is corrected at its own.', cells)
-  if (density < 653 || density > 1075)
-    return lacking('impossible', `Density ${density} kg/m³ is no diesel: written in g/mL?`, cells)
-  const rho = quantity(density, 'kg/m3')
+  const rho = quantity(density.value, 'kg/m3')
   const warm = levels.map((level) => ({ volume: ml(level.volume), temp_c: level.temp_c ?? 15 }))
   const [first, ...rest] = warm
   const last = rest.pop()

@@ -20,6 +20,8 @@ const SIDES = ['side_ab_m', 'side_bc_m', 'side_cd_m', 'side_da_m'] as const
 /** A taped length with what the tape leaves open. */
 function length(readings: Readings, key: string): Measure {
   const value = numberAt(readings, key)
+  const plotless = [...SIDES, 'pass_length_m', 'tri_a[1]'].every((cell) => readings[cell] === undefined)
+  if (plotless) return lacking('not_on_sheet', 'This sheet measures no plot.', [key])
   if (value === null)
     return lacking(isBlank(readings, key) ? 'blank' : 'not_on_sheet', 'No area: a side of the plot is missing.', [key])
   return known(value, [key], [{ name: 'tape', u: tapeU_m(value) }])

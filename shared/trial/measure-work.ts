@@ -1,6 +1,6 @@
 /** Depth, width, speed, slip and time as measures. */
 import { runOf, timesOf } from './clock.ts'
-import { type Known, known, lacking, type Measure } from './measure.ts'
+import { type Known, known, lacking, type Measure, unwritten } from './measure.ts'
 import { metres, seconds } from './quantity.ts'
 import { numberAt, type Readings, type Repeat, repeats } from './readings.ts'
 import { slipByDistance, slipByTime, slipByTurns } from './slip.ts'
@@ -14,7 +14,8 @@ const keys = (cells: readonly Repeat[]) => cells.map((cell) => cell.key)
 /** Mean depth, cm: scatter, the rule's step, and where the undisturbed surface is. */
 export function measureDepth(readings: Readings): Measure {
   const cells = repeats(readings, 'depth_cm')
-  if (cells.length === 0) return lacking('blank', 'No depth is written.', ['depth_cm[1]'])
+  if (cells.length === 0)
+    return unwritten(readings, ['depth_cm[1]'], { blank: 'No depth is written.', absent: 'This sheet measures no depth.' })
   return known(mean(values(cells)), keys(cells), [
     { name: 'scatter of the depths', u: typeA(values(cells)) ?? 0 },
     { name: 'step of the rule', u: stepU(SPREAD.depthStep_cm) },
@@ -25,7 +26,8 @@ export function measureDepth(readings: Readings): Measure {
 /** Mean width, m: its scatter, but never less than one step of the tape (equal readings are no certainty). */
 export function measureWidth(readings: Readings): Measure {
   const cells = repeats(readings, 'width_m')
-  if (cells.length === 0) return lacking('blank', 'No width is written.', ['width_m[1]'])
+  if (cells.length === 0)
+    return unwritten(readings, ['width_m[1]'], { blank: 'No width is written.', absent: 'This sheet measures no width.' })
   const u = Math.max(typeA(values(cells)) ?? 0, stepU(SPREAD.widthStep_m))
   return known(mean(values(cells)), keys(cells), [{ name: 'scatter of the widths', u }])
 }
@@ -35,7 +37,10 @@ export function measureSpread(readings: Readings, stem: string): { deviation: Me
   const cells = repeats(readings, stem)
   const s = standardDeviation(values(cells))
   const cv = variation_pct(values(cells))
-  const few = lacking('blank', 'Fewer than two readings: no spread.', keys(cells).length > 0 ? keys(cells) : [`${stem}[1]`])
+  const few = unwritten(readings, keys(cells).length > 0 ? keys(cells) : [`${stem}[1]`], {
+    blank: 'Fewer than two readings: no spread.',
+    absent: 'This sheet has no such readings: no spread.',
+  })
   return {
     deviation: s === null ? few : known(s, keys(cells)),
     variation: cv === null ? few : known(cv, keys(cells)),
@@ -48,7 +53,10 @@ export function measureSpeed(readings: Readings): Measure {
   const distance = numberAt(readings, 'speed_dist_m')
   const cells = ['speed_dist_m', ...keys(runs)]
   if (distance === null || runs.length === 0)
-    return lacking('blank', 'No speed: the pegged distance or its times are missing.', cells)
+    return unwritten(readings, ['speed_dist_m', 'speed_t_s[1]'], {
+      blank: 'No speed: the pegged distance or its times are missing.',
+      absent: 'This sheet measures no speed.',
+    })
   const times = values(runs)
   if (times.some((t) => t <= 0) || distance <= 0) return lacking('impossible', 'A distance or a time of 0 gives no speed.', cells)
   const value = speedOverPegs(metres(distance), times.map(seconds))
@@ -74,7 +82,10 @@ export function measureSlip(readings: Readings): { formula: SlipMethod; slip: Me
   }
   return {
     formula: 'C12',
-    slip: lacking('blank', 'No slip: the ways of the counted wheel turns are missing.', ['dist_load_m[1]', 'dist_noload_m[1]']),
+    slip: unwritten(readings, ['dist_load_m[1]', 'dist_noload_m[1]'], {
+      blank: 'No slip: the ways of the counted wheel turns are missing.',
+      absent: 'This sheet measures no slip.',
+    }),
   }
 }
 

@@ -2,6 +2,8 @@
  * A value on its way to a result: with the cells it came from, and each part of its standard uncertainty (JCGM 100:2008).
  * Or the reason why there is none, which travels through every formula.
  */
+import type { Readings } from './readings.ts'
+
 export interface Part {
   name: string
   /** Standard uncertainty this part alone would give, in the unit of the value. */
@@ -43,6 +45,12 @@ export const lacking = (code: Reason['code'], text: string, cells: string[] = []
   reason: { code, text },
   cells,
 })
+
+/** What these cells would have told: blank when one of them is on the sheet, else not on this sheet. */
+export const unwritten = (readings: Readings, cells: string[], text: { blank: string; absent: string }): Lacking =>
+  cells.some((cell) => readings[cell] !== undefined)
+    ? lacking('blank', text.blank, cells)
+    : lacking('not_on_sheet', text.absent, cells)
 
 /** Independent parts added in quadrature. */
 export const standardUncertainty = (parts: readonly Part[]): number =>

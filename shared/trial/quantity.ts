@@ -76,7 +76,8 @@ export function convert<U extends UnitName, V extends SameDimension<U>>(value: Q
 
 const AREA_TICKS = ['m2', 'ha', 'acre'] as const
 const PRESSURE_TICKS = ['kPa', 'bar', 'psi', 'kgf/cm2'] as const
-const TICKS = { area: AREA_TICKS, pressure: PRESSURE_TICKS } as const
+const POWER_TICKS = ['kW', 'hp', 'metric_hp'] as const
+const TICKS = { area: AREA_TICKS, pressure: PRESSURE_TICKS, power: POWER_TICKS } as const
 
 /**
  * The unit a tick on the sheet names.

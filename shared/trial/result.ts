@@ -3,7 +3,7 @@ import type { FormulaId } from './formulas.ts'
 import { type Measure, type Part, type Reason, standardUncertainty } from './measure.ts'
 
 /** Version of the formulas that made a record's results. Change it with any change of a figure. */
-export const FORMULA_VERSION = '1.0.0'
+export const FORMULA_VERSION = '1.1.0'
 
 /** Coverage factor of every U (JCGM 100:2008 6.2). */
 export const COVERAGE_K = 2
@@ -16,6 +16,7 @@ export const RESULTS = {
   l_per_acre: { unit: 'L/acre', formula: 'C03', label: 'fuel per acre' },
   ml_per_m3: { unit: 'mL/m³', formula: 'C04', label: 'fuel per m³ of soil' },
   fuel15_ml: { unit: 'mL', formula: 'C02', label: 'fuel used at 15 °C' },
+  density15_kgm3: { unit: 'kg/m³', formula: 'C16', label: 'density at 15 °C' },
   mass_kg: { unit: 'kg', formula: 'C17', label: 'mass of fuel' },
   kg_per_h: { unit: 'kg/h', formula: 'C17', label: 'mass of fuel per hour' },
   kg_per_ha: { unit: 'kg/ha', formula: 'C17', label: 'mass of fuel per hectare' },
@@ -35,6 +36,25 @@ export const RESULTS = {
   width_cv_pct: { unit: '%', formula: 'C10', label: 'variation of width' },
   speed_km_h: { unit: 'km/h', formula: 'C11', label: 'speed' },
   slip_pct: { unit: '%', formula: 'C12', label: 'wheel slip' },
+  draft_n: { unit: 'N', formula: 'C22', label: 'draft to expect' },
+  draft_low_n: { unit: 'N', formula: 'C22', label: 'draft to expect, low end' },
+  draft_high_n: { unit: 'N', formula: 'C22', label: 'draft to expect, high end' },
+  drawbar_kw: { unit: 'kW', formula: 'C18', label: 'power at the drawbar' },
+  pto_kw: { unit: 'kW', formula: 'C18', label: 'power at the PTO' },
+  load_pct: { unit: '%', formula: 'C19', label: 'load of the engine' },
+  energy_kwh: { unit: 'kWh', formula: 'C18', label: 'work done' },
+  l_per_kwh: { unit: 'L/kWh', formula: 'C18', label: 'fuel per work done' },
+  g_per_kwh: { unit: 'g/kWh', formula: 'C18', label: 'mass of fuel per work done' },
+  expected_l_per_h: { unit: 'L/h', formula: 'C19', label: 'fuel to expect per hour' },
+  expected_older_l_per_h: { unit: 'L/h', formula: 'C20', label: 'fuel to expect per hour, older equation' },
+  yearly_l_per_h: { unit: 'L/h', formula: 'C21', label: 'average of a year for this power' },
+  expected_l_per_ha: { unit: 'L/ha', formula: 'C25', label: 'fuel to expect per hectare' },
+  soil_water_pct: { unit: '%', formula: 'C23', label: 'soil water, of the dry soil' },
+  fuel_cost_per_ha: { unit: 'money/ha', formula: 'C24', label: 'cost of fuel per hectare' },
+  cost_per_ha: { unit: 'money/ha', formula: 'C24', label: 'cost per hectare' },
+  l_per_100_km: { unit: 'L/100 km', formula: 'C03', label: 'fuel per 100 km' },
+  l_per_t: { unit: 'L/t', formula: 'C03', label: 'fuel per tonne' },
+  l_per_t_km: { unit: 'L/(t·km)', formula: 'C03', label: 'fuel per tonne and km' },
 } as const satisfies Record<string, { unit: string; formula: FormulaId; label: string }>
 
 export type ResultKey = keyof typeof RESULTS

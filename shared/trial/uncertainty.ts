@@ -23,6 +23,15 @@ export const SPREAD = {
   lineSetting_ml: 20,
   /** Thermometer step, °C. */
   thermometerStep_c: 1,
+  hydrometerStep_kgm3: 0.5,
+  /** Balance under a jar [P], and under a soil sample, g. */
+  balanceStep_g: 5,
+  soilBalanceStep_g: 0.01,
+  dynamometerStep_kn: 0.1,
+  tachometerStep_rpm: 10,
+  odometerStep_km: 0.1,
+  /** Half-width of a load that was counted and not weighed, as a share of itself [P]. */
+  countedLoad: 0.1,
   /** A deducted piece of plot is known to this share of itself [P]. */
   deduction: 0.05,
 } as const
