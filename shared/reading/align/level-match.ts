@@ -23,7 +23,14 @@ interface Voter {
   along: number
   profile: Profile
   lines: readonly Line[]
-  edges: ReadonlyArray<{ at: number; darkBelow: boolean }>
+  marks: readonly VotingMark[]
+}
+
+/** A line, or the end of a bar, with its votes for offsets in steps of the search. */
+interface VotingMark {
+  /** Height beside the middle of the boxes, mm. */
+  above: number
+  votes: Float32Array
 }
 
 /** Kept off a box's corners, where lines cross. */
@@ -40,38 +47,45 @@ const BAR_SIDE_MM = 0.55
 const AWAY_COST = 0.08
 const LEAN_COST = 1.5
 /** Heights beside the expected one. */
-const GROWTHS = [0.04, -0.04, 0.08, -0.08] as const
+const MOST_GROWTH = 0.08
+const GROWTHS = [0.04, -0.04, MOST_GROWTH, -MOST_GROWTH] as const
 /** A place that is so well supported needs no bending. */
 const GOOD_AS_IT_IS = 0.6
 /** Leans beside the one that neighbours give. */
 const LEANS = [0, 0.006, -0.006, 0.012, -0.012, 0.02, -0.02, 0.03, -0.03, 0.045, -0.045, 0.06, -0.06]
 
-function boxVoters(patch: Patch, part: FieldPart, dx: number, middle: number, full: number): Voter[] {
-  return part.boxes.map((box) => ({
-    along: box.x + box.width / 2 - middle,
-    profile: {
-      values: lineProfile(patch, 'rows', box.x + dx + INSET_MM, box.x + box.width + dx - INSET_MM, SHARE, CLIP),
-      start_mm: patch.y,
-      step_mm: patch.step_mm,
-      full,
-    },
-    lines: part.level,
-    edges: [],
-  }))
+/** Offsets that votes are worked out for, mm: the search looks up the nearest. */
+interface Grid {
+  from: number
+  step: number
+  count: number
 }
 
-function barVoter(patch: Patch, from: number, top: number, bottom: number, dx: number, middle: number): Voter {
-  const profile = {
-    values: lineProfile(patch, 'rows', from + dx + 0.1, from + BOX.bar + dx - 0.1, 0.5, 0.8),
-    start_mm: patch.y,
-    step_mm: patch.step_mm,
-    full: BAR_CONTRAST,
-  }
-  const edges = [
-    { at: top, darkBelow: true },
-    { at: bottom, darkBelow: false },
+const votesOn = (grid: Grid, vote: (by: number) => number): Float32Array =>
+  Float32Array.from({ length: grid.count }, (_, i) => vote(grid.from + i * grid.step))
+
+function boxVoters(patch: Patch, part: FieldPart, dx: number, middle: number, full: number, grid: Grid): Voter[] {
+  const center = part.field.y + part.field.height / 2
+  return part.boxes.map((box) => {
+    const values = lineProfile(patch, 'rows', box.x + dx + INSET_MM, box.x + box.width + dx - INSET_MM, SHARE, CLIP)
+    const profile = { values, start_mm: patch.y, step_mm: patch.step_mm, full }
+    const marks = part.level.map((line) => ({
+      above: line.from - center,
+      votes: votesOn(grid, (by) => voteOf(profile, line, by)),
+    }))
+    return { along: box.x + box.width / 2 - middle, profile, lines: part.level, marks }
+  })
+}
+
+function barVoter(patch: Patch, from: number, top: number, bottom: number, dx: number, middle: number, grid: Grid): Voter {
+  const values = lineProfile(patch, 'rows', from + dx + 0.1, from + BOX.bar + dx - 0.1, 0.5, 0.8)
+  const profile = { values, start_mm: patch.y, step_mm: patch.step_mm, full: BAR_CONTRAST }
+  const half = (bottom - top) / 2
+  const marks = [
+    { above: -half, votes: votesOn(grid, (by) => edgeVote(profile, top + by, true)) },
+    { above: half, votes: votesOn(grid, (by) => edgeVote(profile, bottom + by, false)) },
   ]
-  return { along: from + BOX.bar / 2 - middle, profile, lines: [], edges }
+  return { along: from + BOX.bar / 2 - middle, profile, lines: [], marks }
 }
 
 function mean({ values, start_mm, step_mm }: Profile, from: number, to: number): number {
@@ -95,17 +109,15 @@ interface Pose {
   growth: number
 }
 
-/** Where something printed at height `y` stands, beside where it is expected, mm. */
-const offset = (pose: Pose, along: number, y: number, center: number) =>
-  pose.shift + pose.lean * along + pose.growth * (y - center)
-
-function supportAt(voters: readonly Voter[], pose: Pose, center: number): number {
+function supportAt(voters: readonly Voter[], { shift, lean, growth }: Pose, grid: Grid): number {
   let sum = 0
   let count = 0
-  for (const { along, profile, lines, edges } of voters) {
-    for (const line of lines) sum += voteOf(profile, line, offset(pose, along, line.from, center))
-    for (const edge of edges) sum += edgeVote(profile, edge.at + offset(pose, along, edge.at, center), edge.darkBelow)
-    count += lines.length + edges.length
+  for (const { along, marks } of voters) {
+    for (const { above, votes } of marks) {
+      const by = shift + lean * along + growth * above
+      sum += votes[Math.min(Math.max(Math.round((by - grid.from) / grid.step), 0), grid.count - 1)]!
+      count++
+    }
   }
   return count === 0 ? 0 : sum / count
 }
@@ -127,25 +139,32 @@ export function matchLevel(
   const last = parts.at(-1)!.boxes.at(-1)!
   const middle = (first.x + last.x + last.width) / 2
   const { field } = parts[0]!
-  const voters = parts.flatMap((part) => boxVoters(patch, part, dx, middle, full))
-  if (Math.abs(first.x - field.x) < 0.1) {
-    const rise = BOX.barRise
-    voters.push(barVoter(patch, field.x - BOX.bar, field.y - rise, field.y + field.height + rise, dx, middle))
-  }
-  const end = field.x + field.width
-  if (Math.abs(last.x + last.width - end) < 0.1) voters.push(barVoter(patch, end, field.y, field.y + field.height, dx, middle))
-
   const center = field.y + field.height / 2
-  let best = { value: -1, support: -1, shift: around.shift_mm, lean: around.lean, growth: around.growth }
   const step = patch.step_mm / 2
   const steps = Math.ceil(reach_mm / step)
+  // As far as the steepest lean and growth reach beyond the shift.
+  const room =
+    (Math.abs(around.lean) + Math.max(...leans.map(Math.abs))) * (last.x + last.width - first.x + 2) * 0.5 +
+    (Math.abs(around.growth) + MOST_GROWTH) * field.height * 0.7
+  const beside = steps + Math.ceil(room / step)
+  const grid = { from: around.shift_mm - beside * step, step, count: 2 * beside + 1 }
+  const voters = parts.flatMap((part) => boxVoters(patch, part, dx, middle, full, grid))
+  if (Math.abs(first.x - field.x) < 0.1) {
+    const rise = BOX.barRise
+    voters.push(barVoter(patch, field.x - BOX.bar, field.y - rise, field.y + field.height + rise, dx, middle, grid))
+  }
+  const end = field.x + field.width
+  if (Math.abs(last.x + last.width - end) < 0.1)
+    voters.push(barVoter(patch, end, field.y, field.y + field.height, dx, middle, grid))
+
+  let best = { value: -1, support: -1, shift: around.shift_mm, lean: around.lean, growth: around.growth }
   const seek = (growths: readonly number[]) => {
     for (const grown of growths) {
       for (const bend of leans) {
         const cost = LEAN_COST * (Math.abs(bend) + Math.abs(grown))
         for (let k = -steps; k <= steps; k++) {
           const pose = { shift: around.shift_mm + k * step, lean: around.lean + bend, growth: around.growth + grown }
-          const support = supportAt(voters, pose, center)
+          const support = supportAt(voters, pose, grid)
           const value = support - AWAY_COST * Math.abs(k * step) - cost
           if (value > best.value) best = { value, support, ...pose }
         }
@@ -162,7 +181,7 @@ function refine(voters: readonly Voter[], pose: Pose, support: number, center: n
   const centres: number[] = []
   for (const { along, profile, lines } of voters) {
     for (const line of lines) {
-      const by = offset(pose, along, line.from, center)
+      const by = pose.shift + pose.lean * along + pose.growth * (line.from - center)
       const centre = centreOf(profile, line, by)
       if (centre !== null && voteOf(profile, line, by) > 0.25 && Math.abs(centre - by) < 0.4) centres.push(centre - by)
     }

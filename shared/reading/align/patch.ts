@@ -92,7 +92,7 @@ export function samplePatch(
         const top = data[i]! + (data[i + 1]! - data[i]!) * fx
         const low = data[i + width]! + (data[i + width + 1]! - data[i + width]!) * fx
         const dark = 1 - (top + (low - top) * (py - y0)) * perWhite
-        darkness[at] = dark < 0 ? 0 : dark > 1 ? 1 : dark
+        darkness[at] = Math.min(1, Math.max(0, dark))
       }
     }
   }
@@ -106,39 +106,35 @@ const BINS = 48
  * a stroke of writing only in places. Darkness over `clip` counts as `clip`, so that pens do not outshout pale frames.
  */
 export function lineProfile(
-  patch: Patch,
+  { columns, rows, x, y, step_mm, darkness }: Patch,
   along: 'columns' | 'rows',
   from_mm: number,
   to_mm: number,
   share: number,
   clip: number,
-  use?: (other_mm: number) => boolean,
 ): Float32Array {
-  const { columns, rows, step_mm, darkness } = patch
-  const count = along === 'columns' ? columns : rows
-  const across = along === 'columns' ? rows : columns
-  const origin = along === 'columns' ? patch.y : patch.x
-  const picked: number[] = []
-  for (let i = 0; i < across; i++) {
-    const mm = origin + (i + 0.5) * step_mm
-    if (mm >= from_mm && mm <= to_mm && (!use || use(mm))) picked.push(i)
-  }
+  const [count, across, origin] = along === 'columns' ? [columns, rows, y] : [rows, columns, x]
+  const [step, stride] = along === 'columns' ? [1, columns] : [columns, 1]
+  const first = Math.max(0, Math.ceil((from_mm - origin) / step_mm - 0.5))
+  const last = Math.min(across - 1, Math.floor((to_mm - origin) / step_mm - 0.5))
   const profile = new Float32Array(count)
   const bins = new Uint16Array(BINS)
+  const perBin = (BINS - 1) / clip
   for (let i = 0; i < count; i++) {
     bins.fill(0)
     let seen = 0
-    for (const j of picked) {
-      const value = darkness[along === 'columns' ? j * columns + i : i * columns + j]!
-      if (Number.isNaN(value)) continue
-      bins[Math.min(BINS - 1, ((value / clip) * (BINS - 1) + 0.5) | 0)]!++
+    for (let at = i * step + first * stride, end = i * step + last * stride; at <= end; at += stride) {
+      const value = darkness[at]!
+      // Outside the picture there is nothing to count.
+      if (!(value >= 0)) continue
+      bins[value >= clip ? BINS - 1 : (value * perBin + 0.5) | 0]!++
       seen++
     }
-    if (seen === 0 || seen < picked.length / 2) continue
+    if (seen === 0 || seen < (last - first + 1) / 2) continue
     let left = seen * share
     let bin = BINS - 1
     while (bin > 0 && left > bins[bin]!) left -= bins[bin--]!
-    profile[i] = (bin / (BINS - 1)) * clip
+    profile[i] = bin / perBin
   }
   return profile
 }

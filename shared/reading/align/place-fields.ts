@@ -55,13 +55,7 @@ const isGood = (fit: PartFit, tick: boolean): boolean => {
   return fit.supportX >= least && fit.supportY >= least && (tick || fit.ahead >= LEAST_AHEAD)
 }
 
-function place(
-  picture: FramedPicture,
-  homography: Homography,
-  field: ResidualField,
-  placing: Placing,
-  reach_mm: number,
-): Mark[] {
+function place(picture: FramedPicture, homography: Homography, field: ResidualField, placing: Placing, reach_mm: number): Mark[] {
   const { parts, tick, center } = placing
   const map = { homography, center, displacement: field.at(center) }
   const fits = tick

@@ -25,6 +25,10 @@ const MOST_GAPS = 3
 /** Traces from both sides that part by more than this do not follow the same line, mm. */
 const MEET_MM = 0.4
 
+/** Steps that are kept stand so far apart, mm, and weigh as much as a field. */
+const APART_MM = 8
+const STEP_WEIGHT = 1
+
 interface Step {
   x: number
   dy: number
@@ -62,14 +66,7 @@ function lineNear(picture: Picture, homography: Homography, at: Anchor, lean: nu
   return at.dy + (moment / sum + 0.5) * STEP_MM - half
 }
 
-function trace(
-  picture: Picture,
-  homography: Homography,
-  field: ResidualField,
-  y: number,
-  from: number,
-  to: number,
-): Step[] {
+function trace(picture: Picture, homography: Homography, field: ResidualField, y: number, from: number, to: number): Step[] {
   const direction = Math.sign(to - from)
   const steps: Step[] = []
   let gaps = 0
@@ -103,7 +100,7 @@ export function traceRules(picture: Picture, layout: Layout, homography: Homogra
     const back = trace(picture, homography, field, y, right, left)
     return thin(merge(forth, back)).map(({ x, dy }) => {
       const { dx } = field.at({ x, y })
-      return { key: 'rule', x, y, dx, dy, weight: 0.5, onlyDown: true as const }
+      return { key: 'rule', x, y, dx, dy, weight: STEP_WEIGHT, onlyDown: true as const }
     })
   })
 }
@@ -118,13 +115,13 @@ function heightAt(steps: readonly Step[], x: number): number | null {
   return null
 }
 
-/** Fewer steps say as much. */
+/** Fewer steps say as much, each for more of the rule. */
 function thin(steps: Step[]): Step[] {
   let last = Number.NEGATIVE_INFINITY
   return steps
     .sort((a, b) => a.x - b.x)
     .filter(({ x }) => {
-      if (x - last < WINDOW_MM) return false
+      if (x - last < APART_MM) return false
       last = x
       return true
     })

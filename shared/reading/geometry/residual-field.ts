@@ -99,8 +99,24 @@ export class ResidualField {
   }
 
   private fit(place: Point, far2: number, index: number, group: number, but: number) {
-    let [s, sx, sy, sxx, sxy, syy, u, ux, uy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
-    let [t, tx, ty, txx, txy, tyy, v, vx, vy] = [0, 0, 0, 0, 0, 0, 0, 0, 0]
+    let s = 0
+    let sx = 0
+    let sy = 0
+    let sxx = 0
+    let sxy = 0
+    let syy = 0
+    let u = 0
+    let ux = 0
+    let uy = 0
+    let t = 0
+    let tx = 0
+    let ty = 0
+    let txx = 0
+    let txy = 0
+    let tyy = 0
+    let v = 0
+    let vx = 0
+    let vy = 0
     let across = 0
     const { packed, count } = this
     for (let i = 0, at = 0; i < count; i++, at += SIZE) {
