@@ -40,6 +40,8 @@ export type Tie =
   | { kind: 'elapsed'; less: string; greater: string; start: string; end: string }
   /** Readings of like things (repeats, left and right): each within `share` of the one before, or `amount` in its own unit. */
   | { kind: 'near'; keys: readonly string[]; share?: number; amount?: number }
+  /** A row of repeats: each lies within `share` of the middle of the others, or `amount`; likely, and no proof of any. */
+  | { kind: 'alike'; keys: readonly string[]; share?: number; amount?: number }
   /** An instrument's marks: values are multiples of `step`, sometimes of `half`, rarely anything else. */
   | { kind: 'marks'; keys: readonly string[]; step: number; half?: number }
 

@@ -1,6 +1,6 @@
 /**
  * What the tillage sheet, version 1, ties together. Times stand in two chains that share start and end: top-ups and stops need
- * not follow each other. Depths and widths are tied by their means alone: likeness beside a mean would close a ring.
+ * not follow each other.
  */
 import { ACRE_M2, HECTARE_M2, type Tie } from './tie.ts'
 
@@ -39,6 +39,10 @@ export const tillageTies: ReadonlyArray<Tie> = [
   { kind: 'near', keys: numbered('dist_load_m', 2), share: 0.1 },
   { kind: 'near', keys: numbered('dist_noload_m', 2), share: 0.1 },
   { kind: 'near', keys: ['dist_load_m[2]', 'dist_noload_m[1]'], share: 0.35 },
+  { kind: 'alike', keys: numbered('depth_cm', 10), share: 0.3 },
+  { kind: 'alike', keys: numbered('width_m', 5), share: 0.12 },
+  { kind: 'alike', keys: ['side_ab_m', 'side_cd_m'], share: 0.3 },
+  { kind: 'alike', keys: ['side_bc_m', 'side_da_m'], share: 0.3 },
   { kind: 'not-less', greater: 'rpm_noload', less: 'rpm_load', usual: 600 },
   {
     kind: 'near',

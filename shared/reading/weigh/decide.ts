@@ -1,7 +1,17 @@
 /** From posteriors to clear or in doubt, with reasons in plain words. */
 import type { TickCell } from '../../layouts/layout.ts'
 import type { TickDist } from '../classes.ts'
-import { CLEAR, CLEAR_BESIDE_A_WRONG_SUM, CLEAR_TIED, DIGIT_ALLOWED, GAP_DOUBT, TICK_CLEAR, VOID_DOUBT } from './thresholds.ts'
+import {
+  CLEAR,
+  CLEAR_BESIDE_A_WRONG_SUM,
+  CLEAR_TIED,
+  DIGIT_ALLOWED,
+  GAP_DOUBT,
+  INK_ALLOWS,
+  INK_UNDECIDED,
+  TICK_CLEAR,
+  VOID_DOUBT,
+} from './thresholds.ts'
 import type { Candidate, Reason, ReasonRule, Value, Weighed } from './types.ts'
 import type { Option, Variable } from './variable.ts'
 import type { Chosen, WrongSum } from './wrong-sum.ts'
@@ -12,11 +22,13 @@ const SHOWN_FROM = 0.001
 /** What a comb or choice is taken as before it is decided whether that is clear. */
 export function chosen(variable: Variable, posterior: Float64Array | null): Chosen {
   const weight = (o: Option, k: number) => posterior?.[k] ?? o.weight
-  return {
-    value: variable.options[argMax(variable.options, weight)]!.value,
-    byInk: variable.options[argMax(variable.options, (o) => o.ink)]!.value,
-  }
+  const option = variable.options[argMax(variable.options, weight)]!
+  const inkBest = variable.options[argMax(variable.options, (o) => o.ink)]!
+  return { value: option.value, byInk: option === inkBest || allowedByInk(option) }
 }
+
+/** Not what the ink reads best, but a plain second reading of it: the sum may rest on it, though a person looks at it. */
+const allowedByInk = (option: Option): boolean => option.ink >= INK_ALLOWS && option.weakest >= DIGIT_ALLOWED
 
 const percent = (p: number) => (p >= 0.9995 ? 'over 99.9 %' : p < 0.001 ? 'under 0.1 %' : `${Number((p * 100).toFixed(1))} %`)
 const said = (value: Value) => (value === null ? 'blank' : String(value))
@@ -45,7 +57,8 @@ export function decideComb(
     add('R05', `${variable.label} was not weighed against the sheet's sums: there were too many ways to read them.`)
   // Plain ink whose sum does not hold is no question of reading: the wrong sum is the reason.
   const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= clear
-  if (value !== inkBest) {
+  const inkFavours = value !== inkBest && value.ink < INK_UNDECIDED * inkBest.ink
+  if (inkFavours) {
     add(
       'R03',
       `The ink of ${variable.label} reads ${said(inkBest.value)} (${percent(inkBest.ink)}); what else is known speaks for ${said(value.value)} (${percent(p[best]!)}).`,

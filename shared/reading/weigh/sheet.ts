@@ -5,6 +5,7 @@ import type { BoxDist, TickDist } from '../classes.ts'
 import type { Budget } from './chain.ts'
 import { chosen, decideChoice, decideComb, decideTick } from './decide.ts'
 import { weighJointly } from './joint.ts'
+import { weighRepeats } from './likeness.ts'
 import { scaled } from './scale.ts'
 import { MOST_STEPS, SHEET_LIMIT_MS } from './thresholds.ts'
 import { compileTies } from './ties/compile.ts'
@@ -36,6 +37,7 @@ export function weighSheet(
     ...combs.map((cell) => combVariable(cell, ink.combs.get(cell.key)!, layout.ties, facts)),
     ...choices.map((cell) => choiceVariable(cell, ink.ticks.get(cell.key)!)),
   ]
+  weighRepeats(variables, layout.ties)
   const factors = compileTies(layout.ties, variables)
   const until = now() + SHEET_LIMIT_MS
   const budget = (): Omit<Budget, 'floor'> => ({ steps: MOST_STEPS, expired: () => now() > until })

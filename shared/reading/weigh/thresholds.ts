@@ -19,6 +19,17 @@ export const CLEAR_BESIDE_A_WRONG_SUM = 0.99
 export const SUM_HOLDS = 0.95
 /** Knowledge may choose only among digits at least this probable in their own box. */
 export const DIGIT_ALLOWED = 0.02
+/**
+ * Of two readings of the same ink that are this nearly as probable the ink favours neither, so what else is known may choose. Where
+ * the ink does favour another value, a person looks. On the standard set, before: 23 of 4,430 tied readings, all right.
+ */
+export const INK_UNDECIDED = 0.67
+/**
+ * A sum that rests on a part read second best still vouches for its result where that reading has this much of the ink: a slip
+ * of the writer that happens to fit a plain second reading is far rarer than such ink (53 of 4,430 tied readings before, 29
+ * after, no further silent error).
+ */
+export const INK_ALLOWS = 0.05
 /** Spoiled boxes are rarer on sheets (about 1 in 100) than in training (1 in 7): their share is weighed down by this. */
 export const VOID_RARER = 0.1
 /** A reading with a box this likely crossed out or written over, by the net's own share, is in doubt. */
@@ -57,6 +68,8 @@ export const UNKNOWN_NUMBER = 0.02
 export const LATE = 0.05
 export const REVERSED = 0.002
 export const APART = 0.02
+/** A repeat speaks for the others only where it is this sure by itself. */
+export const SURE_NEIGHBOUR = 0.9
 /** Boxes of a time or date that no clock or calendar knows. */
 export const IMPOSSIBLE_FORMAT = 0.003
 

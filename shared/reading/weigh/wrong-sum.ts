@@ -4,10 +4,10 @@ import type { Factor } from './ties/compile.ts'
 import type { Value } from './types.ts'
 import type { Variable } from './variable.ts'
 
-/** What a reading was taken as, by all that is known and by its ink alone. */
+/** What a reading was taken as, and whether its ink reads so, at least as a plain second reading. */
 export interface Chosen {
   value: Value
-  byInk: Value
+  byInk: boolean
 }
 
 export interface WrongSum {
@@ -35,7 +35,7 @@ export function wrongSum(
   const claimed = odds.holds + odds.fails
   if (claimed < 0.5) return []
   // A sum that holds only with a part read against its ink does not vouch for the result: the writer's slip looks the same.
-  const vouched = factor.result !== reading || factor.readings.every((r) => chosen[r]!.value === chosen[r]!.byInk)
+  const vouched = factor.result !== reading || factor.readings.every((r) => chosen[r]!.byInk)
   if (odds.holds / claimed >= SUM_HOLDS && vouched) return []
   const written = factor.readings.filter((r) => r !== factor.result && chosen[r]!.value !== null)
   const named = written.slice(0, MOST_NAMED).map((r) => `${variables[r]!.label} ${chosen[r]!.value}`)

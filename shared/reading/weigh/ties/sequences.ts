@@ -1,6 +1,7 @@
 /** Clock order, pairs that may not fall, like readings, and a meter that runs with the clock: weights between neighbours. */
 import type { Tie } from '../../../layouts/tie.ts'
 import type { Chain, State } from '../chain.ts'
+import { likeness } from '../likeness.ts'
 import { APART, LATE, REVERSED } from '../thresholds.ts'
 import type { Variable } from '../variable.ts'
 import { tupleChain } from './tuple.ts'
@@ -44,10 +45,7 @@ export function nearChain(tie: Extract<Tie, { kind: 'near' }>, variables: Readon
   const unit = variables.map((v) => 10 ** v.places)
   return neighbourChain((before, now, at) => {
     // Neighbours in a tie have the same places; a blank between them changes nothing.
-    const a = before / unit[at]!
-    const b = now / unit[at]!
-    const window = tie.amount ?? (tie.share ?? 0) * Math.max(a, b)
-    return Math.abs(a - b) <= window + 1e-9 ? 1 : APART
+    return likeness(before / unit[at]!, now / unit[at]!, tie)
   })
 }
 
