@@ -1,8 +1,10 @@
 /** Whether a picture is good enough, and if not, which advice helps. */
 import type { Alignment } from './align/align-page.ts'
 import { project } from './geometry/homography.ts'
+import { isBlackAndWhite } from './locate/black-and-white.ts'
 import { isBlurred } from './locate/blur.ts'
-import { cornersMissing, type TakeAgain, takeAgain } from './locate/take-again.ts'
+import { coveredPlace } from './locate/covered-place.ts'
+import { cornersMissing, covered, type TakeAgain, takeAgain } from './locate/take-again.ts'
 import { type Grey, isInside } from './pixels/grey.ts'
 import { type PaperLevel, paperAt } from './pixels/paper.ts'
 
@@ -20,6 +22,8 @@ const BLURRED_MM = 0.85
 const GLARED_PAPER = 250
 
 export interface PlacedPage {
+  /** mm. */
+  page: { width: number; height: number }
   picture: { grey: Grey; paper: PaperLevel }
   scale: number
   alignment: Alignment
@@ -28,7 +32,7 @@ export interface PlacedPage {
 }
 
 /** Null when the page may be read. */
-export function judgePlacing({ picture, scale, alignment, corners, pageCorners }: PlacedPage): TakeAgain | null {
+export function judgePlacing({ page, picture, scale, alignment, corners, pageCorners }: PlacedPage): TakeAgain | null {
   if (alignment.foundShare >= LEAST_FOUND && alignment.ahead >= LEAST_AHEAD) return null
   const missing = [0, 1, 2, 3].filter((c) => !corners.includes(c))
   const lost = alignment.parts.filter((p) => !p.found)
@@ -48,7 +52,9 @@ export function judgePlacing({ picture, scale, alignment, corners, pageCorners }
       missing.some((c) => !isInside(full, pageCorners[c]!)),
     )
   }
-  return takeAgain('cannot place')
+  const place = coveredPlace(alignment.parts, page)
+  if (place) return covered(place.across, place.down)
+  return takeAgain(isBlackAndWhite(picture.grey) ? 'black and white' : 'cannot place')
 }
 
 /** A picture, at half size, without any readable code: dark, blurred, or simply without a sheet. */

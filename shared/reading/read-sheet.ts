@@ -104,7 +104,14 @@ export async function readLocated(
   watch.lap('align')
   const at = (x: number, y: number) => project(alignment.homography, x, y)
   const pageCorners = [at(0, 0), at(width, 0), at(width, height), at(0, height)]
-  const again = judgePlacing({ picture: { grey, paper }, scale, alignment, corners: located.corners, pageCorners })
+  const again = judgePlacing({
+    page: layout.page,
+    picture: { grey, paper },
+    scale,
+    alignment,
+    corners: located.corners,
+    pageCorners,
+  })
   const quality = {
     px_per_mm,
     edge_mm: alignment.edge_mm,

@@ -1,4 +1,5 @@
 /** The figures as a table for people. */
+import type { Condition } from '../simulator/shapes/condition.ts'
 import type { PageScore } from './compare.ts'
 import { type LevelFigures, levelFigures } from './figures.ts'
 import type { Peers } from './peers.ts'
@@ -55,23 +56,30 @@ const inColumns = (name: string, fields: readonly string[]) =>
 /** Over `shapeLine`: doubt shares of tied and untied numbers and ticks, silent errors of clear readings, mm, CPU at the median. */
 export const shapeHead = inColumns('', COLUMNS)
 
-/** One condition in one line. */
-export function shapeLine(name: string, pages: readonly PageScore[]): string {
+/** One condition in one line, at its end the answers that do not fit it. */
+export function shapeLine(
+  { name, fits, hopeless }: Pick<Condition, 'name' | 'fits' | 'hopeless'>,
+  pages: readonly PageScore[],
+): string {
   const f = levelFigures(pages)
   const kinds = [f.numbers.tied, f.numbers.untied, f.ticks]
   const wrong = kinds.reduce((sum, k) => sum + k.silentError.wrong, 0)
   const clear = kinds.reduce((sum, k) => sum + k.silentError.clear, 0)
   const mm = (value: number | undefined) => (value === undefined ? '-' : value.toFixed(2))
   const again = pages.filter((p) => p.takeAgain).length
-  const codes = again > 0 ? `  ${JSON.stringify(f.takeAgainCodes)}` : ''
+  const codes = Object.entries(f.takeAgainCodes).map(
+    ([code, n]) => `${n} ${code}${fits && !fits.some((fit) => fit === code) ? ' (does not fit)' : ''}`,
+  )
+  if (hopeless && again < pages.length) codes.push(`${pages.length - again} read (does not fit)`)
+  const [off, clearOff] = [f.placement_mm?.max, pages.flatMap((p) => p.clearPlacement_mm)]
   return `${inColumns(name, [
     String(pages.length),
     String(again),
     ...kinds.map((k) => percent(k.doubtShare, 1)),
     `${wrong}/${clear}`,
     `${f.caught.hits}/${f.caught.count}`,
-    mm(f.placement_mm?.max),
-    mm(Math.max(...pages.flatMap((p) => p.clearPlacement_mm), Number.NEGATIVE_INFINITY)),
+    mm(off),
+    mm(clearOff.length > 0 ? Math.max(...clearOff) : undefined),
     f.cpuMs.p50.toFixed(0),
-  ])}${codes}`
+  ])}  ${codes.join(', ')}`.trimEnd()
 }

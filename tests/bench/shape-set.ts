@@ -16,7 +16,8 @@ const DRAWING = [['tests/simulator/shapes', /^(?!.*conditions?\.ts).*\.ts$/] as 
  */
 export async function shapeSet(condition: Condition, count: number, say: (line: string) => void): Promise<string[]> {
   const layout = findLayout('tillage', 1)!
-  const made = await fingerprint([...SOURCES, ...DRAWING], JSON.stringify(condition))
+  const { fits: _, hopeless: __, ...drawn } = condition
+  const made = await fingerprint([...SOURCES, ...DRAWING], JSON.stringify(drawn))
   const folder = join('.data/bench', `shapes-${condition.name}-${made}`)
   await mkdir(folder, { recursive: true })
   const stems = Array.from({ length: count }, (_, i) => join(folder, `${condition.name}-${String(i + 1).padStart(3, '0')}`))

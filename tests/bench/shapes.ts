@@ -35,7 +35,7 @@ export async function benchShapes(
     const { byLevel } = await readFolder(reader, dirname(stems[0]!), stems, () => undefined)
     const pages = [...byLevel.values()].flat()
     all.push(...pages)
-    print([shapeLine(condition.name, pages)])
+    print([shapeLine(condition, pages)])
   }
-  print([shapeLine('all', all), '', ...mistakeLines(all), ...missedLines(all)])
+  print([shapeLine({ name: 'all' }, all), '', ...mistakeLines(all), ...missedLines(all)])
 }

@@ -8,6 +8,8 @@ export const TAKE_AGAIN_CODES = [
   'too small',
   'two sheets',
   'unknown layout',
+  'covered',
+  'black and white',
   'cannot place',
 ] as const
 
@@ -20,14 +22,17 @@ export interface TakeAgain {
 
 export const CORNER_NAMES = ['upper left', 'upper right', 'lower right', 'lower left'] as const
 
-const ADVICE: Record<Exclude<TakeAgainCode, 'corner missing'>, string> = {
-  'no sheet': 'No sheet was found in the picture. Lay the sheet flat, with all four corner codes inside the picture.',
+const ADVICE: Record<Exclude<TakeAgainCode, 'corner missing' | 'covered'>, string> = {
+  'no sheet':
+    'No sheet was found in the picture. Lay the sheet flat and let it fill the picture, with all four corner codes inside it.',
   'too blurred': 'The picture is blurred. Hold the phone still with both hands and touch the sheet on the screen to focus.',
   'too dark': 'The picture is too dark. Turn the sheet to the light, or switch the lamp on.',
   glare: 'Light is mirrored on the paper. Tilt the phone or turn the sheet until the bright patch is gone.',
   'too small': 'The sheet is too small in the picture. Move closer until it fills the picture.',
   'two sheets': 'Two sheets are in the picture. Take one picture of each sheet.',
   'unknown layout': 'This kind of sheet is not known here. Check that it was printed by this trial book.',
+  'black and white':
+    'The page was scanned or copied in black and white only, and the pale boxes are lost. Scan it in grey or in colour.',
   'cannot place': 'The printed boxes could not be found. Lay the sheet flat, without folds, and take it from straight above.',
 }
 
@@ -41,6 +46,8 @@ const SHORT: Record<TakeAgainCode, string> = {
   'too small': 'the sheet is too small in the picture',
   'two sheets': 'two sheets are in the picture',
   'unknown layout': 'this kind of sheet is not known',
+  covered: 'a part of the sheet is covered or folded over',
+  'black and white': 'the page was scanned in black and white only',
   'cannot place': 'the printed boxes are not where they must be',
 }
 
@@ -59,6 +66,21 @@ export function cornersMissing(corners: readonly number[], outside: boolean): Ta
     ? `${which} ${verb} outside the picture. Move the phone a hand ${directionTo(corners)}, or a little higher.`
     : `${which} cannot be read. Keep fingers, folds and shadows off the corner codes and take it again.`
   return { code: 'corner missing', advice }
+}
+
+/** Where something lies on the page, as shares of its width and height from the upper left. */
+const thirdOf = (share: number): 0 | 1 | 2 => (share < 1 / 3 ? 0 : share < 2 / 3 ? 1 : 2)
+const PLACES = [
+  ['upper left', 'top', 'upper right'],
+  ['left', 'middle', 'right'],
+  ['lower left', 'bottom', 'lower right'],
+] as const
+
+/** Fields that lie together were not found: something lies on them, or the paper is folded over there. */
+export function covered(across: number, down: number): TakeAgain {
+  const place = PLACES[thirdOf(down)][thirdOf(across)]
+  const advice = `The printed boxes at the ${place} of the sheet are covered. Take fingers and other things off, and fold the paper open.`
+  return { code: 'covered', advice }
 }
 
 function directionTo(corners: readonly number[]): string {

@@ -2,6 +2,8 @@
  * A condition: one thing that is unusual about the picture, the paper, the print or the hand. It is plain data, so that a new
  * one is a new value, and so that a set is made again only when its own condition changes.
  */
+import type { TakeAgainCode } from '../../../shared/reading/locate/take-again.ts'
+
 export type Range = readonly [low: number, high: number]
 
 /** The paper's form, for a page that is bent along one direction (see surface.ts), or crumpled. */
@@ -23,18 +25,26 @@ export interface Scanner {
 
 export interface Condition {
   name: string
+  /** Advice that fits where a picture is to be taken again; without it each must be read. */
+  fits?: readonly TakeAgainCode[]
+  /** No picture of it can be read. */
+  hopeless?: boolean
   form?: Form
   shot?: {
     /** From straight above, radians, towards any side. */
     tilt?: Range
     /** Share of the picture that the page takes, by its tighter side. */
     fill?: Range
+    /** Off the middle of the picture to the left or right, as a share of its width. */
+    off?: Range
   }
   light?: {
     /** Brightness of white paper, 0 to 255. */
     level?: Range
     gradient?: Range
     glare?: Range
+    /** A window mirrored on the paper: its side as a share of the picture's. */
+    window?: Range
     /** Share of the light that the phone and the hands holding it take. */
     phone?: Range
     /** Warm on one side and cold on the other: red and blue against green, as a share. */

@@ -23,6 +23,20 @@ export function shadeByPhone(map: LightMap, depth: number, chance: Chance): void
   }
 }
 
+/** A window mirrored on glossy paper: nothing is left of the print within. `side`: of the picture's width. */
+export function mirrorWindow(map: LightMap, side: number, chance: Chance): void {
+  const [x, y] = [chance.between(0.35, 0.65), chance.between(0.35, 0.65)]
+  const soft = 0.015
+  for (let r = 0; r < map.rows; r += 1) {
+    for (let c = 0; c < map.columns; c += 1) {
+      const outside = Math.max(Math.abs(c / map.columns - x), Math.abs(r / map.rows - y)) - side / 2
+      const strength = 1 / (1 + Math.exp(outside / soft))
+      const i = r * map.columns + c
+      map.shine[i] = Math.max(map.shine[i]!, strength)
+    }
+  }
+}
+
 /** Daylight from one side and a warm lamp from the other, in place. `strength`: red and blue against green at either side. */
 export function mixLamps({ width, height, rgb }: Picture, strength: number, chance: Chance): void {
   const direction = chance.between(0, 6.28)

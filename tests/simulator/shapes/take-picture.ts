@@ -13,7 +13,7 @@ import type { Surface } from '../surface.ts'
 import type { Condition, Range } from './condition.ts'
 import { scanPaper } from './copier.ts'
 import { shapeSheet } from './form.ts'
-import { mixLamps, shadeByPhone } from './light-parts.ts'
+import { mirrorWindow, mixLamps, shadeByPhone } from './light-parts.ts'
 import type { Reprint } from './reprint.ts'
 
 export interface Taken {
@@ -38,6 +38,7 @@ function drawOrdinary(condition: Condition, chance: Chance): Conditions {
       ...base.shot,
       ...(shot?.tilt ? { pitch: tilt * Math.cos(direction), yaw: tilt * Math.sin(direction) } : {}),
       fill: draw(shot?.fill, base.shot.fill, own),
+      off: shot?.off ? [draw(shot.off, 0, own) * (own.odds(0.5) ? 1 : -1), 0] : base.shot.off,
     },
     light: {
       ...base.light,
@@ -86,6 +87,7 @@ export async function takePicture(
   const light = mapLight(drawn.light, picture.width, picture.height, chance.fork('light'))
   const lamps = chance.fork('lamps')
   if (condition.light?.phone) shadeByPhone(light, draw(condition.light.phone, 0, lamps), lamps)
+  if (condition.light?.window) mirrorWindow(light, draw(condition.light.window, 0, lamps), lamps)
   shine(picture, light, drawn.light.white)
   if (condition.light?.mixed) mixLamps(picture, draw(condition.light.mixed, 0, lamps), lamps)
   const jpeg = await develop(picture, drawn.optics, chance.fork('grain'))
