@@ -2,6 +2,7 @@
 import express, { type Express, Router } from 'express'
 import type { DestinationStream } from 'pino'
 import { signedInPeople } from './features/session/sign-in.ts'
+import { readToken, unlessToken } from './http/bearer.ts'
 import { refuseForeignWrites } from './http/csrf.ts'
 import { createLogger, logRequests } from './http/log.ts'
 import { mount } from './http/mount.ts'
@@ -28,16 +29,15 @@ export function createApp(deps: Deps, options: AppOptions = {}): Express {
   app.disable('x-powered-by')
   app.set('trust proxy', settings.trustedProxies)
   app.use(logRequests(logger), ...securityHeaders(settings.publicUrl))
+  const sessionTrouble = (error: unknown) => logger.warn({ err: error }, 'session store')
   const api = Router()
   api.use((_req, res, next) => {
     res.set('Cache-Control', 'no-store')
     next()
   })
-  api.use(refuseForeignWrites(settings.publicUrl), express.json({ limit: BODY_LIMIT }))
-  api.use(
-    sessions(deps, (error) => logger.warn({ err: error }, 'session store')),
-    ...signedInPeople(deps),
-  )
+  // A page of another site cannot send a token it does not have: only calls that rely on a cookie need the protection.
+  const forBrowsers = [refuseForeignWrites(settings.publicUrl), sessions(deps, sessionTrouble), ...signedInPeople(deps)]
+  api.use(readToken(deps), ...forBrowsers.map(unlessToken), express.json({ limit: BODY_LIMIT }))
   api.use(mount(allRoutes, deps, options), answerNoRoute)
   app.use('/api', api)
   app.use(webApp(settings.webDir), answerNoRoute, answerFailure)

@@ -2,7 +2,7 @@
 import { isDeepStrictEqual } from 'node:util'
 import { type Request, type Response, Router } from 'express'
 import type { User } from '../../shared/schemas/user.ts'
-import { checkAccess } from './access.ts'
+import { checkAccess, checkScope } from './access.ts'
 import type { Deps, Route } from './route.ts'
 import { validate } from './validate.ts'
 
@@ -22,6 +22,7 @@ export function mount(routes: readonly Route[], deps: Deps, options: MountOption
 async function handle(route: Route, deps: Deps, options: MountOptions, req: Request, res: Response): Promise<void> {
   const actor = (req.user as User | undefined) ?? null
   checkAccess(route.access, actor)
+  checkScope(route, req.scopes)
   const params = validate('params', route.params, req.params)
   const query = validate('query', route.query, req.query)
   const body = validate('body', route.body, req.body)

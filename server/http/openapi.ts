@@ -1,6 +1,7 @@
 /** The OpenAPI 3.1 document, made from the same route values that the router is made from. */
 import { OpenAPIRegistry, OpenApiGeneratorV31, type RouteConfig } from '@asteasolutions/zod-to-openapi'
 import { z } from 'zod'
+import { SCOPE_WORDS } from '../../shared/schemas/token.ts'
 import { type Route, route } from './route.ts'
 
 type Parameters = NonNullable<RouteConfig['request']>['params']
@@ -31,26 +32,48 @@ export const documentPath = (path: string) => path.replace(/:(\w+)/g, '{$1}')
 export function describeRoutes(routes: readonly Route[]) {
   const registry = new OpenAPIRegistry()
   registry.registerComponent('securitySchemes', 'session', { type: 'apiKey', in: 'cookie', name: 'sheafbook' })
+  registry.registerComponent('securitySchemes', 'token', {
+    type: 'http',
+    scheme: 'bearer',
+    description: `Made by an analyst. Scopes: ${Object.entries(SCOPE_WORDS)
+      .map(([scope, words]) => `${scope} (${words})`)
+      .join('; ')}.`,
+  })
   for (const one of routes) registry.registerPath(describe(one))
   return new OpenApiGeneratorV31(registry.definitions).generateDocument({
     openapi: '3.1.0',
     info: {
       title: 'Sheafbook',
       version: '1',
-      description: 'Writes carry the header X-Sheafbook: 1. Over https the cookie is named __Host-sheafbook.',
+      description:
+        'Programs send a token: Authorization: Bearer TOKEN. Browsers sign in; their writes carry the header X-Sheafbook: 1. ' +
+        'Over https the cookie is named __Host-sheafbook.',
     },
     servers: [{ url: '/api' }],
   })
 }
 
-function describe({ method, path, summary, access, params, query, body, multipart, response, status }: Route): RouteConfig {
+function describe({
+  method,
+  path,
+  summary,
+  access,
+  scope,
+  params,
+  query,
+  body,
+  multipart,
+  response,
+  status,
+}: Route): RouteConfig {
   const roles = typeof access === 'string' ? access : access.join(', ')
   return {
     method,
     path: documentPath(path),
     summary,
     description: `Open to: ${roles}.`,
-    security: access === 'anyone' ? [] : [{ session: [] }],
+    tags: [path.split('/')[1]?.split('.')[0] ?? ''],
+    security: access === 'anyone' ? [] : [{ session: [] }, ...(scope ? [{ token: [scope] }] : [])],
     request: {
       ...(params ? { params: params as Parameters } : {}),
       ...(query ? { query: query as Parameters } : {}),

@@ -5,6 +5,7 @@
 import type { Request, Response } from 'express'
 import type PgBoss from 'pg-boss'
 import type { z } from 'zod'
+import type { Scope } from '../../shared/schemas/token.ts'
 import type { Role, User } from '../../shared/schemas/user.ts'
 import type { Settings } from '../config.ts'
 import type { DataSource } from '../db/database.ts'
@@ -37,6 +38,8 @@ export interface Route<A extends Access = Access, P = unknown, Q = unknown, B = 
   path: string
   summary: string
   access: A
+  /** The scope a token needs here; without it the route is for people who signed in. */
+  scope?: Scope
   params?: z.ZodType<P>
   query?: z.ZodType<Q>
   body?: z.ZodType<B>

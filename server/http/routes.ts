@@ -1,4 +1,5 @@
 /** Every route there is. */
+import { changeRoutes } from '../features/changes/changes.routes.ts'
 import { demonstrationRoutes } from '../features/demonstrations/demonstrations.routes.ts'
 import { downloadRoutes } from '../features/downloads/downloads.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
@@ -8,6 +9,7 @@ import { recordRoutes } from '../features/records/records.routes.ts'
 import { registerRoutes } from '../features/registers/registers.routes.ts'
 import { sessionRoutes } from '../features/session/session.routes.ts'
 import { sheetRoutes } from '../features/sheets/sheets.routes.ts'
+import { tokenRoutes } from '../features/tokens/tokens.routes.ts'
 import { trailRoutes } from '../features/trail/trail.routes.ts'
 import { uploadRoutes } from '../features/uploads/uploads.routes.ts'
 import { passwordRoutes } from '../features/users/passwords.routes.ts'
@@ -28,6 +30,8 @@ const routes: readonly Route[] = [
   ...sheetRoutes,
   ...recordRoutes,
   ...downloadRoutes,
+  ...changeRoutes,
+  ...tokenRoutes,
   ...mailRoutes,
   ...trailRoutes,
 ]

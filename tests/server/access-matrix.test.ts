@@ -1,5 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { createToken } from '../../server/features/tokens/tokens.service.ts'
 import { allRoutes } from '../../server/http/routes.ts'
+import { SCOPES, type Scope } from '../../shared/schemas/token.ts'
 import { ROLES, type Role, type User } from '../../shared/schemas/user.ts'
 import { createCommon, createHolding } from '../builders/holding.ts'
 import { createGoldenRegisters } from '../builders/sheet.ts'
@@ -67,6 +69,45 @@ describe('every route', () => {
           `${name} (${holding === own ? 'own' : 'another’s'}): ${answer.status} ${answer.bytes.toString().slice(0, 200)}, not ${wanted}`,
         )
       }
+    }
+    expect(wrong).toEqual([])
+  })
+
+  /** A call with a token made for this person, without cookie and without the header of our own pages. */
+  async function tokenAgent(actor: Role, scopes: readonly Scope[]): Promise<TestAgent> {
+    const { id: userId } = people.get(actor)!
+    const { token } = await createToken(server.deps, people.get(actor)!, { name: `for ${userId}`, scopes: [...scopes], days: 1 })
+    const agent = server.anonymous()
+    const request = agent.request
+    agent.request = (method, path, options = {}) =>
+      request(method, path, { ...options, headers: { Authorization: `Bearer ${token}`, 'X-Sheafbook': '', ...options.headers } })
+    return agent
+  }
+
+  it.each(ROLES)('lets a token of a person who is now %s in where its scope and their role both do', async (actor) => {
+    const wrong: string[] = []
+    const all = await tokenAgent(actor, SCOPES)
+    for (const [name, rule] of Object.entries(ACCESS)) {
+      if (rule.may === 'anyone') continue
+      const [method = '', pattern = ''] = name.split(' ')
+      const path = rule.path?.(own, common) ?? pattern
+      const body = rule.body?.(own, common)
+      const others = rule.token
+        ? await tokenAgent(
+            actor,
+            SCOPES.filter((scope) => scope !== rule.token),
+          )
+        : null
+      for (const [agent, scoped] of [
+        [all, rule.token !== undefined],
+        [others, false],
+      ] as const) {
+        if (!agent) continue
+        const answer = await agent.request(method, path, body === undefined ? {} : { body })
+        const wanted = scoped ? expected(rule, actor, true) : [403]
+        if (!wanted.includes(answer.status)) wrong.push(`${name}: ${answer.status}, not ${wanted}`)
+      }
+      await server.deps.source.query('DELETE FROM api_tokens WHERE scopes <> $1', [SCOPES])
     }
     expect(wrong).toEqual([])
   })

@@ -2,6 +2,7 @@
  * Who may do what, written down once more and by hand: the test walks the mounted routes against this table, so a route that is
  * missing here, or that lets in one role too many, fails. Add a row for every new route.
  */
+import type { Scope } from '../../shared/schemas/token.ts'
 import type { Role } from '../../shared/schemas/user.ts'
 
 /** What one demonstrator holds; the walk uses the signed-in demonstrator's and another's. */
@@ -31,6 +32,8 @@ type Make<T> = (own: Holding, common: Common) => T
 export interface Rule {
   /** Roles that get in; `anyone` needs no session, `signed in` is every role. */
   may: 'anyone' | 'signed in' | readonly Role[]
+  /** The scope that lets a token in, within what its maker may do; without it the route refuses every token. */
+  token?: Scope
   /** The route names an object a demonstrator holds: another's is not there for them. */
   object?: true
   path?: Make<string>
@@ -44,6 +47,8 @@ const SENDERS = ['demonstrator', 'clerk', 'admin'] as const
 const BOOK = ['clerk', 'analyst', 'admin'] as const
 const PLANNERS = ['demonstrator', 'admin'] as const
 const ADMIN = ['admin'] as const
+const MAKERS = ['analyst', 'admin'] as const
+const NOBODYS = '00000000-0000-4000-8000-000000000000'
 const A_TOKEN = 'a-token-that-nobody-was-ever-given'
 const GOOD_PASSWORD = 'clods break on the second pass'
 /** The desk's writes on a version long gone: let in, then told that the sheet has changed. */
@@ -128,8 +133,8 @@ export const ACCESS: Record<string, Rule> = {
   'GET /demonstrations/:id/sheets.pdf': demonstrationFile('sheets.pdf'),
   'GET /sheets/:id/sheet.pdf': { may: SENDERS, object: true, path: (own) => `/sheets/${own.printedSheetId}/sheet.pdf` },
 
-  'GET /layouts': { may: 'signed in' },
-  'GET /layouts/:key': { may: 'signed in', path: () => '/layouts/tillage' },
+  'GET /layouts': { may: 'signed in', token: 'book' },
+  'GET /layouts/:key': { may: 'signed in', token: 'book', path: () => '/layouts/tillage' },
   'GET /layouts/:key/blank.pdf': layoutFile('blank.pdf'),
   'GET /layouts/:key/form.xlsx': layoutFile('form.xlsx'),
   'GET /layouts/:key/form.csv': layoutFile('form.csv'),
@@ -139,8 +144,8 @@ export const ACCESS: Record<string, Rule> = {
   'POST /uploads': { may: SENDERS, body: () => new FormData(), butAnswers: [400] },
   'GET /uploads': { may: SENDERS },
   'GET /uploads/:id': { may: SENDERS, object: true, path: (own) => `/uploads/${own.uploadId}` },
-  'GET /pages/:id/picture': { may: 'signed in', object: true, path: (own) => `/pages/${own.pageId}/picture` },
-  'GET /pages/:id/original': { may: 'signed in', object: true, path: (own) => `/pages/${own.pageId}/original` },
+  'GET /pages/:id/picture': { may: 'signed in', token: 'book', object: true, path: (own) => `/pages/${own.pageId}/picture` },
+  'GET /pages/:id/original': { may: 'signed in', token: 'book', object: true, path: (own) => `/pages/${own.pageId}/original` },
 
   'GET /sheets': { may: 'signed in' },
   'GET /sheets/:id': { may: 'signed in', object: true, path: (own) => `/sheets/${own.sheetId}` },
@@ -155,23 +160,28 @@ export const ACCESS: Record<string, Rule> = {
   'POST /sheets/:id/place': sheetWrite('place', { layout: 'tillage', layoutVersion: 1, sheetCode: null, corners: null }),
   'POST /sheets/:id/enter': sheetWrite('enter', {}),
 
-  'GET /records': { may: 'signed in' },
-  'GET /records.csv': { may: BOOK },
-  'GET /records.xlsx': { may: BOOK },
-  'GET /records.parquet': { may: BOOK },
-  'GET /records/dictionary.csv': { may: BOOK },
-  'GET /values': { may: BOOK },
-  'GET /values.csv': { may: BOOK },
-  'GET /values.xlsx': { may: BOOK },
-  'GET /values.parquet': { may: BOOK },
-  'GET /values/dictionary.csv': { may: BOOK },
-  'GET /datapackage.json': { may: BOOK },
-  'GET /datapackage.zip': { may: BOOK },
-  'GET /records/:number': { may: 'signed in', object: true, path: (own) => `/records/${own.recordNumber}` },
+  'GET /records': { may: 'signed in', token: 'book' },
+  'GET /records.csv': { may: BOOK, token: 'book' },
+  'GET /records.xlsx': { may: BOOK, token: 'book' },
+  'GET /records.parquet': { may: BOOK, token: 'book' },
+  'GET /records/dictionary.csv': { may: BOOK, token: 'book' },
+  'GET /values': { may: BOOK, token: 'book' },
+  'GET /values.csv': { may: BOOK, token: 'book' },
+  'GET /values.xlsx': { may: BOOK, token: 'book' },
+  'GET /values.parquet': { may: BOOK, token: 'book' },
+  'GET /values/dictionary.csv': { may: BOOK, token: 'book' },
+  'GET /datapackage.json': { may: BOOK, token: 'book' },
+  'GET /datapackage.zip': { may: BOOK, token: 'book' },
+  'GET /records/:number': { may: 'signed in', token: 'book', object: true, path: (own) => `/records/${own.recordNumber}` },
   'POST /records/:number/challenge': {
     may: ['analyst', 'admin'],
     path: (own) => `/records/${own.recordNumber}/challenge`,
     body: () => ({ reason: 'slip looks too low' }),
     butAnswers: [409],
   },
+
+  'GET /changes': { may: BOOK, token: 'changes' },
+  'GET /tokens': { may: MAKERS },
+  'POST /tokens': { may: MAKERS, body: () => ({ name: 'nightly copy', scopes: ['book'], days: 30 }) },
+  'POST /tokens/:id/revoke': { may: MAKERS, path: () => `/tokens/${NOBODYS}/revoke`, butAnswers: [404] },
 }

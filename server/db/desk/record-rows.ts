@@ -67,6 +67,14 @@ export async function findRecordRow(db: Db, number: number, version: number): Pr
   return rows[0] ? toRow(rows[0]) : null
 }
 
+/** The records of these numbers as they stand in the book now. */
+export async function listStandingRows(db: Db, numbers: readonly number[]): Promise<RecordRow[]> {
+  const values: unknown[] = []
+  const where = whereOf({}, values)
+  const rows: Row[] = await db.query(`${SELECT} WHERE ${where} AND rec.number = ANY($${values.push(numbers)})`, values)
+  return rows.map(toRow)
+}
+
 const toRow = (r: Row): RecordRow => ({
   number: r.number,
   version: r.version,

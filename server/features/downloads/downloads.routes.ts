@@ -35,6 +35,7 @@ function tableRoute(path: string, format: Format, summary: string, make: (deps: 
     path: `${path}.${format}`,
     summary: `${summary}, as ${format === 'parquet' ? 'Parquet' : format.toUpperCase()}`,
     access: KEEPERS,
+    scope: 'book',
     query: listRecordsSchema,
     handle: ({ deps, actor, query, res }) => {
       const table = make(deps, visibleTo(actor, query))
@@ -57,6 +58,7 @@ export const downloadRoutes: Route[] = [
     path: '/values',
     summary: 'Readings and figures with unit, uncertainty, origin and ink: whole records, newest first',
     access: KEEPERS,
+    scope: 'book',
     query: listRecordsSchema.extend(listValuesSchema.shape),
     response: valueListSchema,
     handle: ({ deps, actor, query: { records, ...filter } }) => listValues(deps, visibleTo(actor, filter), records),
@@ -66,6 +68,7 @@ export const downloadRoutes: Route[] = [
     path: '/records/dictionary.csv',
     summary: 'What every column of the wide download means',
     access: KEEPERS,
+    scope: 'book',
     handle: ({ res }) =>
       sendDownload(res, { type: CSV, name: 'trial-book-dictionary.csv', pieces: csvOf(dictionaryTable('', recordColumns())) }),
   }),
@@ -74,6 +77,7 @@ export const downloadRoutes: Route[] = [
     path: '/values/dictionary.csv',
     summary: 'What every column of the long download means',
     access: KEEPERS,
+    scope: 'book',
     handle: ({ res }) =>
       sendDownload(res, {
         type: CSV,
@@ -86,6 +90,7 @@ export const downloadRoutes: Route[] = [
     path: '/datapackage.json',
     summary: 'The description of the data (Data Package 2.0); its paths are records.csv and values.csv beside it',
     access: KEEPERS,
+    scope: 'book',
     response: z.record(z.string(), z.unknown()),
     handle: ({ deps }) => ({ ...dataPackage(deps.settings.publicUrl) }),
   }),
@@ -94,6 +99,7 @@ export const downloadRoutes: Route[] = [
     path: '/datapackage.zip',
     summary: 'Description and both tables in one file (Data Package 2.0)',
     access: KEEPERS,
+    scope: 'book',
     query: listRecordsSchema,
     handle: ({ deps, actor, query, res }) =>
       sendDownload(res, { type: 'application/zip', name: 'trial-book.zip', pieces: packageZip(deps, visibleTo(actor, query)) }),

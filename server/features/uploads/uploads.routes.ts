@@ -65,6 +65,7 @@ export const uploadRoutes: Route[] = [
     path: '/pages/:id/picture',
     summary: 'The flattened page as JPEG, 1240 x 1754 pixels for an A4 sheet',
     access: VIEWERS,
+    scope: 'book',
     params,
     handle: async ({ deps, actor, params, req, res }) => {
       const { stream, key } = await openPicture(deps, actor, params.id)
@@ -80,6 +81,7 @@ export const uploadRoutes: Route[] = [
     path: '/pages/:id/original',
     summary: 'The file a page came in, as it was sent; with ?as=picture, something a browser can show where there is one',
     access: VIEWERS,
+    scope: 'book',
     params,
     query: z.object({ as: z.literal('picture').optional() }),
     handle: async ({ deps, actor, params, query, res }) => {
