@@ -15,6 +15,7 @@ import { UserEntity, UserLinkEntity } from './entities/user.ts'
 import { Book1764590000000 } from './migrations/0001-book.ts'
 import { RateLimits1764590100000 } from './migrations/0002-rate-limits.ts'
 import { Interface1764590200000 } from './migrations/0003-interface.ts'
+import { Exclusions1764590300000 } from './migrations/0004-exclusions.ts'
 import { SnakeNaming } from './naming.ts'
 
 /** A transaction, or the pool itself: what every repository function takes first. */
@@ -51,7 +52,7 @@ export function createDataSource(url: string, options: { poolSize?: number } = {
       MailEntity,
       TrailEntity,
     ],
-    migrations: [Book1764590000000, RateLimits1764590100000, Interface1764590200000],
+    migrations: [Book1764590000000, RateLimits1764590100000, Interface1764590200000, Exclusions1764590300000],
     namingStrategy: new SnakeNaming(),
     synchronize: false,
     poolSize: options.poolSize ?? 10,

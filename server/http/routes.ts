@@ -1,5 +1,6 @@
 /** Every route there is. */
 import { changeRoutes } from '../features/changes/changes.routes.ts'
+import { comparisonRoutes } from '../features/comparisons/comparisons.routes.ts'
 import { demonstrationRoutes } from '../features/demonstrations/demonstrations.routes.ts'
 import { downloadRoutes } from '../features/downloads/downloads.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
@@ -29,6 +30,7 @@ const routes: readonly Route[] = [
   ...layoutRoutes,
   ...sheetRoutes,
   ...recordRoutes,
+  ...comparisonRoutes,
   ...downloadRoutes,
   ...changeRoutes,
   ...tokenRoutes,

@@ -45,6 +45,7 @@ export interface Rule {
 const DESK = ['clerk', 'admin'] as const
 const SENDERS = ['demonstrator', 'clerk', 'admin'] as const
 const BOOK = ['clerk', 'analyst', 'admin'] as const
+const COMPARERS = ['analyst', 'admin'] as const
 const PLANNERS = ['demonstrator', 'admin'] as const
 const ADMIN = ['admin'] as const
 const MAKERS = ['analyst', 'admin'] as const
@@ -173,6 +174,19 @@ export const ACCESS: Record<string, Rule> = {
   'GET /datapackage.json': { may: BOOK, token: 'book' },
   'GET /datapackage.zip': { may: BOOK, token: 'book' },
   'GET /records/:number': { may: 'signed in', token: 'book', object: true, path: (own) => `/records/${own.recordNumber}` },
+  'GET /comparisons': { may: COMPARERS },
+  'GET /comparisons/exclusions': { may: COMPARERS },
+  // Left out by whoever came first, and back again: both answers say "you are in".
+  'POST /comparisons/exclusions': {
+    may: COMPARERS,
+    body: (own) => ({ number: own.recordNumber, reason: 'rain fell during the run' }),
+    butAnswers: [409],
+  },
+  'POST /comparisons/exclusions/take-back': {
+    may: COMPARERS,
+    body: (own) => ({ number: own.recordNumber, reason: 'it was another plot' }),
+    butAnswers: [409],
+  },
   'POST /records/:number/challenge': {
     may: ['analyst', 'admin'],
     path: (own) => `/records/${own.recordNumber}/challenge`,

@@ -1,0 +1,133 @@
+/**
+ * The claim rule (common practice): "uses less" only if the runs were paired or in blocks, the interval leaves out zero, and the
+ * gap is wider than the ± of a run; and shallower work is no saving unless it holds for each m³ of soil too.
+ */
+import type { Beside, Claim, ComparedFigure, Gap } from '../schemas/book-comparison.ts'
+import type { Analysis } from '../schemas/comparison.ts'
+import { roundByUncertainty } from '../trial/format.ts'
+import { turned } from './gaps.ts'
+
+export interface Matter {
+  figure: ComparedFigure
+  unit: string
+  /** What a treatment is: tractor, implement, gear, soil. */
+  noun: string
+  analysis: Analysis
+  gaps: readonly Gap[]
+  beside: readonly Beside[]
+  /** Expanded uncertainty of a run (k = 2), in `unit`; null where none is known. */
+  runU: number | null
+  /** Where and how, as far as all runs share it: "at Kelwadi, ploughing". */
+  setting: string
+}
+
+const FUEL: readonly ComparedFigure[] = ['l_per_ha', 'l_per_h', 'l_per_acre', 'ml_per_m3']
+const FUEL_BY_AREA: readonly ComparedFigure[] = ['l_per_ha', 'l_per_acre', 'l_per_h']
+const MAY_NOT =
+  'in other soils, at other depths, in other gears, on other days; or as a share of fuel without the field and the day.'
+
+/** No analysis, no claim: the reason stands in its place. */
+export const noClaim = (because: string): Claim => ({
+  may: false,
+  before: 'No difference may be said.',
+  figure: '',
+  after: '',
+  because: [because],
+  mayNot: 'any ranking of these runs.',
+})
+
+/** One sentence of what may be said of the widest gap that may be said, or that none may. */
+export function claimOf(matter: Matter): Claim {
+  const judged = matter.gaps
+    .map((gap) => (gap.difference <= 0 ? gap : turned(gap)))
+    .map((gap) => ({ gap, objections: objectionsTo(gap, matter) }))
+    .sort((a, b) => a.gap.difference - b.gap.difference)
+  const best = judged.find((one) => one.objections.length === 0)
+  if (best) return mayBeSaid(best.gap, judged.length, judged.filter((one) => one.objections.length === 0).length, matter)
+  const widest = judged[0]
+  if (!widest) return noClaim('The runs carry no interval.')
+  const { gap } = widest
+  const several = matter.analysis.design.treatments.length > 2
+  return {
+    may: false,
+    before: several
+      ? `Between these ${matter.analysis.design.treatments.length} ${matter.noun}s no difference may be said: ${gap.first} measured`
+      : `No difference may be said: ${gap.first} measured`,
+    figure: banded(gap),
+    after: `${matter.unit} less than ${gap.second}${tail(matter)}.`,
+    because: widest.objections,
+    mayNot: `“${FUEL.includes(matter.figure) ? 'uses less' : 'does less'}”, of any of them.`,
+  }
+}
+
+function mayBeSaid(gap: Gap, all: number, sayable: number, matter: Matter): Claim {
+  const { unit, runU, analysis } = matter
+  const verb = FUEL.includes(matter.figure) ? 'used' : 'measured'
+  const rest = all - sayable
+  const others =
+    all === 1 ? '' : ` Of ${all} pairs ${sayable === 1 ? 'this one' : `${sayable}`} may be said; for the other ${rest} nothing.`
+  return {
+    may: true,
+    before: `On ${footing(analysis)}${matter.setting === '' ? '' : ` ${matter.setting}`}${depths(gap, matter)}, ${gap.first} ${verb}`,
+    figure: banded(gap),
+    after: `${unit} less than ${gap.second}.`,
+    because: [
+      `the ${percent(analysis)} interval, ${span(gap)} ${unit}, leaves out zero, and the gap, ${shown(-gap.difference, gap)}, is wider than the ± of one run, ${shown(runU ?? 0, gap)}.${others}`,
+    ],
+    mayNot: MAY_NOT,
+  }
+}
+
+/** Why this gap may not be said; empty where it may. `first` is the lower one. */
+function objectionsTo(gap: Gap, { analysis, unit, runU, noun, figure, beside }: Matter): string[] {
+  const said: string[] = []
+  if (analysis.design.kind === 'one factor')
+    said.push(`the fields differ as well as the ${noun}s: nothing paired the runs or put them in blocks`)
+  if (gap.interval[1] >= 0) said.push(`the ${percent(analysis)} interval, ${span(gap)} ${unit}, holds zero`)
+  if (runU === null) said.push('the ± of a run is not known')
+  else if (-gap.difference <= runU)
+    said.push(`the gap, ${shown(-gap.difference, gap)} ${unit}, is not wider than the ± of one run, ${shown(runU, gap)}`)
+  const depth = FUEL_BY_AREA.includes(figure) ? besideGap(beside, 'depth_mean_cm', gap) : null
+  if (depth && depth.interval[1] < 0) {
+    const soil = besideGap(beside, 'ml_per_m3', gap)
+    if (!soil || soil.interval[1] >= 0)
+      said.push(`${gap.first} worked ${(-depth.difference).toFixed(1)} cm shallower, and for each m³ of soil it did not use less`)
+  }
+  return said
+}
+
+function besideGap(beside: readonly Beside[], key: ComparedFigure, { first, second }: Gap): Gap | null {
+  const gaps = beside.find((b) => b.key === key)?.gaps ?? []
+  const straight = gaps.find((g) => g.first === first && g.second === second)
+  const other = gaps.find((g) => g.first === second && g.second === first)
+  return straight ?? (other ? turned(other) : null)
+}
+
+/** ", 15.1 cm deep against 15.2 cm" */
+function depths({ first, second }: Gap, { beside, figure }: Matter): string {
+  const means = figure === 'depth_mean_cm' ? [] : (beside.find((b) => b.key === 'depth_mean_cm')?.means ?? [])
+  const [a, b] = [first, second].map((name) => means.find((m) => m.treatment === name)?.mean)
+  return a === undefined || b === undefined ? '' : `, ${a.toFixed(1)} cm deep against ${b.toFixed(1)} cm`
+}
+
+function footing({ design, groups }: Analysis): string {
+  if (design.kind === 'paired') return `${design.blocks.length} paired plots`
+  if (design.kind === 'blocks') return `${design.blocks.length} shared ${design.block ?? 'block'}s`
+  return `${groups.reduce((sum, g) => sum + g.n, 0)} runs on unlike fields`
+}
+
+const half = ({ interval }: Gap): number => (interval[1] - interval[0]) / 2
+const percent = ({ design }: Analysis): string => `${Math.round(100 * (1 - design.alpha))} %`
+/** As many decimals as the interval's half carries. */
+const shown = (value: number, gap: Gap): string => {
+  const text = roundByUncertainty(gap.difference, half(gap)).value
+  const decimals = text.split('.')[1]?.length ?? 0
+  return value.toFixed(decimals)
+}
+const banded = (gap: Gap): string => {
+  const { value, U } = roundByUncertainty(-gap.difference, half(gap))
+  return `${value} ± ${U}`
+}
+/** The interval of how much less the first is. */
+const span = (gap: Gap): string => `${shown(-gap.interval[1], gap)} to ${shown(-gap.interval[0], gap)}`.replaceAll('-', '−')
+const tail = ({ setting }: Matter): string => (setting === '' ? '' : `, ${setting}`)
