@@ -1,8 +1,8 @@
 /** Printed and typed text by tesseract.js: the block of planned facts and the sheet's code in letters. Never hand-writing. */
 import type { Layout } from '../../../shared/layouts/layout.ts'
-import { CODE_ALPHABET, parseSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import { type PageMap, toPhoto } from '../../../shared/reading/geometry/page-map.ts'
 import { brightnessAt, type Grey } from '../../../shared/reading/pixels/grey.ts'
+import { codeFromText } from './printed-code.ts'
 import type { TextEngine, TextPicture } from './text-engine.ts'
 
 /** Type of 7 points needs this to be read without mistakes. */
@@ -12,6 +12,10 @@ const PX_PER_MM = 14
 const INK_SHARE = 0.01
 const INK_LEVEL = 0.62
 const PLAN_CHARACTERS = 'ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz0123456789-.,:/() '
+
+/** The code alone: thirteen letters of one width, without the word before them. */
+const CODE_MM = 37.2
+const CODE_CHARACTERS = '0123456789ABCDEFGHIJKLMNOPQRSTUVWXYZ-'
 
 interface Area {
   x: number
@@ -52,12 +56,8 @@ export function createPrintedText(engine: TextEngine): PrintedText {
     },
     async sheetCode(grey, map, layout) {
       const { x, y } = layout.codeText
-      const piece = cutFlat(grey, map, { x: x - 52, y: y - 6.6, width: 53, height: 6.4 })
-      if (!hasInk(piece)) return null
-      const text = await engine.text(piece, `${CODE_ALPHABET}-`)
-      // The hyphens stand in known places: what has them elsewhere was read wrongly, even where the check agrees by chance.
-      const found = /\b([0-9A-Z]{5})-([0-9A-Z]{5})-([0-9A-Z])\b/.exec(text.toUpperCase())
-      return found ? parseSheetCode(found.slice(1).join('')) : null
+      const piece = cutFlat(grey, map, { x: x - CODE_MM, y: y - 6.6, width: CODE_MM + 1, height: 6.4 })
+      return hasInk(piece) ? codeFromText(await engine.text(piece, CODE_CHARACTERS)) : null
     },
   }
 }

@@ -43,6 +43,8 @@ export function digitChances(byText: TypedDigit | null, byNet: readonly number[]
   return both.map((p) => p / sum)
 }
 
+export const ANY_DIGIT: readonly number[] = Array.from({ length: 10 }, () => 0.1)
+
 const boxOf = (digits: readonly number[] | null): BoxDist =>
   Float32Array.from({ length: CLASS_COUNT }, (_, k) =>
     digits ? (k < 10 ? digits[k]! * (1 - 2 * NOT_A_DIGIT) : NOT_A_DIGIT) : k === BLANK ? 1 - 11 * NOT_A_DIGIT : NOT_A_DIGIT,

@@ -12,8 +12,8 @@ import type { TextEngine } from './text-engine.ts'
 import { type Glyphs, glyphsOf } from './typed-glyphs.ts'
 import { readWords, type TypedDigit, type Word } from './typed-line.ts'
 import { netOnWords } from './typed-net.ts'
-import { blankBoxes, boxesTyped, digitChances, type Setting } from './typed-places.ts'
-import { cutStrip, type Strip } from './typed-strip.ts'
+import { ANY_DIGIT, blankBoxes, boxesTyped, digitChances, type Setting } from './typed-places.ts'
+import { cutStrip, isCut, type Strip } from './typed-strip.ts'
 
 /** Coarse is enough to see whether it is type; reading wants the fine one. Pixels a millimetre. */
 const PROBE_PX_PER_MM = 6
@@ -48,7 +48,7 @@ export async function readTyped(grey: Grey, reading: SheetReading, tools: TypedT
   const [byText, byNet] = [await readWords(tools.engine, words, setting.height_px), await netOnWords(tools.net, words)]
   const dists = new Map<string, BoxDist[]>()
   typed.forEach((comb, i) => {
-    const own = boxesTyped(comb.cell, comb.strip, comb, chances(byText[i]!, byNet[i]!), setting)
+    const own = boxesTyped(comb.cell, comb.strip, comb, chances(comb, byText[i]!, byNet[i]!), setting)
     if (own) dists.set(comb.cell.key, own)
   })
   for (const { cell, strip, digits, marks } of combs) {
@@ -64,7 +64,9 @@ export async function readTyped(grey: Grey, reading: SheetReading, tools: TypedT
   reading.ms.typed = performance.now() - started
 }
 
-const chances = (byText: TypedDigit[] | null, byNet: number[][]) => byNet.map((net, i) => digitChances(byText?.[i] ?? null, net))
+/** What a printed mark has cut into may look like another digit to both readers. */
+const chances = ({ strip, digits }: Comb, byText: TypedDigit[] | null, byNet: number[][]) =>
+  byNet.map((net, i) => (isCut(strip, digits[i]!) ? ANY_DIGIT : digitChances(byText?.[i] ?? null, net)))
 
 function combsOf(grey: Grey, layout: Layout, readings: ReadonlyMap<string, CellReading>, px_per_mm: number, most = 1000): Comb[] {
   const combs: Comb[] = []

@@ -9,8 +9,9 @@ const BEYOND_MM = 0.5
 /** Frames stand this near their place, mm, and are paler than this share of the type's darkness. */
 const FRAME_REACH_MM = 0.45
 const FRAME_PALER = 0.6
-/** A printed point, colon or hyphen with its surroundings, mm from its middle. */
-const MARK_REACH_MM = 0.85
+/** Half the width and height of a printed point, colon or hyphen with its soft rim, mm. */
+const DOT_MM = [0.75, 0.75] as const
+const HYPHEN_MM = [0.8, 0.45] as const
 /** Shares of a strip's dots that are at least as bright as paper, and as dark as ink. */
 const PAPER_SHARE = 0.3
 const INK_SHARE = 0.01
@@ -95,15 +96,31 @@ function fill(strip: Strip, area: Box, paler: number): void {
   }
 }
 
-/** As server/print draws them. */
-function blankMarks(strip: Strip): void {
-  for (const { x, y, mark } of layComb(strip.cell).separators) {
+/** Where the printed points, colons and hyphens stand (as server/print draws them), mm. */
+function marksOf(cell: CombCell): Box[] {
+  return layComb(cell).separators.flatMap(({ x, y, mark }) => {
+    const [halfWidth, halfHeight] = mark === '-' ? HYPHEN_MM : DOT_MM
     const heights = mark === '.' ? [BOX.height - 0.7] : mark === ':' ? [2.2, BOX.height - 2.2] : [BOX.height / 2]
-    for (const height of heights) {
-      const reach = MARK_REACH_MM
-      fill(strip, { x: x - reach, y: y + height - reach, width: 2 * reach, height: 2 * reach }, Number.POSITIVE_INFINITY)
-    }
-  }
+    return heights.map((at) => ({ x: x - halfWidth, y: y + at - halfHeight, width: 2 * halfWidth, height: 2 * halfHeight }))
+  })
+}
+
+function blankMarks(strip: Strip): void {
+  for (const mark of marksOf(strip.cell)) fill(strip, mark, Number.POSITIVE_INFINITY)
+}
+
+/** Whether a printed mark, taken away, may have taken a part of what stands in this rectangle (pixels of the strip) with it. */
+export function isCut(
+  { cell, px_per_mm, x, y }: Strip,
+  glyph: { left: number; right: number; top: number; low: number },
+): boolean {
+  return marksOf(cell).some(
+    (mark) =>
+      glyph.left <= (mark.x + mark.width - x) * px_per_mm + 1 &&
+      glyph.right >= (mark.x - x) * px_per_mm - 1 &&
+      glyph.top <= (mark.y + mark.height - y) * px_per_mm + 1 &&
+      glyph.low >= (mark.y - y) * px_per_mm - 1,
+  )
 }
 
 function blankFrames(strip: Strip): void {
