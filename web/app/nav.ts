@@ -8,16 +8,18 @@ const desk = link(paths.desk.to(), 'Desk')
 const send = link(paths.send.to(), 'Send sheets')
 const mySheets = link(paths.mySheets.to(), 'My sheets')
 const book = link(paths.book.to(), 'Trial book')
+const compare = link(paths.compare.to(), 'Compare')
 const demonstrations = link(paths.demonstrations.to(), 'Demonstrations')
 
 /** The sections each role works in; what a role may do is the server's to say. */
 export const NAV: Record<Role, readonly FolioLink[]> = {
   demonstrator: [demonstrations, send, mySheets],
   clerk: [desk, send, book],
-  analyst: [book],
+  analyst: [book, compare],
   admin: [
     desk,
     book,
+    compare,
     demonstrations,
     send,
     link(paths.registers.to(), 'Registers'),

@@ -21,6 +21,7 @@ export const paths = {
     pattern: '/book/:number',
     to: (number: number, version?: number) => `/book/${number}${version === undefined ? '' : `?version=${version}`}`,
   },
+  compare: { pattern: '/compare', to: () => '/compare' },
   registers: { pattern: '/registers', to: () => '/registers' },
   register: { pattern: '/registers/:name', to: (name: string) => `/registers/${name}` },
   people: { pattern: '/people', to: () => '/people' },

@@ -9,6 +9,7 @@ export const officeRoutes: RouteObject[] = [
   { path: paths.demonstration.pattern, lazy: onDemand(() => import('./demonstration.tsx')) },
   { path: paths.editDemonstration.pattern, lazy: onDemand(() => import('./plan-demonstration.tsx')) },
   { path: paths.book.pattern, lazy: onDemand(() => import('./book.tsx')) },
+  { path: paths.compare.pattern, lazy: onDemand(() => import('./compare.tsx')) },
   { path: paths.registers.pattern, lazy: onDemand(() => import('./registers.tsx')) },
   { path: paths.register.pattern, lazy: onDemand(() => import('./registers.tsx')) },
   { path: paths.people.pattern, lazy: onDemand(() => import('./people.tsx')) },
