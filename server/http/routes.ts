@@ -4,10 +4,12 @@ import { comparisonRoutes } from '../features/comparisons/comparisons.routes.ts'
 import { demonstrationRoutes } from '../features/demonstrations/demonstrations.routes.ts'
 import { downloadRoutes } from '../features/downloads/downloads.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
+import { landUnitRoutes } from '../features/land-units/land-units.routes.ts'
 import { layoutRoutes } from '../features/layouts/layouts.routes.ts'
 import { mailRoutes } from '../features/mails/mails.routes.ts'
 import { recordRoutes } from '../features/records/records.routes.ts'
 import { registerRoutes } from '../features/registers/registers.routes.ts'
+import { ruleRoutes } from '../features/rules/rules.routes.ts'
 import { sessionRoutes } from '../features/session/session.routes.ts'
 import { sheetRoutes } from '../features/sheets/sheets.routes.ts'
 import { tokenRoutes } from '../features/tokens/tokens.routes.ts'
@@ -25,11 +27,13 @@ const routes: readonly Route[] = [
   ...passwordRoutes,
   ...userRoutes,
   ...registerRoutes,
+  ...landUnitRoutes,
   ...uploadRoutes,
   ...demonstrationRoutes,
   ...layoutRoutes,
   ...sheetRoutes,
   ...recordRoutes,
+  ...ruleRoutes,
   ...comparisonRoutes,
   ...downloadRoutes,
   ...changeRoutes,

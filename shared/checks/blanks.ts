@@ -1,4 +1,5 @@
 /** What is not on the paper, or not fully. */
+import { sizeOfLandUnit } from '../trial/land-units.ts'
 import { stemOf } from './cells.ts'
 import type { Boxes, CheckContext } from './context.ts'
 import { AIR_TICKS, CIRCUIT_TICKS } from './fitting.ts'
@@ -171,6 +172,9 @@ const NUMBERS_OF: Record<string, readonly string[]> = {
   tyre_p_unit: ['tyre_p_fl', 'tyre_p_fr', 'tyre_p_rl', 'tyre_p_rr'],
 }
 
+/** A unit of the district, as a person confirmed it. */
+const isLocal = (ctx: CheckContext, unit: string) => sizeOfLandUnit(ctx.facts, unit) !== null
+
 const q16: Rule = {
   id: 'Q16',
   version: 1,
@@ -182,8 +186,12 @@ const q16: Rule = {
     Object.keys(UNIT_OF).flatMap((unit) => {
       const numbers = (NUMBERS_OF[unit] ?? []).filter((key) => ctx.number(key) !== null)
       const said = ctx.readings[unit]
-      if (numbers.length === 0 || said === undefined || (typeof said === 'string' && UNIT_OF[unit]?.includes(said))) return []
-      const text = said === null ? 'has no tick' : `reads "${said}"`
+      const known = typeof said === 'string' && (UNIT_OF[unit]?.includes(said) || (unit === 'area_unit' && isLocal(ctx, said)))
+      if (numbers.length === 0 || said === undefined || known) return []
+      const text =
+        said === null
+          ? 'has no tick'
+          : `reads "${said}", ${unit === 'area_unit' ? 'not confirmed for this district' : 'no unit of pressure'}`
       return [
         found(
           'stop',

@@ -19,7 +19,7 @@ export interface CheckOptions {
   cells?: Readonly<Record<string, CellInfo>>
   /** The combs box by box, where a reader saw them. */
   boxes?: Readonly<Record<string, Boxes>>
-  /** Limits the office has set. */
+  /** Limits for this one question; else those among the facts. */
   limits?: Partial<Record<LimitName, number>>
 }
 
@@ -52,7 +52,7 @@ export function contextOf(readings: Readings, handedFacts: Facts, options: Check
   const facts = factsWithReadings(readings, handedFacts)
   const run = runOf(readings)
   const fuel = measureFuel(readings, facts)
-  const limit = (name: LimitName) => options.limits?.[name] ?? LIMITS[name].value
+  const limit = (name: LimitName) => options.limits?.[name] ?? facts.limits?.[name] ?? LIMITS[name].value
   const cell = (key: string) => options.cells?.[key] ?? cellWithoutLayout(key)
   return {
     readings,

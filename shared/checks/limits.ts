@@ -10,6 +10,12 @@ interface Limit {
   source: string
 }
 
+const CERTAINTY = { F: 'published', M: 'from memory', P: 'common practice' } as const
+export type Certainty = (typeof CERTAINTY)[keyof typeof CERTAINTY]
+
+/** How sure a source is, by the tag it begins with. */
+export const certaintyOf = (source: string): Certainty => CERTAINTY[/^\[([FMP])\]/.exec(source)?.[1] as keyof typeof CERTAINTY]
+
 const limit = (value: number, unit: string, source: string): Limit => ({ value, unit, source })
 
 export const LIMITS = {
@@ -20,8 +26,8 @@ export const LIMITS = {
   kit_check_months: limit(12, 'months', '[P]'),
   jar_lowest_ml: limit(500, 'mL', '[P] the outlet uncovers and air is drawn'),
   by_hand_stop_pct: limit(10, '%', '[P]'),
-  fuel_u_doubt_pct: limit(10, '%', 'JCGM 100, jar resolution'),
-  fuel_u_stop_pct: limit(20, '%', 'JCGM 100, jar resolution'),
+  fuel_u_doubt_pct: limit(10, '%', '[M] JCGM 100, jar resolution'),
+  fuel_u_stop_pct: limit(20, '%', '[M] JCGM 100, jar resolution'),
   area_by_hand_pct: limit(1, '%', '[P]'),
   rate_by_hand_pct: limit(1, '%', '[P]'),
   unit_match_pct: limit(0.5, '%', '[P]'),
@@ -77,7 +83,7 @@ export const LIMITS = {
   depth_cv_note_pct: limit(15, '%', '[P]'),
   depth_cv_doubt_pct: limit(25, '%', '[P]'),
   depth_wild: limit(5 * 1.4826, 'MAD', '[P] five robust deviations'),
-  rule_reach_cm: limit(30, 'cm', 'the 30 cm rule of the kit'),
+  rule_reach_cm: limit(30, 'cm', '[P] the 30 cm rule of the kit'),
   depths_wanted: limit(10, '', '[P]'),
   widths_wanted: limit(5, '', '[P]'),
   slips_wanted: limit(2, '', '[P]'),

@@ -1,5 +1,5 @@
 /** Figures worked out by hand beside the ones recomputed: one table for the rules on arithmetic and on units. */
-import { convert, quantity, unitFromTick } from '../trial/quantity.ts'
+import { sizeOfLandUnit } from '../trial/land-units.ts'
 import type { ResultKey } from '../trial/result.ts'
 import type { CheckContext } from './context.ts'
 import type { SlipKind } from './unit-slip.ts'
@@ -47,20 +47,17 @@ export function writtenFigure(ctx: CheckContext, key: string): Written | null {
   }
 }
 
-const AREA_UNITS = { m2: 'm²', ha: 'ha', acre: 'acre' } as const
-
 function writtenArea(ctx: CheckContext): Written | null {
   const written = ctx.number('area_written')
   const tick = ctx.text('area_unit')
   const { area } = ctx.plot
-  if (written === null || !area.known || (tick !== 'm2' && tick !== 'ha' && tick !== 'acre')) return null
-  const unit = unitFromTick('area', tick)
-  const size_m2 = convert(quantity(1, unit), unit, 'm2')
+  const size_m2 = tick === null ? null : sizeOfLandUnit(ctx.facts, tick)
+  if (written === null || !area.known || tick === null || size_m2 === null) return null
   return {
     key: 'area_written',
     written,
     computed: area.value / size_m2,
-    unit: AREA_UNITS[unit],
+    unit: tick === 'm2' ? 'm²' : tick,
     kind: 'area',
     cells: ['area_written', 'area_unit', ...area.cells],
     size_m2,

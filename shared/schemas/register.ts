@@ -6,12 +6,27 @@ const optionalText = z.string().trim().max(200).default('')
 const dateSchema = z.iso.date()
 const positive = (max: number) => z.coerce.number().positive().max(max)
 
+/** A cell that may be left blank: blank is null, not 0. */
+const blankable = (min: number, max: number) =>
+  z.preprocess((value) => (value === '' ? null : value), z.union([z.null(), z.coerce.number().min(min).max(max)])).optional()
+
+/** "L1 2.1, L2 3.4": the speed in each gear, km/h at rated engine speed. */
+const gearSpeedsSchema = z
+  .string()
+  .trim()
+  .max(400)
+  .regex(/^([LMH]?\d \d+(\.\d+)?(, [LMH]?\d \d+(\.\d+)?)*)?$/, 'Written as L1 2.1, L2 3.4: gear and km/h.')
+  .optional()
+
 const registered = { id: idSchema, active: z.boolean(), version: z.number().int() }
 
 export const savePlaceSchema = z.object({
   number: numberSchema,
   name: nameSchema,
   district: nameSchema,
+  lat: blankable(-90, 90),
+  lon: blankable(-180, 180),
+  density15_kgm3: blankable(780, 900),
   active: z.boolean().default(true),
 })
 export const placeSchema = savePlaceSchema.extend(registered)
@@ -30,6 +45,8 @@ export const saveTractorSchema = z.object({
   hourMeterKind: z.enum(['electronic', 'mechanical']),
   tyreFront: optionalText,
   tyreRear: optionalText,
+  rollingCircumference_m: blankable(1, 8),
+  gearSpeeds: gearSpeedsSchema,
   ballastFront_kg: z.coerce.number().min(0).max(3000).default(0),
   ballastRear_kg: z.coerce.number().min(0).max(3000).default(0),
   active: z.boolean().default(true),
@@ -66,6 +83,7 @@ export const saveKitSchema = z.object({
   tapeSerial: optionalText,
   gaugeSerial: optionalText,
   ruleLength_cm: positive(100).default(30),
+  scale_pct: blankable(0.05, 5),
   checkedOn: dateSchema,
   active: z.boolean().default(true),
 })

@@ -2,6 +2,7 @@
 import { effectiveCapacity, fieldEfficiency, theoreticalCapacity } from './capacity.ts'
 import { type Facts, factsWithReadings } from './facts.ts'
 import { fuelMass, fuelPerAcre, fuelPerHectare, fuelPerHour, fuelPerSoil } from './fuel.ts'
+import { measureWrittenArea } from './land-units.ts'
 import { derive, known, lacking, type Measure } from './measure.ts'
 import { measureDensity } from './measure-density.ts'
 import { measureFuel, measureFuelAt15 } from './measure-fuel.ts'
@@ -44,6 +45,7 @@ export function computeResults(readings: Readings, handedFacts: Facts = {}, opti
     ...fuelRates(burned.fuel_ml, burned.mass_kg, area, times.fuel, work.depth),
     area_m2: area,
     area_ha: derive([area], (a = 0) => a / 10_000),
+    area_written_m2: measureWrittenArea(readings, facts),
     gross_min: times.gross,
     time_min: times.fuel,
     field_time_min: times.field,

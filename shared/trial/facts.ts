@@ -84,6 +84,9 @@ export const factsSchema = z.strictObject({
   pooledDepths_cm: z.array(z.number()).readonly().nullish(),
   /** Local units of land of the district. */
   landUnits: z.array(landUnitSchema).readonly().nullish(),
+  /** Limits the office has set, and the version they are of (0: as the product ships). */
+  limits: z.record(z.string(), z.number()).nullish(),
+  settingsVersion: number,
   sheetCode: text,
   tractorSerial: text,
   imageHash: text,

@@ -46,6 +46,7 @@ export const FORMULAS = {
   C23: { says: '100 × (wet − dry) ÷ (dry − can)', source: 'ASTM D2216, ISO 11465 [M]' },
   C24: { says: 'litres a hectare × price + hourly costs ÷ field capacity', source: 'idea of ASAE EP496; [P]' },
   C25: { says: 'fuel to expect per hour ÷ field capacity', source: 'definition' },
+  A_w: { says: 'written area × size of its unit', source: 'NIST SP 811 App. B [M]; a local unit: as confirmed for the district' },
   T: { says: 'end − start − stops with the engine off', source: '[P]' },
   T_f: { says: 'T − stops that are no field work', source: 'ASAE EP496 [M]; extension pages [F]' },
 } as const satisfies Record<string, Formula>

@@ -16,6 +16,7 @@ const HOW: Record<ResultKey, string> = {
   kg_per_ha: 'mass of fuel ÷ area',
   area_m2: 'from the sides taped on the plot',
   area_ha: 'from the sides taped on the plot; 10 000 m² are 1 ha',
+  area_written_m2: 'area by hand × m² of its unit',
   gross_min: 'end − start',
   time_min: 'end − start − stops with the engine off',
   field_time_min: 'time with the engine on − stops that are no field work',

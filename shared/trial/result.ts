@@ -22,6 +22,7 @@ export const RESULTS = {
   kg_per_ha: { unit: 'kg/ha', formula: 'C17', label: 'mass of fuel per hectare' },
   area_m2: { unit: 'm²', formula: 'C05', label: 'area' },
   area_ha: { unit: 'ha', formula: 'C05', label: 'area' },
+  area_written_m2: { unit: 'm²', formula: 'A_w', label: 'area as written' },
   gross_min: { unit: 'min', formula: 'T', label: 'start to end' },
   time_min: { unit: 'min', formula: 'T', label: 'time with the engine on' },
   field_time_min: { unit: 'min', formula: 'T_f', label: 'field time' },

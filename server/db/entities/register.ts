@@ -16,6 +16,15 @@ export class PlaceEntity {
   @Column({ type: 'text' })
   district!: string
 
+  @Column({ type: 'double precision', nullable: true })
+  lat!: number | null
+
+  @Column({ type: 'double precision', nullable: true })
+  lon!: number | null
+
+  @Column({ type: 'double precision', nullable: true })
+  density15_kgm3!: number | null
+
   @Column({ type: 'boolean' })
   active!: boolean
 
@@ -58,6 +67,12 @@ export class TractorEntity {
 
   @Column({ type: 'text' })
   tyreRear!: string
+
+  @Column({ type: 'double precision', nullable: true })
+  rollingCircumference_m!: number | null
+
+  @Column({ type: 'text', default: '' })
+  gearSpeeds!: string
 
   @Column({ type: 'double precision' })
   ballastFront_kg!: number
@@ -141,6 +156,9 @@ export class KitEntity {
 
   @Column({ type: 'double precision' })
   ruleLength_cm!: number
+
+  @Column({ type: 'double precision', nullable: true })
+  scale_pct!: number | null
 
   @Column({ type: 'date' })
   checkedOn!: string

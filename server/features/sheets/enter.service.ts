@@ -3,8 +3,9 @@ import { judgeSheet } from '../../../shared/checks/judge-sheet.ts'
 import { RULES_VERSION } from '../../../shared/checks/run-checks.ts'
 import { UserError } from '../../../shared/errors.ts'
 import { findLayout } from '../../../shared/layouts/registry.ts'
-import type { Entered, Value, Values } from '../../../shared/schemas/sheet.ts'
+import type { Entered, Value } from '../../../shared/schemas/sheet.ts'
 import type { User } from '../../../shared/schemas/user.ts'
+import { gearOf } from '../../../shared/trial/gear.ts'
 import { FORMULA_VERSION } from '../../../shared/trial/result.ts'
 import type { Db } from '../../db/database.ts'
 import { namesOf } from '../../db/desk/sheet-detail.ts'
@@ -15,6 +16,7 @@ import { listDoubts, toDoubt } from '../../db/repositories/doubt.ts'
 import { listReadings, toReading, valuesOf } from '../../db/repositories/reading.ts'
 import { addRecord } from '../../db/repositories/record.ts'
 import type { Deps } from '../../http/route.ts'
+import { announceRecord } from '../webhooks/announce.ts'
 import { writeOnSheet } from './change-sheet.ts'
 
 export async function enterSheet(deps: Deps, actor: User, id: string, version: number): Promise<Entered> {
@@ -23,6 +25,7 @@ export async function enterSheet(deps: Deps, actor: User, id: string, version: n
     if (sheet.openDoubts > 0)
       throw new UserError('conflict', `${sheet.openDoubts} doubts are still open on this sheet: settle them first.`)
     entered = await makeRecord(db, sheet, actor)
+    await announceRecord(deps, db, { type: entered.version === 1 ? 'record.entered' : 'record.changed', ...entered })
     const text = `entered as record ${entered.number}, version ${entered.version}`
     return {
       sheet: { state: 'entered', enteredAt: new Date(), heldBy: null, heldSince: null, heldUntil: null },
@@ -64,8 +67,3 @@ async function makeRecord(db: Db, sheet: SheetEntity, actor: User): Promise<{ nu
 }
 
 const text = (value: Value | undefined) => (typeof value === 'string' ? value : null)
-
-function gearOf(values: Values): string | null {
-  const parts = [values.gear_range, values.gear].filter((v) => typeof v === 'string' || typeof v === 'number')
-  return parts.length > 0 ? parts.join('') : null
-}

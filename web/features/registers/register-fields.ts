@@ -35,7 +35,26 @@ export const REGISTER_WORDS: Record<RegisterName, { title: string; one: string; 
 }
 
 export const REGISTER_FIELDS: Record<RegisterName, readonly RegisterField[]> = {
-  places: [number, name, { key: 'district', label: 'District', kind: 'text', listed: true }],
+  places: [
+    number,
+    name,
+    { key: 'district', label: 'District', kind: 'text', listed: true },
+    {
+      key: 'lat',
+      label: 'Latitude',
+      unit: '°',
+      kind: 'number',
+      hint: 'With the longitude: rules ask how far two places lie apart.',
+    },
+    { key: 'lon', label: 'Longitude', unit: '°', kind: 'number' },
+    {
+      key: 'density15_kgm3',
+      label: 'Fuel here at 15 °C',
+      unit: 'kg/m³',
+      kind: 'number',
+      hint: 'By its delivery note; blank where it is not known.',
+    },
+  ],
   tractors: [
     number,
     name,
@@ -54,6 +73,14 @@ export const REGISTER_FIELDS: Record<RegisterName, readonly RegisterField[]> = {
     { key: 'hourMeterKind', label: 'Hour meter', kind: 'choice', options: words(['electronic', 'mechanical']) },
     { key: 'tyreFront', label: 'Tyres, front', kind: 'text' },
     { key: 'tyreRear', label: 'Tyres, rear', kind: 'text' },
+    {
+      key: 'rollingCircumference_m',
+      label: 'Way of a turn, rear wheel',
+      unit: 'm',
+      kind: 'number',
+      hint: 'Without load, ten turns ÷ 10; blank where it is not known.',
+    },
+    { key: 'gearSpeeds', label: 'Speeds by gear', unit: 'km/h', kind: 'text', hint: 'At rated engine speed: L1 2.1, L2 3.4.' },
     { key: 'ballastFront_kg', label: 'Ballast, front', unit: 'kg', kind: 'number' },
     { key: 'ballastRear_kg', label: 'Ballast, rear', unit: 'kg', kind: 'number' },
   ],
@@ -77,6 +104,13 @@ export const REGISTER_FIELDS: Record<RegisterName, readonly RegisterField[]> = {
     { key: 'tapeSerial', label: 'Tape', kind: 'text' },
     { key: 'gaugeSerial', label: 'Gauge', kind: 'text' },
     { key: 'ruleLength_cm', label: 'Depth rule reaches', unit: 'cm', kind: 'number' },
+    {
+      key: 'scale_pct',
+      label: 'Scale of jar and jug within',
+      unit: '%',
+      kind: 'number',
+      hint: 'By their calibration; blank: 1 % is taken.',
+    },
     { key: 'checkedOn', label: 'Checked on', kind: 'date', listed: true, hint: 'Twelve months are allowed, a common practice.' },
   ],
 }
