@@ -1,5 +1,5 @@
 /** The fuel rate against what the engine and the work can ask for. */
-import { ptoPowerOf } from '../trial/facts.ts'
+import { type Operation, ptoPowerOf } from '../trial/facts.ts'
 import { above, below, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { found, type Rule } from './rule.ts'
@@ -61,7 +61,14 @@ const q30: Rule = {
 }
 
 /** L/ha by operation. Plough: Missouri G1208, 1.68 gal/acre; disc, cultivator, harrow: the same table; the others [P], middle of a range. */
-const USUAL_L_HA = { plough: 15.715, disc: 8.89, cultivator: 5.61, harrow: 3.74, rotary_tiller: 21, subsoiler: 22.5 } as const
+const USUAL_L_HA: Readonly<Partial<Record<Operation, number>>> = {
+  plough: 15.715,
+  disc: 8.89,
+  cultivator: 5.61,
+  harrow: 3.74,
+  rotary_tiller: 21,
+  subsoiler: 22.5,
+}
 
 const q31: Rule = {
   id: 'Q31',
@@ -95,7 +102,7 @@ const q32: Rule = {
   check: (ctx) => {
     const value = ctx.results.l_per_ha.value
     const { operation, usual_l_per_ha } = ctx.facts
-    const usual = usual_l_per_ha ?? (operation ? USUAL_L_HA[operation] : null)
+    const usual = usual_l_per_ha ?? (operation ? USUAL_L_HA[operation] : null) ?? null
     if (value === null || usual === null) return []
     const ratio = value / usual
     const compared = { l_per_ha: value, usual_l_per_ha: usual }

@@ -130,8 +130,8 @@ function tooDeep(ctx: CheckContext, depths: readonly Repeat[], severity: Severit
   ]
 }
 
-/** Working depths, cm, by operation [P]. */
-const USUAL_CM: Readonly<Record<Operation, readonly [number, number]>> = {
+/** Working depths, cm, by operation [P]; what does not work the soil has none. */
+const USUAL_CM: Readonly<Partial<Record<Operation, readonly [number, number]>>> = {
   harrow: [5, 15],
   cultivator: [5, 15],
   rotary_tiller: [5, 18],
@@ -149,8 +149,9 @@ const l08: Rule = {
   why: 'Each tool has its depth [P].',
   check: (ctx) => {
     const { operation } = ctx.facts
-    if (!operation) return []
-    const [low, high] = USUAL_CM[operation]
+    const usual = operation ? USUAL_CM[operation] : undefined
+    if (!usual) return []
+    const [low, high] = usual
     const off = ctx.all('depth_cm').filter((d) => outside(d.value, low, high))
     if (off.length === 0) return []
     return [
