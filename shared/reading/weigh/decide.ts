@@ -33,11 +33,15 @@ const allowedByInk = (option: Option): boolean => option.ink >= INK_ALLOWS && op
 const percent = (p: number) => (p >= 0.9995 ? 'over 99.9 %' : p < 0.001 ? 'under 0.1 %' : `${Number((p * 100).toFixed(1))} %`)
 const said = (value: Value) => (value === null ? 'blank' : String(value))
 
-/** @param posterior of the options, `other` last; null where the reading's group was not decided. */
+/**
+ * @param posterior of the options, `other` last; null where the reading's group was not decided. @param unjudged it is the result
+ * of a sum that was not weighed.
+ */
 export function decideComb(
   variable: Variable,
   posterior: Float64Array | null,
   tied: boolean,
+  unjudged: boolean,
   wrongSums: ReadonlyArray<WrongSum>,
 ): Weighed {
   const p = posterior ?? Float64Array.from(variable.options.map((o) => o.weight))
@@ -53,7 +57,8 @@ export function decideComb(
 
   if (variable.spoiled >= VOID_DOUBT) add('R01', `A box of ${variable.label} looks crossed out or written over.`)
   if (variable.gap >= GAP_DOUBT) add('Q55', `${variable.label} seems to have an empty box between or after its digits.`)
-  if (posterior === null)
+  // Plain ink stands by itself, but for the result of a sum that nobody has added up.
+  if (unjudged || (posterior === null && p[best]! < clear))
     add('R05', `${variable.label} was not weighed against the sheet's sums: there were too many ways to read them.`)
   // Plain ink whose sum does not hold is no question of reading: the wrong sum is the reason.
   const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= clear

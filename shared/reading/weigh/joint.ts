@@ -32,8 +32,8 @@ export function weighJointly(
 ): JointResult {
   const alone = variables.map((v) => Float64Array.from([...v.options.map((o) => o.weight), v.otherWeight]))
   const result: JointResult = { posteriors: alone.map(normal), ties: factors.map(() => null) }
-  for (const group of groupsOf(variables.length, factors)) {
-    const decided = PRECISIONS.some(({ state, held }) => {
+  const decide = (group: Group): boolean =>
+    PRECISIONS.some(({ state, held }) => {
       try {
         weighGroup(group, variables, factors, alone, { ...budget(), floor: state }, held, result)
         return true
@@ -42,17 +42,34 @@ export function weighJointly(
         return false
       }
     })
-    if (!decided) for (const reading of group.readings) result.posteriors[reading] = null
+  for (const group of groupsOf(variables.length, factors)) {
+    if (decide(group)) continue
+    // Fewer ties at once know less and are weighed the sooner: those that close a ring are left out, and their results unjudged.
+    for (const part of groupsOf(variables.length, factors, withoutRings(variables.length, factors, group.factors))) {
+      if (!decide(part)) for (const reading of part.readings) result.posteriors[reading] = null
+    }
   }
   return result
 }
 
+/** Of these ties those that close no ring with the ones before them. */
+function withoutRings(count: number, factors: ReadonlyArray<Factor>, own: readonly number[]): number[] {
+  const tree = roots(count)
+  return own.filter((f) => {
+    const { readings } = factors[f]!
+    if (new Set(readings.map(tree.find)).size < readings.length) return false
+    for (const reading of readings) tree.join(readings[0]!, reading)
+    return true
+  })
+}
+
 /** Groups of readings that hang together, each with the readings to hold so that no ring is left. */
-function groupsOf(count: number, factors: ReadonlyArray<Factor>): Group[] {
+function groupsOf(count: number, factors: ReadonlyArray<Factor>, own: readonly number[] = factors.map((_, f) => f)): Group[] {
   const whole = roots(count)
   const tree = roots(count)
   const held = new Set<number>()
-  for (const { readings } of factors) {
+  for (const f of own) {
+    const { readings } = factors[f]!
     for (const reading of readings) whole.join(readings[0]!, reading)
     let first: number | null = null
     for (const reading of readings) {
@@ -63,12 +80,12 @@ function groupsOf(count: number, factors: ReadonlyArray<Factor>): Group[] {
     }
   }
   const groups = new Map<number, Group>()
-  factors.forEach(({ readings }, f) => {
-    const root = whole.find(readings[0]!)
+  for (const f of own) {
+    const root = whole.find(factors[f]!.readings[0]!)
     const group = groups.get(root) ?? { readings: [], factors: [], held: [], order: [] }
     group.factors.push(f)
     groups.set(root, group)
-  })
+  }
   for (let reading = 0; reading < count; reading++) {
     const group = groups.get(whole.find(reading))
     group?.readings.push(reading)

@@ -55,7 +55,7 @@ export function patternsOf(boxes: ReadonlyArray<BoxDist>, format: string, kind: 
   const allowed = allowedMass(p, empty, kind)
   let floor = PATTERN_FLOOR
   let found = search(p, empty, kind, floor)
-  while (found.length > MOST_PATTERNS) {
+  while (found === null) {
     floor *= 4
     found = search(p, empty, kind, floor)
   }
@@ -88,7 +88,8 @@ function allowedMass(p: number[][], empty: boolean[], kind: CombKind): number {
   return digits
 }
 
-function search(p: number[][], empty: boolean[], kind: CombKind, floor: number): Pattern[] {
+/** All patterns down to the floor, or null where they are more than can be weighed. */
+function search(p: number[][], empty: boolean[], kind: CombKind, floor: number): Pattern[] | null {
   const best = p.map((box) => Math.max(...box.slice(0, VOID)))
   const rest = [...best, 1]
   for (let i = best.length - 1; i >= 0; i--) rest[i] = best[i]! * rest[i + 1]!
@@ -96,7 +97,7 @@ function search(p: number[][], empty: boolean[], kind: CombKind, floor: number):
   const out: Pattern[] = []
   const digits: number[] = []
   const visit = (at: number, ink: number, onlyBlanks: boolean): void => {
-    if (ink * rest[at]! < least) return
+    if (ink * rest[at]! < least || out.length > MOST_PATTERNS) return
     if (at === p.length) {
       if (!onlyBlanks) out.push({ digits: [...digits], ink })
       return
@@ -114,5 +115,5 @@ function search(p: number[][], empty: boolean[], kind: CombKind, floor: number):
     }
   }
   visit(0, 1, true)
-  return out
+  return out.length > MOST_PATTERNS ? null : out
 }

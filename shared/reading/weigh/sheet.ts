@@ -55,7 +55,8 @@ export function weighSheet(
       factor.readings.includes(i) ? wrongSum(factor, joint.ties[f] ?? null, variables, decided, i) : [],
     )
     const tied = factors.some((factor) => factor.readings.includes(i))
-    out.set(variable.key, decideComb(variable, posterior, tied, failing))
+    const unjudged = factors.some((factor, f) => factor.result === i && joint.ties[f] === null)
+    out.set(variable.key, decideComb(variable, posterior, tied, unjudged, failing))
   })
   for (const cell of ticks) out.set(cell.key, decideTick(cell, ink.ticks.get(cell.key)![0]!))
   for (const cell of combs) {
