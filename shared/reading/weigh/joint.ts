@@ -45,9 +45,10 @@ export function weighJointly(
   for (const group of groupsOf(variables.length, factors)) {
     if (decide(group)) continue
     // Fewer ties at once know less and are weighed the sooner: those that close a ring are left out, and their results unjudged.
-    for (const part of groupsOf(variables.length, factors, withoutRings(variables.length, factors, group.factors))) {
-      if (!decide(part)) for (const reading of part.readings) result.posteriors[reading] = null
-    }
+    const fewer = withoutRings(variables.length, factors, group.factors)
+    const parts = fewer.length < group.factors.length ? groupsOf(variables.length, factors, fewer) : []
+    const open = new Set(parts.length === 0 ? group.readings : parts.filter((part) => !decide(part)).flatMap((p) => p.readings))
+    for (const reading of open) result.posteriors[reading] = null
   }
   return result
 }
