@@ -1,9 +1,9 @@
-/** Writing what was read into a sheet: as its first ink, as an answer to what was sent back, or as a second picture of it. */
+/** Writing what was read into a sheet, as its first ink or as an answer to what was sent back; another picture of it: join-sheet.ts. */
 import type { Db } from '../database.ts'
 import type { ReadingEntity } from '../entities/reading.ts'
 import type { SheetEntity } from '../entities/sheet.ts'
 import { type PageEntity, PageEntity as Pages, type UploadEntity } from '../entities/upload.ts'
-import { isOpen, listReadings, putReadings, type ReadingRow } from '../repositories/reading.ts'
+import { listReadings, putReadings, type ReadingRow } from '../repositories/reading.ts'
 import { noteOnSheet } from '../repositories/sheet.ts'
 import { addTrailLine } from '../repositories/trail.ts'
 import type { PageOutcome } from './page-outcome.ts'
@@ -60,32 +60,6 @@ function countsSaid(read: ReadPage, open: OpenDoubts): string {
 }
 
 const counted = (n: number, noun: string) => `${n} ${noun}${n === 1 ? '' : 's'}`
-
-/** Another picture of the same ink: what was in doubt and is clear in this one is taken from it, nothing else changes. */
-export async function joinSheet(
-  db: Db,
-  sheet: SheetEntity,
-  readings: readonly ReadingEntity[],
-  page: PageEntity,
-  upload: UploadEntity,
-  read: ReadPage,
-): Promise<string> {
-  const open = new Set(['waiting', 'settled'].includes(sheet.state) ? readings.filter(isOpen).map((r) => r.key) : [])
-  const better = read.readings.filter((r) => r.state === 'clear' && open.has(r.key))
-  await putReadings(db, readRows(sheet.id, page.id, { ...read, readings: better }))
-  await db.update(Pages, { id: page.id }, { sheetId: sheet.id })
-  await recheckSheet(db, sheet.id)
-  const text = `${upload.fileName} shows the same ink and joins the sheet; ${better.length} readings in doubt are clear in it`
-  await addTrailLine(db, {
-    actor: null,
-    action: 'joined',
-    subject: 'sheet',
-    subjectId: sheet.id,
-    text,
-    details: { keys: better.map((r) => r.key) },
-  })
-  return sheet.id
-}
 
 const readRows = (sheetId: string, pageId: string, read: ReadPage): ReadingRow[] =>
   read.readings.map((r) => ({

@@ -7,10 +7,12 @@ import type { Db } from '../database.ts'
 import { type SheetEntity, SheetEntity as Sheets } from '../entities/sheet.ts'
 import type { PageEntity } from '../entities/upload.ts'
 import { PageEntity as Pages, UploadEntity } from '../entities/upload.ts'
+import { keptReading } from '../repositories/page-readings.ts'
 import { listReadings } from '../repositories/reading.ts'
 import { insertSheet, lockSheetsByCode, noteOnSheet, setAsideUnread } from '../repositories/sheet.ts'
 import { addTrailLine } from '../repositories/trail.ts'
-import { fillSheet, joinSheet } from './fill-sheet.ts'
+import { fillSheet } from './fill-sheet.ts'
+import { joinSheet } from './join-sheet.ts'
 import type { PageOutcome } from './page-outcome.ts'
 import { sameInk } from './same-ink.ts'
 
@@ -35,7 +37,7 @@ export async function takeInPage(db: Db, input: { pageId: string; attemptToken: 
       readAt: () => 'now()',
       takeAgain: outcome.kind === 'take again' ? { code: outcome.code, advice: outcome.advice } : null,
       problem: outcome.kind === 'unreadable' ? outcome.reason : null,
-      ...(outcome.kind === 'read' && outcome.planText ? { reading: { planText: outcome.planText } as never } : {}),
+      ...(outcome.kind === 'read' ? { reading: keptReading(outcome) as never } : {}),
       ...('pictureKey' in outcome && outcome.pictureKey ? { pictureKey: outcome.pictureKey } : {}),
     })
     .where({ id: pageId, attemptToken })
