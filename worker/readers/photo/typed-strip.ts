@@ -15,6 +15,8 @@ const HYPHEN_MM = [0.8, 0.45] as const
 /** Shares of a strip's dots that are at least as bright as paper, and as dark as ink. */
 const PAPER_SHARE = 0.3
 const INK_SHARE = 0.01
+/** Ink at the edge of a mark that was taken away, as a share of the ink's darkness. */
+const EDGE_INK = 0.35
 /** Darkness, of paper to black, from which there is ink at all. */
 const LEAST_INK = 0.3
 
@@ -109,18 +111,22 @@ function blankMarks(strip: Strip): void {
   for (const mark of marksOf(strip.cell)) fill(strip, mark, Number.POSITIVE_INFINITY)
 }
 
-/** Whether a printed mark, taken away, may have taken a part of what stands in this rectangle (pixels of the strip) with it. */
-export function isCut(
-  { cell, px_per_mm, x, y }: Strip,
-  glyph: { left: number; right: number; top: number; low: number },
-): boolean {
-  return marksOf(cell).some(
-    (mark) =>
-      glyph.left <= (mark.x + mark.width - x) * px_per_mm + 1 &&
-      glyph.right >= (mark.x - x) * px_per_mm - 1 &&
-      glyph.top <= (mark.y + mark.height - y) * px_per_mm + 1 &&
-      glyph.low >= (mark.y - y) * px_per_mm - 1,
-  )
+/** Whether a printed mark, taken away, has taken a part of what stands in this rectangle (pixels) with it: ink ends at its edge. */
+export function isCut(strip: Strip, glyph: { left: number; right: number; top: number; low: number }): boolean {
+  const { width, height, px_per_mm, darkness, ink } = strip
+  return marksOf(strip.cell).some((mark) => {
+    const left = Math.round((mark.x - strip.x) * px_per_mm) - 1
+    const right = Math.round((mark.x + mark.width - strip.x) * px_per_mm)
+    const top = Math.round((mark.y - strip.y) * px_per_mm) - 1
+    const low = Math.round((mark.y + mark.height - strip.y) * px_per_mm)
+    for (let y = Math.max(top, glyph.top); y <= Math.min(low, glyph.low - 1, height - 1); y++) {
+      for (let x = Math.max(left, glyph.left); x <= Math.min(right, glyph.right - 1, width - 1); x++) {
+        const onEdge = x === left || x === right || y === top || y === low
+        if (onEdge && darkness[y * width + x]! >= EDGE_INK * ink) return true
+      }
+    }
+    return false
+  })
 }
 
 function blankFrames(strip: Strip): void {
