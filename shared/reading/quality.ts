@@ -35,22 +35,22 @@ export interface PlacedPage {
 export function judgePlacing({ page, picture, scale, alignment, corners, pageCorners }: PlacedPage): TakeAgain | null {
   if (alignment.foundShare >= LEAST_FOUND && alignment.ahead >= LEAST_AHEAD) return null
   const missing = [0, 1, 2, 3].filter((c) => !corners.includes(c))
-  const lost = alignment.parts.filter((p) => !p.found)
-  const levels = alignment.parts.map((p) => {
+  const full = { ...picture.grey, width: picture.grey.width / scale, height: picture.grey.height / scale }
+  // Outside the picture there is no light to judge.
+  const levels = alignment.parts.flatMap((p) => {
     const to = project(alignment.homography, p.center.x, p.center.y)
-    return { found: p.found, level: paperAt(picture.paper, to.x * scale, to.y * scale) }
+    return isInside(full, to) ? [{ found: p.found, level: paperAt(picture.paper, to.x * scale, to.y * scale) }] : []
   })
+  const lost = levels.filter((l) => !l.found)
   const typical = levels.map((l) => l.level).sort((a, b) => a - b)[levels.length >> 1] ?? 0
   if (typical < DARK_PAPER) return takeAgain('too dark')
-  const glared = levels.filter((l) => !l.found && l.level >= GLARED_PAPER).length
+  const glared = lost.filter((l) => l.level >= GLARED_PAPER).length
   if (typical < GLARED_PAPER && glared > lost.length / 3) return takeAgain('glare')
   if ((alignment.edge_mm ?? 0) > BLURRED_MM) return takeAgain('too blurred')
   if (missing.length > 0) {
-    const full = { ...picture.grey, width: picture.grey.width / scale, height: picture.grey.height / scale }
-    return cornersMissing(
-      missing,
-      missing.some((c) => !isInside(full, pageCorners[c]!)),
-    )
+    const outside = missing.filter((c) => !isInside(full, pageCorners[c]!))
+    // What lies outside comes first: moving the phone may bring the others in as well.
+    return outside.length > 0 ? cornersMissing(outside, true) : cornersMissing(missing, false)
   }
   const place = coveredPlace(alignment.parts, page)
   if (place) return covered(place.across, place.down)
