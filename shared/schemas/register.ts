@@ -55,7 +55,16 @@ export const tractorSchema = saveTractorSchema.extend(registered)
 export type SaveTractor = z.infer<typeof saveTractorSchema>
 export type Tractor = z.infer<typeof tractorSchema>
 
-export const OPERATIONS = ['plough', 'disc', 'cultivator', 'rotary_tiller', 'harrow', 'subsoiler'] as const
+export const OPERATIONS = [
+  'plough',
+  'disc',
+  'cultivator',
+  'rotary_tiller',
+  'harrow',
+  'subsoiler',
+  'transport',
+  'pto_work',
+] as const
 export const operationSchema = z.enum(OPERATIONS)
 export type Operation = z.infer<typeof operationSchema>
 export const saveImplementSchema = z.object({
@@ -64,7 +73,8 @@ export const saveImplementSchema = z.object({
   operation: operationSchema,
   ratedWidth_m: z.coerce.number().min(0.2).max(12),
   toolCount: z.coerce.number().int().min(1).max(60),
-  maxDepth_cm: positive(80),
+  /** 0: it does not work the soil. */
+  maxDepth_cm: z.coerce.number().min(0).max(80),
   active: z.boolean().default(true),
 })
 export const implementSchema = saveImplementSchema.extend(registered)

@@ -3,7 +3,16 @@ import { z } from 'zod'
 import { convert, quantity, unitFromTick } from './quantity.ts'
 import { numberAt, type Readings, textAt } from './readings.ts'
 
-export const OPERATIONS = ['plough', 'disc', 'cultivator', 'rotary_tiller', 'harrow', 'subsoiler'] as const
+export const OPERATIONS = [
+  'plough',
+  'disc',
+  'cultivator',
+  'rotary_tiller',
+  'harrow',
+  'subsoiler',
+  'transport',
+  'pto_work',
+] as const
 export type Operation = (typeof OPERATIONS)[number]
 
 const number = z.number().nullish()

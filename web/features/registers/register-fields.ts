@@ -90,7 +90,14 @@ export const REGISTER_FIELDS: Record<RegisterName, readonly RegisterField[]> = {
     { key: 'operation', label: 'Operation', kind: 'choice', options: words(OPERATIONS), listed: true },
     { key: 'ratedWidth_m', label: 'Rated width', unit: 'm', kind: 'number', listed: true },
     { key: 'toolCount', label: 'Bottoms, tines, discs', kind: 'number', listed: true },
-    { key: 'maxDepth_cm', label: 'Greatest depth', unit: 'cm', kind: 'number', listed: true },
+    {
+      key: 'maxDepth_cm',
+      label: 'Greatest depth',
+      unit: 'cm',
+      kind: 'number',
+      listed: true,
+      hint: 'A trailer or a PTO machine works no soil: 0.',
+    },
   ],
   kits: [
     number,
