@@ -90,6 +90,8 @@ export const IMPLEMENTS: readonly SaveImplement[] = [
   tool(24, 'disc harrow, 16 discs', 'harrow', 2, 16, 18),
   tool(25, 'rotary tiller, 36 blades', 'rotary_tiller', 1.6, 36, 20),
   tool(26, 'subsoiler, 1 leg', 'subsoiler', 1, 1, 60),
+  tool(27, 'tipping trailer, 2 wheels', 'transport', 1.8, 1, 0),
+  tool(28, 'hammer mill, PTO', 'pto_work', 0.6, 1, 0),
 ]
 
 const kit = (number: number, letter: string, checkedOn: string, ruleLength_cm: number): SaveKit => ({
