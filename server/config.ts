@@ -42,6 +42,8 @@ const workerSchema = z.object({
   S3_SECRET_ACCESS_KEY: z.string().optional(),
   SMTP_URL: smtpUrl.default('smtp://127.0.0.1:2525'),
   MAIL_FROM: z.string().regex(/@/, 'must be a mail address').default('Sheafbook <sheafbook@localhost>'),
+  /** true: webhooks may go to plain http and to addresses of a private network, for a book that runs inside one. */
+  WEBHOOK_ALLOW_PRIVATE: z.enum(['true', 'false'], 'must be true or false').default('false'),
   LOG_LEVEL: z.enum(['trace', 'debug', 'info', 'warn', 'error', 'fatal', 'silent']).default('info'),
 })
 
@@ -111,6 +113,7 @@ function rename(read: z.output<typeof workerSchema>) {
     store: storeSettings(read),
     smtpUrl: read.SMTP_URL,
     mailFrom: read.MAIL_FROM,
+    webhookAllowPrivate: read.WEBHOOK_ALLOW_PRIVATE === 'true',
     logLevel: read.LOG_LEVEL,
   }
 }

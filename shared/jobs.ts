@@ -6,6 +6,7 @@ export const JOBS = {
   'upload-split': z.object({ uploadId: z.uuid() }),
   'page-read': z.object({ pageId: z.uuid() }),
   'mail-send': z.object({ mailId: z.uuid() }),
+  'webhook-send': z.object({ deliveryId: z.uuid() }),
 } as const
 export type JobName = keyof typeof JOBS
 export type JobPayload<N extends JobName> = z.infer<(typeof JOBS)[N]>

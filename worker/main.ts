@@ -11,6 +11,7 @@ import { mailSendJob } from './jobs/mail-send.job.ts'
 import { pageReadJob } from './jobs/page-read.job.ts'
 import type { PageReader } from './jobs/page-reader.ts'
 import { uploadSplitJob } from './jobs/upload-split.job.ts'
+import { webhookSendJob } from './jobs/webhook-send.job.ts'
 import { startWorker } from './start-worker.ts'
 
 /** A page in hand is waited for this long, then handed back; the process is gone within 20 s of being told. */
@@ -36,6 +37,7 @@ async function run(settings: WorkerSettings): Promise<void> {
           uploadSplitJob({ source, boss, files, parse: runParser }),
           pageReadJob({ source, files, reader }),
           mailSendJob({ source, mailer }),
+          webhookSendJob({ source, boss, allowPrivate: settings.webhookAllowPrivate }),
         ]
       },
     },

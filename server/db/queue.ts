@@ -9,7 +9,13 @@ import type { Db } from './database.ts'
  */
 export const QUEUE_OPTIONS = { retryLimit: 2, retryDelay: 1, expireInSeconds: 30, retentionDays: 14 } as const
 const MAIL_OPTIONS = { ...QUEUE_OPTIONS, retryLimit: 8, retryDelay: 60, retryBackoff: true } as const
-export const queueOptions = (name: JobName) => (name === 'mail-send' ? MAIL_OPTIONS : QUEUE_OPTIONS)
+/** A receiver may be down over a weekend: fourteen attempts, the last three to six days after the first. */
+const WEBHOOK_OPTIONS = { ...QUEUE_OPTIONS, retryLimit: 13, retryDelay: 30, retryBackoff: true } as const
+const OWN_OPTIONS: Partial<Record<JobName, typeof MAIL_OPTIONS | typeof WEBHOOK_OPTIONS>> = {
+  'mail-send': MAIL_OPTIONS,
+  'webhook-send': WEBHOOK_OPTIONS,
+}
+export const queueOptions = (name: JobName) => OWN_OPTIONS[name] ?? QUEUE_OPTIONS
 /** Where a job goes whose attempts are used up: its handler says so to whoever waits. */
 export const failedQueue = <N extends JobName>(name: N) => `${name}-failed` as const
 

@@ -17,6 +17,7 @@ import { trailRoutes } from '../features/trail/trail.routes.ts'
 import { uploadRoutes } from '../features/uploads/uploads.routes.ts'
 import { passwordRoutes } from '../features/users/passwords.routes.ts'
 import { userRoutes } from '../features/users/users.routes.ts'
+import { webhookRoutes } from '../features/webhooks/webhooks.routes.ts'
 import { openapiRoute } from './openapi.ts'
 import type { Route } from './route.ts'
 
@@ -38,6 +39,7 @@ const routes: readonly Route[] = [
   ...downloadRoutes,
   ...changeRoutes,
   ...tokenRoutes,
+  ...webhookRoutes,
   ...mailRoutes,
   ...trailRoutes,
 ]

@@ -206,6 +206,26 @@ export const ACCESS: Record<string, Rule> = {
   },
 
   'GET /changes': { may: BOOK, token: 'changes' },
+  'GET /webhooks': { may: MAKERS, token: 'webhooks' },
+  'POST /webhooks': {
+    may: MAKERS,
+    token: 'webhooks',
+    body: () => ({ url: 'https://data.example/sheafbook', events: ['record.entered'] }),
+  },
+  'PATCH /webhooks/:id': {
+    may: MAKERS,
+    token: 'webhooks',
+    path: () => `/webhooks/${NOBODYS}`,
+    body: () => ({ state: 'paused' }),
+    butAnswers: [404],
+  },
+  'DELETE /webhooks/:id': { may: MAKERS, token: 'webhooks', path: () => `/webhooks/${NOBODYS}`, butAnswers: [404] },
+  'GET /webhooks/:id/deliveries': {
+    may: MAKERS,
+    token: 'webhooks',
+    path: () => `/webhooks/${NOBODYS}/deliveries`,
+    butAnswers: [404],
+  },
   'GET /tokens': { may: MAKERS },
   'POST /tokens': { may: MAKERS, body: () => ({ name: 'nightly copy', scopes: ['book'], days: 30 }) },
   'POST /tokens/:id/revoke': { may: MAKERS, path: () => `/tokens/${NOBODYS}/revoke`, butAnswers: [404] },

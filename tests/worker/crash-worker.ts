@@ -17,7 +17,7 @@ await startWorker(
     log: pino({ level: 'silent' }),
     maintenance_s: 1,
     handlers: ({ source }) => [
-      ...noneOf('upload-split', 'mail-send'),
+      ...noneOf('upload-split', 'mail-send', 'webhook-send'),
       pageReadJob({
         source,
         files: memoryStore(),

@@ -217,7 +217,7 @@ it('a worker without a handler, or with two, does not start', () => {
   const [split, mail] = noneOf('upload-split', 'mail-send')
   expect(() => checkHandlers([split!, mail!])).toThrow('page-read has no handler')
   expect(() => checkHandlers([split!, split!, mail!])).toThrow('page-read has no handler')
-  expect(() => checkHandlers([...noneOf('upload-split', 'page-read', 'mail-send', 'mail-send')])).toThrow(
+  expect(() => checkHandlers([...noneOf('upload-split', 'page-read', 'webhook-send', 'mail-send', 'mail-send')])).toThrow(
     'mail-send has two handlers',
   )
 })

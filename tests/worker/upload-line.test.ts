@@ -29,7 +29,7 @@ beforeAll(async () => {
       databaseUrl: server.deps.settings.databaseUrl,
       log: silent,
       handlers: ({ source, boss }) => [
-        ...noneOf('mail-send'),
+        ...noneOf('mail-send', 'webhook-send'),
         uploadSplitJob({ source, boss, files: server.deps.files, parse: runParser }),
         pageReadJob({
           source,

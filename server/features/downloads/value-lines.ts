@@ -7,37 +7,70 @@ import type { ResultValue } from '../../../shared/schemas/record.ts'
 import type { Reading } from '../../../shared/schemas/sheet.ts'
 import type { BookRecord } from '../../db/desk/book-lines.ts'
 
-type Shared = Pick<
+/** What all values of a record share. */
+type Shared = Omit<BookValue, keyof Own>
+type Own = Pick<
   BookValue,
-  | 'record'
-  | 'version'
-  | 'state'
-  | 'sheet'
-  | 'layout'
-  | 'trial_date'
-  | 'place'
-  | 'tractor'
-  | 'implement'
-  | 'formula_version'
-  | 'rules_version'
+  | 'kind'
+  | 'key'
+  | 'label'
+  | 'value'
+  | 'text'
+  | 'unit'
+  | 'u'
+  | 'expanded_u'
+  | 'k'
+  | 'formula'
+  | 'made_from'
+  | 'origin'
+  | 'cell'
+  | 'settlement'
+  | 'settled_by'
+  | 'settled_at'
+  | 'why'
+  | 'ink'
 >
 
-/** Cells by key, once a layout: they are looked up for every reading of every record. */
-const cellsByLayout = new Map<Layout, Map<string, LayoutCell>>()
+/** What the layout knows of a cell. */
+interface CellFacts {
+  label: string
+  /** Where it is on the flattened page, as a media fragment (W3C Media Fragments 1.0, 4.2.2). */
+  fragment: string
+  /** It shows who a person is. */
+  personal: boolean
+}
 
-function cellsOf({ layoutKey, layoutVersion }: BookRecord): { layout: Layout | null; cells: Map<string, LayoutCell> } {
+/** Kept once a layout version: they are asked for at every reading of every record. */
+const factsByLayout = new Map<string, Map<string, CellFacts>>()
+
+function factsOf({ layoutKey, layoutVersion }: BookRecord): Map<string, CellFacts> {
+  const name = `${layoutKey} ${layoutVersion}`
+  const known = factsByLayout.get(name)
+  if (known) return known
   const layout = findLayout(layoutKey, layoutVersion)
-  if (!layout) return { layout, cells: new Map() }
-  const known = cellsByLayout.get(layout) ?? new Map(layout.cells.map((cell) => [cell.key, cell]))
-  cellsByLayout.set(layout, known)
-  return { layout, cells: known }
+  const made = new Map(layout?.cells.map((cell) => [cell.key, cellFacts(layout, cell)]))
+  factsByLayout.set(name, made)
+  return made
+}
+
+const percent = (part: number, whole: number) => Math.round((part / whole) * 10_000) / 100
+
+function cellFacts({ page }: Layout, cell: LayoutCell): CellFacts {
+  const { x, y, width, height } = cellBounds(cell)
+  const across = [x, width].map((mm) => percent(mm, page.width))
+  const down = [y, height].map((mm) => percent(mm, page.height))
+  return {
+    label: cell.label,
+    fragment: `#xywh=percent:${across[0]},${down[0]},${across[1]},${down[1]}`,
+    personal: 'personal' in cell && cell.personal === true,
+  }
 }
 
 export const layoutName = ({ layoutKey, layoutVersion }: BookRecord) => `${layoutKey} ${layoutVersion}`
 
 /** What shows who a person is stays in the book. `at` is the address that links begin with. */
 export function valuesOf(record: BookRecord, at: string): BookValue[] {
-  const { layout, cells } = cellsOf(record)
+  const facts = factsOf(record)
   const shared: Shared = {
     record: record.number,
     version: record.version,
@@ -52,45 +85,37 @@ export function valuesOf(record: BookRecord, at: string): BookValue[] {
     rules_version: record.rulesVersion,
   }
   const self = `${at}/api/records/${record.number}?version=${record.version}`
-  const shown = record.readings.filter(({ key }) => !isPersonal(cells.get(key)))
-  return [
-    ...shown.map((reading) => {
-      const cell = cells.get(reading.key)
-      return readingLine(shared, reading, cell?.label ?? reading.key, inkOf(reading, layout, cell, at) ?? self)
-    }),
-    ...Object.values(record.results).map((figure) => figureLine(shared, figure, self)),
-  ]
+  const readings = record.readings.filter(({ key }) => !facts.get(key)?.personal)
+  const own = readings.map((reading) => {
+    const cell = facts.get(reading.key)
+    return readingLine(reading, cell?.label ?? reading.key, inkOf(reading, cell, at) ?? self)
+  })
+  const figures = Object.values(record.results).map((figure) => figureLine(figure, self))
+  return [...own, ...figures].map((one) => together(shared, one))
 }
 
-const isPersonal = (cell: LayoutCell | undefined) => cell !== undefined && 'personal' in cell && cell.personal === true
+const readingLine = (reading: Reading, label: string, ink: string): Own => ({
+  kind: 'reading',
+  key: reading.key,
+  label,
+  value: typeof reading.value === 'number' ? reading.value : null,
+  text: reading.value === null || typeof reading.value === 'number' ? null : String(reading.value),
+  unit: reading.unit,
+  u: null,
+  expanded_u: null,
+  k: null,
+  formula: null,
+  made_from: null,
+  origin: reading.origin,
+  cell: reading.cellRef,
+  settlement: reading.settlement,
+  settled_by: reading.settledBy,
+  settled_at: reading.settledAt,
+  why: reading.why === '' ? null : reading.why,
+  ink,
+})
 
-function readingLine(shared: Shared, reading: Reading, label: string, ink: string): BookValue {
-  const { value } = reading
-  return {
-    ...shared,
-    kind: 'reading',
-    key: reading.key,
-    label,
-    value: typeof value === 'number' ? value : null,
-    text: value === null || typeof value === 'number' ? null : String(value),
-    unit: reading.unit,
-    u: null,
-    expanded_u: null,
-    k: null,
-    formula: null,
-    made_from: null,
-    origin: reading.origin,
-    cell: reading.cellRef,
-    settlement: reading.settlement,
-    settled_by: reading.settledBy,
-    settled_at: reading.settledAt,
-    why: reading.why === '' ? null : reading.why,
-    ink,
-  }
-}
-
-const figureLine = (shared: Shared, figure: ResultValue, ink: string): BookValue => ({
-  ...shared,
+const figureLine = (figure: ResultValue, ink: string): Own => ({
   kind: 'figure',
   key: figure.key,
   label: figure.label,
@@ -111,19 +136,42 @@ const figureLine = (shared: Shared, figure: ResultValue, ink: string): BookValue
   ink,
 })
 
-const percent = (part: number, whole: number) => Math.round((part / whole) * 10_000) / 100
+/** Written out: spreading both into a new object takes fifty times as long, and a download makes hundreds of thousands. */
+const together = (shared: Shared, own: Own): BookValue => ({
+  record: shared.record,
+  version: shared.version,
+  state: shared.state,
+  sheet: shared.sheet,
+  layout: shared.layout,
+  trial_date: shared.trial_date,
+  place: shared.place,
+  tractor: shared.tractor,
+  implement: shared.implement,
+  kind: own.kind,
+  key: own.key,
+  label: own.label,
+  value: own.value,
+  text: own.text,
+  unit: own.unit,
+  u: own.u,
+  expanded_u: own.expanded_u,
+  k: own.k,
+  formula: own.formula,
+  made_from: own.made_from,
+  formula_version: shared.formula_version,
+  rules_version: shared.rules_version,
+  origin: own.origin,
+  cell: own.cell,
+  settlement: own.settlement,
+  settled_by: own.settled_by,
+  settled_at: own.settled_at,
+  why: own.why,
+  ink: own.ink,
+})
 
-/**
- * The flattened page with the part the cell takes up, as a media fragment (W3C Media Fragments 1.0, 4.2.2); the file itself
- * where it came as a spreadsheet. null where no page shows it.
- */
-function inkOf({ pageId, origin }: Reading, layout: Layout | null, cell: LayoutCell | undefined, at: string): string | null {
+/** The flattened page with the part the cell takes up; the file itself where it came as a spreadsheet; null where no page shows it. */
+function inkOf({ pageId, origin }: Reading, cell: CellFacts | undefined, at: string): string | null {
   if (!pageId) return null
   if (origin === 'spreadsheet') return `${at}/api/pages/${pageId}/original`
-  const picture = `${at}/api/pages/${pageId}/picture`
-  if (!layout || !cell) return picture
-  const { x, y, width, height } = cellBounds(cell)
-  const across = layout.page.width
-  const down = layout.page.height
-  return `${picture}#xywh=percent:${percent(x, across)},${percent(y, down)},${percent(width, across)},${percent(height, down)}`
+  return `${at}/api/pages/${pageId}/picture${cell?.fragment ?? ''}`
 }

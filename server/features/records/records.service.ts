@@ -8,6 +8,7 @@ import { challengeRecord, findRecord, listVersions } from '../../db/repositories
 import { findSheet, noteOnSheet } from '../../db/repositories/sheet.ts'
 import { addTrailLine } from '../../db/repositories/trail.ts'
 import type { Deps } from '../../http/route.ts'
+import { announceRecord } from '../webhooks/announce.ts'
 
 const PAGE = 100
 
@@ -73,6 +74,7 @@ export async function challenge(deps: Deps, actor: User, number: number, reason:
       reason,
       version: (await findSheet(db, record.sheetId))!.version + 1,
     })
+    await announceRecord(deps, db, { type: 'record.changed', number, version: record.version })
     const text = `record ${number} challenged: “${reason}”`
     await addTrailLine(db, {
       actor,
