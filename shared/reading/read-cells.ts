@@ -1,9 +1,10 @@
 /** From a placed page to readings: every field cut through its own map, recognised, and weighed together. */
-import { type Box, boxesOf, cellBounds, unitOf } from '../layouts/geometry.ts'
+import { type Box, cellBounds, unitOf } from '../layouts/geometry.ts'
 import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
 import type { Alignment, PlacedPart } from './align/align-page.ts'
 import { tickContrast } from './align/measure-tick.ts'
 import type { Picture } from './align/patch.ts'
+import { isTraced } from './align/trace-rules.ts'
 import { blackAt } from './cells/black-level.ts'
 import { cutCell, samplesFor } from './cells/cut.ts'
 import { inkWithin, signedBy } from './cells/signed.ts'
@@ -35,8 +36,10 @@ interface PlacedCell {
   /** Null where a box was not found on its own lines. */
   fit_mm: number | null
   hasFrame: boolean
-  /** All of its boxes were seen. */
+  /** All of its boxes were seen, or the line under its area. */
   seen: boolean
+  /** The maps of its left and its right end. */
+  ends: readonly [FieldMap, FieldMap]
 }
 
 export async function readCells(
@@ -52,7 +55,7 @@ export async function readCells(
   const combs = placed.filter((p) => isComb(p.cell))
   const boxes = combs.flatMap((p) => p.boxes)
   const cells = new Float32Array(boxes.length * CELL_PX)
-  const over = samplesFor(scaleAt(alignment.homography, layout.page.width / 2, layout.page.height / 2))
+  const over = samplesFor((picture.shrunk ?? 1) * scaleAt(alignment.homography, layout.page.width / 2, layout.page.height / 2))
   boxes.forEach(({ box, map }, i) => {
     cutCell(picture, map, box, blackAt(alignment.blacks, box), over, cells, i)
   })
@@ -113,36 +116,43 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
         part.boxes.map((box) => ({ box, map: { homography, center, displacement } })),
       )
       const fit_mm = parts.every((p) => p.found) ? Math.max(...parts.map((p) => p.fit_mm)) : null
-      return [{ cell, boxes, fit_mm, hasFrame: true, seen: parts.every((p) => p.seen) }]
+      const ends = [boxes[0]!.map, boxes.at(-1)!.map] as const
+      return [{ cell, boxes, fit_mm, hasFrame: true, seen: parts.every((p) => p.seen), ends }]
     }
-    const boxes = boxesOf(cell).map((box) => {
-      const center = { x: box.x + box.width / 2, y: box.y + box.height / 2 }
-      return { box, map: { homography, center, displacement: field.at(center) } }
-    })
-    return [{ cell, boxes, fit_mm: null, hasFrame: false, seen: false }]
+    const box = cellBounds(cell)
+    const mapAt = (x: number): FieldMap => {
+      const center = { x, y: box.y + box.height / 2 }
+      return { homography, center, displacement: field.at(center) }
+    }
+    const right = box.x + box.width
+    const seen = isTraced(alignment.anchors, { y: box.y + box.height, left: box.x, right })
+    const boxes = [{ box, map: mapAt(box.x + box.width / 2) }]
+    return [{ cell, boxes, fit_mm: null, hasFrame: false, seen, ends: [mapAt(box.x), mapAt(right)] }]
   })
 }
 
 /** Signatures are seen; lines of writing stay pictures. */
-function seen(picture: Picture, alignment: Alignment, { cell, boxes }: PlacedCell): Weighed {
+function seen(picture: Picture, alignment: Alignment, { cell, boxes, seen: framed }: PlacedCell): Weighed {
   const { box, map } = boxes[0]!
   if (cell.kind !== 'signature') return { value: null, state: 'clear', candidates: [], reasons: [], posterior: 1 }
-  const { signed, sure, hidden } = signedBy(inkWithin(picture, map, box, blackAt(alignment.blacks, box)))
-  const text = hidden
-    ? `The printed line for ${cell.label} hardly shows in the photo, so a signature might not show either.`
-    : `Whether ${cell.label} signed is not plain.`
+  const { signed, sure: plain, hidden } = signedBy(inkWithin(picture, map, box, blackAt(alignment.blacks, box)))
+  const sure = plain && framed
+  const text =
+    hidden || !framed
+      ? `The printed line for ${cell.label} hardly shows in the photo, so a signature might not show either.`
+      : `Whether ${cell.label} signed is not plain.`
   const reasons: Weighed['reasons'] = sure ? [] : [{ rule: 'R06', text, cells: [cell.key] }]
   return { value: signed, state: sure ? 'clear' : 'in doubt', candidates: [], reasons, posterior: sure ? 1 : 0.5 }
 }
 
-function withPlace({ cell, boxes, fit_mm, hasFrame, seen: framed }: PlacedCell, weighed: Weighed, hidden: boolean): CellReading {
+function withPlace({ cell, ends, fit_mm, hasFrame, seen: framed }: PlacedCell, weighed: Weighed, hidden: boolean): CellReading {
   const reading: CellReading = {
     value: weighed.value,
     unit: unitOf(cell),
     state: weighed.state,
     candidates: weighed.candidates,
     reasons: [...weighed.reasons],
-    quad: quadOf(cell, boxes),
+    quad: quadOf(cell, ends),
     fit_mm,
   }
   if (hasFrame && (fit_mm === null || fit_mm > FIT_LIMIT_MM)) {
@@ -165,10 +175,8 @@ function withPlace({ cell, boxes, fit_mm, hasFrame, seen: framed }: PlacedCell, 
 
 const tenth = (px: number) => Math.round(px * 10) / 10
 
-function quadOf(cell: LayoutCell, boxes: readonly PlacedBox[]): Array<[number, number]> {
+function quadOf(cell: LayoutCell, [first, last]: readonly [FieldMap, FieldMap]): Array<[number, number]> {
   const bounds = cellBounds(cell)
-  const first = boxes[0]!.map
-  const last = boxes.at(-1)!.map
   const right = bounds.x + bounds.width
   const bottom = bounds.y + bounds.height
   return [

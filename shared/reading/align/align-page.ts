@@ -13,7 +13,7 @@ import type { Picture } from './patch.ts'
 import { type Placing, placeOutwards, placings } from './place-fields.ts'
 import { codeMarks, placeSquares } from './place-squares.ts'
 import { type PlacedPart, settleParts } from './settle-parts.ts'
-import { traceRules } from './trace-rules.ts'
+import { traceBaselines, traceRules } from './trace-rules.ts'
 
 export type { PlacedPart } from './settle-parts.ts'
 
@@ -83,6 +83,7 @@ export function alignPage(
     all.flatMap((p) => p.parts),
     known,
   )
+  known = [...known, ...traceBaselines(picture, layout, homography, known)]
   return {
     homography: scaled(homography, 1 / scale),
     anchors: known.map(({ key: _k, plain: _p, spread_mm: _s, ahead: _a, isComb: _c, dyy: _d, ...anchor }) => anchor),

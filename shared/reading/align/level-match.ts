@@ -61,8 +61,11 @@ interface Grid {
   count: number
 }
 
-const votesOn = (grid: Grid, vote: (by: number) => number): Float32Array =>
-  Float32Array.from({ length: grid.count }, (_, i) => vote(grid.from + i * grid.step))
+function votesOn(grid: Grid, vote: (by: number) => number): Float32Array {
+  const votes = new Float32Array(grid.count)
+  for (let i = 0; i < grid.count; i++) votes[i] = vote(grid.from + i * grid.step)
+  return votes
+}
 
 function boxVoters(patch: Patch, part: FieldPart, dx: number, middle: number, full: number, grid: Grid): Voter[] {
   const center = part.field.y + part.field.height / 2

@@ -11,6 +11,8 @@ const AROUND_MM = 0.7
 const INSIDE_MM = 0.75
 /** Darker than this counts no more: a pen across the frame is one of many samples. */
 const CLIP = 0.6
+/** A first look takes every so many samples: no divisor of a row, so that they do not fall into columns. */
+const COARSE = 4
 
 interface Template {
   side: number
@@ -64,17 +66,18 @@ export function measureTickPlace(picture: Picture, map: FieldMap, part: FieldPar
   const margin = AROUND_MM + steps * STEP_MM
   const side = TICK.size + 2 * margin
   const patch = samplePatch(picture, map, { x: box.x - margin, y: box.y - margin, width: side, height: side }, STEP_MM)
-  const at = (dx: number, dy: number) => likenessAt(patch.darkness, patch.columns, dx + steps, dy + steps)
+  const at = (dx: number, dy: number, every = 1) => likenessAt(patch.darkness, patch.columns, dx + steps, dy + steps, every)
   let best = { value: -2, dx: 0, dy: 0 }
-  const look = (dx: number, dy: number) => {
+  const look = (dx: number, dy: number, every?: number) => {
     if (Math.max(Math.abs(dx), Math.abs(dy)) >= steps) return
-    const value = at(dx, dy)
+    const value = at(dx, dy, every)
     if (value > best.value) best = { value, dx, dy }
   }
-  // Every second place first: the corner is wide enough to be seen from beside.
-  for (let dy = 2 - steps; dy < steps; dy += 2) for (let dx = 2 - steps; dx < steps; dx += 2) look(dx, dy)
+  // Every second place and some of the samples first: the corner is wide enough to be seen from beside.
+  for (let dy = 2 - steps; dy < steps; dy += 2) for (let dx = 2 - steps; dx < steps; dx += 2) look(dx, dy, COARSE)
   const { dx: nearX, dy: nearY } = best
-  for (let dy = -1; dy <= 1; dy++) for (let dx = -1; dx <= 1; dx++) if (dx !== 0 || dy !== 0) look(nearX + dx, nearY + dy)
+  best.value = -2
+  for (let dy = -1; dy <= 1; dy++) for (let dx = -1; dx <= 1; dx++) look(nearX + dx, nearY + dy)
   const fine = (before: number, after: number) => {
     const bend = before - 2 * best.value + after
     return bend < -1e-9 ? Math.max(-0.5, Math.min(0.5, (0.5 * (before - after)) / bend)) : 0
@@ -105,15 +108,15 @@ export function tickContrast(picture: Picture, map: FieldMap, box: { x: number; 
   return together / alone
 }
 
-function likenessAt(darkness: Float32Array, columns: number, left: number, top: number): number {
+function likenessAt(darkness: Float32Array, columns: number, left: number, top: number, every: number): number {
   const { value, row, column } = template
-  const n = value.length
+  const n = Math.ceil(value.length / every)
   let sp = 0
   let spp = 0
   let st = 0
   let stt = 0
   let stp = 0
-  for (let i = 0; i < n; i++) {
+  for (let i = 0; i < value.length; i += every) {
     const read = darkness[(row[i]! + top) * columns + column[i]! + left]!
     const p = Math.min(read, CLIP)
     const t = value[i]!

@@ -3,10 +3,12 @@ import type { FieldMap } from '../geometry/page-map.ts'
 import type { Grey } from '../pixels/grey.ts'
 import type { PaperLevel } from '../pixels/paper.ts'
 
-/** The picture that fields are measured on, and its own perspective (layout mm to px of this picture). */
+/** The picture that fields are measured on. */
 export interface Picture {
   grey: Grey
   paper: PaperLevel
+  /** Its pixels a pixel of the maps it is sampled through, where those are of a larger picture. */
+  shrunk?: number
 }
 
 export interface Patch {
@@ -32,7 +34,7 @@ interface Knot {
 }
 
 /** Works out knots of one patch: the map in full, and the paper's level from its own coarse map. */
-function knotsOf({ paper }: Picture, { homography: h, center, displacement: d }: FieldMap) {
+function knotsOf({ paper, shrunk = 1 }: Picture, { homography: h, center, displacement: d }: FieldMap) {
   const { width, height, data } = paper.level
   const perBlock = 1 / paper.block_px
   return (x: number, y: number, into: Knot): void => {
@@ -40,7 +42,7 @@ function knotsOf({ paper }: Picture, { homography: h, center, displacement: d }:
     const v = y - center.y
     const mx = x + d.dx + d.dxx * u + d.dxy * v
     const my = y + d.dy + d.dyx * u + d.dyy * v
-    const w = 1 / (h[6]! * mx + h[7]! * my + h[8]!)
+    const w = shrunk / (h[6]! * mx + h[7]! * my + h[8]!)
     const px = (h[0]! * mx + h[1]! * my + h[2]!) * w - 0.5
     const py = (h[3]! * mx + h[4]! * my + h[5]!) * w - 0.5
     const bx = Math.min(Math.max(px * perBlock - 0.5, 0), width - 1.001)

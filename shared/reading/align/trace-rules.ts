@@ -2,11 +2,12 @@
  * Follows the dark rules that run across the page at the head of each section: they show how the paper waves between its edges,
  * where no mark stands, before any field is looked for.
  */
+import { cellBounds } from '../../layouts/geometry.ts'
 import type { Layout } from '../../layouts/layout.ts'
 import type { Homography } from '../geometry/homography.ts'
 import { type Anchor, ResidualField } from '../geometry/residual-field.ts'
 import type { Mark } from './marks.ts'
-import { type Picture, samplePatch } from './patch.ts'
+import { lineProfile, type Picture, samplePatch } from './patch.ts'
 
 /** Section rules are printed from the left to the right margin, this far from the page's edges, mm. */
 const MARGIN_MM = 14
@@ -39,15 +40,10 @@ function lineNear(picture: Picture, homography: Homography, at: Anchor, lean: nu
   const half = reach_mm + 0.7
   const displacement = { dx: at.dx, dy: at.dy, dxx: 0, dxy: 0, dyx: lean, dyy: 0 }
   const area = { x: at.x - WINDOW_MM / 2, y: at.y - half, width: WINDOW_MM, height: 2 * half }
-  const { rows, columns, darkness } = samplePatch(picture, { homography, center: at, displacement }, area, STEP_MM)
-  const row = new Float32Array(rows)
-  const values = new Float32Array(columns)
-  for (let y = 0; y < rows; y++) {
-    for (let x = 0; x < columns; x++) values[x] = darkness[y * columns + x]!
-    values.sort()
-    // Dark over three quarters of the window: letters and strokes are not.
-    row[y] = values[columns >> 2]!
-  }
+  const patch = samplePatch(picture, { homography, center: at, displacement }, area, STEP_MM)
+  const { rows } = patch
+  // Dark over three quarters of the window: letters and strokes are not.
+  const row = lineProfile(patch, 'rows', patch.x, patch.x + WINDOW_MM, 0.75, 1)
   const beside = Math.round(0.7 / STEP_MM)
   let best = { contrast: LEAST_CONTRAST, y: -1 }
   for (let y = beside; y < rows - beside; y++) {
@@ -91,18 +87,57 @@ function trace(picture: Picture, homography: Homography, field: ResidualField, y
   return steps
 }
 
-/** Heights of the rule under the head and of all section rules, where both traces agree or only one came by. */
+/** A printed line across, mm. */
+interface Rule {
+  y: number
+  left: number
+  right: number
+}
+
+/** Heights of one rule, where traces from both ends agree or only one came by. */
+function traceRule(picture: Picture, homography: Homography, field: ResidualField, { y, left, right }: Rule): Mark[] {
+  const forth = trace(picture, homography, field, y, left, right)
+  const back = trace(picture, homography, field, y, right, left)
+  return thin(merge(forth, back)).map(({ x, dy }) => {
+    const { dx } = field.at({ x, y })
+    return { key: 'rule', x, y, dx, dy, weight: STEP_WEIGHT, onlyDown: true as const }
+  })
+}
+
+/** The rule under the head and all section rules. */
 export function traceRules(picture: Picture, layout: Layout, homography: Homography, anchors: readonly Anchor[]): Mark[] {
   const sections = layout.sections.map(({ y }) => ({ y, left: MARGIN_MM, right: layout.page.width - MARGIN_MM }))
   const field = new ResidualField(anchors)
-  return [HEAD_RULE, ...sections].flatMap(({ y, left, right }) => {
-    const forth = trace(picture, homography, field, y, left, right)
-    const back = trace(picture, homography, field, y, right, left)
-    return thin(merge(forth, back)).map(({ x, dy }) => {
-      const { dx } = field.at({ x, y })
-      return { key: 'rule', x, y, dx, dy, weight: STEP_WEIGHT, onlyDown: true as const }
-    })
-  })
+  return [HEAD_RULE, ...sections].flatMap((rule) => traceRule(picture, homography, field, rule))
+}
+
+/** Steps of a rule that must be found within a piece of it. */
+const FEWEST_STEPS = 2
+
+/** Whether a line was followed between two places. */
+export const isTraced = (anchors: readonly Anchor[], { y, left, right }: Rule): boolean =>
+  anchors.filter((a) => a.onlyDown && Math.abs(a.y - y) < 0.1 && a.x >= left && a.x <= right).length >= FEWEST_STEPS
+
+/** Lines that stand so near each other, mm, are followed as one. */
+const SAME_LINE_MM = 6
+
+/** The lines under signatures and remarks, which have no frame of their own: to be followed when all fields are placed. */
+export function traceBaselines(picture: Picture, layout: Layout, homography: Homography, anchors: readonly Anchor[]): Mark[] {
+  const rules: Rule[] = []
+  for (const cell of layout.cells) {
+    if (cell.kind !== 'line' && cell.kind !== 'signature') continue
+    const { x, y, width, height } = cellBounds(cell)
+    const rule = rules.find(
+      (r) => Math.abs(r.y - y - height) < 0.1 && x - r.right < SAME_LINE_MM && r.left - x - width < SAME_LINE_MM,
+    )
+    if (!rule) rules.push({ y: y + height, left: x, right: x + width })
+    else {
+      rule.left = Math.min(rule.left, x)
+      rule.right = Math.max(rule.right, x + width)
+    }
+  }
+  const field = new ResidualField(anchors)
+  return rules.flatMap((rule) => traceRule(picture, homography, field, rule))
 }
 
 /** Height of a trace between its steps; null outside or across a gap. */

@@ -32,6 +32,10 @@ export function halve(grey: Grey): Grey {
   const width = grey.width >> 1
   const height = grey.height >> 1
   const data = new Uint8Array(width * height)
+  if (grey.width % 4 === 0 && grey.data.byteOffset % 4 === 0) {
+    halveWords(grey, width, height, data)
+    return { width, height, data }
+  }
   const from = grey.data
   for (let y = 0; y < height; y++) {
     let a = 2 * y * grey.width
@@ -42,6 +46,25 @@ export function halve(grey: Grey): Grey {
     }
   }
   return { width, height, data }
+}
+
+const EVERY_OTHER = 0x00ff00ff
+const ROUND_UP = 0x00020002
+
+/** The same, four pixels of a row at a time: sums of two stand side by side in one number. */
+function halveWords(grey: Grey, width: number, height: number, into: Uint8Array): void {
+  const words = new Uint32Array(grey.data.buffer, grey.data.byteOffset, grey.data.length >> 2)
+  const perRow = grey.width >> 2
+  for (let y = 0; y < height; y++) {
+    let at = y * width
+    for (let i = 2 * y * perRow, end = i + perRow; i < end; i++, at += 2) {
+      const a = words[i]!
+      const b = words[i + perRow]!
+      const sums = (a & EVERY_OTHER) + ((a >>> 8) & EVERY_OTHER) + (b & EVERY_OTHER) + ((b >>> 8) & EVERY_OTHER) + ROUND_UP
+      into[at] = sums >>> 2
+      into[at + 1] = sums >>> 18
+    }
+  }
 }
 
 /** A rectangle copied out, clipped to the picture; `x`, `y` are where it really starts. Null when nothing is left. */
