@@ -5,6 +5,7 @@ import type { PhotoMap } from '../simulator/make-photo.ts'
 import type { Truth, Written } from '../simulator/scenario.ts'
 import type { OnePage, OneReading } from './reading-json.ts'
 import type { SheetShare } from './statistics.ts'
+import { causeOf } from './why.ts'
 
 export interface Tally {
   /** Readings that hold ink and were not made wrong on purpose. */
@@ -34,6 +35,8 @@ export interface PageScore {
   mistakes: Mistake[]
   /** Spoiled cells and wrong sums that came out clear. */
   missed: string[]
+  /** Why readings that hold ink, and were not made wrong on purpose, are in doubt. */
+  causes: Array<{ kind: 'tied' | 'untied' | 'ticks'; cause: string }>
   /** Digits written in the number readings that came out clear. */
   clearDigits: number
   /** Distance of each read cell's middle from where it lies, mm. */
@@ -73,6 +76,7 @@ export function scorePage(
     blanks: [0, 0],
     mistakes: [],
     missed: [],
+    causes: [],
     clearDigits: 0,
     placement_mm: [],
     clearPlacement_mm: [],
@@ -86,7 +90,8 @@ export function scorePage(
     if (written === undefined || cell.kind === 'line' || cell.kind === 'signature') continue
     const reading: OneReading = page.readings[cell.key] ?? { value: null, state: 'in doubt' }
     const onPurpose = wrongOnPurpose.has(cell.key)
-    const tally = isComb(cell) ? (tied.has(cell.key) ? score.tied : score.untied) : score.ticks
+    const kind = isComb(cell) ? (tied.has(cell.key) ? 'tied' : 'untied') : 'ticks'
+    const tally = score[kind]
     const right = sameValue(reading.value, written)
     if (onPurpose) {
       if (reading.state === 'clear') score.missed.push(cell.key)
@@ -96,7 +101,10 @@ export function scorePage(
     } else {
       tally.readings += 1
       if (reading.state === 'clear') tally.clear += 1
-      else tally.doubts += 1
+      else {
+        tally.doubts += 1
+        score.causes.push({ kind, cause: causeOf((reading.reasons ?? []).map((reason) => reason.rule)) })
+      }
     }
     const holdsInk = onPurpose || (written !== null && written !== false)
     if (onPurpose && reading.state === 'clear') tally.clear += 1

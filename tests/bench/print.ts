@@ -32,6 +32,13 @@ export function levelLines(level: string, f: LevelFigures): string[] {
   ]
 }
 
+/** The number readings once more, where the reader was handed the registers too; no line where it was not. */
+export function registerLines(pages: readonly PageScore[] | undefined): string[] {
+  if (!pages) return []
+  const { tied, untied } = levelFigures(pages).numbers
+  return ['  with registers:', ...kindLines('numbers, tied', tied), ...kindLines('numbers, untied', untied)]
+}
+
 export const mistakeLines = (pages: readonly PageScore[]): string[] =>
   pages.flatMap((p) => p.mistakes).map((m) => `  ${m.file} ${m.key}: written ${String(m.written)}, read ${String(m.read)}`)
 

@@ -1,8 +1,9 @@
 /**
- * npm run bench:read -- [FOLDER] [--final] [--json] [--peers] [--count N]
+ * npm run bench:read -- [FOLDER] [--final] [--json] [--peers] [--count N] [--why] [--registers]
  * npm run bench:read -- --shapes [--only NAME,...] [--count N]
- * Reads every NAME.jpg of a folder (and the folders in it) that has a NAME.truth.json, and prints how well and how fast. Without
- * a folder: the standard set, 60 photos a level, 200 with --final. --shapes: one line for each condition of paper, light, print
+ * Reads every NAME.jpg and NAME.pdf of a folder (and the folders in it) that has a NAME.truth.json, and prints how well and how fast. Without
+ * a folder: the standard set, 60 photos a level, 200 with --final. --why: what readings are in doubt for. --registers: all once
+ * more with the registers of the set's world, as the worker has them. --shapes: one line for each condition of paper, light, print
  * and hand, 12 photos each. All photos are simulated until real ones exist.
  */
 import { readFile } from 'node:fs/promises'
@@ -10,12 +11,14 @@ import { parseArgs } from 'node:util'
 import { digitsIn, type PageScore } from './compare.ts'
 import { levelFigures } from './figures.ts'
 import { type Peers, tesseractDigits } from './peers.ts'
-import { levelLines, missedLines, mistakeLines, peerLines } from './print.ts'
-import { photosIn, readFolder } from './read-folder.ts'
+import { levelLines, missedLines, mistakeLines, peerLines, registerLines } from './print.ts'
+import { photosIn, readFolder, truthsOf } from './read-folder.ts'
 import { openReader } from './reader.ts'
+import { registersOf } from './registers.ts'
 import { benchShapes, conditionsNamed, SHAPES_A_CONDITION } from './shapes.ts'
 import { standardSet } from './standard-set.ts'
 import { quantile } from './statistics.ts'
+import { whyLines } from './why.ts'
 
 const { values, positionals } = parseArgs({
   options: {
@@ -25,6 +28,8 @@ const { values, positionals } = parseArgs({
     count: { type: 'string' },
     shapes: { type: 'boolean', default: false },
     only: { type: 'string' },
+    why: { type: 'boolean', default: false },
+    registers: { type: 'boolean', default: false },
   },
   allowPositionals: true,
 })
@@ -40,9 +45,13 @@ if (values.shapes) {
 
 const folder = positionals[0] ?? (await standardSet(Number(values.count ?? (values.final ? 200 : 60)), values.final, say))
 const reader = await openReader()
-const { byLevel, decode_ms, places } = await readFolder(reader, folder, await photosIn(folder), (name, score) => {
+const stems = await photosIn(folder, /\.(jpg|pdf)$/)
+const onPhoto = (name: string, score: PageScore) => {
   if (!values.json) say(`${name}: ${score.takeAgain ?? `${score.mistakes.length} silent`}, ${Math.round(score.cpuMs)} ms`)
-})
+}
+const { byLevel, decode_ms, places, withoutSheet } = await readFolder(reader, folder, stems, onPhoto)
+const known = values.registers ? registersOf(await truthsOf(stems)) : undefined
+const withRegisters = known && (await readFolder(reader, folder, stems, onPhoto, known)).byLevel
 await reader.close()
 
 const all = [...byLevel.values()].flat()
@@ -68,14 +77,22 @@ const order = ['easy', 'ordinary', 'hard']
 const levels = [...byLevel.entries()].sort(([a], [b]) => order.indexOf(a) - order.indexOf(b))
 
 if (values.json) {
-  const figures = Object.fromEntries(levels.map(([level, pages]) => [level, levelFigures(pages)]))
-  process.stdout.write(`${JSON.stringify({ simulated: true, levels: figures, peers }, null, 1)}\n`)
+  const figuresOf = (entries: typeof levels) => Object.fromEntries(entries.map(([level, pages]) => [level, levelFigures(pages)]))
+  const figures = { levels: figuresOf(levels), ...(withRegisters ? { withRegisters: figuresOf([...withRegisters]) } : {}) }
+  process.stdout.write(`${JSON.stringify({ simulated: true, ...figures, peers }, null, 1)}\n`)
 } else {
   for (const [level, pages] of levels) {
     process.stdout.write(
-      `${[...levelLines(level, levelFigures(pages)), ...mistakeLines(pages), ...missedLines(pages)].join('\n')}\n\n`,
+      `${[
+        ...levelLines(level, levelFigures(pages)),
+        ...registerLines(withRegisters?.get(level)),
+        ...mistakeLines(pages),
+        ...missedLines(pages),
+        ...(values.why ? whyLines(pages) : []),
+      ].join('\n')}\n\n`,
     )
   }
+  for (const { file, said } of withoutSheet) process.stdout.write(`${file}: no sheet in it; answered with: ${said}\n`)
   process.stdout.write(`${peerLines(peers).join('\n')}\n`)
 }
 process.exit(0)

@@ -1,9 +1,11 @@
 /** The part of the reader's JSON that the figures look at. */
+import type { Facts } from '../../shared/reading/weigh/types.ts'
 import type { Written } from '../simulator/scenario.ts'
 
 export interface OneReading {
   value: Written
   state: 'clear' | 'in doubt'
+  reasons?: ReadonlyArray<{ rule: string }>
   quad?: ReadonlyArray<readonly [number, number]> | null
 }
 
@@ -15,6 +17,6 @@ export interface OnePage {
 }
 
 export interface BenchReader {
-  read(bytes: Uint8Array, file: string): Promise<readonly OnePage[]>
+  read(bytes: Uint8Array, file: string, hooks?: { known?: Facts }): Promise<readonly OnePage[]>
   close(): Promise<void> | void
 }

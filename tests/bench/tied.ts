@@ -1,10 +1,10 @@
 /** Which number readings the sheet gives a second way to: a sum, or the clock. */
-import type { Layout } from '../../shared/layouts/layout.ts'
+import { isComb, type Layout } from '../../shared/layouts/layout.ts'
 import type { Tie } from '../../shared/layouts/tie.ts'
 
 /**
  * Marks of an instrument, likeness of repeats and mere bounds choose between readings, but are no second way to one; clock times
- * that belong together are. Registers are not handed to the bench, so their numbers count as untied.
+ * that belong together are. Numbers of registers are tied where the reader was handed the registers.
  */
 function keysOf(tie: Tie, isTime: (key: string) => boolean): readonly string[] {
   switch (tie.kind) {
@@ -27,7 +27,8 @@ function keysOf(tie: Tie, isTime: (key: string) => boolean): readonly string[] {
   }
 }
 
-export function tiedKeys(layout: Layout): ReadonlySet<string> {
+export function tiedKeys(layout: Layout, registers = false): ReadonlySet<string> {
   const times = new Set(layout.cells.filter((cell) => cell.kind === 'time').map((cell) => cell.key))
-  return new Set(layout.ties.flatMap((tie) => keysOf(tie, (key) => times.has(key))))
+  const named = layout.cells.filter((cell) => registers && isComb(cell) && cell.register).map((cell) => cell.key)
+  return new Set([...named, ...layout.ties.flatMap((tie) => keysOf(tie, (key) => times.has(key)))])
 }

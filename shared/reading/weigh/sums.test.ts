@@ -127,12 +127,12 @@ describe('the fuel balance', () => {
     const combs = new Map(
       Object.entries({ start: written('4800'), topup: written('1000'), end: written('2000'), used: written('3800') }),
     )
-    const read = weighSheet({ cells: fuelCells, ties: [FUEL] }, { combs, ticks: new Map() }, {}, () => (clock += 5000))
+    const read = weighSheet({ cells: fuelCells, ties: [FUEL] }, { combs, ticks: new Map() }, {}, () => (clock += 11_000))
     expect(rules(read.get('used'))).toEqual(['R05'])
     for (const key of ['start', 'topup', 'end']) expect(read.get(key)!.state).toBe('clear')
     const shaky = [plain(2), box({ 0: 0.9, 6: 0.09 }), plain(0), plain(0)]
     combs.set('end', shaky)
-    const again = weighSheet({ cells: fuelCells, ties: [FUEL] }, { combs, ticks: new Map() }, {}, () => (clock += 5000))
+    const again = weighSheet({ cells: fuelCells, ties: [FUEL] }, { combs, ticks: new Map() }, {}, () => (clock += 11_000))
     expect(rules(again.get('end'))).toContain('R05')
   })
 })

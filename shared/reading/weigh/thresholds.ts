@@ -93,4 +93,4 @@ export const MOST_LEFT_OUT = 1
 /** A group that needs more steps than this is not decided (some 60 ms); counted in steps, so that the answer is the same on any machine. */
 export const MOST_STEPS = 600_000
 /** The whole sheet's limit, for machines that stall. */
-export const SHEET_LIMIT_MS = 4_000
+export const SHEET_LIMIT_MS = 10_000
