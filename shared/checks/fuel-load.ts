@@ -1,5 +1,6 @@
 /** The fuel rate against what the engine and the work can ask for. */
-import { type Operation, ptoPowerOf } from '../trial/facts.ts'
+import { ptoPowerOf } from '../trial/facts.ts'
+import { USUAL_L_HA } from '../trial/usual-fuel.ts'
 import { above, below, outside } from './compare.ts'
 import type { CheckContext } from './context.ts'
 import { found, type Rule } from './rule.ts'
@@ -58,16 +59,6 @@ const q30: Rule = {
       ),
     ]
   },
-}
-
-/** L/ha by operation. Plough: Missouri G1208, 1.68 gal/acre; disc, cultivator, harrow: the same table; the others [P], middle of a range. */
-const USUAL_L_HA: Readonly<Partial<Record<Operation, number>>> = {
-  plough: 15.715,
-  disc: 8.89,
-  cultivator: 5.61,
-  harrow: 3.74,
-  rotary_tiller: 21,
-  subsoiler: 22.5,
 }
 
 const q31: Rule = {

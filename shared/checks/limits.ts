@@ -16,6 +16,10 @@ export type Certainty = (typeof CERTAINTY)[keyof typeof CERTAINTY]
 /** How sure a source is, by the tag it begins with. */
 export const certaintyOf = (source: string): Certainty => CERTAINTY[/^\[([FMP])\]/.exec(source)?.[1] as keyof typeof CERTAINTY]
 
+/** "jar lowest" for jar_lowest_ml: the unit is said beside the number. */
+export const limitWords = (name: string): string =>
+  name.replace(/_(ml|min|pct|deg|kmh|cm|km|c|h|s|l_kwh)$/, '').replaceAll('_', ' ')
+
 const limit = (value: number, unit: string, source: string): Limit => ({ value, unit, source })
 
 export const LIMITS = {

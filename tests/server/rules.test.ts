@@ -79,7 +79,7 @@ test('limits an admin sets are a new version; open sheets are judged by it, and 
   const record = (await clerk.get(`/records/${early.recordNumber}`)).body as TrialRecord
   expect(record.facts.settingsVersion).toBe(0)
   const { entries } = (await admin.get('/trail')).body as { entries: Array<{ text: string }> }
-  expect(entries[0]?.text).toBe('limits, version 1: jar lowest ml 500 to 2500 mL. “the new jars draw air early”')
+  expect(entries[0]?.text).toBe('limits, version 1: jar lowest 500 to 2500 mL. “the new jars draw air early”')
   const back = await admin.post('/rules/limits', { limits: { jar_lowest_ml: null }, why: 'back again', version: 1 })
   expect(limitOf(back.body as RulePage, 'jar_lowest_ml').value).toBe(500)
   expect((await open(waiting)).state).toBe('settled')

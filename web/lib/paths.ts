@@ -24,8 +24,13 @@ export const paths = {
   compare: { pattern: '/compare', to: () => '/compare' },
   registers: { pattern: '/registers', to: () => '/registers' },
   register: { pattern: '/registers/:name', to: (name: string) => `/registers/${name}` },
+  landUnits: { pattern: '/land-units', to: () => '/land-units' },
+  rules: { pattern: '/rules', to: () => '/rules' },
   people: { pattern: '/people', to: () => '/people' },
   outbox: { pattern: '/outbox', to: () => '/outbox' },
+  interface: { pattern: '/interface', to: () => '/interface' },
+  tokens: { pattern: '/interface/tokens', to: () => '/interface/tokens' },
+  webhooks: { pattern: '/interface/webhooks', to: () => '/interface/webhooks' },
   trail: { pattern: '/trail', to: () => '/trail' },
 } as const
 

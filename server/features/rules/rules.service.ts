@@ -1,5 +1,5 @@
 /** The rules with their limits. A change of limits is a new version; sheets not entered yet are judged by it at once. */
-import { certaintyOf, LIMITS, type LimitName } from '../../../shared/checks/limits.ts'
+import { certaintyOf, LIMITS, type LimitName, limitWords } from '../../../shared/checks/limits.ts'
 import { limitsOfRule } from '../../../shared/checks/rule-limits.ts'
 import { RULES, RULES_VERSION } from '../../../shared/checks/run-checks.ts'
 import { type Issue, UserError } from '../../../shared/errors.ts'
@@ -77,7 +77,7 @@ function mergedLimits(standing: LimitValues, changes: SaveLimits['limits']): Lim
 function changeWords(standing: LimitValues, changes: SaveLimits['limits']): string {
   const words = Object.entries(changes).map(([name, value]) => {
     const { value: usual, unit } = LIMITS[name as LimitName]
-    return `${name.replaceAll('_', ' ')} ${standing[name] ?? usual} to ${value ?? usual}${unit ? ` ${unit}` : ''}`
+    return `${limitWords(name)} ${standing[name] ?? usual} to ${value ?? usual}${unit ? ` ${unit}` : ''}`
   })
   return words.join(', ') || 'nothing changed'
 }

@@ -12,8 +12,13 @@ export const officeRoutes: RouteObject[] = [
   { path: paths.compare.pattern, lazy: onDemand(() => import('./compare.tsx')) },
   { path: paths.registers.pattern, lazy: onDemand(() => import('./registers.tsx')) },
   { path: paths.register.pattern, lazy: onDemand(() => import('./registers.tsx')) },
+  { path: paths.landUnits.pattern, lazy: onDemand(() => import('./land-units.tsx')) },
+  { path: paths.rules.pattern, lazy: onDemand(() => import('./rules.tsx')) },
   { path: paths.people.pattern, lazy: onDemand(() => import('./people.tsx')) },
   { path: paths.outbox.pattern, lazy: onDemand(() => import('./outbox.tsx')) },
+  { path: paths.interface.pattern, lazy: onDemand(() => import('./interface.tsx')) },
+  { path: paths.tokens.pattern, lazy: onDemand(() => import('./tokens.tsx')) },
+  { path: paths.webhooks.pattern, lazy: onDemand(() => import('./webhooks.tsx')) },
   { path: paths.trail.pattern, lazy: onDemand(() => import('./trail.tsx')) },
   { path: paths.record.pattern, lazy: onDemand(() => import('./record.tsx')) },
 ]

@@ -1,7 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
-import { Navigate, NavLink, useParams } from 'react-router-dom'
-import { REGISTER_NAMES, type RegisterName, registerNameSchema } from '../../../shared/schemas/register.ts'
+import { Navigate, useParams } from 'react-router-dom'
+import { type RegisterName, registerNameSchema } from '../../../shared/schemas/register.ts'
 import { type RegisterRow, RegisterTable } from '../../features/registers/components/register-table.tsx'
 import { RowForm } from '../../features/registers/components/row-form.tsx'
 import { REGISTER_WORDS } from '../../features/registers/register-fields.ts'
@@ -11,6 +11,7 @@ import { registerQueries } from '../../lib/register-rows.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
 import { EmptyState, ErrorState, Loading, Saved } from '../../ui/says.tsx'
+import { RegisterNav } from './register-nav.tsx'
 
 export function Component() {
   const name = registerNameSchema.safeParse(useParams().name)
@@ -32,7 +33,7 @@ function RegisterPage({ name }: { name: RegisterName }) {
   return (
     <Page
       title={title}
-      over={<Which />}
+      over={<RegisterNav />}
       sentence={says}
       aside={admin && <Button onClick={() => edit('new')}>Add a {one}</Button>}
     >
@@ -58,17 +59,3 @@ function RegisterPage({ name }: { name: RegisterName }) {
     </Page>
   )
 }
-
-const Which = () => (
-  <nav aria-label="Registers" className="flex flex-wrap gap-x-3">
-    {REGISTER_NAMES.map((name) => (
-      <NavLink
-        key={name}
-        to={paths.register.to(name)}
-        className={({ isActive }) => (isActive ? 'font-[700] text-ink no-underline' : 'word')}
-      >
-        {REGISTER_WORDS[name].title}
-      </NavLink>
-    ))}
-  </nav>
-)

@@ -1,0 +1,89 @@
+import { limitWords } from '../../../../shared/checks/limits.ts'
+import type { RuleLimit, RulePage, RuleRow } from '../../../../shared/schemas/rules.ts'
+import { listed } from '../../../lib/words.ts'
+import { Button } from '../../../ui/button.tsx'
+import { type LedgerColumn, LedgerTable } from '../../../ui/ledger-table.tsx'
+
+/** Tags of sources stand behind the words "how sure"; the page says them in full. */
+const plain = (text: string) => text.replaceAll(/ ?\[[FMP]\] ?/g, ' ').trim()
+
+/** "lowest 500 mL (common practice), the product ships 450 mL" */
+function LimitLine({ limit }: { limit: RuleLimit }) {
+  const unit = limit.unit ? ` ${limit.unit}` : ''
+  const source = plain(limit.source)
+  return (
+    <li>
+      {limitWords(limit.name)} <span className="figures">{Number(limit.value.toPrecision(6))}</span>
+      {unit}{' '}
+      <span className="label">
+        {limit.certainty}
+        {source && `: ${source}`}
+        {limit.value !== limit.usual && `; set here, shipped as ${Number(limit.usual.toPrecision(6))}${unit}`}
+      </span>
+    </li>
+  )
+}
+
+/** "right 3 of 5" of those a person has answered. */
+function answeredWords({ right, letStand }: RuleRow): string {
+  return right + letStand === 0 ? 'none answered' : `${right} of ${right + letStand}`
+}
+
+/** Every rule in plain words; `onChange` opens its limits. */
+export function RulesTable({ page, onChange }: { page: RulePage; onChange?: (rule: RuleRow) => void }) {
+  const limits = new Map(page.limits.map((limit) => [limit.name, limit]))
+  const columns: LedgerColumn<RuleRow>[] = [
+    { key: 'id', head: 'rule', tight: true, stack: 'word', cell: (rule) => <span className="figures">{rule.id}</span> },
+    {
+      key: 'name',
+      head: 'what it looks at, and why',
+      stack: 'lead',
+      cell: (rule) => (
+        <>
+          {rule.name}
+          <span className="block font-normal">{plain(rule.why)}</span>
+        </>
+      ),
+    },
+    { key: 'severity', head: 'can be a', stack: 'named', cell: (rule) => listed(rule.severity) },
+    {
+      key: 'limits',
+      head: 'limits, and how sure they are',
+      stack: 'word',
+      cell: (rule) => (
+        <ul>
+          {rule.limits.flatMap((name) => {
+            const limit = limits.get(name)
+            return limit ? [<LimitLine key={name} limit={limit} />] : []
+          })}
+        </ul>
+      ),
+    },
+    { key: 'fired', head: 'fired', figures: true, cell: (rule) => rule.fired },
+    { key: 'right', head: 'right', tight: true, stack: 'named', cell: answeredWords },
+    { key: 'open', head: 'open', figures: true, cell: (rule) => rule.open },
+  ]
+  if (onChange) {
+    columns.push({
+      key: 'change',
+      head: <span className="away">change</span>,
+      tight: true,
+      cell: (rule) =>
+        rule.limits.length > 0 && (
+          <Button look="word" aria-label={`Set limits of ${rule.id}, ${rule.name}`} onClick={() => onChange(rule)}>
+            set limits
+          </Button>
+        ),
+    })
+  }
+  return (
+    <LedgerTable
+      stacked
+      caption="Every rule, with its limits, how often it fired and how often it was right"
+      columns={columns}
+      groups={[{ key: 'all', rows: page.rules }]}
+      rowKey={(rule) => rule.id}
+      quiet={(rule) => rule.fired === 0}
+    />
+  )
+}
