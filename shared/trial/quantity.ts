@@ -70,7 +70,7 @@ export function convert<U extends UnitName, V extends SameDimension<U>>(value: Q
   const a = UNITS[from]
   const b = UNITS[to as UnitName]
   if (a.dimension !== b.dimension)
-    throw new RangeError(`${from} is a ${a.dimension}, ${String(to)} a ${b.dimension}: they cannot be converted`)
+    throw new RangeError(`${from} measures ${a.dimension}, ${String(to)} ${b.dimension}: they cannot be converted`)
   return quantity((value * a.size) / b.size, to)
 }
 

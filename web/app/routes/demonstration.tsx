@@ -7,6 +7,7 @@ import { sheetStateSchema } from '../../../shared/schemas/sheet.ts'
 import type { Role } from '../../../shared/schemas/user.ts'
 import { Cautions, CheckList } from '../../features/demonstrations/components/check-list.tsx'
 import { DayFacts } from '../../features/demonstrations/components/day-facts.tsx'
+import { LeastBurn } from '../../features/demonstrations/components/least-burn.tsx'
 import { TakeAlong } from '../../features/demonstrations/components/take-along.tsx'
 import { hasArrived, TrialRuns } from '../../features/demonstrations/components/trial-runs.tsx'
 import { WithdrawConsent } from '../../features/demonstrations/components/withdraw-consent.tsx'
@@ -15,6 +16,7 @@ import { STATE_WORDS } from '../../features/sheets/sheet-words.ts'
 import { isNowhere } from '../../lib/api-error.ts'
 import { useMe } from '../../lib/me.ts'
 import { paths } from '../../lib/paths.ts'
+import { registerQueries } from '../../lib/register-rows.ts'
 import { dateText, todayText, weekdayOf } from '../../lib/time.ts'
 import { counted } from '../../lib/words.ts'
 import { ButtonLink } from '../../ui/button.tsx'
@@ -41,6 +43,8 @@ export function Component() {
 function DayPage({ day }: { day: Demonstration }) {
   const me = useMe()
   const withdraw = useWithdrawConsent(day.id)
+  const numbers = day.trials.map((trial) => trial.kit.number)
+  const kits = (useQuery(registerQueries.rows('kits')).data ?? []).filter((kit) => numbers.includes(kit.number))
   const { state } = useLocation()
   const arrivedWith = savedSchema.safeParse(state)
   const layouts = NEWEST_LAYOUTS.filter((layout) => day.trials.some((trial) => trial.layout === layout.key))
@@ -79,6 +83,7 @@ function DayPage({ day }: { day: Demonstration }) {
             </h2>
             <TrialRuns trials={day.trials} links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint }} />
           </section>
+          <LeastBurn kits={kits} />
           {layouts.map((layout) => (
             <CheckList key={layout.key} layout={layout} among={layouts.length} />
           ))}

@@ -110,6 +110,12 @@ function useOtherRuns(record: TrialRecord): OtherRun[] {
   })
 }
 
+/** Which limits judged it: those the product ships, or a version the office set. */
+function limitsWords({ facts }: TrialRecord): string {
+  const version = Number(facts.settingsVersion ?? 0)
+  return version === 0 ? 'limits as shipped' : `limits version ${version}`
+}
+
 function Entered({ record, title }: { record: TrialRecord; title: string }) {
   const me = useMe()
   const sheet = record.sheetCode ? formatSheetCode(record.sheetCode) : 'without a code'
@@ -131,7 +137,7 @@ function Entered({ record, title }: { record: TrialRecord; title: string }) {
       ) : (
         <span className="figures">{sheet}</span>
       )}
-      ; rules {record.rulesVersion}, formulas {record.formulaVersion}
+      ; rules {record.rulesVersion}, {limitsWords(record)}, formulas {record.formulaVersion}
       {others.map((v) => (
         <span key={v.version}>
           {' · '}

@@ -1,8 +1,9 @@
 /** What the plan form begins with, and what it says of a kit before the day. Pure. */
 import { findLayout, NEWEST_LAYOUTS, USUAL_LAYOUT, workOf } from '../../../shared/layouts/registry.ts'
 import type { Demonstration, SaveDemonstration, SaveTrial } from '../../../shared/schemas/demonstration.ts'
-import type { Kit } from '../../../shared/schemas/register.ts'
-import { leastFuel } from '../../../shared/trial/planning.ts'
+import type { Implement, Kit } from '../../../shared/schemas/register.ts'
+import { leastArea, leastFuel, marksOf } from '../../../shared/trial/planning.ts'
+import { USUAL_L_HA } from '../../../shared/trial/usual-fuel.ts'
 
 /** Three runs on a plot are the least that show how much runs differ (PAES 111:2000, as quoted). */
 const USUAL_RUNS = 3
@@ -71,6 +72,52 @@ const WANTED = { U_pct: 5, topups: 1, scale_pct: 1, area_u_pct: 0 }
 export function leastFuel_l(kit: Kit): number | null {
   const least = leastFuel({ ...WANTED, jarStep_ml: kit.jarMark_ml, jugMark_ml: kit.jugMark_ml })
   return least === null ? null : least / 1000
+}
+
+/** What a plot of 60 × 45 m is known to, % (standard): its edge more than the tape. */
+const USUAL_AREA_U_PCT = 0.6
+
+export interface BurnLine {
+  says: string
+  /** Rounded up to 10 mL; null when no amount is enough. */
+  least_ml: number | null
+  marks: number | null
+}
+
+/** Least fuel for the uncertainties people ask for, with this kit. */
+export function burnLines(kit: Kit): BurnLine[] {
+  const asked = [3, 5, 10].flatMap((U_pct) => [
+    { says: `L/h to ± ${U_pct} %`, U_pct, area_u_pct: 0 },
+    { says: `L/ha to ± ${U_pct} %`, U_pct, area_u_pct: USUAL_AREA_U_PCT },
+  ])
+  return asked.map(({ says, U_pct, area_u_pct }) => {
+    const scale_pct = kit.scale_pct ?? WANTED.scale_pct
+    const least = leastFuel({ ...WANTED, U_pct, area_u_pct, scale_pct, jarStep_ml: kit.jarMark_ml, jugMark_ml: kit.jugMark_ml })
+    if (least === null) return { says, least_ml: null, marks: null }
+    return { says, least_ml: Math.ceil(least / 10) * 10, marks: marksOf(least, kit.jarMark_ml) }
+  })
+}
+
+/** Length of a pass taken for the edge of a plot nobody has pegged yet, m. */
+const USUAL_PASS_M = 60
+
+/** Least plot for ± 5 % of litres a hectare, ha, with this kit and implement; null where nothing is usual, or none is enough. */
+export function leastArea_ha(kit: Kit, tool: Implement): number | null {
+  const fuel_l_per_ha = USUAL_L_HA[tool.operation]
+  if (fuel_l_per_ha === undefined) return null
+  const { U_pct, topups } = WANTED
+  const scale_pct = kit.scale_pct ?? WANTED.scale_pct
+  const least = leastArea({
+    U_pct,
+    topups,
+    scale_pct,
+    jarStep_ml: kit.jarMark_ml,
+    jugMark_ml: kit.jugMark_ml,
+    fuel_l_per_ha,
+    width_m: tool.ratedWidth_m,
+    pass_m: USUAL_PASS_M,
+  })
+  return least === null ? null : least / 10_000
 }
 
 /** The sheets a run can be written on, by what they are for. */

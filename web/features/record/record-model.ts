@@ -3,6 +3,7 @@ import { formatValue } from '../../../shared/layouts/cell-value.ts'
 import type { Layout, LayoutCell } from '../../../shared/layouts/layout.ts'
 import type { ResultValue, TrialRecord } from '../../../shared/schemas/record.ts'
 import type { Reading } from '../../../shared/schemas/sheet.ts'
+import { type BudgetLine, sharesOf } from '../../../shared/trial/budget.ts'
 
 export interface Sources {
   record: TrialRecord
@@ -45,20 +46,17 @@ export function originWords(sources: Sources, reading: Reading): string {
   return reading.cellRef ? `spreadsheet cell ${reading.cellRef}` : 'read from the ink'
 }
 
-export interface BudgetLine {
-  name: string
-  u: number
-  /** Share of the variance, 0 to 1. */
-  share: number
-}
-
 /** The parts of a figure's uncertainty with their share of the variance, largest first (GUM 5.1.2). */
 export function budgetOf(result: ResultValue | undefined): BudgetLine[] {
   const parts = (result?.budget ?? []).flatMap((p) =>
-    typeof p.name === 'string' && typeof p.u === 'number' ? [{ name: p.name, u: p.u }] : [],
+    typeof p.name === 'string' && typeof p.u === 'number' && p.u > 0 ? [{ name: p.name, u: p.u }] : [],
   )
-  const variance = parts.reduce((sum, p) => sum + p.u ** 2, 0)
-  return parts.filter((p) => p.u > 0).map((p) => ({ ...p, share: p.u ** 2 / variance }))
+  return sharesOf(parts)
+}
+
+/** The figure a run is made for: litres a hectare, or an hour where the sheet has no plot. */
+export function mainFigureOf({ results }: Pick<TrialRecord, 'results'>): ResultValue | undefined {
+  return results.l_per_ha?.reason?.code === 'not_on_sheet' ? results.l_per_h : results.l_per_ha
 }
 
 /** The readings of a repeated cell that hold a number, in order. */

@@ -129,6 +129,7 @@ export function PlanForm({ begin, choices, farmerKnown, pending, error, saveWord
               errors={errors}
               choices={rowChoices}
               kit={choices.kits.find((kit) => kit.id === trials[index]?.kitId)}
+              tool={choices.tools.find((tool) => tool.id === trials[index]?.implementId)}
               heldOn={heldOn}
               layout={trials[index]?.layout}
               onTakeOut={fields.length > 1 ? () => remove(index) : null}

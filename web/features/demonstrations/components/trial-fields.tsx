@@ -1,9 +1,9 @@
 import type { FieldErrors, UseFormRegister } from 'react-hook-form'
 import { RUNS_MAX, type SaveDemonstration } from '../../../../shared/schemas/demonstration.ts'
-import type { Kit } from '../../../../shared/schemas/register.ts'
+import type { Implement, Kit } from '../../../../shared/schemas/register.ts'
 import { Button } from '../../../ui/button.tsx'
 import type { FieldOption } from '../../../ui/field.tsx'
-import { leastFuel_l, oldCheck, plotNote, sheetChoices } from '../plan-model.ts'
+import { leastArea_ha, leastFuel_l, oldCheck, plotNote, sheetChoices } from '../plan-model.ts'
 import { FormCell } from './form-cell.tsx'
 
 export interface TrialChoices {
@@ -17,8 +17,9 @@ interface TrialFieldsProps {
   register: UseFormRegister<SaveDemonstration>
   errors: FieldErrors<SaveDemonstration>
   choices: TrialChoices
-  /** The kit chosen, and the day, for what must be said of them. */
+  /** The kit and implement chosen, and the day, for what must be said of them. */
   kit: Kit | undefined
+  tool: Implement | undefined
   heldOn: string
   /** Key of the sheet chosen. */
   layout: string | undefined
@@ -26,7 +27,7 @@ interface TrialFieldsProps {
 }
 
 /** One trial as a ruled row of the form: which tractor, with what, on which plot and sheet, how often. */
-export function TrialFields({ index, register, errors, choices, kit, heldOn, layout, onTakeOut }: TrialFieldsProps) {
+export function TrialFields({ index, register, errors, choices, kit, tool, heldOn, layout, onTakeOut }: TrialFieldsProps) {
   const wrong = errors.trials?.[index]
   const name = <K extends keyof SaveDemonstration['trials'][number]>(key: K) => register(`trials.${index}.${key}`)
   return (
@@ -60,20 +61,29 @@ export function TrialFields({ index, register, errors, choices, kit, heldOn, lay
           {(tied) => <input {...tied} {...name('runs')} inputMode="numeric" autoComplete="off" />}
         </FormCell>
       </div>
-      {kit && <LeastFuel kit={kit} />}
+      {kit && <LeastFuel kit={kit} tool={tool} />}
     </fieldset>
   )
 }
 
 /** Told while planning: a plot too small for the jar gives a figure that says nothing. */
-function LeastFuel({ kit }: { kit: Kit }) {
+function LeastFuel({ kit, tool }: { kit: Kit; tool: Implement | undefined }) {
   const least = leastFuel_l(kit)
+  const area = tool ? leastArea_ha(kit, tool) : null
   const marks = `With this kit's marks (jar ${kit.jarMark_ml} mL, jug ${kit.jugMark_ml} mL)`
   if (least === null) return <p className="label pt-0.5">{marks} no run is sure to ± 5 %.</p>
   return (
     <p className="label pt-0.5">
       {marks} a run must burn at least <span className="figures text-[13.5px] text-ink">{least.toFixed(1)} L</span> to be known to
       ± 5 %.
+      {area !== null && (
+        <>
+          {' '}
+          For litres a hectare that is a plot of at least{' '}
+          <span className="figures text-[13.5px] text-ink">{(Math.ceil(area * 100) / 100).toFixed(2)} ha</span>, by what this work
+          usually burns and passes of 60 m.
+        </>
+      )}
     </p>
   )
 }

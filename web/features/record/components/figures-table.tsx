@@ -7,6 +7,7 @@ import { Ink } from '../../../ui/ink.tsx'
 import { PlusMinus } from '../../../ui/plus-minus.tsx'
 import { FIGURE_GROUPS, missingByReason, shownFigure } from '../figure-groups.ts'
 import { byHandCount, pictureOf, type Sources } from '../record-model.ts'
+import { BudgetTable } from './budget-table.tsx'
 import { Source } from './source.tsx'
 
 const HEAD = 'label h-[30px] px-1 text-left font-normal'
@@ -133,13 +134,17 @@ function Behind({ sources, result, keys }: { sources: Sources; result: ResultVal
   return (
     <>
       <p>
-        <strong>{result.label}</strong>: {howOf(result)} <span className="label">({formulaWords(result)})</span>
+        <strong>{result.label}</strong>: {howOf(result)}{' '}
+        <span className="label">
+          ({formulaWords(result)}; formulas {sources.record.formulaVersion})
+        </span>
       </p>
       <ul className="grid grid-cols-2 gap-x-3 max-xl:grid-cols-1">
         {keys.map((key) => (
           <Source key={key} sources={sources} reading={key} />
         ))}
       </ul>
+      <BudgetTable result={result} says={`Uncertainty budget of ${result.label}, k = ${result.k}`} />
       {result.assumes.length > 0 && <p className="label pt-0.5">Taken for granted: {result.assumes.join('; ')}.</p>}
     </>
   )

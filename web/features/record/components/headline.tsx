@@ -3,17 +3,20 @@ import { formatValue } from '../../../../shared/layouts/cell-value.ts'
 import { roundByUncertainty } from '../../../../shared/trial/format.ts'
 import { Ink } from '../../../ui/ink.tsx'
 import { PlusMinus } from '../../../ui/plus-minus.tsx'
-import { pictureOf, repeatsOf, type Sources } from '../record-model.ts'
+import { mainFigureOf, pictureOf, repeatsOf, type Sources } from '../record-model.ts'
 import { PlotFigure } from './plot-figure.tsx'
 
 /** The figure the run was made for, set as the sum it is: the ink over the plot it was burned on. */
 export function Headline({ sources }: { sources: Sources }) {
-  const result = sources.record.results.l_per_ha
+  const result = mainFigureOf(sources.record)
   if (!result) return null
+  const hectares = result.key === 'l_per_ha'
   if (result.value === null) {
     return (
       <div className="px-margin py-3">
-        <p className="text-6 leading-[48px] font-[760] max-sm:text-5 max-sm:leading-[36px]">No litres a hectare</p>
+        <p className="text-6 leading-[48px] font-[760] max-sm:text-5 max-sm:leading-[36px]">
+          No litres {hectares ? 'a hectare' : 'an hour'}
+        </p>
         <p className="mt-1 max-w-[640px] border-l-[3px] border-ink pl-2 text-2 leading-[27px]">{result.reason?.text}</p>
         <p className="label pt-1">The other figures stand; each says below what it was computed from.</p>
       </div>
@@ -29,18 +32,22 @@ export function Headline({ sources }: { sources: Sources }) {
             <PlusMinus U={U} />
           </span>
           <span className="leading-[21px]">
-            litres a hectare
+            litres {hectares ? 'a hectare' : 'an hour'}
             <span className="label block leading-[18px]">k = {result.k}: about 95 in 100</span>
           </span>
         </p>
       </div>
-      <span aria-hidden="true" className="text-6 font-[300] max-lg:hidden">
-        =
-      </span>
-      <FuelOverArea sources={sources} />
-      <span className="text-3 font-[650] whitespace-nowrap max-lg:hidden">
-        × 10<span className="label block font-normal">mL/m² to L/ha</span>
-      </span>
+      {hectares && (
+        <>
+          <span aria-hidden="true" className="text-6 font-[300] max-lg:hidden">
+            =
+          </span>
+          <FuelOverArea sources={sources} />
+          <span className="text-3 font-[650] whitespace-nowrap max-lg:hidden">
+            × 10<span className="label block font-normal">mL/m² to L/ha</span>
+          </span>
+        </>
+      )}
     </div>
   )
 }
