@@ -1,11 +1,13 @@
 /** Makes the files of one sample: the picture or PDF, and what was written. */
 import { hourMeterAt } from '../../server/demo/season.ts'
+import { haulage1 } from '../../shared/layouts/haulage-1.ts'
 import { findLayout } from '../../shared/layouts/registry.ts'
 import { goldenScenario } from './golden.ts'
 import { makePhoto, type Photo } from './make-photo.ts'
 import { photographGround } from './photograph.ts'
 import { chanceOf } from './random.ts'
 import type { SampleCase } from './sample-cases.ts'
+import { haulageScenario } from './sample-haulage.ts'
 import { headOf, planLinesOf, SAMPLE_RUNS, type SampleRun } from './sample-season.ts'
 import { drawScanPlan } from './scan.ts'
 import { pagesToPdf } from './scan-pdf.ts'
@@ -22,6 +24,7 @@ const json = (value: unknown) => `${JSON.stringify(value, null, 1)}\n`
 
 /** A sheet of the season, or one that nobody planned. */
 async function sampleSheet(sample: SampleCase, run: SampleRun | undefined): Promise<Photo> {
+  const layout = sample.layout === haulage1.key ? haulage1 : LAYOUT
   const seed = `sample ${sample.case} ${run?.page ?? ''}${sample.draw ? ` draw ${sample.draw}` : ''}`
   const chance = chanceOf(seed)
   const head = run && headOf(run)
@@ -29,16 +32,18 @@ async function sampleSheet(sample: SampleCase, run: SampleRun | undefined): Prom
   const scenario =
     sample.case === 'golden' && head
       ? goldenScenario(head)
-      : drawUntil(
-          (n) => tillageScenario(chance.fork(`scenario ${n}`), { head, machine, worthwhile: true }),
-          (s) =>
-            (sample.case !== 'four-sides' || (s.readings.side_cd_m !== null && s.readings.area_unit === 'acre')) &&
-            inItsTurn(s, run),
-        )
+      : layout === haulage1
+        ? haulageScenario(chance.fork('scenario'))
+        : drawUntil(
+            (n) => tillageScenario(chance.fork(`scenario ${n}`), { head, machine, worthwhile: true }),
+            (s) =>
+              (sample.case !== 'four-sides' || (s.readings.side_cd_m !== null && s.readings.area_unit === 'acre')) &&
+              inItsTurn(s, run),
+          )
   if (run) setHourMeter(scenario, run)
-  sample.change?.(scenario, LAYOUT)
+  sample.change?.(scenario, layout)
   return makePhoto({
-    layout: LAYOUT,
+    layout,
     level: sample.level,
     chance,
     digits: 'held back',

@@ -11,6 +11,8 @@ export interface SampleCase {
   why: string
   /** Which draw: another one was taken where a digit of the set could not be told even by a person (a 7 like a 4). */
   draw?: number
+  /** Key of its layout; tillage where none is named. */
+  layout?: string
   writer?: Partial<Writer>
   adjust?: (drawn: Conditions) => Conditions
   /** Changes what is written. */
@@ -66,6 +68,10 @@ export const SAMPLE_CASES: readonly SampleCase[] = [
     adjust: (c) => ({ ...c, shot: upright(c, { roll: 0.01 }), ground: 'wood', light: noShadow(c), careful: 1, curl_mm: 1 }),
   }),
   make('careful', 'easy', 'a careful photo of a planned sheet', { adjust: (c) => ({ ...c, shot: upright(c) }) }),
+  make('haulage', 'ordinary', 'another layout: a run on the road, on a sheet that nobody planned', {
+    layout: 'haulage',
+    adjust: (c) => ({ ...c, shot: upright(c) }),
+  }),
   make('flat-scan', 'easy', 'an office scan, grey, a little askew', {
     adjust: (c) => ({ ...c, scan: { dpi: 200, grey: true, skew: 0.012, scale: 1, copied: false, contrast: 1, jpegQuality: 78 } }),
   }),
