@@ -52,9 +52,9 @@ export function judgePlacing({ page, picture, scale, alignment, corners, pageCor
     // What lies outside comes first: moving the phone may bring the others in as well.
     return outside.length > 0 ? cornersMissing(outside, true) : cornersMissing(missing, false)
   }
+  if (isBlackAndWhite(picture.grey)) return takeAgain('black and white')
   const place = coveredPlace(alignment.parts, page)
-  if (place) return covered(place.across, place.down)
-  return takeAgain(isBlackAndWhite(picture.grey) ? 'black and white' : 'cannot place')
+  return place ? covered(place.across, place.down) : takeAgain('cannot place')
 }
 
 /** A picture, at half size, without any readable code: dark, blurred, or simply without a sheet. */
