@@ -118,12 +118,8 @@ function footing({ design, groups }: Analysis): string {
 
 const half = ({ interval }: Gap): number => (interval[1] - interval[0]) / 2
 const percent = ({ design }: Analysis): string => `${Math.round(100 * (1 - design.alpha))} %`
-/** As many decimals as the interval's half carries. */
-const shown = (value: number, gap: Gap): string => {
-  const text = roundByUncertainty(gap.difference, half(gap)).value
-  const decimals = text.split('.')[1]?.length ?? 0
-  return value.toFixed(decimals)
-}
+/** One figure more than the band shows: these are to be checked, not spoken. */
+const shown = (value: number, gap: Gap): string => roundByUncertainty(value, half(gap) / 10).value
 const banded = (gap: Gap): string => {
   const { value, U } = roundByUncertainty(-gap.difference, half(gap))
   return `${value} ± ${U}`

@@ -1,5 +1,6 @@
 /** Which design the runs support: the nearest footing they share, and why. */
 import type { DesignKind, LeftOut } from '../schemas/comparison.ts'
+import { linkedGroups } from './linked.ts'
 import { groupedBy, inOrder, type Observation } from './observations.ts'
 
 /** A run that may be compared, with what it shares with others. */
@@ -27,19 +28,31 @@ export interface Proposal {
  * @param noun what a treatment is: tractor, implement, gear, soil
  */
 export function proposeDesign(candidates: readonly Candidate[], noun: string): Proposal {
+  const all = inOrder(candidates.map((c) => c.treatment))
   for (const level of ['plot', 'day'] as const) {
     const shared = sharedBlocks(candidates, level)
-    if (shared.kept.length === 0 || inOrder(shared.kept.map((o) => o.block!)).length < 2) continue
-    if (inOrder(shared.kept.map((o) => o.treatment)).length < inOrder(candidates.map((c) => c.treatment)).length) continue
-    return fromShared(shared, level, noun)
+    const groups = linkedGroups(shared.kept)
+    const twice = inOrder(shared.kept.map((o) => o.block!)).length > 1
+    if (twice && groups.length === 1 && groups[0]!.length === all.length) return fromShared(shared, level, noun)
   }
   return {
     kind: 'one factor',
-    why: `No two of ${plural(noun)} worked the same plots or days twice over: the runs stand on unlike fields.`,
+    why: unlikeWhy(linkedGroups(sharedBlocks(candidates, 'day').kept), all.length, noun),
     block: null,
     observations: candidates.map(({ id, treatment, value }) => ({ id, treatment, value, block: null })),
     leftOut: [],
   }
+}
+
+/** Where some worked side by side and others did not, it says who: choosing them alone makes a better comparison. */
+function unlikeWhy(groups: readonly string[][], all: number, noun: string): string {
+  const side = groups.filter((group) => group.length > 1)
+  if (all < 2 || side.length === 0)
+    return `These ${plural(noun)} did not share plots or days twice: their runs stand on unlike fields.`
+  const who = side.map((group) => group.join(' and ')).join('; ')
+  return side.length === 1 && side[0]!.length === all
+    ? `These ${plural(noun)} shared one day only: their runs stand on unlike fields.`
+    : `Not all of these ${plural(noun)} worked side by side, so their runs stand on unlike fields. Side by side worked: ${who}. Choose one of these groups to compare it in blocks.`
 }
 
 interface Shared {

@@ -24,6 +24,10 @@ export function seasonOf(date: string | null): string {
   return `${MONTHS[first - 1]}–${MONTHS[first + 1]} ${year}`
 }
 
+/** "16 Sep 2026" */
+export const dayWords = (date: string): string =>
+  `${Number(date.slice(8, 10))} ${MONTHS[Number(date.slice(5, 7)) - 1]} ${date.slice(0, 4)}`
+
 const named = (row: { id: string; name: string } | null): Side | null => (row ? { value: row.id, words: row.name } : null)
 const plain = (text: string | null | undefined): Side | null => (text ? { value: text, words: text.replaceAll('_', ' ') } : null)
 

@@ -10,10 +10,13 @@ export const pText = (p: number): string => (p < 0.001 ? '< 0.001' : p.toFixed(3
 /** Degrees of freedom: whole ones plain, Welch's with one decimal. */
 export const dfText = (df: number): string => (Number.isInteger(df) ? String(df) : df.toFixed(1))
 
-/** A figure rounded as half its interval allows. */
+/** A figure with one place more than half its interval allows: enough to check the sentence by. */
 export function inInterval(value: number, [from, to]: Interval): string {
-  return minus(roundByUncertainty(value, (to - from) / 2).value)
+  return minus(roundByUncertainty(value, (to - from) / 20).value)
 }
+
+/** A mean beside others: three figures. */
+export const meanText = (value: number): string => minus(String(Number(value.toPrecision(3))))
 
 export const intervalText = ([from, to]: Interval): string => `${inInterval(from, [from, to])} to ${inInterval(to, [from, to])}`
 

@@ -63,7 +63,7 @@ export function PlotFigure({ title, says, file, draw, table }: PlotFigureProps) 
       </div>
       <details className="pt-1">
         <summary className="word inline-block max-sm:min-h-[44px]">As a table</summary>
-        <div className="overflow-x-auto pt-1">{table}</div>
+        <div className="pt-1">{table}</div>
       </details>
     </figure>
   )

@@ -1,8 +1,7 @@
-import type { ReactNode } from 'react'
 import type { BookComparison } from '../../../../shared/schemas/book-comparison.ts'
 import type { Analysis, TTest } from '../../../../shared/schemas/comparison.ts'
 import { PlainTable } from '../../../ui/plot/plain-table.tsx'
-import { dfText, figureText, inInterval, intervalText, minus, pText, squareText } from '../compare-words.ts'
+import { dfText, figureText, inInterval, intervalText, meanText, minus, pText, squareText } from '../compare-words.ts'
 
 const NAMES = { paired: 'Paired t', blocks: 'Blocks: treatment + block', 'one factor': 'Unlike fields: one factor' } as const
 const figures = (head: string) => ({ head, figures: true })
@@ -21,16 +20,16 @@ export function AnalysisTables({ comparison, analysis }: { comparison: BookCompa
         left over is about normal.
       </p>
       <div className="mt-2 flex flex-wrap gap-x-10 gap-y-3">
-        <Scroll>
+        <div>
           <Means comparison={comparison} analysis={analysis} />
-        </Scroll>
+        </div>
         {analysis.tests.length > 0 && (
-          <Scroll>
+          <div>
             <Tests tests={analysis.tests} unit={unit} paired={design.kind === 'paired'} />
-          </Scroll>
+          </div>
         )}
         {analysis.squares && (
-          <Scroll>
+          <div>
             <PlainTable
               shown
               caption="Table of squares"
@@ -53,12 +52,12 @@ export function AnalysisTables({ comparison, analysis }: { comparison: BookCompa
                 {dfText(analysis.welchF.df2)} df, p {pText(analysis.welchF.p)}
               </p>
             )}
-          </Scroll>
+          </div>
         )}
         {analysis.pairwise.length > 0 && (
-          <Scroll>
+          <div>
             <Pairs analysis={analysis} unit={unit} />
-          </Scroll>
+          </div>
         )}
       </div>
       <Needed comparison={comparison} analysis={analysis} />
@@ -66,8 +65,6 @@ export function AnalysisTables({ comparison, analysis }: { comparison: BookCompa
     </section>
   )
 }
-
-const Scroll = ({ children }: { children: ReactNode }) => <div className="max-w-full overflow-x-auto">{children}</div>
 
 /** Each treatment by the figure compared, with depth and soil beside it. */
 function Means({ comparison, analysis }: { comparison: BookComparison; analysis: Analysis }) {
@@ -81,7 +78,7 @@ function Means({ comparison, analysis }: { comparison: BookComparison; analysis:
         figures('runs'),
         figures(unit),
         figures('s'),
-        ...beside.map((b) => figures(`${b.label}, ${b.unit}`)),
+        ...beside.map((b) => figures(b.key === 'depth_mean_cm' ? 'depth, cm' : b.unit)),
       ]}
       rows={analysis.groups.map(({ treatment, n, mean, sd, interval }) => ({
         key: treatment,
@@ -90,7 +87,10 @@ function Means({ comparison, analysis }: { comparison: BookComparison; analysis:
           n,
           interval ? inInterval(mean, interval) : figureText(mean, comparison.runU),
           sd === null ? '–' : sd.toPrecision(3),
-          ...beside.map((b) => figureText(b.means.find((m) => m.treatment === treatment)?.mean ?? Number.NaN, null)),
+          ...beside.map((b) => {
+            const mean = b.means.find((m) => m.treatment === treatment)?.mean
+            return mean === undefined ? '–' : meanText(mean)
+          }),
         ],
       }))}
     />

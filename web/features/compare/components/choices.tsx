@@ -51,7 +51,7 @@ export function ChoicesBar({ choices, offered, unit, onChange }: ChoicesBarProps
           </Button>
         )}
       </div>
-      <div className="flex flex-wrap gap-x-3 gap-y-0.5 pt-1">
+      <div className="flex flex-wrap gap-x-3 gap-y-0.5 pt-1 max-sm:grid max-sm:grid-cols-2">
         {COMPARISON_FILTERS.map((name) => (
           <Filter
             key={name}
@@ -125,7 +125,7 @@ interface FilterProps {
 function Filter({ name, offered = [], kept, onKeep }: FilterProps) {
   const words = offered.filter((c) => kept.includes(c.value)).map((c) => c.words)
   return (
-    <details className="max-sm:w-full">
+    <details className="min-w-0 max-sm:open:col-span-2">
       <summary className="py-0.5 max-sm:min-h-[44px]">
         <span className="label">{name}</span>{' '}
         <span className={kept.length > 0 ? 'text-pen' : ''}>{words.join(', ') || 'all'}</span>
