@@ -79,10 +79,9 @@ test.each(LAYOUTS)('$key $version: every tie names cells of the sheet', (layout)
   for (const key of tiedKeys(layout)) expect(keys.has(key), key).toBe(true)
 })
 
-test.each([true, false])(
-  'the corner codes are decoded by a program that did not draw them, where the layout puts them (planned: %s)',
-  async (planned) => {
-    const layout = LAYOUTS[0]!
+test.each(LAYOUTS.flatMap((layout) => [true, false].map((planned) => [layout.key, planned, layout] as const)))(
+  'the corner codes of %s are decoded by a program that did not draw them, where the layout puts them (planned: %s)',
+  async (_, planned, layout) => {
     const perMm = 300 / 25.4
     const size = { width: Math.round(layout.page.width * perMm), height: Math.round(layout.page.height * perMm) }
     const pdf = await printSheets([{ layout, sheetCode, plan: planned ? [{ label: 'Place', value: '0003 Aspalli' }] : null }])
@@ -98,6 +97,11 @@ test.each([true, false])(
     for (const offset_mm of corners) expect(offset_mm).toBeLessThan(0.5)
   },
 )
+
+test('no two layouts share a code: the corners say which sheet it is', () => {
+  const codes = LAYOUTS.map(({ code, version }) => `${code}${version}`)
+  expect(new Set(codes).size).toBe(LAYOUTS.length)
+})
 
 test('a value that does not fit its boxes is refused with a sentence', () => {
   const cell = LAYOUTS[0]!.cells.find((c) => c.key === 'depth_cm[1]')!
