@@ -36,14 +36,16 @@ export async function countImagePages(bytes: Uint8Array): Promise<number> {
 /**
  * Decodes JPEG, PNG, WebP or one page (from 0) of a TIFF, turned upright as its camera noted. Grey is the green of colours: true
  * luma costs as much again as decoding, and green tells blue, black, red and pencil from paper as well.
+ * @param most_px a picture wider than this is made so wide while it is decoded, which costs less than decoding it whole
  * @throws UserError too_large or not_accepted: what is wrong with the file, and what to do.
  */
-export async function decodeImage(bytes: Uint8Array, page: number, colour: boolean): Promise<Raster> {
+export async function decodeImage(bytes: Uint8Array, page: number, colour: boolean, most_px?: number): Promise<Raster> {
   const sharp = await sharpOnce()
   try {
     const image = sharp(bytes, { ...OPEN, page })
     const { channels = 3 } = await image.metadata()
     const upright = image.autoOrient().flatten({ background: '#ffffff' })
+    if (most_px) upright.resize({ width: most_px, withoutEnlargement: true })
     const wanted = channels < 3 ? upright.greyscale() : upright.toColourspace('srgb')
     const { data, info } = await (colour || channels < 3 ? wanted : wanted.extractChannel('green'))
       .raw()
