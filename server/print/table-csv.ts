@@ -7,5 +7,5 @@ export const csvOf = (table: Table): Pieces => piecesOf(linesOf(table))
 
 async function* linesOf({ columns, lines }: Table): AsyncGenerator<string> {
   yield csvLine(columns.map(headerOf))
-  for await (const line of lines) yield dataLine(line)
+  for await (const some of lines) yield some.map(dataLine).join('')
 }

@@ -1,10 +1,10 @@
 /** Parquet (Apache Parquet format 2), a row group at a time: what was written is sent and forgotten. */
-import type { SchemaElement } from 'hyparquet-writer'
+import { ByteWriter, ParquetWriter, type SchemaElement } from 'hyparquet-writer'
 import type { Column } from '../../shared/layouts/column.ts'
 import type { Value } from '../../shared/schemas/sheet.ts'
 import type { Pieces, Table } from './table.ts'
 
-/** Lines gathered before they are written: the memory a download takes. */
+/** Lines gathered, or a few more, before they are written: the memory a download takes. */
 const GROUP_LINES = 10_000
 
 type ParquetType = Pick<SchemaElement, 'type' | 'converted_type'>
@@ -33,7 +33,6 @@ function cellOf({ kind, name }: Column, value: Value): Cell {
 
 /** The unit of each column stands in the file's own metadata, under `unit.NAME`. */
 export async function* parquetOf({ columns, lines }: Table): Pieces {
-  const { ByteWriter, ParquetWriter } = await import('hyparquet-writer')
   const schema: SchemaElement[] = [
     { name: 'root', num_children: columns.length },
     ...columns.map((c): SchemaElement => ({ name: c.name, repetition_type: 'OPTIONAL', ...TYPES[c.kind] })),
@@ -49,15 +48,18 @@ export async function* parquetOf({ columns, lines }: Table): Pieces {
   yield take()
   let group: Cell[][] = columns.map(() => [])
   const write = () => {
-    void file.write({ columnData: columns.map((c, i) => ({ name: c.name, data: group[i] ?? [] })), rowGroupSize: GROUP_LINES })
+    void file.write({
+      columnData: columns.map((c, i) => ({ name: c.name, data: group[i] ?? [] })),
+      rowGroupSize: group[0]?.length || 1,
+    })
     group = columns.map(() => [])
     return take()
   }
-  for await (const line of lines) {
+  for await (const some of lines) {
     columns.forEach((column, i) => {
-      group[i]?.push(cellOf(column, line[i] ?? null))
+      for (const line of some) group[i]?.push(cellOf(column, line[i] ?? null))
     })
-    if (group[0]?.length === GROUP_LINES) yield write()
+    if ((group[0]?.length ?? 0) >= GROUP_LINES) yield write()
   }
   if ((group[0]?.length ?? 0) > 0) yield write()
   void file.finish()

@@ -5,11 +5,11 @@
 import { type Column, headerOf } from '../../shared/layouts/column.ts'
 import type { Value } from '../../shared/schemas/sheet.ts'
 import { safeText } from './csv-text.ts'
-import { type Pieces, piecesOf, type Table } from './table.ts'
+import { type Line, type Pieces, piecesOf, type Table } from './table.ts'
 import { type ZipEntry, zipOf } from './zip.ts'
 
-/** Rows a worksheet holds (Excel specifications and limits), one of them the heading; what is more goes to a further sheet. */
-const SHEET_LINES = 1_048_575
+/** Rows a worksheet holds (Excel specifications and limits), the heading among them; what is more goes to a further sheet. */
+const SHEET_ROWS = 1_048_576
 const XML = '<?xml version="1.0" encoding="UTF-8" standalone="yes"?>\n'
 const MAIN = 'http://schemas.openxmlformats.org/spreadsheetml/2006/main'
 const RELATED = 'http://schemas.openxmlformats.org/officeDocument/2006/relationships'
@@ -48,25 +48,39 @@ function cell(ref: string, kind: Column['kind'], value: Value): string {
   return textCell(ref, safeText(value))
 }
 
-/** A worksheet of at most `SHEET_LINES` lines taken from `lines`; the iterator is left where it stopped. */
-async function* sheetText(columns: readonly Column[], lines: AsyncIterator<readonly Value[]>, first: readonly Value[] | null) {
+/** Lines that are looked at before they are taken. */
+interface Ahead {
+  some: readonly Line[] | null
+  take(): Promise<void>
+}
+
+async function lookAhead(lines: AsyncIterator<readonly Line[]>): Promise<Ahead> {
+  const ahead: Ahead = {
+    some: null,
+    take: async () => {
+      const next = await lines.next()
+      ahead.some = next.done ? null : next.value
+    },
+  }
+  await ahead.take()
+  return ahead
+}
+
+/** A worksheet of as many lines as fit; the rest is left for the next one. */
+async function* sheetText(columns: readonly Column[], ahead: Ahead): AsyncGenerator<string> {
   const names = columns.map((_, i) => letters(i + 1))
+  const rowText = (line: Line, row: number) =>
+    `<row r="${row}">${columns.map((c, i) => cell(`${names[i]}${row}`, c.kind, line[i] ?? null)).join('')}</row>`
   yield `${XML}<worksheet xmlns="${MAIN}"><sheetViews><sheetView workbookViewId="0"><pane ySplit="1" topLeftCell="A2" activePane="bottomLeft" state="frozen"/></sheetView></sheetViews><cols>`
   yield columns.map((c, i) => `<col min="${i + 1}" max="${i + 1}" width="${Math.max(10, headerOf(c).length + 1)}"/>`).join('')
   yield `</cols><sheetData><row r="1">${columns.map((c, i) => textCell(`${names[i]}1`, headerOf(c), BOLD)).join('')}</row>`
-  let line = first
-  for (let row = 2; line; row += 1) {
-    const now = line
-    yield `<row r="${row}">${columns.map((c, i) => cell(`${names[i]}${row}`, c.kind, now[i] ?? null)).join('')}</row>`
-    if (row > SHEET_LINES) break
-    line = await nextOf(lines)
+  for (let row = 2; ahead.some && row - 1 + ahead.some.length <= SHEET_ROWS; ) {
+    const first = row
+    yield ahead.some.map((line, i) => rowText(line, first + i)).join('')
+    row += ahead.some.length
+    await ahead.take()
   }
   yield '</sheetData></worksheet>'
-}
-
-async function nextOf(lines: AsyncIterator<readonly Value[]>): Promise<readonly Value[] | null> {
-  const next = await lines.next()
-  return next.done ? null : next.value
 }
 
 async function* whole(text: string): AsyncGenerator<Buffer> {
@@ -78,11 +92,10 @@ async function* partsOf(tables: readonly Table[]): AsyncGenerator<ZipEntry> {
   for (const { name, columns, lines } of tables) {
     const iterator = lines[Symbol.asyncIterator]()
     try {
-      let first = await nextOf(iterator)
-      for (let part = 1; part === 1 || first; part += 1) {
+      const ahead = await lookAhead(iterator)
+      for (let part = 1; part === 1 || ahead.some; part += 1) {
         names.push(part === 1 ? name : `${name} ${part}`)
-        yield { name: `xl/worksheets/sheet${names.length}.xml`, content: piecesOf(sheetText(columns, iterator, first)) }
-        first = await nextOf(iterator)
+        yield { name: `xl/worksheets/sheet${names.length}.xml`, content: piecesOf(sheetText(columns, ahead)) }
       }
     } finally {
       await iterator.return?.()

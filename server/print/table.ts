@@ -2,12 +2,15 @@
 import type { Column } from '../../shared/layouts/column.ts'
 import type { Value } from '../../shared/schemas/sheet.ts'
 
+export type Line = readonly Value[]
+
 export interface Table {
   /** The file's name without its ending, and the worksheet's. */
   name: string
   /** In the order of the values of a line. */
   columns: readonly Column[]
-  lines: AsyncIterable<readonly Value[]>
+  /** Some lines at a time: to wait for each by itself would cost more than to write it. */
+  lines: AsyncIterable<readonly Line[]>
 }
 
 /** Pieces of a file, a few dozen kilobytes each. */

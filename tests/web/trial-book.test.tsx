@@ -24,7 +24,10 @@ test('filters stand in the address, are asked of the server, and go with the dow
   await user.selectOptions(screen.getByLabelText('implement'), PLOUGH.id)
   await waitFor(() => expect(router.state.location.search).toBe(`?soil=medium&implement=${PLOUGH.id}`))
   await waitFor(() => expect(api.reads('/records').at(-1)?.query.get('implement')).toBe(PLOUGH.id))
-  const csv = new URL(screen.getByRole('link', { name: 'CSV' }).getAttribute('href') ?? '', 'http://book.example')
+  const csv = new URL(
+    screen.getByRole('link', { name: 'CSV, a line a record' }).getAttribute('href') ?? '',
+    'http://book.example',
+  )
   expect(csv.pathname).toBe('/api/records.csv')
   expect(Object.fromEntries(csv.searchParams)).toEqual({ implement: PLOUGH.id, soil: 'medium' })
 })

@@ -18,7 +18,7 @@ export const recordColumns = (): BookColumn[] => bookColumns(LAYOUTS)
 export function recordTable({ source }: TableDeps, filter: RecordFilter): Table {
   const columns = recordColumns()
   const lines = async function* () {
-    for await (const record of bookRecords(source, filter)) yield recordLine(columns, record)
+    for await (const record of bookRecords(source, filter)) yield [recordLine(columns, record)]
   }
   return { name: 'trial-book', columns, lines: lines() }
 }
@@ -53,7 +53,7 @@ export function valueTable({ source, settings }: TableDeps, filter: RecordFilter
   const names = columns.map((c) => c.name as keyof BookValue)
   const lines = async function* () {
     for await (const record of bookRecords(source, filter)) {
-      for (const value of valuesOf(record, settings.publicUrl)) yield names.map((name) => value[name])
+      yield valuesOf(record, settings.publicUrl).map((value) => names.map((name) => value[name]))
     }
   }
   return { name: 'trial-book-values', columns, lines: lines() }
@@ -63,7 +63,7 @@ export function valueTable({ source, settings }: TableDeps, filter: RecordFilter
 export function dictionaryTable(name: string, described: readonly Column[]): Table {
   const text = (column: string, description: string): Column => ({ name: column, unit: null, kind: 'text', description })
   const lines = async function* () {
-    for (const c of described) yield [headerOf(c), c.unit, c.kind, c.description]
+    yield described.map((c) => [headerOf(c), c.unit, c.kind, c.description])
   }
   return {
     name,

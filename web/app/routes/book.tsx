@@ -1,8 +1,9 @@
 import { useQuery } from '@tanstack/react-query'
 import { useSearchParams } from 'react-router-dom'
-import { type BookFilters, bookQueries, downloadPath, FILTERS, filtersOf } from '../../features/book/book.queries.ts'
+import { type BookFilters, bookQueries, FILTERS, filtersOf } from '../../features/book/book.queries.ts'
 import { BookFilterBar } from '../../features/book/components/book-filters.tsx'
 import { BookTable } from '../../features/book/components/book-table.tsx'
+import { Downloads } from '../../features/book/components/downloads.tsx'
 import { useMe } from '../../lib/me.ts'
 import { counted } from '../../lib/words.ts'
 import { Button } from '../../ui/button.tsx'
@@ -58,23 +59,5 @@ export function Component() {
         </p>
       )}
     </Page>
-  )
-}
-
-/** Plain links: the browser keeps the file, and the filters go with it. */
-function Downloads({ filters }: { filters: BookFilters }) {
-  return (
-    <p className="flex flex-wrap gap-x-3">
-      <span className="label">take it away as</span>
-      <a className="word" href={downloadPath('csv', filters)} download>
-        CSV
-      </a>
-      <a className="word" href={downloadPath('xlsx', filters)} download>
-        XLSX
-      </a>
-      <a className="word" href="/api/records/dictionary.csv" download>
-        what the columns mean
-      </a>
-    </p>
   )
 }

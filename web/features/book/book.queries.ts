@@ -24,8 +24,12 @@ export const bookQueries = {
     }),
 }
 
-/** Downloads take the same filters as the page. */
-export const downloadPath = (kind: 'csv' | 'xlsx', filters: BookFilters) => withQuery(`/api/records.${kind}`, filters)
+export const FORMATS = ['csv', 'xlsx', 'parquet'] as const
+/** Downloads take the same filters as the page. `records`: one line a record; `values`: one line a reading or figure. */
+export const downloadPath = (
+  file: `${'records' | 'values'}.${(typeof FORMATS)[number]}` | 'datapackage.zip',
+  filters: BookFilters,
+) => withQuery(`/api/${file}`, filters)
 
 export function useChallenge(number: number) {
   const cache = useQueryClient()
