@@ -11,14 +11,18 @@ import { claimHuge, loseMiddle, turnBits } from './foreign-damage.ts'
 import { screenshot, textPage, textPicture } from './foreign-pages.ts'
 import { makePhoto } from './make-photo.ts'
 import { type Chance, chanceOf } from './random.ts'
+import type { Scenario } from './scenario.ts'
 
 export interface Foreign {
   kind: string
   bytes: Buffer
+  /** What was written, where damage may have left the sheet as it was: only this may be read from it. */
+  shows: Scenario['readings'] | null
 }
 
 interface Base {
   jpeg: Buffer
+  readings: Scenario['readings']
   width: number
   height: number
 }
@@ -34,16 +38,16 @@ const twoSheets = () => {
 
 async function filled(seed: string): Promise<Base> {
   const scan = { dpi: 150, grey: true, skew: 0.004, scale: 1, copied: false, contrast: 1, jpegQuality: 80 }
-  const { jpeg } = await makePhoto({
+  const { jpeg, truth } = await makePhoto({
     layout: LAYOUT,
     level: 'easy',
     chance: chanceOf(seed),
     digits: 'held back',
     planned: false,
-    adjust: (c) => ({ ...c, scan, lost: null, dirt: null }),
+    adjust: (c) => ({ ...c, scan, lost: null, dirt: null, spoiled: 0, wrongSum: 0 }),
   })
   const { width, height } = await sharp(jpeg).metadata()
-  return { jpeg, width, height }
+  return { jpeg, width, height, readings: truth.readings }
 }
 
 const save = (image: Sharp) => image.jpeg({ quality: 80 }).toBuffer()
@@ -197,6 +201,9 @@ async function shear(base: Base, chance: Chance): Promise<Buffer> {
   return save(sharp(out, { raw: { width: info.width, height: info.height, channels: 1 } }))
 }
 
+/** A few bits may change nothing that can be seen. */
+const MAY_SHOW_ALL: readonly string[] = ['bits turned over', 'a hole in the file']
+
 export const FOREIGN_KINDS = Object.keys(MAKERS)
 
 /** The n-th foreign picture; the kinds take turns. */
@@ -204,6 +211,6 @@ export async function makeForeign(n: number): Promise<Foreign> {
   const kind = FOREIGN_KINDS[n % FOREIGN_KINDS.length]!
   const [a, b] = await twoSheets()
   const chance = chanceOf(`foreign ${n}`)
-  const swap = chance.odds(0.5)
-  return { kind, bytes: await MAKERS[kind]!(chance, swap ? b : a, swap ? a : b) }
+  const [first, second] = chance.odds(0.5) ? [b, a] : [a, b]
+  return { kind, bytes: await MAKERS[kind]!(chance, first, second), shows: MAY_SHOW_ALL.includes(kind) ? first.readings : null }
 }
