@@ -16,7 +16,7 @@ export function inInterval(value: number, [from, to]: Interval): string {
 }
 
 /** A mean beside others: three figures. */
-export const meanText = (value: number): string => minus(String(Number(value.toPrecision(3))))
+export const meanText = (value: number): string => minus(Math.abs(value) < 1000 ? value.toPrecision(3) : value.toFixed(0))
 
 export const intervalText = ([from, to]: Interval): string => `${inInterval(from, [from, to])} to ${inInterval(to, [from, to])}`
 

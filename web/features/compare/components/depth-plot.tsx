@@ -5,6 +5,7 @@ import type { DepthPoint } from '../plot-rows.ts'
 
 const TALL_PX = 300
 const LEFT_PX = 54
+const LEGEND_PX = 22
 
 interface DepthPlotProps {
   points: readonly DepthPoint[]
@@ -13,19 +14,30 @@ interface DepthPlotProps {
   markOf: (treatment: string) => MarkKind
 }
 
-/** A run's figure up, its depth along. */
+/** A run's figure up, its depth along; the legend stands in the picture, which is taken away without the page. */
 export function depthPlot({ points, unit, width, markOf }: DepthPlotProps) {
+  const names = [...new Set(points.map((p) => p.treatment))]
+  const top = 34 + names.length * LEGEND_PX
+  const foot = top + TALL_PX
   const along = tapeScale(
     points.map((p) => p.depth_cm),
     [LEFT_PX, width - 16],
   )
   const up = tapeScale(
     points.flatMap((p) => [p.value - (p.U ?? 0), p.value + (p.U ?? 0)]),
-    [TALL_PX, 30],
+    [foot, top],
   )
   const body = (
     <>
-      <PlotText x={0} y={14} faint>
+      {names.map((name, i) => (
+        <g key={name}>
+          <PlotMark kind={markOf(name)} x={9} y={9 + i * LEGEND_PX} />
+          <PlotText x={24} y={14 + i * LEGEND_PX}>
+            {name}
+          </PlotText>
+        </g>
+      ))}
+      <PlotText x={0} y={top - 14} faint>
         {`${unit}${up.from > 0 ? `; begins at ${up.from}` : ''}`}
       </PlotText>
       {up.major.map((figure) => (
@@ -36,7 +48,7 @@ export function depthPlot({ points, unit, width, markOf }: DepthPlotProps) {
           </PlotText>
         </g>
       ))}
-      <PlotTape tape={along} top={30} y={TALL_PX} unit="mean depth, cm" />
+      <PlotTape tape={along} top={top} y={foot} unit="mean depth, cm" />
       {points.map((p) => (
         <g key={p.key}>
           {p.U !== null && (
@@ -51,5 +63,5 @@ export function depthPlot({ points, unit, width, markOf }: DepthPlotProps) {
       ))}
     </>
   )
-  return { height: TALL_PX + TAPE_PX, body }
+  return { height: foot + TAPE_PX, body }
 }
