@@ -20,7 +20,7 @@ const LETTER_GAP = 0.22
 const WORD_GAP = 1.6
 const LINE_PITCH = 2.2
 const LINE_HEIGHTS = 34
-const LINES = 12
+const LINES = 6
 
 interface Placed {
   word: number
@@ -32,16 +32,19 @@ interface Placed {
 /**
  * The digits of each word by the text engine; null where it saw another number of them than there are.
  * @param height_px of a digit, alike in all strips
+ * @param most_ms after which no further picture is handed to the engine
  */
 export async function readWords(
   engine: TextEngine,
   words: readonly Word[],
   height_px: number,
+  most_ms: number,
 ): Promise<Array<TypedDigit[] | null>> {
   const out: Array<TypedDigit[] | null> = words.map(() => null)
   const places = placeWords(words, height_px)
   const lines = (places.at(-1)?.line ?? -1) + 1
-  for (let first = 0; first < lines; first += LINES) {
+  const until = performance.now() + most_ms
+  for (let first = 0; first < lines && performance.now() < until; first += LINES) {
     const own = places.filter((p) => p.line >= first && p.line < first + LINES)
     const symbols = await engine.symbols(draw(words, own, first, height_px), '0123456789')
     for (const place of own) {

@@ -32,18 +32,19 @@ const RIGHT_FROM = [
 const NET_DOUBT = 0.03
 const NOT_A_DIGIT = 1e-6
 
+/** A digit that a printed mark has cut into: both readers may take what is left for another one. */
+const CUT = 0.3
+
 /** Chances of 0 to 9 from both readers; the text engine may have said nothing. */
-export function digitChances(byText: TypedDigit | null, byNet: readonly number[]): number[] {
+export function digitChances(byText: TypedDigit | null, byNet: readonly number[], isCut: boolean): number[] {
   const right = byText ? RIGHT_FROM.find((step) => byText.confidence >= step.confidence)!.right : 0.1
   const both = byNet.map((p, digit) => {
     const said = !byText || byText.digit === digit ? right : (1 - right) / 9
     return ((1 - NET_DOUBT) * p + NET_DOUBT / 10) * said
   })
   const sum = both.reduce((a, b) => a + b, 0)
-  return both.map((p) => p / sum)
+  return both.map((p) => (isCut ? CUT / 10 + ((1 - CUT) * p) / sum : p / sum))
 }
-
-export const ANY_DIGIT: readonly number[] = Array.from({ length: 10 }, () => 0.1)
 
 const boxOf = (digits: readonly number[] | null): BoxDist =>
   Float32Array.from({ length: CLASS_COUNT }, (_, k) =>

@@ -12,7 +12,7 @@ import type { TextEngine } from './text-engine.ts'
 import { type Glyphs, glyphsOf } from './typed-glyphs.ts'
 import { readWords, type TypedDigit, type Word } from './typed-line.ts'
 import { netOnWords } from './typed-net.ts'
-import { ANY_DIGIT, blankBoxes, boxesTyped, digitChances, type Setting } from './typed-places.ts'
+import { blankBoxes, boxesTyped, digitChances, type Setting } from './typed-places.ts'
 import { cutStrip, isCut, type Strip } from './typed-strip.ts'
 
 /** Coarse is enough to see whether it is type; reading wants the fine one. Pixels a millimetre. */
@@ -25,6 +25,9 @@ const PROBE_DIGITS = 10
 const TYPE_SPREAD_MM = 0.45
 /** A digit this far from the usual height or line was not typed with the others, mm. */
 const OTHER_TYPE_MM = 0.5
+
+/** An attempt at a page has 24 s: on a machine that stalls, the text engine leaves the rest to the net, and so in doubt. */
+const MOST_MS = 10_000
 
 interface TypedTools {
   engine: TextEngine
@@ -45,7 +48,8 @@ export async function readTyped(grey: Grey, reading: SheetReading, tools: TypedT
   const setting = settingOf(combs)
   const typed = combs.filter((comb) => comb.digits.length > 0 && sameType(comb, setting))
   const words: Word[] = typed.map(({ strip, digits }) => ({ strip, digits }))
-  const [byText, byNet] = [await readWords(tools.engine, words, setting.height_px), await netOnWords(tools.net, words)]
+  const byText = await readWords(tools.engine, words, setting.height_px, MOST_MS)
+  const byNet = await netOnWords(tools.net, words)
   const dists = new Map<string, BoxDist[]>()
   typed.forEach((comb, i) => {
     const own = boxesTyped(comb.cell, comb.strip, comb, chances(comb, byText[i]!, byNet[i]!), setting)
@@ -66,7 +70,7 @@ export async function readTyped(grey: Grey, reading: SheetReading, tools: TypedT
 
 /** What a printed mark has cut into may look like another digit to both readers. */
 const chances = ({ strip, digits }: Comb, byText: TypedDigit[] | null, byNet: number[][]) =>
-  byNet.map((net, i) => (isCut(strip, digits[i]!) ? ANY_DIGIT : digitChances(byText?.[i] ?? null, net)))
+  byNet.map((net, i) => digitChances(byText?.[i] ?? null, net, isCut(strip, digits[i]!)))
 
 function combsOf(grey: Grey, layout: Layout, readings: ReadonlyMap<string, CellReading>, px_per_mm: number, most = 1000): Comb[] {
   const combs: Comb[] = []
