@@ -52,7 +52,7 @@ export function TakeAlong({ id, runs, first, mayPrint, layouts }: TakeAlongProps
 
 const BlankPapers = ({ layout }: { layout: Layout }) => (
   <li className="flex flex-wrap gap-x-3">
-    <span>{workOf(layout)}</span>
+    <span className="min-w-[180px]">{workOf(layout)}</span>
     <Paper href={`/api/layouts/${layout.key}/blank.pdf`}>
       a blank sheet<span className="away">: {workOf(layout)}</span>
     </Paper>

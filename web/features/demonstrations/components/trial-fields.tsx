@@ -41,7 +41,7 @@ export function TrialFields({ index, register, errors, choices, kit, tool, heldO
           </Button>
         )}
       </div>
-      <div className="grid grid-cols-[1.2fr_1.5fr_1.2fr_1.3fr_1.1fr_84px] items-start gap-x-2 gap-y-1 max-lg:grid-cols-2 max-sm:grid-cols-1">
+      <div className="grid grid-cols-[1.2fr_1.5fr_1fr_1.2fr_1.4fr_84px] items-start gap-x-2 gap-y-1 max-lg:grid-cols-2 max-sm:grid-cols-1">
         <FormCell label="tractor" error={wrong?.tractorId?.message}>
           {(tied) => <Options {...tied} {...name('tractorId')} options={choices.tractors} />}
         </FormCell>
@@ -61,7 +61,7 @@ export function TrialFields({ index, register, errors, choices, kit, tool, heldO
           {(tied) => <input {...tied} {...name('runs')} inputMode="numeric" autoComplete="off" />}
         </FormCell>
       </div>
-      {kit && <LeastFuel kit={kit} tool={tool} />}
+      {kit && <LeastFuel kit={kit} tool={plotNote(layout) === null ? tool : undefined} />}
     </fieldset>
   )
 }

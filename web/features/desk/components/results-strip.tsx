@@ -14,14 +14,18 @@ export function ResultsStrip({ figures, other }: ResultsStripProps) {
       aria-label="Results as they stand"
       className="grid grid-cols-2 border-t-[3px] border-ink sm:grid-cols-3 xl:grid-cols-6"
     >
-      {figures.map((figure, i) => (
+      {figures.map((figure) => (
         <div key={figure.key} className="border-l border-line px-2 py-1 first:border-l-0 max-sm:border-b">
           <p className="label flex min-h-[36px] flex-wrap content-start justify-between gap-x-2 leading-[18px]">
             <span>
               {figure.words}
               {figure.value !== null && !figure.firm && ', not firm yet'}
             </span>
-            <OtherFigure figure={figure} other={other?.figures[i] ?? null} words={other?.words ?? ''} />
+            <OtherFigure
+              figure={figure}
+              other={other?.figures.find(({ key }) => key === figure.key) ?? null}
+              words={other?.words ?? ''}
+            />
           </p>
           {figure.value === null ? (
             <p className="border-l-[3px] border-ink pl-1 text-1 leading-[17px]">{figure.reason ?? 'No figure.'}</p>

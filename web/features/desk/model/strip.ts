@@ -3,6 +3,7 @@ import { roundByUncertainty } from '../../../../shared/trial/format.ts'
 import type { Result, ResultKey, Results } from '../../../../shared/trial/result.ts'
 import type { DeskItem } from './desk-items.ts'
 
+/** In the order of what people ask first; the foot has room for six, and a sheet shows those it measures. */
 const SHOWN: ReadonlyArray<{ key: ResultKey; words: string }> = [
   { key: 'fuel_ml', words: 'fuel used' },
   { key: 'l_per_ha', words: 'per hectare' },
@@ -10,7 +11,12 @@ const SHOWN: ReadonlyArray<{ key: ResultKey; words: string }> = [
   { key: 'l_per_h', words: 'per hour' },
   { key: 'depth_mean_cm', words: 'depth' },
   { key: 'efc_ha_h', words: 'work rate' },
+  { key: 'l_per_100_km', words: 'per 100 km' },
+  { key: 'l_per_t', words: 'per tonne' },
+  { key: 'l_per_t_km', words: 'per tonne and km' },
+  { key: 'speed_km_h', words: 'speed' },
 ]
+const ROOM = 6
 
 export interface StripFigure {
   key: ResultKey
@@ -26,7 +32,8 @@ export interface StripFigure {
 
 export function stripOf(results: Results, items: readonly DeskItem[]): StripFigure[] {
   const doubtful = new Set(items.filter((i) => i.open).flatMap((i) => (i.reading ? [i.reading.key] : i.cells)))
-  return SHOWN.map(({ key, words }) => {
+  const measured = SHOWN.filter(({ key }) => results[key].reason?.code !== 'not_on_sheet')
+  return measured.slice(0, ROOM).map(({ key, words }) => {
     const result = results[key]
     const shown = result.value === null ? null : roundByUncertainty(result.value, result.U)
     return {
@@ -46,6 +53,8 @@ export function toldBy(results: Results, key: string): ResultKey | null {
   const preferred: ResultKey[] = [
     'l_per_ha',
     'depth_mean_cm',
+    'l_per_100_km',
+    'l_per_t',
     'l_per_h',
     'efc_ha_h',
     'speed_km_h',
