@@ -22,7 +22,7 @@ import { tyreRules } from './tyres.ts'
 import { workTimeRules } from './work-time.ts'
 
 /** Version of the set of rules that judged a record. Change it with any change of a rule or a default limit. */
-export const RULES_VERSION = '1.1.0'
+export const RULES_VERSION = '1.2.0'
 
 /** Every rule, by id. */
 export const RULES: readonly Rule[] = [

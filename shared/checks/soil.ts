@@ -197,24 +197,57 @@ const q43: Rule = {
 
 const q44: Rule = {
   id: 'Q44',
-  version: 1,
+  version: 2,
   name: 'copied readings',
   severity: ['doubt'],
   cells: ['depth_cm'],
-  why: 'No field is that even: invented or copied [P].',
-  check: (ctx) => {
-    const depths = ctx.all('depth_cm')
-    const first = depths[0]?.value
-    if (first === undefined || depths.length < ctx.limit('copied_depths') || depths.some((d) => d.value !== first)) return []
-    return [
-      found(
-        'doubt',
-        depths.map((d) => d.key),
-        `All ${depths.length} depths are ${first} cm: measured each by itself?`,
-        { readings: depths.length, depth_cm: first },
-      ),
-    ]
-  },
+  why: 'No field is that even, and no rule shows one last digit so often: invented, copied or rounded [P].',
+  check: (ctx) => [...allEqual(ctx), ...lastDigits(ctx)],
+}
+
+function allEqual(ctx: CheckContext): Found[] {
+  const depths = ctx.all('depth_cm')
+  const first = depths[0]?.value
+  if (first === undefined || depths.length < ctx.limit('copied_depths') || depths.some((d) => d.value !== first)) return []
+  return [
+    found(
+      'doubt',
+      depths.map((d) => d.key),
+      `All ${depths.length} depths are ${first} cm: measured each by itself?`,
+      { readings: depths.length, depth_cm: first },
+    ),
+  ]
+}
+
+/** χ² that chance exceeds once in a thousand, by degrees of freedom (tables, from memory): two last digits possible, or ten. */
+const CHI_SQUARE_AT_1_IN_1000: Readonly<Record<number, number>> = { 2: 10.828, 10: 27.877 }
+const LEAST_POOLED = 30
+
+/** Nearly all written to half centimetres: then two last digits are possible, and a stray tenth says nothing. */
+const HALVES = 0.9
+
+/** Last digits of this demonstrator's depths together. */
+function lastDigits(ctx: CheckContext): Found[] {
+  const own = ctx.all('depth_cm')
+  const pooled = [...(ctx.facts.pooledDepths_cm ?? []), ...own.map((d) => d.value)]
+  if (own.length === 0 || pooled.length < LEAST_POOLED) return []
+  const tenths = pooled.map((depth) => Math.round(10 * depth) % 10)
+  const halves = tenths.filter((digit) => digit % 5 === 0)
+  const byHalves = halves.length >= HALVES * tenths.length
+  const [seen, possible] = byHalves ? [halves, [0, 5]] : [tenths, [0, 1, 2, 3, 4, 5, 6, 7, 8, 9]]
+  const expected = seen.length / possible.length
+  const counts = possible.map((digit) => seen.filter((t) => t === digit).length)
+  const chi = counts.reduce((sum, count) => sum + (count - expected) ** 2 / expected, 0)
+  if (!above(chi, CHI_SQUARE_AT_1_IN_1000[possible.length] ?? Number.POSITIVE_INFINITY)) return []
+  const most = possible[counts.indexOf(Math.max(...counts))] ?? 0
+  return [
+    found(
+      'doubt',
+      own.map((d) => d.key),
+      `Of ${pooled.length} depths by this demonstrator ${Math.max(...counts)} end in .${most}: read off the rule, or rounded?`,
+      { readings: pooled.length, chi_square: chi },
+    ),
+  ]
 }
 
 const q50: Rule = {

@@ -106,6 +106,16 @@ export const FIELD_CASES: readonly Case[] = [
     sheet({ 'width_m[4]': null, 'width_m[5]': null }),
   ),
   row('Q44', 'doubt', sheet(depths(...Array(10).fill(15))), sheet(depths(...Array(9).fill(15), 15.5)), 'All 10 depths are 15 cm'),
+  // 20 depths of earlier sheets and the 10 of this one: all whole centimetres, or half of them.
+  row(
+    'Q44',
+    'doubt',
+    sheet(depths(14, 15, 16, 14, 15, 16, 14, 15, 16, 15), { pooledDepths_cm: Array(20).fill(15) }),
+    sheet(depths(14.5, 15, 16.5, 14, 15.5, 16, 14.5, 15, 16.5, 15), {
+      pooledDepths_cm: [...Array(10).fill(15), ...Array(10).fill(15.5)],
+    }),
+    'Of 30 depths by this demonstrator 30 end in .0',
+  ),
   row(
     'Q50',
     'stop',

@@ -76,6 +76,21 @@ export async function usualOf(db: Db, sheetId: string, operation: string): Promi
   return row && row.n >= LEAST_FOR_USUAL ? row.median : null
 }
 
+/** Sheets whose depths are looked at together: enough for the last digits, and of these days. */
+const POOLED_RECORDS = 20
+
+/** Depths of the demonstrator's latest records, cm. */
+export async function pooledDepths(db: Db, sheetId: string, demonstratorId: string): Promise<number[]> {
+  const rows: Array<{ depth: number }> = await db.query(
+    `SELECT (r->>'value')::float8 AS depth
+     FROM (SELECT readings FROM records WHERE state = 'entered' AND sheet_id <> $1 AND demonstrator_id = $2
+       ORDER BY number DESC LIMIT ${POOLED_RECORDS}) latest, jsonb_array_elements(readings) r
+     WHERE r->>'key' LIKE 'depth\\_cm[%' AND jsonb_typeof(r->'value') = 'number'`,
+    [sheetId, demonstratorId],
+  )
+  return rows.map((row) => row.depth)
+}
+
 /** Kilometres between two places as the crow flies; null where one has no coordinates. */
 function kilometresBetween(a: PlaceEntity | null, b: PlaceEntity | null): number | null {
   if (a?.lat == null || a.lon == null || b?.lat == null || b.lon == null) return null

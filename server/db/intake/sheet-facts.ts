@@ -9,7 +9,7 @@ import type { SheetEntity } from '../entities/sheet.ts'
 import { UserEntity } from '../entities/user.ts'
 import { landUnitsOf } from '../repositories/land-unit.ts'
 import { currentLimits } from '../repositories/limit-settings.ts'
-import { lastHourMeter, otherSheets, peersOf, usualOf } from './other-runs.ts'
+import { lastHourMeter, otherSheets, peersOf, pooledDepths, usualOf } from './other-runs.ts'
 
 export interface Named {
   place: PlaceEntity | null
@@ -57,7 +57,7 @@ export function registerFindings(values: Values, named: Named): Finding[] {
 
 /** Facts as shared/trial wants them. `today` is the database's day. */
 export async function factsOf(db: Db, sheet: SheetEntity, values: Values, named: Named): Promise<Facts> {
-  const { place, tractor, implement, kit } = named
+  const { place, tractor, implement, kit, demonstrator } = named
   const settings = await currentLimits(db)
   const operation = implement?.operation ?? null
   const clock: Array<{ today: string }> = await db.query('SELECT current_date::text AS today')
@@ -84,6 +84,7 @@ export async function factsOf(db: Db, sheet: SheetEntity, values: Values, named:
     landUnits: place ? await landUnitsOf(db, place.district) : null,
     peers_l_per_ha: tractor && implement ? await peersOf(db, sheet.id, tractor.id, implement.id, values) : null,
     usual_l_per_ha: operation ? await usualOf(db, sheet.id, operation) : null,
+    pooledDepths_cm: demonstrator ? await pooledDepths(db, sheet.id, demonstrator.id) : null,
     limits: settings.limits,
     settingsVersion: settings.version,
     today: clock[0]!.today,
