@@ -26,7 +26,8 @@ export const hashOfToken = (token: string) => createHash('sha256').update(token)
 export function readToken({ source }: Pick<Deps, 'source'>): RequestHandler {
   return async (req: Request, res: Response, next: NextFunction) => {
     const header = req.get('authorization')
-    if (header === undefined) return next()
+    // Another scheme is for a proxy in front of us.
+    if (header === undefined || !/^Bearer\b/i.test(header)) return next()
     const token = BEARER.exec(header)?.[1]
     const used = token === undefined ? null : await acceptToken(source.manager, hashOfToken(token))
     if (!used) {

@@ -67,14 +67,14 @@ async function lookAhead(lines: AsyncIterator<readonly Line[]>): Promise<Ahead> 
 }
 
 /** A worksheet of as many lines as fit; the rest is left for the next one. */
-async function* sheetText(columns: readonly Column[], ahead: Ahead): AsyncGenerator<string> {
+async function* sheetText(columns: readonly Column[], ahead: Ahead, rows: number): AsyncGenerator<string> {
   const names = columns.map((_, i) => letters(i + 1))
   const rowText = (line: Line, row: number) =>
     `<row r="${row}">${columns.map((c, i) => cell(`${names[i]}${row}`, c.kind, line[i] ?? null)).join('')}</row>`
   yield `${XML}<worksheet xmlns="${MAIN}"><sheetViews><sheetView workbookViewId="0"><pane ySplit="1" topLeftCell="A2" activePane="bottomLeft" state="frozen"/></sheetView></sheetViews><cols>`
   yield columns.map((c, i) => `<col min="${i + 1}" max="${i + 1}" width="${Math.max(10, headerOf(c).length + 1)}"/>`).join('')
   yield `</cols><sheetData><row r="1">${columns.map((c, i) => textCell(`${names[i]}1`, headerOf(c), BOLD)).join('')}</row>`
-  for (let row = 2; ahead.some && row - 1 + ahead.some.length <= SHEET_ROWS; ) {
+  for (let row = 2; ahead.some && row - 1 + ahead.some.length <= rows; ) {
     const first = row
     yield ahead.some.map((line, i) => rowText(line, first + i)).join('')
     row += ahead.some.length
@@ -87,7 +87,7 @@ async function* whole(text: string): AsyncGenerator<Buffer> {
   yield Buffer.from(text)
 }
 
-async function* partsOf(tables: readonly Table[]): AsyncGenerator<ZipEntry> {
+async function* partsOf(tables: readonly Table[], sheetRows: number): AsyncGenerator<ZipEntry> {
   const names: string[] = []
   for (const { name, columns, lines } of tables) {
     const iterator = lines[Symbol.asyncIterator]()
@@ -95,7 +95,7 @@ async function* partsOf(tables: readonly Table[]): AsyncGenerator<ZipEntry> {
       const ahead = await lookAhead(iterator)
       for (let part = 1; part === 1 || ahead.some; part += 1) {
         names.push(part === 1 ? name : `${name} ${part}`)
-        yield { name: `xl/worksheets/sheet${names.length}.xml`, content: piecesOf(sheetText(columns, ahead)) }
+        yield { name: `xl/worksheets/sheet${names.length}.xml`, content: piecesOf(sheetText(columns, ahead, sheetRows)) }
       }
     } finally {
       await iterator.return?.()
@@ -120,5 +120,5 @@ function frame(names: readonly string[]): Record<string, string> {
   }
 }
 
-/** One worksheet a table. */
-export const xlsxOf = (tables: readonly Table[]): Pieces => zipOf(partsOf(tables))
+/** One worksheet a table, and further ones where it has more than `sheetRows`. */
+export const xlsxOf = (tables: readonly Table[], sheetRows = SHEET_ROWS): Pieces => zipOf(partsOf(tables, sheetRows))

@@ -107,9 +107,11 @@ describe.sequential('from plan to download', () => {
     await page.getByRole('img', { name: 'ink of jar, start' }).first().waitFor()
     await expectAccessible(page)
     await page.getByRole('link', { name: 'Trial book' }).click()
+    await page.getByText('take the data away').click()
+    await expectAccessible(page)
     const [download] = await Promise.all([
       page.waitForEvent('download'),
-      page.getByRole('link', { name: 'CSV', exact: true }).click(),
+      page.getByRole('link', { name: 'CSV, a line a record', exact: true }).click(),
     ])
     const [header, line] = (await readFile((await download.path())!, 'utf8')).split('\r\n')
     expect(header).toContain('l_per_ha [L/ha]')

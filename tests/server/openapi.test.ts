@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { documentPath } from '../../server/http/openapi.ts'
 import { allRoutes } from '../../server/http/routes.ts'
+import { documentSchema, exampleOf, nounsOf, scopeOf } from '../../web/features/interface/interface-model.ts'
 import { startTestServer, type TestServer } from '../support/server.ts'
 
 interface Operation {
@@ -47,5 +48,18 @@ describe('the OpenAPI document', () => {
       expect(operation?.requestBody !== undefined, path).toBe(body !== undefined || multipart !== undefined)
       expect(Object.keys(operation?.responses ?? {}), path).toContain('default')
     }
+  })
+
+  it('is what the guide in the app reads: every route, by noun, with the scope of its token', () => {
+    const guide = nounsOf(documentSchema.parse(document), true)
+    expect(guide.flatMap(({ entries }) => entries)).toHaveLength(allRoutes.length)
+    const withToken = nounsOf(documentSchema.parse(document), false).flatMap(({ entries }) => entries)
+    const scoped = allRoutes.filter((route) => route.scope !== undefined)
+    expect(withToken.map(({ operation }) => scopeOf(operation)).sort()).toEqual(scoped.map((route) => route.scope).sort())
+    const make = withToken.find(({ method, path }) => method === 'POST' && path === '/webhooks')!
+    expect(exampleOf(make, 'https://sheaf.example')).toBe(
+      'curl -X POST -H "Authorization: Bearer $TOKEN" -H "Content-Type: application/json" ' +
+        `-d '{"url":"https://data.example.org/","events":["record.entered"]}' "https://sheaf.example/api/webhooks"`,
+    )
   })
 })
