@@ -4,7 +4,7 @@
  */
 import { BOX } from '../../layouts/layout.ts'
 import type { FieldPart } from './field-lines.ts'
-import { centreOf, type Line, type Profile, voteOf } from './lines.ts'
+import { centreOf, type Grid, gridAround, type Line, type Profile, voteAt, voteOf, votesOn } from './lines.ts'
 import { lineProfile, type Patch } from './patch.ts'
 
 export interface LevelMatch {
@@ -53,19 +53,6 @@ const GROWTHS = [0.04, -0.04, MOST_GROWTH, -MOST_GROWTH] as const
 const GOOD_AS_IT_IS = 0.6
 /** Leans beside the one that neighbours give. */
 const LEANS = [0, 0.006, -0.006, 0.012, -0.012, 0.02, -0.02, 0.03, -0.03, 0.045, -0.045, 0.06, -0.06]
-
-/** Offsets that votes are worked out for, mm: the search looks up the nearest. */
-interface Grid {
-  from: number
-  step: number
-  count: number
-}
-
-function votesOn(grid: Grid, vote: (by: number) => number): Float32Array {
-  const votes = new Float32Array(grid.count)
-  for (let i = 0; i < grid.count; i++) votes[i] = vote(grid.from + i * grid.step)
-  return votes
-}
 
 function boxVoters(patch: Patch, part: FieldPart, dx: number, middle: number, full: number, grid: Grid): Voter[] {
   const center = part.field.y + part.field.height / 2
@@ -118,7 +105,7 @@ function supportAt(voters: readonly Voter[], { shift, lean, growth }: Pose, grid
   for (const { along, marks } of voters) {
     for (const { above, votes } of marks) {
       const by = shift + lean * along + growth * above
-      sum += votes[Math.min(Math.max(Math.round((by - grid.from) / grid.step), 0), grid.count - 1)]!
+      sum += voteAt(grid, votes, by)
       count++
     }
   }
@@ -149,8 +136,7 @@ export function matchLevel(
   const room =
     (Math.abs(around.lean) + Math.max(...leans.map(Math.abs))) * (last.x + last.width - first.x + 2) * 0.5 +
     (Math.abs(around.growth) + MOST_GROWTH) * field.height * 0.7
-  const beside = steps + Math.ceil(room / step)
-  const grid = { from: around.shift_mm - beside * step, step, count: 2 * beside + 1 }
+  const grid = gridAround(around.shift_mm, step, steps + Math.ceil(room / step))
   const voters = parts.flatMap((part) => boxVoters(patch, part, dx, middle, full, grid))
   if (Math.abs(first.x - field.x) < 0.1) {
     const rise = BOX.barRise

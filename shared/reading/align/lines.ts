@@ -50,6 +50,29 @@ export function voteOf(profile: Profile, line: Line, shift_mm: number): number {
   return Math.min(1, Math.max(-AGAINST, contrast / profile.full))
 }
 
+/** Offsets that votes are worked out for once, mm: a search asks for the same ones again and again. */
+export interface Grid {
+  from: number
+  step: number
+  count: number
+}
+
+export const gridAround = (middle: number, step: number, beside: number): Grid => ({
+  from: middle - beside * step,
+  step,
+  count: 2 * beside + 1,
+})
+
+export function votesOn(grid: Grid, vote: (by: number) => number): Float32Array {
+  const votes = new Float32Array(grid.count)
+  for (let i = 0; i < grid.count; i++) votes[i] = vote(grid.from + i * grid.step)
+  return votes
+}
+
+/** The vote for the offset of the grid that is nearest. */
+export const voteAt = ({ from, step, count }: Grid, votes: Float32Array, by: number): number =>
+  votes[Math.min(Math.max(Math.round((by - from) / step), 0), count - 1)]!
+
 /** The mean vote of all lines for one shift of their middle, and a stretch about it. */
 export function support(profile: Profile, lines: readonly Line[], shift_mm: number, stretch = 0): number {
   const middle = (middleOf(lines[0]!) + middleOf(lines.at(-1)!)) / 2
@@ -149,12 +172,15 @@ function bestOf(
   const step = profile.step_mm / 2
   const steps = Math.ceil(reach_mm / step)
   const first = stretches[0]!
+  const room = Math.max(...stretches.map(Math.abs)) * Math.max(...alongs.map(Math.abs))
+  const grid = gridAround(around_mm, step, steps + Math.ceil(room / step))
+  const votes = lines.map((line) => votesOn(grid, (by) => voteOf(profile, line, by)))
   let best = { value: -1, support: -1, shift: around_mm, stretch: first }
   for (const stretch of stretches) {
     for (let k = -steps; k <= steps; k++) {
       const shift = around_mm + k * step
       let sum = 0
-      for (let i = 0; i < lines.length; i++) sum += voteOf(profile, lines[i]!, shift + stretch * alongs[i]!)
+      for (let i = 0; i < votes.length; i++) sum += voteAt(grid, votes[i]!, shift + stretch * alongs[i]!)
       const value = sum / lines.length - 0.02 * Math.abs(k * step) - STRETCH_COST * Math.abs(stretch)
       if (value > best.value) best = { value, support: sum / lines.length, shift, stretch }
     }
