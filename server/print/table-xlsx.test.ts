@@ -19,7 +19,7 @@ async function read(table: Table, sheetRows?: number): Promise<Excel.Worksheet[]
   return workbook.worksheets
 }
 
-const valuesOf = (sheet: Excel.Worksheet | undefined) => (sheet?.getColumn(1).values as unknown[]).slice(1)
+const valuesOf = (sheet: Excel.Worksheet) => (sheet.getColumn(1).values as unknown[]).slice(1)
 
 it('every kind of value comes back as what it is', async () => {
   const columns = [
@@ -33,7 +33,7 @@ it('every kind of value comes back as what it is', async () => {
   const line = [-14.074074074074076, '<a> & "b"\u0001 ✓ ', false, '2024-02-29', '2026-10-14T09:30:00.000Z', null]
   const [sheet] = await read({ name: 'book', columns, lines: batches([line]) })
   expect(sheet?.name).toBe('book')
-  expect((sheet?.getRow(1).values as unknown[]).slice(1)).toEqual(['n [L/ha]', 't', 'b', 'd', 'm', 'none'])
+  expect((sheet!.getRow(1).values as unknown[]).slice(1)).toEqual(['n [L/ha]', 't', 'b', 'd', 'm', 'none'])
   const [n, t, b, d, m, none] = [1, 2, 3, 4, 5, 6].map((i) => sheet?.getRow(2).getCell(i).value)
   expect([n, t, b, none]).toEqual([line[0], '<a> & "b"\ufffd ✓ ', false, null])
   expect([d, m].map((at) => (at as Date).toISOString())).toEqual(['2024-02-29T00:00:00.000Z', '2026-10-14T09:30:00.000Z'])
@@ -50,5 +50,5 @@ it('what does not fit on a worksheet goes on on the next one', async () => {
 
 it('a table without lines has its heading', async () => {
   const [sheet] = await read({ name: 'book', columns: [column('n', 'integer')], lines: batches() })
-  expect(valuesOf(sheet)).toEqual(['n'])
+  expect(valuesOf(sheet!)).toEqual(['n'])
 })
