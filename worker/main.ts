@@ -13,6 +13,7 @@ import type { PageReader } from './jobs/page-reader.ts'
 import { uploadSplitJob } from './jobs/upload-split.job.ts'
 import { webhookSendJob } from './jobs/webhook-send.job.ts'
 import { startWorker } from './start-worker.ts'
+import { keepSwept } from './sweep.ts'
 
 /** A page in hand is waited for this long, then handed back; the process is gone within 20 s of being told. */
 const PATIENCE_MS = 12_000
@@ -33,6 +34,7 @@ async function run(settings: WorkerSettings): Promise<void> {
         const reading = createReadingProcess({ listKnown: () => listKnownNumbers(source.manager) })
         reading.warm()
         reader = reading
+        void keepSwept(source.manager, files, log, stop.signal)
         return [
           uploadSplitJob({ source, boss, files, parse: runParser }),
           pageReadJob({ source, files, reader }),

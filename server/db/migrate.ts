@@ -2,7 +2,7 @@
 import { JOBS, type JobName } from '../../shared/jobs.ts'
 import { APP_ROLE } from '../postgres/roles.ts'
 import { createDataSource } from './database.ts'
-import { createBoss, failedQueue, queueOptions } from './queue.ts'
+import { createBoss, FAILED_OPTIONS, failedQueue, queueOptions } from './queue.ts'
 
 const quote = (name: string) => `"${name.replaceAll('"', '""')}"`
 
@@ -16,7 +16,9 @@ export async function migrate(ownerUrl: string, appRole: string = APP_ROLE): Pro
   for (const name of Object.keys(JOBS) as JobName[]) {
     const failed = failedQueue(name)
     const options = { name, policy: 'standard', deadLetter: failed, ...queueOptions(name) } as const
-    await boss.createQueue(failed, { name: failed, policy: 'standard' })
+    const failedOptions = { name: failed, policy: 'standard', ...FAILED_OPTIONS } as const
+    await boss.createQueue(failed, failedOptions)
+    await boss.updateQueue(failed, failedOptions)
     await boss.createQueue(name, options)
     // A queue made by an earlier version keeps its old options unless told.
     await boss.updateQueue(name, options)

@@ -16,6 +16,8 @@ const OWN_OPTIONS: Partial<Record<JobName, typeof MAIL_OPTIONS | typeof WEBHOOK_
   'webhook-send': WEBHOOK_OPTIONS,
 }
 export const queueOptions = (name: JobName) => OWN_OPTIONS[name] ?? QUEUE_OPTIONS
+/** What must be said or done when a job was given up is tried again after one minute, two, four … for five days. */
+export const FAILED_OPTIONS = { retryLimit: 12, retryDelay: 60, retryBackoff: true, retentionDays: 14 } as const
 /** Where a job goes whose attempts are used up: its handler says so to whoever waits. */
 export const failedQueue = <N extends JobName>(name: N) => `${name}-failed` as const
 

@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto'
-import { mkdir, open, rename, rm, stat } from 'node:fs/promises'
-import { dirname, join } from 'node:path'
+import { mkdir, open, readdir, rename, rm, stat } from 'node:fs/promises'
+import { dirname, join, relative, sep } from 'node:path'
 import type { Readable } from 'node:stream'
 import { checkKey } from './key.ts'
 import { checkRoom, type Room, roomIn, tooFull } from './room.ts'
@@ -41,11 +41,27 @@ export function createFolderStore(folder: string, look: (folder: string) => Prom
         },
       )
     },
+    async *list() {
+      const found = await readdir(folder, { recursive: true, withFileTypes: true }).catch(absentIs([]))
+      for (const entry of found.filter((e) => e.isFile())) {
+        const path = join(entry.parentPath, entry.name)
+        const changed = await stat(path).catch(absentIs(null))
+        if (changed) yield { key: relative(folder, path).split(sep).join('/'), changedAt: changed.mtime }
+      }
+    },
     async remove(key) {
       await rm(place(key), { force: true })
     },
   }
 }
+
+/** Nothing is there yet, or not any more. */
+const absentIs =
+  <T>(value: T) =>
+  (cause: NodeJS.ErrnoException): T => {
+    if (cause.code === 'ENOENT') return value
+    throw cause
+  }
 
 async function openKept(key: string, path: string) {
   return open(path, 'r').catch((cause: NodeJS.ErrnoException) => {

@@ -47,6 +47,18 @@ export function createS3Store(settings: S3Settings): FileStore {
         throw cause
       }
     },
+    async *list() {
+      const { sdk, client } = await connect()
+      let next: string | undefined
+      do {
+        const page = await ask(() =>
+          client.send(new sdk.ListObjectsV2Command({ Bucket: settings.bucket, ...(next ? { ContinuationToken: next } : {}) })),
+        )
+        for (const { Key, LastModified } of page.Contents ?? [])
+          if (Key && LastModified) yield { key: Key, changedAt: LastModified }
+        next = page.NextContinuationToken
+      } while (next)
+    },
     async remove(key) {
       const target = at(key)
       const { sdk, client } = await connect()

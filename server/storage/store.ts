@@ -3,6 +3,11 @@ import type { StoreSettings } from '../config.ts'
 import { createFolderStore } from './folder-store.ts'
 import { createS3Store } from './s3-store.ts'
 
+export interface StoredFile {
+  key: string
+  changedAt: Date
+}
+
 /**
  * Where pictures, scans and workbooks are kept. Keys are ours (no file name a person gave): lower-case words,
  * digits, dots and dashes, with slashes between.
@@ -18,6 +23,8 @@ export interface FileStore {
   /** The same in pieces, for answers that need not hold the whole file. @throws as `get`, before the first byte */
   stream(key: string): Promise<Readable>
   exists(key: string): Promise<boolean>
+  /** Every file there is, in no order; one that comes or goes meanwhile may be missing or named. */
+  list(): AsyncIterable<StoredFile>
   /** Removes it; nothing happens when it is gone already. */
   remove(key: string): Promise<void>
 }

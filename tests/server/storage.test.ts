@@ -47,6 +47,15 @@ describe.each(stores)('files in %s', (_name, create) => {
     expect((await store.get('notes/two.txt')).toString()).toBe('short')
   })
 
+  it('are listed with the time of their last change', async () => {
+    const store = create()
+    await store.put('listed/one.txt', Buffer.from('x'))
+    const found = []
+    for await (const file of store.list()) if (file.key.startsWith('listed/')) found.push(file)
+    expect(found.map((file) => file.key)).toEqual(['listed/one.txt'])
+    expect(Math.abs(found[0]!.changedAt.getTime() - Date.now())).toBeLessThan(60_000)
+  })
+
   it('are gone after removal, and removing twice is no error', async () => {
     const store = create()
     await store.put('notes/three.txt', Buffer.from('x'))

@@ -101,6 +101,9 @@ export function memoryStore(): FileStore & { kept: Map<string, Uint8Array> } {
       throw new Error('not in these tests')
     },
     exists: async (key) => kept.has(key),
+    async *list() {
+      for (const key of kept.keys()) yield { key, changedAt: new Date() }
+    },
     remove: async (key) => void kept.delete(key),
   }
 }

@@ -33,6 +33,8 @@ export function pageReadJob(deps: PageReadDeps): JobHandler {
     giveUp: async ({ pageId }) => {
       const page = await takePage(deps.source.manager, pageId)
       if (page) await keep(deps, page, { outcome: { kind: 'unreadable', reason: GIVEN_UP }, picture: null })
+      // The page may have been read, and only the covering failed each time: here it is tried on for days.
+      await coverWithdrawn(deps, pageId)
     },
   })
 }
