@@ -18,7 +18,11 @@ export const inOrder = (names: readonly string[]): string[] => [...new Set(names
 /** The observations of each key, keys in order of first appearance. */
 export function groupedBy(observations: readonly Observation[], keyOf: (o: Observation) => string): Map<string, Observation[]> {
   const groups = new Map<string, Observation[]>()
-  for (const o of observations) groups.set(keyOf(o), [...(groups.get(keyOf(o)) ?? []), o])
+  for (const o of observations) {
+    const group = groups.get(keyOf(o))
+    if (group) group.push(o)
+    else groups.set(keyOf(o), [o])
+  }
   return groups
 }
 

@@ -18,7 +18,7 @@ import { RESULTS } from '../../../shared/trial/result.ts'
 import { median } from '../../../shared/trial/stats.ts'
 import type { ComparableRun } from '../../db/desk/comparable-runs.ts'
 import { expectedBand } from './expected-band.ts'
-import { choicesIn, dayWords, narrowed, seasonOf, treatmentOf } from './narrow-runs.ts'
+import { choicesIn, dayWords, narrowed, seasonOf, treatmentsBy } from './narrow-runs.ts'
 import { settingOf } from './setting.ts'
 
 /** Shown beside every comparison: shallow work is no saving. */
@@ -33,10 +33,11 @@ export const EXPECTED = 'expected_l_per_h'
 export function compareRuns(book: readonly ComparableRun[], query: ComparisonQuery): BookComparison {
   const { figure, of } = query
   const keys = figuresFor(figure)
+  const ask: Ask = { ...query, treatmentOf: treatmentsBy(of, book) }
   const chosen = narrowed(book, query)
   const { label, unit } = RESULTS[figure]
-  const fit = chosen.filter((run) => refusalOf(run, query) === null)
-  const proposal = proposeDesign(candidatesOf(fit, query, figure), of)
+  const fit = chosen.filter((run) => refusalOf(run, ask) === null)
+  const proposal = proposeDesign(candidatesOf(fit, ask), of)
   const reasons = new Map(proposal.leftOut.map(({ id, reason }) => [id, reason]))
   const compared = fit.filter((run) => !reasons.has(String(run.number)))
   const Us = compared.flatMap((run) => run.results[figure]?.U ?? [])
@@ -51,9 +52,7 @@ export function compareRuns(book: readonly ComparableRun[], query: ComparisonQue
     unit,
     of,
     choices: choicesIn(book),
-    runs: chosen.map((run) =>
-      toRun(run, query, keys, refusalOf(run, query) ?? reasons.get(String(run.number)) ?? null, proposal),
-    ),
+    runs: chosen.map((run) => toRun(run, ask, keys, refusalOf(run, ask) ?? reasons.get(String(run.number)) ?? null, proposal)),
     runU,
     ...made,
     beside,
@@ -63,21 +62,24 @@ export function compareRuns(book: readonly ComparableRun[], query: ComparisonQue
   }
 }
 
+/** The query, and what it compares by. */
+type Ask = ComparisonQuery & { treatmentOf: (run: ComparableRun) => string | null }
+
 /** Why a run cannot be compared; null where it can. */
-function refusalOf(run: ComparableRun, { figure, of }: ComparisonQuery): string | null {
+function refusalOf(run: ComparableRun, { figure, of, treatmentOf }: Ask): string | null {
   if (run.exclusion) return `left out by ${run.exclusion.by}: “${run.exclusion.reason}”`
   if (run.state === 'challenged') return 'challenged: its sheet is at the desk again'
-  if (treatmentOf(run, of) === null) return `the record names no ${of}`
+  if (treatmentOf(run) === null) return `the record names no ${of}`
   const result = run.results[figure]
   if (typeof result?.value === 'number') return null
   return result?.reason?.text ?? `no ${RESULTS[figure].label}`
 }
 
-const candidatesOf = (runs: readonly ComparableRun[], { of }: ComparisonQuery, figure: ComparedFigure): Candidate[] =>
+const candidatesOf = (runs: readonly ComparableRun[], { of, figure, treatmentOf }: Ask): Candidate[] =>
   runs.flatMap((run) => {
     const value = run.results[figure]?.value
     if (typeof value !== 'number') return []
-    return [{ id: String(run.number), treatment: treatmentOf(run, of)!, value, ...sharedBy(run, of) }]
+    return [{ id: String(run.number), treatment: treatmentOf(run)!, value, ...sharedBy(run, of) }]
   })
 
 /** What a run shares with others: its day and plot, with the machine that is not being compared. */
@@ -123,7 +125,7 @@ function besideOf(runs: readonly ComparableRun[], proposal: Proposal, query: Com
 
 function toRun(
   run: ComparableRun,
-  { of }: ComparisonQuery,
+  { of, treatmentOf }: Ask,
   keys: readonly ComparedFigure[],
   leftOut: string | null,
   proposal: Proposal,
@@ -135,7 +137,7 @@ function toRun(
   })
   return {
     number: run.number,
-    treatment: treatmentOf(run, of) ?? '',
+    treatment: treatmentOf(run) ?? '',
     block: proposal.block === null ? null : shared[proposal.block],
     trialDate: run.trialDate,
     place: run.place?.name ?? '',

@@ -41,13 +41,19 @@ const SIDES: Record<ComparisonFilter, (run: ComparableRun) => Side | null> = {
   season: (run) => plain(seasonOf(run.trialDate)),
 }
 
-/** What a run is compared by; null where the record does not say. */
-export function treatmentOf(run: ComparableRun, of: ComparedThing): string | null {
-  if (of === 'tractor' || of === 'implement') {
+/** What a run is compared by; null where the record does not say. Machines of one name are told apart by their numbers. */
+export function treatmentsBy(of: ComparedThing, book: readonly ComparableRun[]): (run: ComparableRun) => string | null {
+  if (of !== 'tractor' && of !== 'implement') return (run) => SIDES[of](run)?.words ?? null
+  const idsOf = new Map<string, Set<string>>()
+  for (const run of book) {
     const row = run[of]
-    return row && `${row.name}`
+    if (row) idsOf.set(row.name, (idsOf.get(row.name) ?? new Set()).add(row.id))
   }
-  return SIDES[of](run)?.words ?? null
+  return (run) => {
+    const row = run[of]
+    if (!row) return null
+    return idsOf.get(row.name)!.size > 1 ? `${row.name}, no. ${row.number}` : row.name
+  }
 }
 
 /** Every filter's values with how many runs of the whole book have them, most first. */
