@@ -17,6 +17,7 @@ import { RateLimits1764590100000 } from './migrations/0002-rate-limits.ts'
 import { Interface1764590200000 } from './migrations/0003-interface.ts'
 import { Exclusions1764590300000 } from './migrations/0004-exclusions.ts'
 import { Limits1764590400000 } from './migrations/0005-limits.ts'
+import { Leaves1764590500000 } from './migrations/0006-leaves.ts'
 import { SnakeNaming } from './naming.ts'
 
 /** A transaction, or the pool itself: what every repository function takes first. */
@@ -53,7 +54,14 @@ export function createDataSource(url: string, options: { poolSize?: number } = {
       MailEntity,
       TrailEntity,
     ],
-    migrations: [Book1764590000000, RateLimits1764590100000, Interface1764590200000, Exclusions1764590300000, Limits1764590400000],
+    migrations: [
+      Book1764590000000,
+      RateLimits1764590100000,
+      Interface1764590200000,
+      Exclusions1764590300000,
+      Limits1764590400000,
+      Leaves1764590500000,
+    ],
     namingStrategy: new SnakeNaming(),
     synchronize: false,
     poolSize: options.poolSize ?? 10,

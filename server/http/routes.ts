@@ -6,6 +6,7 @@ import { downloadRoutes } from '../features/downloads/downloads.routes.ts'
 import { healthRoutes } from '../features/health/health.routes.ts'
 import { landUnitRoutes } from '../features/land-units/land-units.routes.ts'
 import { layoutRoutes } from '../features/layouts/layouts.routes.ts'
+import { leafRoutes } from '../features/leaves/leaves.routes.ts'
 import { mailRoutes } from '../features/mails/mails.routes.ts'
 import { recordRoutes } from '../features/records/records.routes.ts'
 import { registerRoutes } from '../features/registers/registers.routes.ts'
@@ -34,6 +35,7 @@ const routes: readonly Route[] = [
   ...layoutRoutes,
   ...sheetRoutes,
   ...recordRoutes,
+  ...leafRoutes,
   ...ruleRoutes,
   ...comparisonRoutes,
   ...downloadRoutes,

@@ -1,13 +1,14 @@
 import { createTransport } from 'nodemailer'
 import { TransientError, UserError } from '../../shared/errors.ts'
 
-/** One mail of ours: plain text, one receiver. */
+/** One mail of ours: plain text, one receiver, at times with a document. */
 export interface Mail {
   to: string
   subject: string
   text: string
   /** Makes a repeated send recognisable to the receiver's mail program; an address without brackets. */
   messageId?: string
+  attachment?: { filename: string; content: Buffer }
 }
 
 /** Hands mails to one SMTP server. */
@@ -30,9 +31,13 @@ export function createMailer(smtpUrl: string, from: string): Mailer {
   const transport = createTransport(connection(new URL(smtpUrl)))
   return {
     async send(mail) {
-      const envelope = { from, to: mail.to, subject: mail.subject, text: mail.text }
+      const { to, subject, text, messageId, attachment } = mail
       try {
-        await transport.sendMail(mail.messageId === undefined ? envelope : { ...envelope, messageId: `<${mail.messageId}>` })
+        await transport.sendMail({
+          ...{ from, to, subject, text },
+          ...(messageId === undefined ? {} : { messageId: `<${messageId}>` }),
+          ...(attachment ? { attachments: [attachment] } : {}),
+        })
       } catch (cause) {
         throw classify(mail.to, cause)
       }

@@ -5,7 +5,12 @@ import { idSchema, nameSchema } from './user.ts'
 export const RUNS_MAX = 12
 export const TRIALS_MAX = 24
 
-export const farmerSchema = z.object({ name: nameSchema, phone: z.string().trim().max(30).default('') })
+export const farmerSchema = z.object({
+  name: nameSchema,
+  phone: z.string().trim().max(30).default(''),
+  /** Where the leaf goes. */
+  email: z.union([z.literal(''), z.email('An e-mail address has the form name@place.example.')]).optional(),
+})
 
 export const saveTrialSchema = z.object({
   tractorId: idSchema,

@@ -42,6 +42,8 @@ export const recordRowSchema = z.object({
 export type RecordRow = z.infer<typeof recordRowSchema>
 
 export const recordSchema = recordRowSchema.extend({
+  /** The run it was planned as; null for a sheet without a plan. */
+  run: z.object({ plot: z.string(), number: z.number().int() }).nullable(),
   readings: z.array(readingSchema),
   notes: z.array(doubtSchema),
   facts: z.record(z.string(), z.unknown()),

@@ -205,6 +205,15 @@ export const ACCESS: Record<string, Rule> = {
     butAnswers: [409],
   },
 
+  'GET /records/:number/leaf.pdf': { may: 'signed in', object: true, path: (own) => `/records/${own.recordNumber}/leaf.pdf` },
+  'GET /records/:number/leaf': { may: 'signed in', object: true, path: (own) => `/records/${own.recordNumber}/leaf` },
+  'POST /records/:number/leaf': {
+    may: ['demonstrator', 'admin'],
+    object: true,
+    path: (own) => `/records/${own.recordNumber}/leaf`,
+    butAnswers: [409],
+  },
+
   'GET /changes': { may: BOOK, token: 'changes' },
   'GET /webhooks': { may: MAKERS, token: 'webhooks' },
   'POST /webhooks': {

@@ -1,7 +1,10 @@
-/** Hands one mail to the mail server. */
-import type { DataSource } from '../../server/db/database.ts'
+/** Hands one mail to the mail server; a leaf is printed at that moment, so no copy of it lies anywhere. */
+import type { DataSource, Db } from '../../server/db/database.ts'
+import { findLeaf } from '../../server/db/desk/leaf-content.ts'
+import { findLeafOfMail } from '../../server/db/repositories/leaf.ts'
 import { findQueuedMail, markMailFailed, markMailSent, noteMailTrouble } from '../../server/db/repositories/mail-sending.ts'
-import type { Mailer } from '../../server/mail/mailer.ts'
+import type { Mail, Mailer } from '../../server/mail/mailer.ts'
+import { printLeaf } from '../../server/print/leaf-pdf.ts'
 import { UserError } from '../../shared/errors.ts'
 import { defineJob, type JobEnd, type JobHandler } from './job-handler.ts'
 
@@ -19,7 +22,7 @@ export function mailSendJob({ source, mailer }: MailSendDeps): JobHandler {
       const { recipient: to, subject, body: text } = mail
       try {
         // A worker that dies between handing over and noting it hands over twice; the same id lets mail programs show one.
-        await mailer.send({ to, subject, text, messageId: `${mailId}@sheafbook` })
+        await mailer.send({ to, subject, text, messageId: `${mailId}@sheafbook`, ...(await enclosed(source.manager, mailId)) })
       } catch (cause) {
         if (cause instanceof UserError) {
           await markMailFailed(source.manager, mailId, cause.message)
@@ -33,4 +36,13 @@ export function mailSendJob({ source, mailer }: MailSendDeps): JobHandler {
     },
     giveUp: ({ mailId }) => markMailFailed(source.manager, mailId, null),
   })
+}
+
+/** @throws UserError when consent was withdrawn since the mail was written */
+async function enclosed(db: Db, mailId: string): Promise<Pick<Mail, 'attachment'>> {
+  const of = await findLeafOfMail(db, mailId)
+  if (!of) return {}
+  const leaf = await findLeaf(db, of.number, of.version)
+  if (!leaf?.farmer) throw new UserError('conflict', 'Consent was withdrawn before it went out.')
+  return { attachment: { filename: `leaf-${of.number}.pdf`, content: await printLeaf(leaf.content) } }
 }

@@ -12,6 +12,10 @@ export class FarmerEntity {
   @Column({ type: 'text' })
   phone!: string
 
+  /** Where the leaf goes; empty where none was given. */
+  @Column({ type: 'text', default: '' })
+  email!: string
+
   @Column({ type: 'timestamptz', insert: false })
   createdAt!: Date
 }

@@ -15,7 +15,7 @@ export async function changeFarmer(db: Db, id: string, farmer: Farmer): Promise<
 
 export async function findFarmer(db: Db, id: string): Promise<Farmer | null> {
   const row = await db.findOneBy(FarmerEntity, { id })
-  return row && { name: row.name, phone: row.phone }
+  return row && { name: row.name, phone: row.phone, email: row.email }
 }
 
 /** The demonstrations that named them keep standing, without a name. */

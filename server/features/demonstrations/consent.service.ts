@@ -6,6 +6,7 @@ import type { Db } from '../../db/database.ts'
 import { changeDemonstration, findDemonstrationRow } from '../../db/repositories/demonstration.ts'
 import { findFarmer, removeFarmer } from '../../db/repositories/farmer.ts'
 import { hasOpenPages, listKeptFiles } from '../../db/repositories/kept-picture.ts'
+import { eraseLeafMails } from '../../db/repositories/leaf.ts'
 import type { Deps } from '../../http/route.ts'
 import { blankPictures } from '../../print/blank-pictures.ts'
 import { writeTrail } from '../trail/trail.service.ts'
@@ -35,10 +36,11 @@ export async function withdrawConsent(deps: Deps, actor: User, id: string, reaso
       )
     }
     await removeFarmer(tx, farmerId)
+    await eraseLeafMails(tx, id)
     await blanked.write(tx)
     const { pages, replaced, removed } = blanked
     const text = [
-      `Consent withdrawn (“${reason}”): name and phone erased; pictures blanked: ${pages}, not placed and removed: ${removed}`,
+      `Consent withdrawn (“${reason}”): name, phone and e-mail erased; pictures blanked: ${pages}, not placed and removed: ${removed}`,
       `originals replaced by their blanked pages: ${replaced}`,
     ].join('; ')
     const details = { farmer: { salt, sha256: hash }, pages, replaced, removed }

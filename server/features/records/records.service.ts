@@ -4,6 +4,7 @@ import type { ListRecords, TrialRecord } from '../../../shared/schemas/record.ts
 import type { User } from '../../../shared/schemas/user.ts'
 import { findRecordRow, listRecordRows, type RecordFilter } from '../../db/desk/record-rows.ts'
 import { historyOf, listPages, namesOf } from '../../db/desk/sheet-detail.ts'
+import { findPlannedRun } from '../../db/repositories/planned-run.ts'
 import { challengeRecord, findRecord, listVersions } from '../../db/repositories/record.ts'
 import { findSheet, noteOnSheet } from '../../db/repositories/sheet.ts'
 import { addTrailLine } from '../../db/repositories/trail.ts'
@@ -33,8 +34,10 @@ export async function getRecord(deps: Deps, actor: User, number: number, version
   const versions = await listVersions(db, number)
   const names = await namesOf(db, [record.challengedBy, ...versions.map((v) => v.enteredBy)])
   const challenged = record.challengedBy && record.challengedAt && record.challengeReason
+  const run = await findPlannedRun(db, record.sheetId)
   return {
     ...row,
+    run: run && { plot: run.plot, number: run.number },
     readings: record.readings,
     notes: record.notes,
     facts: record.facts,

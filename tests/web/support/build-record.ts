@@ -36,6 +36,7 @@ export function buildRecord(
     tractor: { id: id(12), number: 12, name: 'Tarn 50' },
     implement: { id: id(31), number: 31, name: 'two-bottom plough', operation: 'plough' },
     gear: 'L3',
+    run: { plot: 'upper, by the ditch', number: 2 },
     soilClass: 'medium',
     results,
     readings,
