@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { triangleArea } from '../../shared/trial/area.ts'
 import { metres } from '../../shared/trial/quantity.ts'
 import { type Peg, pegsOf } from '../../web/features/record/plot-shape.ts'
-import { axisAround } from '../../web/features/record/tape-axis.ts'
+import { axisAround } from '../../web/ui/plot/tape-axis.ts'
 
 const between = (a: Peg | undefined, b: Peg | undefined) => Math.hypot((a?.x ?? 0) - (b?.x ?? 0), (a?.y ?? 0) - (b?.y ?? 0))
 

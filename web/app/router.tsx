@@ -27,6 +27,7 @@ export const routes: RouteObject[] = [
           { path: paths.send.pattern, lazy: onDemand(() => import('./routes/send.tsx')) },
           { path: paths.mySheets.pattern, lazy: onDemand(() => import('./routes/my-sheets.tsx')) },
           { path: paths.mySheet.pattern, lazy: onDemand(() => import('./routes/my-sheet.tsx')) },
+          { path: paths.sheetReadOut.pattern, lazy: onDemand(() => import('./routes/read-out.tsx')) },
           { path: paths.desk.pattern, lazy: onDemand(() => import('./routes/desk-list.tsx')) },
           { path: paths.deskSheet.pattern, lazy: onDemand(() => import('./routes/desk-sheet.tsx')) },
           ...officeRoutes,

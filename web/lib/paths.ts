@@ -21,6 +21,8 @@ export const paths = {
     pattern: '/book/:number',
     to: (number: number, version?: number) => `/book/${number}${version === undefined ? '' : `?version=${version}`}`,
   },
+  readOut: { pattern: '/book/:number/read-out', to: (number: number) => `/book/${number}/read-out` },
+  sheetReadOut: { pattern: '/sheets/:id/read-out', to: (id: string) => `/sheets/${id}/read-out` },
   compare: { pattern: '/compare', to: () => '/compare' },
   registers: { pattern: '/registers', to: () => '/registers' },
   register: { pattern: '/registers/:name', to: (name: string) => `/registers/${name}` },

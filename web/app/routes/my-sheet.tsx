@@ -24,9 +24,21 @@ export function Component() {
       over={<span className={sheet.data.code ? 'figures' : ''}>{name}</span>}
       sentence={what || name}
       aside={
-        <Link className="word" to={paths.mySheets.to()}>
-          My sheets
-        </Link>
+        <>
+          {sheet.data.readings.length > 0 && (
+            <Link className="word" to={paths.sheetReadOut.to(id)}>
+              Read-out
+            </Link>
+          )}
+          {sheet.data.recordNumber !== null && (
+            <Link className="word" to={paths.record.to(sheet.data.recordNumber)}>
+              Record and leaf
+            </Link>
+          )}
+          <Link className="word" to={paths.mySheets.to()}>
+            My sheets
+          </Link>
+        </>
       }
     >
       <MySheetDetail sheet={sheet.data} />

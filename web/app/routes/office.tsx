@@ -20,5 +20,6 @@ export const officeRoutes: RouteObject[] = [
   { path: paths.tokens.pattern, lazy: onDemand(() => import('./tokens.tsx')) },
   { path: paths.webhooks.pattern, lazy: onDemand(() => import('./webhooks.tsx')) },
   { path: paths.trail.pattern, lazy: onDemand(() => import('./trail.tsx')) },
+  { path: paths.readOut.pattern, lazy: onDemand(() => import('./read-out.tsx')) },
   { path: paths.record.pattern, lazy: onDemand(() => import('./record.tsx')) },
 ]

@@ -4,6 +4,7 @@ import { findLayout } from '../../../shared/layouts/registry.ts'
 import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { TrialRecord } from '../../../shared/schemas/record.ts'
 import { bookQueries, filtersOf, useChallenge } from '../../features/book/book.queries.ts'
+import { LeafSection } from '../../features/leaf/components/leaf-section.tsx'
 import { Budget } from '../../features/record/components/budget.tsx'
 import { ChallengeForm } from '../../features/record/components/challenge-form.tsx'
 import { Depths } from '../../features/record/components/depths.tsx'
@@ -50,7 +51,8 @@ function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
   const challenge = useChallenge(record.number)
   const others = useOtherRuns(record)
   const layout = findLayout(record.layout, record.layoutVersion)
-  const where = [record.place.name, record.trialDate ? dateText(record.trialDate) : ''].filter(Boolean).join(', ')
+  const run = record.run && `plot ${record.run.plot}, run ${record.run.number}`
+  const where = [record.place.name, record.trialDate && dateText(record.trialDate), run].filter(Boolean).join(', ')
   if (!layout) return <Page title={title}>The layout {record.layout} is not known to this page.</Page>
   const sources = sourcesOf(record, layout)
   const figure = record.results.l_per_ha
@@ -60,6 +62,11 @@ function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
       title={title}
       over={<Entered record={record} title={title} />}
       sentence={`${record.tractor.name} with ${record.implement.name}, ${where}`}
+      aside={
+        <Link className="word" to={paths.readOut.to(record.number)}>
+          Read-out
+        </Link>
+      }
     >
       {record.challenge && (
         <p className="border-b border-line bg-straw-pale px-margin py-1">
@@ -75,6 +82,11 @@ function RecordPage({ record, title }: { record: TrialRecord; title: string }) {
         </div>
         <div>
           <Budget sources={sources} />
+          <LeafSection
+            number={record.number}
+            version={record.version}
+            maySend={me.role === 'demonstrator' || me.role === 'admin'}
+          />
           <RecordNotes record={record} layout={layout} />
           <RecordHistory history={record.history} />
           {mayChallenge && (

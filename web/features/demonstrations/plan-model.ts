@@ -27,7 +27,7 @@ export const blankPlan = (demonstratorId: string): SaveDemonstration => ({
   placeId: '',
   demonstratorId,
   driver: '',
-  farmer: { name: '', phone: '' },
+  farmer: { name: '', phone: '', email: '' },
   trials: [blankTrial],
 })
 

@@ -104,9 +104,17 @@ export function PlanForm({ begin, choices, farmerKnown, pending, error, saveWord
                 label="Phone"
                 type="tel"
                 autoComplete="off"
-                hint="Name and phone are kept apart from the trial, and erased when the farmer withdraws consent."
+                hint="Name, phone and e-mail are kept apart from the trial, and erased when the farmer withdraws consent."
                 error={errors.farmer?.phone?.message}
                 {...register('farmer.phone')}
+              />
+              <Field
+                label="E-mail"
+                type="email"
+                autoComplete="off"
+                hint="The leaf with the result goes here, if the farmer agrees on the sheet to be called. Leave empty if there is none."
+                error={errors.farmer?.email?.message}
+                {...register('farmer.email')}
               />
             </div>
           ) : (

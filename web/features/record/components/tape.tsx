@@ -1,7 +1,7 @@
 import { Link } from 'react-router-dom'
 import { roundByUncertainty } from '../../../../shared/trial/format.ts'
 import { paths } from '../../../lib/paths.ts'
-import { type Axis, axisAround } from '../tape-axis.ts'
+import { type Axis, axisAround } from '../../../ui/plot/tape-axis.ts'
 
 export interface OtherRun {
   number: number
