@@ -17,7 +17,7 @@ export function TickList({ legend, ticks, error, field }: TickListProps) {
       <div className="clear-both flex flex-col">
         {ticks.map(({ value, words }) => (
           <label key={value} className="flex min-h-[30px] items-center gap-1 max-sm:min-h-[44px]">
-            <input type="checkbox" className="size-[20px]" value={value} {...field} />
+            <input type="checkbox" className="size-[20px] shrink-0" value={value} {...field} />
             {words}
           </label>
         ))}

@@ -1,5 +1,6 @@
 import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
+import { TOKEN_LIMITS } from '../../../shared/schemas/token.ts'
 import { RouteEntry } from '../../features/interface/components/route-entry.tsx'
 import { interfaceQueries } from '../../features/interface/interface.queries.ts'
 import { type ApiDocument, nounsOf } from '../../features/interface/interface-model.ts'
@@ -49,7 +50,7 @@ function Guide({ document, all }: { document: ApiDocument; all: boolean }) {
       <div className="max-w-[720px]">
         <p>{document.info.description}</p>
         <p className="mt-1">
-          A token may be used 600 times a minute. A refusal answers with its reason:{' '}
+          A token may be used {TOKEN_LIMITS.calls_per_min} times a minute. A refusal answers with its reason:{' '}
           {'{ error: { code, message, issues?, requestId } }'}. To keep a copy of the book, ask for the changes after the last
           position seen, again and again; nothing comes late.
         </p>

@@ -25,7 +25,7 @@ function TokensPage() {
   const tokens = useQuery(tokenQueries.list())
   const revoke = useRevokeToken()
   const live = tokens.data?.filter(isLive).length ?? 0
-  const said = tokens.data ? `${counted(live, 'token')} of yours ${live === 1 ? 'is' : 'are'} worth something.` : 'Your tokens.'
+  const said = tokens.data ? `${counted(live, 'token')} of yours ${live === 1 ? 'is' : 'are'} in use.` : 'Your tokens.'
   return (
     <Page
       title="Tokens"

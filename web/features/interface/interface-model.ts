@@ -73,7 +73,7 @@ export function kindOf(schema: JsonSchema | undefined): string {
   if (Array.isArray(schema.type)) return [...new Set(schema.type.map((type) => kindOf({ ...schema, type })))].join(' or ')
   if (schema.type === 'array') return `list of ${kindOf(schema.items)}`
   const word = KINDS[schema.type ?? ''] ?? 'anything'
-  return schema.format ? `${word} (${schema.format})` : word
+  return schema.format && schema.type !== 'null' ? `${word} (${schema.format})` : word
 }
 const KINDS: Record<string, string> = {
   string: 'text',

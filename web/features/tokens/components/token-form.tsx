@@ -35,7 +35,7 @@ export function TokenForm({ onMade, onLeave }: { onMade: (token: CreatedToken) =
           {...form.register('name')}
         />
         <Field
-          label="Worth something for"
+          label="Runs out after"
           unit="days"
           inputMode="numeric"
           hint="1 to 366."

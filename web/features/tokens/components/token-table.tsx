@@ -17,7 +17,7 @@ export function TokenTable({ tokens, onRevoke }: { tokens: readonly ApiToken[]; 
     { key: 'name', head: 'what it is for', stack: 'lead', cell: (t) => t.name },
     { key: 'ending', head: 'ends with', tight: true, stack: 'named', cell: (t) => <span className="figures">…{t.ending}</span> },
     { key: 'scopes', head: 'it may', stack: 'named', cell: (t) => t.scopes.join(', ') },
-    { key: 'state', head: 'worth something', tight: true, stack: 'named', cell: stateOf },
+    { key: 'state', head: 'in use', tight: true, stack: 'named', cell: stateOf },
     {
       key: 'used',
       head: 'last used',
