@@ -99,7 +99,7 @@ export interface Registered {
 }
 
 const ROUNDS = 7
-const STILL_MODULES = 0.002
+const STILL_MODULES = 0.008
 
 /** The eight unknowns of one round; null when the picture does not fix them. */
 function solveRound(grey: Grey, { side, rows, normal }: Pattern, h: Homography): Float64Array | null {
