@@ -104,7 +104,7 @@ function Gap({ unit, gap, onGap }: { unit: string; gap: string; onGap: (gap: str
       <input
         id={id}
         inputMode="decimal"
-        className={`${CELL} figures w-[160px] max-sm:w-full`}
+        className={`${CELL} figures w-[160px] placeholder:text-graphite placeholder:opacity-100 max-sm:w-full`}
         defaultValue={gap}
         placeholder="the ± of a run"
         onBlur={(event) => event.target.value !== gap && onGap(event.target.value)}
