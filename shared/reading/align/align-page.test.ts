@@ -1,9 +1,12 @@
 import { expect, test } from 'vitest'
+import { cellBounds } from '../../layouts/geometry.ts'
 import { LAYOUTS } from '../../layouts/registry.ts'
 import { fitHomography, invert, project } from '../geometry/homography.ts'
+import { ResidualField } from '../geometry/residual-field.ts'
 import { paperLevel } from '../pixels/paper.ts'
 import { drawGrey, layoutRects } from '../testing/draw.ts'
 import { alignPage } from './align-page.ts'
+import { isTraced } from './trace-rules.ts'
 
 const SIZE = { width: 1400, height: 1900 }
 
@@ -57,5 +60,18 @@ test.each(LAYOUTS)('$key $version: every field of a tilted page with waves of 1.
     const truth = project(h, center.x + d.dx, center.y + d.dy)
     const own = project(alignment.homography, center.x + displacement.dx, center.y + displacement.dy)
     expect(Math.hypot(own.x - truth.x, own.y - truth.y) / 5.8, `${part.key} ${part.part}`).toBeLessThan(0.12)
+  }
+  const field = new ResidualField(alignment.anchors)
+  for (const cell of layout.cells.filter(({ kind }) => kind === 'signature')) {
+    const { x, y, width, height } = cellBounds(cell)
+    const line = { y: y + height, left: x, right: x + width }
+    expect(isTraced(alignment.anchors, line), cell.key).toBe(true)
+    for (const at of [line.left, line.right]) {
+      const d = wave(at, line.y)
+      const truth = project(h, at + d.dx, line.y + d.dy)
+      const seen = field.at({ x: at, y: line.y })
+      const own = project(alignment.homography, at + seen.dx, line.y + seen.dy)
+      expect(Math.abs(own.y - truth.y) / 5.8, `line of ${cell.key}`).toBeLessThan(0.2)
+    }
   }
 })

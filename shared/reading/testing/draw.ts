@@ -1,6 +1,6 @@
 /** Synthetic paper for tests: what is printed of a layout, drawn by its own numbers onto a grey raster through any map. */
-import { boxesOf, layComb } from '../../layouts/geometry.ts'
-import { BOX, type CombCell, isComb, type Layout, TICK } from '../../layouts/layout.ts'
+import { boxesOf, cellBounds, layComb } from '../../layouts/geometry.ts'
+import { BOX, type CombCell, isComb, type Layout, type LayoutCell, TICK } from '../../layouts/layout.ts'
 import type { Grey, Point } from '../pixels/grey.ts'
 
 interface Rect {
@@ -43,7 +43,13 @@ export function tickRects(x: number, y: number): Rect[] {
   ]
 }
 
-/** Fields, squares and section rules of a layout; no words. */
+/** The line under a signature or remarks. */
+function baselineRect(cell: LayoutCell): Rect {
+  const { x, y, width, height } = cellBounds(cell)
+  return { x, y: y + height - 0.1, width, height: 0.2, darkness: 0.9 }
+}
+
+/** Fields, squares, section rules and lines to write on of a layout; no words. */
 export function layoutRects(layout: Layout): Rect[] {
   return [
     ...layout.cells.flatMap((cell) =>
@@ -51,7 +57,7 @@ export function layoutRects(layout: Layout): Rect[] {
         ? combRects(cell)
         : cell.kind === 'tick' || cell.kind === 'choice'
           ? boxesOf(cell).flatMap((b) => tickRects(b.x, b.y))
-          : [],
+          : [baselineRect(cell)],
     ),
     ...layout.squares.map((s) => ({ x: s.x, y: s.y, width: s.size, height: s.size, darkness: 1 })),
     ...layout.sections.map((s) => ({ x: 14, y: s.y - 0.25, width: layout.page.width - 28, height: 0.5, darkness: 0.9 })),
