@@ -42,6 +42,8 @@ export type Tie =
   | { kind: 'near'; keys: readonly string[]; share?: number; amount?: number }
   /** A row of repeats: each lies within `share` of the middle of the others, or `amount`; likely, and no proof of any. */
   | { kind: 'alike'; keys: readonly string[]; share?: number; amount?: number }
+  /** `key` is about `product` over `by`, within `share` of it (passes, from breadth and width); likely, and no proof. */
+  | { kind: 'quotient'; key: string; product: string; by: string; share: number }
   /** An instrument's marks: values are multiples of `step`, sometimes of `half`, rarely anything else. */
   | { kind: 'marks'; keys: readonly string[]; step: number; half?: number }
 

@@ -43,6 +43,8 @@ export const tillageTies: ReadonlyArray<Tie> = [
   { kind: 'alike', keys: numbered('width_m', 5), share: 0.12 },
   { kind: 'alike', keys: ['side_ab_m', 'side_cd_m'], share: 0.3 },
   { kind: 'alike', keys: ['side_bc_m', 'side_da_m'], share: 0.3 },
+  // Rule on passes: passes times width is the breadth to within a tenth.
+  { kind: 'quotient', key: 'pass_count', product: 'side_bc_m', by: 'width_mean_written_m', share: 0.1 },
   { kind: 'not-less', greater: 'rpm_noload', less: 'rpm_load', usual: 600 },
   {
     kind: 'near',

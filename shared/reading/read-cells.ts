@@ -155,8 +155,12 @@ function withPlace({ cell, ends, fit_mm, hasFrame, seen: framed }: PlacedCell, w
     quad: quadOf(cell, ends),
     fit_mm,
   }
-  if (hasFrame && (fit_mm === null || fit_mm > FIT_LIMIT_MM)) {
-    const how = fit_mm === null ? 'were not found' : `stand ${fit_mm.toFixed(1)} mm from where the boxes around put them`
+  // A field placed by its neighbours alone may lie elsewhere; and bright light takes frame and ink alike, so that nothing shows.
+  if (hasFrame && (!framed || fit_mm === null || fit_mm > FIT_LIMIT_MM)) {
+    const how =
+      fit_mm !== null && framed
+        ? `stand ${fit_mm.toFixed(1)} mm from where the boxes around put them`
+        : 'were not found, so they may lie elsewhere'
     reading.state = 'in doubt'
     reading.reasons.push({ rule: 'R07', text: `The printed boxes of ${cell.label} ${how}.`, cells: [cell.key] })
   }
@@ -164,11 +168,6 @@ function withPlace({ cell, ends, fit_mm, hasFrame, seen: framed }: PlacedCell, w
     reading.state = 'in doubt'
     const text = `The printed box of ${cell.label} hardly shows in the photo, so ink in it might not show either.`
     reading.reasons.push({ rule: 'R07', text, cells: [cell.key] })
-  }
-  // Bright light takes frame and ink alike: what shows no frame is not known to be empty.
-  if (hasFrame && !framed && (weighed.value === null || weighed.value === false)) {
-    reading.state = 'in doubt'
-    reading.reasons.push({ rule: 'R07', text: `Neither ink nor frame of ${cell.label} can be seen.`, cells: [cell.key] })
   }
   return reading
 }

@@ -4,7 +4,6 @@ import type { TickDist } from '../classes.ts'
 import {
   CLEAR,
   CLEAR_BESIDE_A_WRONG_SUM,
-  CLEAR_TIED,
   DIGIT_ALLOWED,
   GAP_DOUBT,
   INK_ALLOWS,
@@ -40,12 +39,10 @@ const said = (value: Value) => (value === null ? 'blank' : String(value))
 export function decideComb(
   variable: Variable,
   posterior: Float64Array | null,
-  tied: boolean,
   unjudged: boolean,
   wrongSums: ReadonlyArray<WrongSum>,
 ): Weighed {
   const p = posterior ?? Float64Array.from(variable.options.map((o) => o.weight))
-  const clear = tied ? CLEAR_TIED : CLEAR
   const best = argMax(variable.options, (_, k) => p[k]!)
   const byInk = argMax(variable.options, (o) => o.ink)
   const value = variable.options[best]!
@@ -58,17 +55,17 @@ export function decideComb(
   if (variable.spoiled >= VOID_DOUBT) add('R01', `A box of ${variable.label} looks crossed out or written over.`)
   if (variable.gap >= GAP_DOUBT) add('Q55', `${variable.label} seems to have an empty box between or after its digits.`)
   // Plain ink stands by itself, but for the result of a sum that nobody has added up.
-  if (unjudged || (posterior === null && p[best]! < clear))
+  if (unjudged || (posterior === null && p[best]! < CLEAR))
     add('R05', `${variable.label} was not weighed against the sheet's sums: there were too many ways to read them.`)
   // Plain ink whose sum does not hold is no question of reading: the wrong sum is the reason.
-  const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= clear
+  const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= CLEAR
   const inkFavours = value !== inkBest && value.ink < INK_UNDECIDED * inkBest.ink
   if (inkFavours) {
     add(
       'R03',
       `The ink of ${variable.label} reads ${said(inkBest.value)} (${percent(inkBest.ink)}); what else is known speaks for ${said(value.value)} (${percent(p[best]!)}).`,
     )
-  } else if (!explained && (p[best]! < clear || value.weakest < DIGIT_ALLOWED)) {
+  } else if (!explained && (p[best]! < CLEAR || value.weakest < DIGIT_ALLOWED)) {
     add('R02', unsure(variable, p))
   }
   for (const sum of wrongSums) {

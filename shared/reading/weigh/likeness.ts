@@ -1,4 +1,4 @@
-/** Readings of like things lie near each other: how much less likely they are apart, and what repeats say of one among them. */
+/** Readings of like things lie near each other: how much less likely they are apart, and what others lead one to expect. */
 import type { Tie } from '../../layouts/tie.ts'
 import { APART, SURE_NEIGHBOUR } from './thresholds.ts'
 import type { Option, Variable } from './variable.ts'
@@ -15,40 +15,46 @@ export function likeness(value: number, other: number, { share = 0, amount }: Wi
   const window = amount ?? share * Math.max(Math.abs(value), Math.abs(other))
   if (window <= 0) return value === other ? 1 : APART
   const off = ((value - other) / window) * WINDOW_SPANS
-  return Math.max(APART / 10, (1 + (off * off) / FREEDOM) ** (-(FREEDOM + 1) / 2))
+  return Math.max(APART, (1 + (off * off) / FREEDOM) ** (-(FREEDOM + 1) / 2))
 }
 
 /** Needed for a median that one odd reading cannot pull away. */
 const ENOUGH = 3
 
 /**
- * Weighs each of a row of repeats by the median of those others that are sure alone. A prior within the reading, not a tie: what
- * the repeats say is never passed on, so it closes no ring and proves nothing.
+ * Weighs readings by what those around them that are sure alone lead one to expect: repeats by the middle of the others, a quotient
+ * by its parts. Priors within the reading, not ties: what they say is never passed on, so they close no ring and prove nothing.
  */
-export function weighRepeats(variables: readonly Variable[], ties: ReadonlyArray<Tie>): void {
+export function weighByNeighbours(variables: readonly Variable[], ties: ReadonlyArray<Tie>): void {
   const byKey = new Map(variables.map((v) => [v.key, v]))
+  // All are looked at before any is weighed, so that none speaks for itself by way of another.
+  const sure = new Map(variables.map((v) => [v.key, sureValue(v)]))
+  const sureAmong = (keys: readonly string[]) => keys.flatMap((key) => sure.get(key) ?? []).sort((a, b) => a - b)
+  const expect = (key: string, value: number, window: Window) => {
+    const variable = byKey.get(key)
+    if (variable) reweigh(variable, value, window)
+  }
   for (const tie of ties) {
-    if (tie.kind !== 'alike') continue
-    const own = tie.keys.flatMap((key) => byKey.get(key) ?? [])
-    const counts = own.map(sureCount)
-    own.forEach((variable, i) => {
-      const others = counts.filter((count, k): count is number => k !== i && count !== null).sort((a, b) => a - b)
-      if (others.length < Math.min(ENOUGH, tie.keys.length - 1)) return
-      const unit = 10 ** variable.places
-      const middle = others[others.length >> 1]! / unit
-      reweigh(variable, (count) => likeness(count / unit, middle, tie))
-    })
+    if (tie.kind === 'alike') {
+      for (const key of tie.keys) {
+        const others = sureAmong(tie.keys.filter((other) => other !== key))
+        if (others.length >= Math.min(ENOUGH, tie.keys.length - 1)) expect(key, others[others.length >> 1]!, tie)
+      }
+    } else if (tie.kind === 'quotient') {
+      const [product, by] = [sure.get(tie.product), sure.get(tie.by)]
+      if (product && by) expect(tie.key, product / by, tie)
+    }
   }
 }
 
-function sureCount({ options }: Variable): number | null {
+function sureValue({ options, places }: Variable): number | null {
   const best = options[0]
-  return best && best.weight >= SURE_NEIGHBOUR ? best.count : null
+  return best && best.count !== null && best.weight >= SURE_NEIGHBOUR ? best.count / 10 ** places : null
 }
 
 /** Brings in a prior; what is no option keeps its share beside what the ink reads best. */
-function reweigh(variable: Variable, prior: (count: number) => number): void {
-  const of = ({ count }: Option) => (count === null ? 1 : prior(count))
+function reweigh(variable: Variable, expected: number, window: Window): void {
+  const of = ({ count }: Option) => (count === null ? 1 : likeness(count / 10 ** variable.places, expected, window))
   const inkBest = variable.options.reduce((top, o) => (o.ink > top.ink ? o : top))
   variable.otherWeight *= of(inkBest)
   for (const option of variable.options) option.weight *= of(option)

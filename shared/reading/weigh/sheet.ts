@@ -5,7 +5,7 @@ import type { BoxDist, TickDist } from '../classes.ts'
 import type { Budget } from './chain.ts'
 import { chosen, decideChoice, decideComb, decideTick } from './decide.ts'
 import { weighJointly } from './joint.ts'
-import { weighRepeats } from './likeness.ts'
+import { weighByNeighbours } from './likeness.ts'
 import { scaled } from './scale.ts'
 import { MOST_STEPS, SHEET_LIMIT_MS } from './thresholds.ts'
 import { compileTies } from './ties/compile.ts'
@@ -37,7 +37,7 @@ export function weighSheet(
     ...combs.map((cell) => combVariable(cell, ink.combs.get(cell.key)!, layout.ties, facts)),
     ...choices.map((cell) => choiceVariable(cell, ink.ticks.get(cell.key)!)),
   ]
-  weighRepeats(variables, layout.ties)
+  weighByNeighbours(variables, layout.ties)
   const factors = compileTies(layout.ties, variables)
   const until = now() + SHEET_LIMIT_MS
   const budget = (): Omit<Budget, 'floor'> => ({ steps: MOST_STEPS, expired: () => now() > until })
@@ -54,9 +54,8 @@ export function weighSheet(
     const failing = factors.flatMap((factor, f) =>
       factor.readings.includes(i) ? wrongSum(factor, joint.ties[f] ?? null, variables, decided, i) : [],
     )
-    const tied = factors.some((factor) => factor.readings.includes(i))
     const unjudged = factors.some((factor, f) => factor.result === i && joint.ties[f] === null)
-    out.set(variable.key, decideComb(variable, posterior, tied, unjudged, failing))
+    out.set(variable.key, decideComb(variable, posterior, unjudged, failing))
   })
   for (const cell of ticks) out.set(cell.key, decideTick(cell, ink.ticks.get(cell.key)![0]!))
   for (const cell of combs) {

@@ -22,7 +22,7 @@ const OPTIONS_OF = (variable: Variable) => {
   return out
 }
 
-/** Ties between readings; marks and repeats are weighed within their reading. A tie whose needed keys are not on the sheet is left out. */
+/** Ties between readings; marks, repeats and quotients are weighed within their reading. A tie whose needed keys are not on the sheet is left out. */
 export function compileTies(ties: ReadonlyArray<Tie>, variables: ReadonlyArray<Variable>): Factor[] {
   const places = new Map(variables.map((v, i) => [v.key, i]))
   const factors: Factor[] = []
@@ -56,6 +56,7 @@ function keysOf(tie: Tie): { keys: readonly string[]; optional: boolean; result:
     case 'near':
       return { keys: tie.keys, optional: true, result: null }
     case 'alike':
+    case 'quotient':
     case 'marks':
       return { keys: [], optional: false, result: null }
   }
@@ -80,7 +81,8 @@ function chainOf(tie: Tie, own: ReadonlyArray<Variable>): Chain {
     case 'near':
       return nearChain(tie, own)
     case 'alike':
+    case 'quotient':
     case 'marks':
-      throw new Error('Marks and repeats are weighed within their reading.')
+      throw new Error('Marks, repeats and quotients are weighed within their reading.')
   }
 }
