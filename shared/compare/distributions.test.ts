@@ -1,3 +1,5 @@
+import libraryBelow from '@stdlib/stats-base-dists-studentized-range-cdf'
+import libraryQuantile from '@stdlib/stats-base-dists-studentized-range-quantile'
 import { describe, expect, it } from 'vitest'
 import { referenceText } from '../../tests/builders/known-data.ts'
 import { fAbove, tBeyond, tCritical } from './distributions.ts'
@@ -50,6 +52,14 @@ describe('the studentized range', () => {
     expect(studentizedRangeCritical(0.05, 3, 27)).toBeCloseTo(3.5064261, 7)
     expect(studentizedRangeCritical(0.05, 5, 20)).toBeCloseTo(4.2318567, 6)
     expect(1 - studentizedRangeAbove(3.5, 3, 20)).toBeCloseTo(0.9441082, 7)
+  })
+
+  it('is our own code, since the library’s goes wrong with few degrees of freedom; with many they agree', () => {
+    expect(libraryBelow(40, 10, 1)).toBeNaN()
+    const [, , , p] = reference.rangeAbove.find(([q, k, df]) => q === 40 && k === 10 && df === 2)!
+    expect(Math.abs(1 - libraryBelow(40, 10, 2) - p!)).toBeGreaterThan(5e-4)
+    expect(studentizedRangeAbove(3.5, 3, 20)).toBeCloseTo(1 - libraryBelow(3.5, 3, 20), 9)
+    expect(studentizedRangeCritical(0.05, 5, 20)).toBeCloseTo(libraryQuantile(0.95, 5, 20), 5)
   })
 
   it('of two means is t', () => {
