@@ -18,8 +18,11 @@ export interface PlacedPart {
 
 /** Neighbours vouch for a field whose own lines are covered by ink: so many, so near, agreeing so well (median, mm). */
 const VOUCH = { count: 4, within_mm: 32, agree_mm: 0.45 } as const
-/** A field between its neighbours may be off by this much more than they are from each other. */
-const BETWEEN = 1.5
+/**
+ * A field between its neighbours may be off by so many times what they are from each other: on hard photos up to six times, where
+ * paper bends within a field's width of them.
+ */
+const BETWEEN = 4.5
 
 export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[]): PlacedPart[] {
   const byKey = new Map(marks.map((mark, i) => [mark.key, i]))
