@@ -64,11 +64,11 @@ const FLOOR = `COPY (
 
 async function measure(name: string, pieces: Pieces): Promise<void> {
   global.gc?.()
-  const rss = process.memoryUsage().rss
+  const rss = process.memoryUsage.rss()
   let most = rss
   const watch = setInterval(() => {
-    most = Math.max(most, process.memoryUsage().rss)
-  }, 20)
+    most = Math.max(most, process.memoryUsage.rss())
+  }, 100)
   const cpu = process.cpuUsage()
   const start = performance.now()
   let first: number | undefined

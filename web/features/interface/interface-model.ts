@@ -29,7 +29,6 @@ const operationSchema = z.object({
   responses: z.record(z.string(), z.object({ content: contentSchema.optional() })),
 })
 export type Operation = z.infer<typeof operationSchema>
-export type Parameter = Operation['parameters'][number]
 
 export const documentSchema = z.object({
   info: z.object({ title: z.string(), version: z.string(), description: z.string().default('') }),
