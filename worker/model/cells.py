@@ -53,7 +53,7 @@ def _across(centre_px: torch.Tensor, width_px: torch.Tensor, axis: torch.Tensor)
 
 def frames(n: int) -> tuple[torch.Tensor, torch.Tensor]:
     """Printed frame with its neighbours, heavy comb ends, points and colons: darkness [n, 40, 32] and the box's centre [n, 2]."""
-    slip = (torch.randn(n, 2) * torch.tensor([1.1, 1.1]) * (0.4 + torch.rand(n, 1))).clamp(-3.2, 3.2)
+    slip = (torch.randn(n, 2) * uniform(n, 0.2, 1.4)[:, None]).clamp(-3.2, 3.2)
     centre = torch.tensor([WIDTH_PX / 2, HEIGHT_PX / 2])[None] + slip
     half_w, half_h = uniform(n, 13.4, 14.6), uniform(n, 17.1, 18.5)
     line = uniform(n, 0.7, 1.8)
@@ -108,10 +108,10 @@ def camera(value: torch.Tensor, hardness: torch.Tensor) -> torch.Tensor:
     edge = torch.sigmoid(far / uniform(n, 0.6, 8.0)[:, None, None]) * (hardness * uniform(n, 0.0, 0.5) * _mask(n, 0.25))[:, None, None]
     slope = far / 20 * (hardness * torch.randn(n) * 0.05)[:, None, None]
     value = 1 - (1 - value) * (1 - edge) * (1 - slope)
-    gain = (1 + torch.randn(n) * (0.06 + 0.1 * hardness)).clamp(0.6, 1.5)
-    base = torch.randn(n) * (0.01 + 0.035 * hardness)
+    gain = (1 + torch.randn(n) * (0.05 + 0.08 * hardness)).clamp(0.6, 1.5)
+    base = torch.randn(n) * (0.008 + 0.03 * hardness)
     value = value * gain[:, None, None] + base[:, None, None]
-    grain = 0.006 + hardness * uniform(n, 0.0, 0.07)
+    grain = 0.006 + hardness * uniform(n, 0.0, 0.1)
     value = value + torch.randn(value.shape) * grain[:, None, None]
     # JPEG works on blocks larger than a pixel here: noise that is smooth over 2 to 4 pixels, strongest near strokes.
     ringing = (hardness * uniform(n, 0.0, 0.05))[:, None, None] * (0.4 + value.clamp(0, 1))
@@ -233,7 +233,7 @@ class Generator:
         n = len(pick)
         labels = self.labels[pick].clone()
         frame, box = frames(n)
-        height = (26.5 + torch.randn(n) * 4.5).clamp(14, 38)
+        height = (28 + torch.randn(n) * 4.5).clamp(15, 39)
         narrow = (1 + torch.randn(n) * 0.12).clamp(0.65, 1.35)
         wide = torch.rand(n)
         centre = box + torch.randn(n, 2) * torch.tensor([1.8, 2.2])
