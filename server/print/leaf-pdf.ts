@@ -3,8 +3,8 @@ import { formatSheetCode } from '../../shared/layouts/sheet-code.ts'
 import type { RecordRow } from '../../shared/schemas/record.ts'
 import { roundByUncertainty } from '../../shared/trial/format.ts'
 import { type Told, toldOf } from '../../shared/trial/told.ts'
-import { drawTape } from './leaf-tape.ts'
-import { FRAME, finish, GREY, INK, mm, newPage, STRAW, STRAW_PALE, type TextStyle, textAt } from './page.ts'
+import { drawTape, STRAW, STRAW_PALE } from './leaf-tape.ts'
+import { FRAME, finish, GREY, INK, mm, newPage, type TextStyle, textAt } from './page.ts'
 
 type Pdf = PDFKit.PDFDocument
 

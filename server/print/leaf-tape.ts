@@ -1,5 +1,9 @@
 /** The figure as a knot on its band, on a measuring tape. */
-import { GREY, INK, mm, STRAW, textAt } from './page.ts'
+import { GREY, INK, mm, textAt } from './page.ts'
+
+/** The band, and its ground. */
+export const STRAW = '#e6bf47'
+export const STRAW_PALE = '#f5e8b6'
 
 interface Tape {
   value: number

@@ -14,8 +14,6 @@ export type Face = 'regular' | 'bold' | 'mono' | 'mono-bold'
 export const INK = '#15202b'
 export const GREY = '#4a5661'
 export const FRAME = '#b4b4b4'
-export const STRAW = '#e6bf47'
-export const STRAW_PALE = '#f5e8b6'
 
 export function newPage(info: { title: string; width_mm: number; height_mm: number }): PDFKit.PDFDocument {
   const pdf = new PDFDocument({
