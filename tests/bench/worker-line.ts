@@ -17,6 +17,7 @@ import { createUser } from '../builders/user.ts'
 
 const PASSWORD = 'for-the-bench-only'
 const NAME = 'bench_worker'
+const ENDING_WITH_US = ['--import', 'tsx', '--import', './server/scripts/start/end-with-parent.mjs']
 
 export interface WorkerLine {
   source: DataSource
@@ -47,8 +48,9 @@ export async function openWorkerLine(): Promise<WorkerLine> {
     source,
     fill: (pictures, count) => fill(source, databaseUrl, createFileStore({ kind: 'folder', dir: folder }), pictures, count),
     startWorker: () => {
-      const worker = spawn(process.execPath, ['--import', 'tsx', 'worker/main.ts'], {
-        stdio: ['ignore', 'ignore', 'inherit'],
+      // A channel to it, so that it ends when the bench is killed.
+      const worker = spawn(process.execPath, [...ENDING_WITH_US, 'worker/main.ts'], {
+        stdio: ['ignore', 'ignore', 'inherit', 'ipc'],
         env: { ...process.env, DATABASE_URL: databaseUrl, STORAGE_DIR: folder, LOG_LEVEL: 'silent' },
       })
       workers.push(worker)

@@ -81,7 +81,7 @@ function report(minutes: number, aMinute: number, cpu_s: number, seen: ReadonlyA
     `floor: bare decode ${floor_ms.toFixed(0)} ms of processor time, at most ${((60_000 * CORES) / floor_ms).toFixed(0)} a minute`,
   )
   for (const { at, resident_mb: each } of seen) {
-    say(`at page ${at}: ${each.map((mb) => mb.toFixed(0)).join(', ')} MB resident (each worker, then its reading process)`)
+    say(`at page ${at}: ${each.map((mb) => mb.toFixed(0)).join(', ')} MB resident (each worker and what it started)`)
   }
   const largest = seen.map(({ resident_mb: each }) => Math.max(...each))
   const grown = largest.at(-1)! / largest[0]! - 1
