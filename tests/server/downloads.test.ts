@@ -7,6 +7,7 @@ import { parquetMetadata, parquetReadObjects, parquetSchema } from 'hyparquet'
 import Papa from 'papaparse'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import yauzl from 'yauzl'
+import { bookRecords } from '../../server/db/desk/book-lines.ts'
 import { headerOf } from '../../shared/layouts/column.ts'
 import { valueColumns } from '../../shared/layouts/value-columns.ts'
 import { type BookValue, bookValueSchema } from '../../shared/schemas/book-value.ts'
@@ -207,6 +208,17 @@ test('a filter holds for the downloads as for the page', async () => {
   const none = parseCsv((await analyst.get('/values.csv?from=2027-01-01')).bytes.toString())
   expect(none).toEqual([])
   expect((await analyst.get('/values?from=2027-01-01')).body).toEqual({ values: [], next: null })
+})
+
+test('who stops reading gives the connection back, as often as they do', async () => {
+  const { source } = server.deps
+  for (let times = 0; times < 12; times += 1) {
+    for await (const record of bookRecords(source, {})) {
+      expect(record.number).toBe(3)
+      break
+    }
+  }
+  expect((await analyst.get('/values')).status).toBe(200)
 })
 
 function unzip(bytes: Buffer): Promise<Record<string, string>> {
