@@ -4,13 +4,19 @@ import { listed } from '../../../lib/words.ts'
 import { Button } from '../../../ui/button.tsx'
 import { type LedgerColumn, LedgerTable } from '../../../ui/ledger-table.tsx'
 
-/** Tags of sources stand behind the words "how sure"; the page says them in full. */
-const plain = (text: string) => text.replaceAll(/ ?\[[FMP]\] ?/g, ' ').trim()
+/** A limit's tag stands beside it in words already. */
+const withoutTag = (source: string) => source.replace(/^\[[FMP]\] ?/, '')
+
+const SURE: Record<string, string> = { P: 'common practice', M: 'from memory', F: 'published' }
+
+/** The tags in a rule's reason, written out: "… usual (common practice)." */
+const plain = (why: string) =>
+  why.replaceAll(/(,?) \[([FMP])\]/g, (_tag, comma: string, sure: string) => (comma ? `, ${SURE[sure]}` : ` (${SURE[sure]})`))
 
 /** "lowest 500 mL (common practice), the product ships 450 mL" */
 function LimitLine({ limit }: { limit: RuleLimit }) {
   const unit = limit.unit ? ` ${limit.unit}` : ''
-  const source = plain(limit.source)
+  const source = withoutTag(limit.source)
   return (
     <li>
       {limitWords(limit.name)} <span className="figures">{Number(limit.value.toPrecision(6))}</span>
