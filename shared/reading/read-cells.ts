@@ -4,7 +4,7 @@ import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
 import type { Alignment, PlacedPart } from './align/align-page.ts'
 import { tickContrast } from './align/measure-tick.ts'
 import type { Picture } from './align/patch.ts'
-import { isTraced } from './align/trace-rules.ts'
+import { hasEnds, isTraced } from './align/trace-rules.ts'
 import { blackAt } from './cells/black-level.ts'
 import { cutCell, samplesFor } from './cells/cut.ts'
 import { inkWithin, signedBy } from './cells/signed.ts'
@@ -125,7 +125,8 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
       return { homography, center, displacement: field.at(center) }
     }
     const right = box.x + box.width
-    const seen = isTraced(alignment.anchors, { y: box.y + box.height, left: box.x, right })
+    const line = { y: box.y + box.height, left: box.x, right }
+    const seen = isTraced(alignment.anchors, line) && hasEnds(alignment.anchors, line)
     const boxes = [{ box, map: mapAt(box.x + box.width / 2) }]
     return [{ cell, boxes, fit_mm: null, hasFrame: false, seen, ends: [mapAt(box.x), mapAt(right)] }]
   })

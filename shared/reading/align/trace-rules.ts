@@ -6,6 +6,7 @@ import { cellBounds } from '../../layouts/geometry.ts'
 import type { Layout } from '../../layouts/layout.ts'
 import type { Homography } from '../geometry/homography.ts'
 import { type Anchor, ResidualField } from '../geometry/residual-field.ts'
+import { lineEnd } from './line-ends.ts'
 import type { Mark } from './marks.ts'
 import { lineProfile, type Picture, samplePatch } from './patch.ts'
 
@@ -118,6 +119,10 @@ const FEWEST_STEPS = 2
 export const isTraced = (anchors: readonly Anchor[], { y, left, right }: Rule): boolean =>
   anchors.filter((a) => a.onlyDown && Math.abs(a.y - y) < 0.1 && a.x >= left && a.x <= right).length >= FEWEST_STEPS
 
+/** Whether both ends of a line were seen. */
+export const hasEnds = (anchors: readonly Anchor[], { y, left, right }: Rule): boolean =>
+  [left, right].every((x) => anchors.some((a) => !a.onlyDown && Math.hypot(a.x - x, a.y - y) < 0.1))
+
 /** Lines that stand so near each other, mm, are followed as one. */
 const SAME_LINE_MM = 6
 
@@ -137,7 +142,20 @@ export function traceBaselines(picture: Picture, layout: Layout, homography: Hom
     }
   }
   const field = new ResidualField(anchors)
-  return rules.flatMap((rule) => traceRule(picture, homography, field, rule))
+  const followed = rules.flatMap((rule) => traceRule(picture, homography, field, rule))
+  const lower = new ResidualField([...anchors, ...followed])
+  const ends = layout.cells.flatMap((cell) => {
+    if (cell.kind !== 'signature') return []
+    const { x, y, width, height } = cellBounds(cell)
+    const line = { y: y + height, left: x, right: x + width }
+    if (!isTraced(followed, line)) return []
+    const both = [
+      lineEnd(picture, homography, lower, { x, y: line.y }, 1),
+      lineEnd(picture, homography, lower, { x: line.right, y: line.y }, -1),
+    ]
+    return both.flatMap((mark) => mark ?? [])
+  })
+  return [...followed, ...ends]
 }
 
 /** Height of a trace between its steps; null outside or across a gap. */
