@@ -1,5 +1,5 @@
 /** Printed and typed text by tesseract.js: the block of planned facts and the sheet's code in letters. Never hand-writing. */
-import type { Layout } from '../../../shared/layouts/layout.ts'
+import type { AreaCell, Layout } from '../../../shared/layouts/layout.ts'
 import { type PageMap, toPhoto } from '../../../shared/reading/geometry/page-map.ts'
 import { brightnessAt, type Grey } from '../../../shared/reading/pixels/grey.ts'
 import { codeFromText } from './printed-code.ts'
@@ -17,6 +17,12 @@ const PLAN_CHARACTERS = 'ABCDEFGHIJKLMNOPQRSTUVWXYZabcdefghijklmnopqrstuvwxyz012
 const CODE_MM = 37.2
 const CODE_CHARACTERS = '0123456789ABCDEFGHIJKLMNOPQRSTUVWXYZ-'
 
+/** Kept off the printed line, mm. */
+const ABOVE_LINE_MM = 0.7
+/** From 0 to 100: type is mostly above 90, hands below 60. */
+const SURE = 85
+const WORD_CHARACTERS = `${PLAN_CHARACTERS}'"+=%&?`
+
 interface Area {
   x: number
   y: number
@@ -29,6 +35,8 @@ export interface PrintedText {
   planLines(grey: Grey, map: PageMap, layout: Layout): Promise<string[]>
   /** The sheet's code as printed in the head, or null when its check character does not agree. */
   sheetCode(grey: Grey, map: PageMap, layout: Layout): Promise<string | null>
+  /** The words typed on a line, with the chance that they are right; null where the engine is not sure of every one. */
+  typedLine(grey: Grey, map: PageMap, line: AreaCell): Promise<{ text: string; p: number } | null>
 }
 
 export function createPrintedText(engine: TextEngine): PrintedText {
@@ -59,6 +67,12 @@ export function createPrintedText(engine: TextEngine): PrintedText {
       const piece = cutFlat(grey, map, { x: x - CODE_MM, y: y - 6.6, width: CODE_MM + 1, height: 6.4 })
       return hasInk(piece) ? codeFromText(await engine.text(piece, CODE_CHARACTERS)) : null
     },
+    async typedLine(grey, map, { x, y, width, height }) {
+      const piece = cutFlat(grey, map, { x, y, width, height: height - ABOVE_LINE_MM })
+      if (!hasInk(piece) || runsOut(piece)) return null
+      const { text, confidence } = await engine.line(piece, WORD_CHARACTERS)
+      return confidence >= SURE && text.length > 1 ? { text, p: confidence / 100 } : null
+    },
   }
 }
 
@@ -81,4 +95,13 @@ function hasInk({ data }: TextPicture): boolean {
   const sorted = Uint8Array.from(data).sort()
   const paper = sorted[Math.floor(sorted.length * 0.7)]!
   return sorted[Math.floor(sorted.length * INK_SHARE)]! < paper * INK_LEVEL
+}
+
+/** Words that go on beyond the piece: what is seen of them is not what was typed. */
+function runsOut({ width, height, data, px_per_mm }: TextPicture): boolean {
+  const paper = Uint8Array.from(data).sort()[Math.floor(data.length * 0.7)]!
+  for (let y = 0; y < height; y++) {
+    for (let x = width - Math.round(px_per_mm); x < width; x++) if (data[y * width + x]! < paper * INK_LEVEL) return true
+  }
+  return false
 }

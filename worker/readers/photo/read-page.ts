@@ -78,7 +78,7 @@ export async function createPhotoReader(options: PhotoReaderOptions = {}): Promi
     reading: SheetReading,
     hooks: ReadHooks,
   ): Promise<PageReading> {
-    await readTyped(grey, reading, { engine, net }, hooks.known)
+    await readTyped(grey, reading, { engine, net, text }, hooks.known)
     if (hooks.onFlattened && reading.map && reading.layout) {
       const started = performance.now()
       await hooks.onFlattened(page, await flattenPage(raster, reading.map, reading.layout.page))

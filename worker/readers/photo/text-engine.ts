@@ -1,6 +1,7 @@
 /** tesseract.js, one engine a process: started with the first text, made anew now and then, never fetching anything. */
 import { createRequire } from 'node:module'
 import { dirname, join } from 'node:path'
+import type { Page } from 'tesseract.js'
 import { sharpOnce } from './decode.ts'
 
 const require = createRequire(import.meta.url)
@@ -28,6 +29,8 @@ export interface SeenSymbol {
 export interface TextEngine {
   /** The text, line by line. @param characters no others are answered */
   text(picture: TextPicture, characters: string): Promise<string>
+  /** One line of words, and how sure the engine is of the least sure of them, 0 to 100. */
+  line(picture: TextPicture, characters: string): Promise<{ text: string; confidence: number }>
   /** Every character with its place. */
   symbols(picture: TextPicture, characters: string): Promise<SeenSymbol[]>
   close(): Promise<void>
@@ -71,10 +74,15 @@ export function createTextEngine(): TextEngine {
 
   return {
     text: async (picture, characters) => (await recognise(picture, characters, false)).text,
+    async line(picture, characters) {
+      const words = wordsOf(await recognise(picture, characters, true))
+      return {
+        text: words.map((word) => word.text).join(' '),
+        confidence: Math.min(...words.map((word) => word.confidence), words.length > 0 ? 100 : 0),
+      }
+    },
     async symbols(picture, characters) {
-      const { blocks } = await recognise(picture, characters, true)
-      const words = (blocks ?? []).flatMap((block) => block.paragraphs.flatMap((p) => p.lines.flatMap((line) => line.words)))
-      return words.flatMap((word) =>
+      return wordsOf(await recognise(picture, characters, true)).flatMap((word) =>
         word.symbols.map(({ text, confidence, bbox: { x0, x1, y0, y1 } }) => ({
           text,
           confidence,
@@ -89,6 +97,9 @@ export function createTextEngine(): TextEngine {
     },
   }
 }
+
+const wordsOf = ({ blocks }: Page) =>
+  (blocks ?? []).flatMap((block) => block.paragraphs.flatMap((p) => p.lines.flatMap((line) => line.words)))
 
 async function asPng({ width, height, data, px_per_mm }: TextPicture): Promise<Buffer> {
   const sharp = await sharpOnce()

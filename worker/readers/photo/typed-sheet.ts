@@ -8,6 +8,7 @@ import type { Grey } from '../../../shared/reading/pixels/grey.ts'
 import type { CellReading, SheetReading } from '../../../shared/reading/sheet-reading.ts'
 import { weighSheet } from '../../../shared/reading/weigh/sheet.ts'
 import type { Facts } from '../../../shared/reading/weigh/types.ts'
+import type { PrintedText } from './printed-text.ts'
 import type { TextEngine } from './text-engine.ts'
 import { type Glyphs, glyphsOf } from './typed-glyphs.ts'
 import { readWords, type TypedDigit, type Word } from './typed-line.ts'
@@ -31,6 +32,7 @@ const MOST_MS = 10_000
 
 interface TypedTools {
   engine: TextEngine
+  text: PrintedText
   net: DigitNet
 }
 
@@ -65,6 +67,7 @@ export async function readTyped(grey: Grey, reading: SheetReading, tools: TypedT
     if (own) readings.set(cell.key, withPlacing(before, own))
     else if (digits.length > 0) readings.set(cell.key, notType(cell, before))
   }
+  await suggestLines(grey, reading, tools.text)
   reading.ms.typed = performance.now() - started
 }
 
@@ -146,4 +149,14 @@ function withPlacing(before: CellReading, own: Pick<CellReading, 'value' | 'stat
 function notType(cell: CombCell, before: CellReading): CellReading {
   const text = `${cell.label} does not hold plain type like the rest of the sheet.`
   return { ...before, state: 'in doubt', reasons: [...before.reasons, { rule: 'R08', text, cells: [cell.key] }] }
+}
+
+/** Words stay pictures; what was typed is offered to whoever keys them. Names of persons are not read at all. */
+async function suggestLines(grey: Grey, { layout, map, readings }: SheetReading, text: PrintedText): Promise<void> {
+  for (const cell of layout?.cells ?? []) {
+    const own = readings.get(cell.key)
+    if (cell.kind !== 'line' || cell.personal || !own || !map) continue
+    const seen = await text.typedLine(grey, map, cell)
+    if (seen) readings.set(cell.key, { ...own, candidates: [{ value: seen.text, p: seen.p, ink: seen.p }] })
+  }
 }

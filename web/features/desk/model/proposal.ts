@@ -1,5 +1,5 @@
 /** What may be taken with one key: the reader's candidates, the options of a choice, yes or no. */
-import { isComb, type LayoutCell } from '../../../../shared/layouts/layout.ts'
+import type { LayoutCell } from '../../../../shared/layouts/layout.ts'
 import type { Reading, Value } from '../../../../shared/schemas/sheet.ts'
 
 export interface Offer {
@@ -37,7 +37,6 @@ function offersOf(cell: LayoutCell, reading: Reading): Offer[] {
   if (cell.kind === 'choice') return cell.options.map((o) => offer(o.option, o.label))
   if (cell.kind === 'tick') return [offer(true, 'ticked'), offer(false, 'not ticked')]
   if (cell.kind === 'signature') return [offer(true, 'signed'), offer(false, 'not signed')]
-  if (!isComb(cell)) return []
   return [...reading.candidates]
     .sort((a, b) => b.p - a.p)
     .slice(0, MOST)
