@@ -116,10 +116,10 @@ interface RowsFigureProps {
 
 function RowsFigure({ title, says, file, rows, unit, zero = false, tied = false }: RowsFigureProps) {
   if (rows.length === 0) return null
-  const range = (row: PlotRow) => row.bar ?? row.band
-  const end = (row: PlotRow, i: 0 | 1) => {
-    const ends = range(row)
-    return ends ? minus(String(Number(ends[i].toPrecision(4)))) : '–'
+  const ends = (['bar', 'band'] as const).filter((kind) => rows.some((row) => row[kind]))
+  const endText = (row: PlotRow, kind: 'bar' | 'band', i: 0 | 1) => {
+    const range = row[kind]
+    return range ? minus(String(Number(range[i].toPrecision(4)))) : '–'
   }
   return (
     <PlotFigure
@@ -134,10 +134,15 @@ function RowsFigure({ title, says, file, rows, unit, zero = false, tied = false 
             { head: 'row' },
             { head: 'of' },
             { head: unit, figures: true },
-            { head: 'bar from', figures: true },
-            { head: 'to', figures: true },
+            ...ends.flatMap((kind) => [
+              { head: `${kind} from`, figures: true },
+              { head: `${kind} to`, figures: true },
+            ]),
           ]}
-          rows={rows.map((row) => ({ key: row.key, cells: [row.label, row.group, row.figure, end(row, 0), end(row, 1)] }))}
+          rows={rows.map((row) => ({
+            key: row.key,
+            cells: [row.label, row.group, row.figure, ...ends.flatMap((kind) => [endText(row, kind, 0), endText(row, kind, 1)])],
+          }))}
         />
       }
     />
