@@ -45,8 +45,8 @@ export function Knot({ value, U, unit, firm }: KnotProps) {
       {axis.minor.map((figure) => (
         <line key={figure} x1={at(figure)} x2={at(figure)} y1={LINE_PX} y2={LINE_PX + 8} stroke="var(--ink)" strokeWidth="1" />
       ))}
-      {axis.major.map((figure) => (
-        <g key={figure}>
+      {axis.major.map((figure, i) => (
+        <g key={figure} className={i % 2 ? 'max-sm:hidden' : ''}>
           <line x1={at(figure)} x2={at(figure)} y1={LINE_PX} y2={LINE_PX + 14} stroke="var(--ink)" strokeWidth="2.5" />
           <text x={at(figure)} y={LINE_PX + 36} textAnchor="middle" className="figures" fontSize="20" fill="var(--ink)">
             {figure}

@@ -31,15 +31,15 @@ export function ReadOut({ told, what, where, standing, back }: ReadOutProps) {
       {told.sentence && (
         <p className="max-w-[26em] px-margin pb-4 text-[clamp(21.5px,3.2vw,56px)] leading-[1.25] font-[560]">“{told.sentence}”</p>
       )}
-      <dl className="mt-auto flex flex-wrap border-t-[3px] border-ink bg-board text-[clamp(15px,1.4vw,22px)]">
+      <dl className="mt-auto grid grid-cols-2 border-t-[3px] border-ink bg-board text-[clamp(15px,1.4vw,22px)] sm:flex sm:flex-wrap">
         {told.beside.map((figure) => (
           <Beside key={figure.key} figure={figure} />
         ))}
-        <div className="grow border-r border-line px-margin py-1.5">
+        <div className="grow border-line px-margin py-1.5 max-sm:col-span-2 sm:border-r">
           <dt className="leading-[1.4]">not tested</dt>
           <dd className="text-[1.3em] leading-[1.3] font-[720]">{told.notTested.join(', ')}</dd>
         </div>
-        <div className="bg-ink px-margin py-1.5 font-[720] text-white max-sm:w-full">
+        <div className="bg-ink px-margin py-1.5 font-[720] text-white max-sm:col-span-2">
           <dt className="leading-[1.4]">Stay behind the line till the engine stops.</dt>
           <dd className="font-[430]">The maker’s manual and local rules come first.</dd>
         </div>
@@ -80,7 +80,7 @@ const Refused = ({ why }: { why: string | null }) => (
 )
 
 const Beside = ({ figure: { label, value, U, unit } }: { figure: ToldFigure }) => (
-  <div className="border-r border-line px-margin py-1.5">
+  <div className="border-line px-margin py-1.5 max-sm:border-b max-sm:odd:border-r sm:border-r">
     <dt className="leading-[1.4]">{label}</dt>
     <dd className="text-[1.3em] leading-[1.3] font-[720] whitespace-nowrap">
       {value}
