@@ -26,10 +26,11 @@ export interface WebhookSendDeps {
 const GONE = 410
 
 export function webhookSendJob({ source, boss, allowPrivate }: WebhookSendDeps): JobHandler {
-  const endFor = (id: string, trouble: string | null, why: string, always: boolean) =>
+  /** @param always pauses the webhook even where other messages arrive */
+  const giveUp = (id: string, because: string, always: boolean) =>
     source.transaction(async (db) => {
-      const givenUp = await giveUpDelivery(db, id, trouble)
-      if (givenUp && (always || !givenUp.othersArrive)) await pauseAndTell(boss, db, givenUp.webhookId, why)
+      const givenUp = await giveUpDelivery(db, id, null)
+      if (givenUp && (always || !givenUp.othersArrive)) await pauseAndTell(boss, db, givenUp.webhookId, because)
     })
 
   async function attempt(id: string, delivery: WaitingDelivery, signal: AbortSignal): Promise<number> {
@@ -59,10 +60,10 @@ export function webhookSendJob({ source, boss, allowPrivate }: WebhookSendDeps):
       const trouble = status >= 300 && status < 400 ? `answered ${status}: a redirect is not followed` : `answered ${status}`
       await noteDeliveryTrouble(source.manager, deliveryId, status, trouble)
       if (status !== GONE) throw new TransientError(`The webhook ${trouble}`)
-      await endFor(deliveryId, null, 'its receiver says that it is gone (410)', true)
+      await giveUp(deliveryId, 'its receiver says that it is gone (410)', true)
       return 'done'
     },
-    giveUp: ({ deliveryId }) => endFor(deliveryId, null, 'nothing could be delivered for days', false),
+    giveUp: ({ deliveryId }) => giveUp(deliveryId, 'nothing could be delivered for days', false),
   })
 }
 
