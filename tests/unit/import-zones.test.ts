@@ -10,6 +10,7 @@ const BREACHES: [string, string][] = [
   ['shared/trial/b.ts', 'react'],
   ['shared/trial/c.ts', '@tanstack/react-query'],
   ['shared/trial/d.ts', '../../server/config.ts'],
+  ['shared/compare/a.ts', '@stdlib/stats-ttest'],
   ['web/lib/a.ts', '../../server/config.ts'],
   ['web/lib/b.ts', '../app/router.tsx'],
   ['web/ui/a.tsx', '../features/sheets/sheets.queries.ts'],
@@ -29,6 +30,7 @@ const BREACHES: [string, string][] = [
 const ALLOWED: [string, string][] = [
   ['shared/trial/y.ts', 'zod'],
   ['shared/trial/z.ts', '../schemas/sheet.ts'],
+  ['shared/compare/z.ts', '@stdlib/stats-base-dists-t-cdf'],
   ['web/features/sheets/y.tsx', './sheets.queries.ts'],
   ['web/features/sheets/components/y.tsx', '../sheets.queries.ts'],
   ['web/features/sheets/components/z.tsx', '../../../../shared/schemas/sheet.ts'],
