@@ -24,6 +24,9 @@ const VOUCH = { count: 4, within_mm: 32, agree_mm: 0.45 } as const
  */
 const BETWEEN = 4.5
 
+/** Where a field's own lines are not plain its lean is its neighbours', and its corners are off by so much more than its middle. */
+const TO_CORNER = 1.3
+
 export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[]): PlacedPart[] {
   const byKey = new Map(marks.map((mark, i) => [mark.key, i]))
   const field = new ResidualField(marks)
@@ -49,7 +52,7 @@ export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[])
     }
     const own_mm = spread_mm === undefined || Number.isNaN(spread_mm) ? 0 : spread_mm
     // Lines that are not plain and do not fit well among themselves may be others' lines.
-    const fit_mm = plain ? own_mm : off.get(mark)! + own_mm
+    const fit_mm = plain ? own_mm : TO_CORNER * off.get(mark)! + own_mm
     return { part, center, displacement, found: true, seen: true, fit_mm }
   })
 }
