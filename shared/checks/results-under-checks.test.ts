@@ -61,8 +61,12 @@ describe('a stop', () => {
     expect(gone).not.toContain('l_per_ha')
   })
 
-  it('that names no cell of a result takes nothing back: signatures, consent, units by hand', () => {
-    expect(nulled({ sign_farmer: false, consent_trial: null, area_unit: null })).toEqual([])
+  it('that names no cell of a result takes nothing back: signatures, consent', () => {
+    expect(nulled({ sign_farmer: false, consent_trial: null })).toEqual([])
+  })
+
+  it('on a unit by hand takes back the area as written, and not the one by the sides', () => {
+    expect(nulled({ area_unit: null })).toEqual(['area_written_m2'])
   })
 
   it('a person has resolved takes nothing back', () => {
