@@ -57,7 +57,7 @@ test('a demonstrator plans two trials for themselves; the second keeps implement
     placeId: PLACE.id,
     demonstratorId: me.id,
     driver: '',
-    farmer: { name: 'Matis Orrel', phone: '' },
+    farmer: { name: 'Matis Orrel', phone: '', email: '' },
     trials: [
       { tractorId: first?.id, implementId: PLOUGH.id, kitId: KIT.id, plot: 'upper', layout: USUAL_LAYOUT, runs: 3 },
       { tractorId: second?.id, implementId: PLOUGH.id, kitId: KIT.id, plot: 'lower', layout: 'haulage', runs: 3 },
