@@ -14,6 +14,7 @@ export async function readPicture(reader: PhotoReader, picture: PagePicture, kno
   const hooks: ReadHooks = {
     known,
     page: picture.page,
+    planText: true,
     onFlattened: (_page, jpeg) => {
       flattened = jpeg
     },
