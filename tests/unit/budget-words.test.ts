@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest'
-import { computeResults } from '../../shared/trial/compute-results.ts'
 import { sharesOf } from '../../shared/trial/budget.ts'
+import { computeResults } from '../../shared/trial/compute-results.ts'
 import { burnLines, leastArea_ha } from '../../web/features/demonstrations/plan-model.ts'
 import { largestWords } from '../../web/features/record/budget-words.ts'
 import { mainFigureOf } from '../../web/features/record/record-model.ts'

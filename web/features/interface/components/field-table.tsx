@@ -16,7 +16,11 @@ export function FieldTable({ caption, lines }: { caption: string; lines: readonl
       <tbody>
         {lines.map(({ path, name, depth, kind, needed }) => (
           <tr key={path} className="border-b border-feint align-top">
-            <th scope="row" className="figures py-0.5 pr-2 font-normal whitespace-nowrap" style={{ paddingLeft: `${depth * 12}px` }}>
+            <th
+              scope="row"
+              className="figures py-0.5 pr-2 font-normal whitespace-nowrap"
+              style={{ paddingLeft: `${depth * 12}px` }}
+            >
               {name}
             </th>
             <td className="py-0.5 pr-2">{kind}</td>
