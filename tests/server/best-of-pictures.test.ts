@@ -4,11 +4,10 @@ import { takeInPage } from '../../server/db/intake/take-in-page.ts'
 import type { Sheet } from '../../shared/schemas/sheet.ts'
 import { buildReadings } from '../builders/readings.ts'
 import { buildOutcome, createPage, readingsOf } from '../builders/sheet.ts'
-import type { TestAgent } from '../support/agent.ts'
 import { startTestServer, type TestServer } from '../support/server.ts'
 
 let server: TestServer
-let clerk: TestAgent
+let clerk: Awaited<ReturnType<TestServer['signIn']>>
 beforeAll(async () => {
   server = await startTestServer()
   clerk = await server.signIn('clerk')
