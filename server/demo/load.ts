@@ -16,7 +16,7 @@ import type { FileStore } from '../storage/store.ts'
 import { enterSettled, sendBackBlanks, settleByPaper } from './demo-clerk.ts'
 import { addPeople, fillRegisters, type People, planRuns } from './plan-season.ts'
 import { listSampleFiles, readSampleSheets, sampleRuns } from './sample-sheets.ts'
-import { ROW_RUNS, runsToCome, TROUBLE_RUNS } from './season.ts'
+import { HALVED_RUNS, ROW_RUNS, runsToCome, TROUBLE_RUNS } from './season.ts'
 
 export interface DemoSignIn {
   role: string
@@ -34,6 +34,7 @@ export interface DemoTarget {
 
 /** One password for all of them, since it stands on the screen; long as any. */
 export const DEMO_PASSWORD = 'three sheaves by the ditch'
+const SEASON_ROWS = ['halves', 'rows', 'trouble'].map((name) => `samples/season/${name}.csv`)
 const READ_WITHIN_MS = 240_000
 
 export async function loadDemoSeason({ settings, store, startWorker, say }: DemoTarget): Promise<DemoSignIn[]> {
@@ -47,8 +48,9 @@ export async function loadDemoSeason({ settings, store, startWorker, say }: Demo
     const people = await addPeople(deps, DEMO_PASSWORD)
     const ids = await fillRegisters(deps, people.get(401)!)
     const samples = await readSampleSheets()
-    await planRuns(deps, people, ids, [...ROW_RUNS, ...TROUBLE_RUNS, ...sampleRuns(samples), ...runsToCome(new Date())])
-    await sendIn(deps, people, ['samples/season/rows.csv', 'samples/season/trouble.csv', ...(await listSampleFiles())], say)
+    const rowRuns = [...HALVED_RUNS, ...ROW_RUNS, ...TROUBLE_RUNS]
+    await planRuns(deps, people, ids, [...rowRuns, ...sampleRuns(samples), ...runsToCome(new Date())])
+    await sendIn(deps, people, [...SEASON_ROWS, ...(await listSampleFiles())], say)
     const clerk = people.get(201)!
     await settleByPaper(deps, clerk, samples)
     await sendBackBlanks(deps, clerk, samples)

@@ -11,11 +11,12 @@ export interface DemoRun {
   implement: number
   kit: number
   plot: string
+  /** Which of the tractor's runs that day, from 1. */
   run: number
   sheetCode: string
 }
 
-export const RUNS_A_TRIAL = 3
+export const RUNS_A_TRACTOR = 3
 
 /** Two tractors with the same implement on one day: what a comparison later needs. */
 type Day = readonly [
@@ -27,15 +28,20 @@ type Day = readonly [
   kit: number,
 ]
 
+/** Each tractor kept its own plot all day. */
 const DAYS: readonly Day[] = [
-  ['2026-09-16', 1, 101, [11, 14], 21, 31],
-  ['2026-09-23', 2, 102, [12, 15], 22, 32],
   ['2026-09-30', 4, 103, [11, 14], 23, 33],
-  ['2026-10-07', 5, 104, [12, 15], 24, 31],
   ['2026-10-14', 3, 101, [13, 16], 22, 31],
   ['2026-10-22', 6, 103, [13, 16], 25, 33],
-  ['2026-11-04', 2, 102, [11, 14], 21, 32],
   ['2026-11-12', 5, 104, [13, 16], 26, 32],
+]
+
+/** Each plot was halved between the two. */
+const HALVED_DAYS: readonly Day[] = [
+  ['2026-09-16', 1, 101, [11, 14], 21, 31],
+  ['2026-09-23', 2, 102, [12, 15], 22, 32],
+  ['2026-10-07', 5, 104, [12, 15], 22, 31],
+  ['2026-11-04', 2, 102, [11, 14], 21, 32],
 ]
 
 /** The same code on every machine, with its check character. */
@@ -44,17 +50,21 @@ function codeOf(seed: string): string {
   return makeSheetCode((below) => createHash('sha256').update(`demo season|${seed}|${taken++}`).digest().readUInt32BE() % below)
 }
 
-const runsOf = (days: readonly Day[]): DemoRun[] =>
+const ownPlot = (tractor: number): string => ['A, by the road', 'B, by the ditch'][tractor]!
+const halfOfPlot = (_tractor: number, run: number): string => ['by the road', 'by the well', 'by the ditch'][run]!
+
+/** @param plotOf names the plot of the day's nth tractor and its nth run, both from 0 */
+const runsOf = (days: readonly Day[], plotOf: (tractor: number, run: number) => string): DemoRun[] =>
   days.flatMap(([heldOn, place, demonstrator, tractors, implement, kit]) =>
     tractors.flatMap((tractor, t) =>
-      Array.from({ length: RUNS_A_TRIAL }, (_, i) => ({
+      Array.from({ length: RUNS_A_TRACTOR }, (_, i) => ({
         heldOn,
         place,
         demonstrator,
         tractor,
         implement,
         kit,
-        plot: t === 0 ? 'A, by the road' : 'B, by the ditch',
+        plot: plotOf(t, i),
         run: i + 1,
         sheetCode: codeOf(`${heldOn}|${tractor}|${i + 1}`),
       })),
@@ -62,9 +72,11 @@ const runsOf = (days: readonly Day[]): DemoRun[] =>
   )
 
 /** Runs whose rows came in clean and were entered. */
-export const ROW_RUNS: readonly DemoRun[] = runsOf(DAYS)
+export const ROW_RUNS: readonly DemoRun[] = runsOf(DAYS, ownPlot)
+/** The same, each plot worked by both tractors: what carries a paired comparison. */
+export const HALVED_RUNS: readonly DemoRun[] = runsOf(HALVED_DAYS, halfOfPlot)
 /** Runs whose rows have something wrong with them: they wait at the desk. */
-export const TROUBLE_RUNS: readonly DemoRun[] = runsOf([['2026-11-19', 4, 103, [12, 15], 23, 33]])
+export const TROUBLE_RUNS: readonly DemoRun[] = runsOf([['2026-11-19', 4, 103, [12, 15], 23, 33]], ownPlot)
 
 const DAY_MS = 86_400_000
 const SEASON_BEGINS = Date.UTC(2026, 8, 1)
@@ -78,8 +90,9 @@ export function hourMeterAt(tractor: number, heldOn: string, run: number): numbe
 /** Planned and not yet held: a day next week and one the week after, seen from the day the season is loaded. */
 export const runsToCome = (today: Date): readonly DemoRun[] => {
   const inDays = (days: number) => new Date(today.getTime() + days * DAY_MS).toISOString().slice(0, 10)
-  return runsOf([
+  const days: readonly Day[] = [
     [inDays(6), 3, 101, [11, 14], 23, 31],
     [inDays(13), 5, 104, [12, 15], 21, 33],
-  ])
+  ]
+  return runsOf(days, ownPlot)
 }
