@@ -16,9 +16,9 @@ const beside = (key: ComparedFigure, means: Record<string, number>, gap: [number
 })
 
 /** Six plots, in R: A burns 0.867 more, interval 0.358 to 1.375. */
-function claim(changes: Partial<Matter> = {}, kind: DesignKind = 'paired') {
+function claim(changes: Partial<Matter> = {}, kind: DesignKind = 'paired', block = 'plot') {
   const observations = kind === 'one factor' ? grouped(SIX_PLOTS) : sideBySide(SIX_PLOTS)
-  const names = { response: 'l_per_ha', treatment: 'tractor', block: 'plot' }
+  const names = { response: 'l_per_ha', treatment: 'tractor', block }
   const analysis = analyse(observations, { kind, why: '', names })
   const sides = [beside('depth_mean_cm', DEPTHS, [0.1, -0.3, 0.5]), beside('ml_per_m3', { A: 9, B: 8.6 }, [0.4, 0.1, 0.7])]
   const setting = 'at Kelwadi, ploughing'
@@ -49,8 +49,14 @@ describe('the claim', () => {
     expect(said.mayNot).toContain('in other soils')
   })
 
-  it('may be said of the same values in blocks', () => {
+  it('may be said of the same values in blocks of one plot each', () => {
     expect(claim({}, 'blocks').may).toBe(true)
+  })
+
+  it('may not be said of the same values where only the days were shared', () => {
+    const said = claim({}, 'blocks', 'day')
+    expect(said.may).toBe(false)
+    expect(said.because).toEqual(['plot and tractor are mixed within a day: only work on the same plots carries a difference'])
   })
 
   it.each<[string, Partial<Matter>, DesignKind, string]>([

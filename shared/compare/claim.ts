@@ -1,6 +1,6 @@
 /**
- * The claim rule (common practice): "uses less" only if the runs were paired or in blocks, the interval leaves out zero, and the
- * gap is wider than the ± of a run; and shallower work is no saving unless it holds for each m³ of soil too.
+ * The claim rule (common practice): "uses less" only if the runs were paired or in blocks on the same plots, the interval leaves
+ * out zero, and the gap is wider than the ± of a run; and shallower work is no saving unless it holds for each m³ of soil too.
  */
 import type { Beside, Claim, ComparedFigure, Gap } from '../schemas/book-comparison.ts'
 import type { Analysis } from '../schemas/comparison.ts'
@@ -83,6 +83,8 @@ function objectionsTo(gap: Gap, { analysis, unit, runU, noun, figure, beside }: 
   const said: string[] = []
   if (analysis.design.kind === 'one factor')
     said.push(`the fields differ as well as the ${noun}s: nothing paired the runs or put them in blocks`)
+  else if (analysis.design.block !== 'plot')
+    said.push(`plot and ${noun} are mixed within a ${analysis.design.block}: only work on the same plots carries a difference`)
   if (gap.interval[1] >= 0) said.push(`the ${percent(analysis)} interval, ${span(gap)} ${unit}, holds zero`)
   if (runU === null) said.push('the ± of a run is not known')
   else if (-gap.difference <= runU)

@@ -64,6 +64,30 @@ describe('the design proposed', () => {
   })
 })
 
+describe('the warning beside the design', () => {
+  const warned = (...texts: string[]) => propose(...texts).warning
+
+  it('says that plot and tractor are mixed where only days were shared', () => {
+    expect(warned('A K1 Mon', 'A K1 Mon', 'B K2 Mon', 'A K1 Tue', 'B K2 Tue')).toBe(
+      'Plot and tractor are mixed: within a day the tractors did not share their plots, as far as the plans tell, and each run of a trial counts as a value of its own.',
+    )
+    expect(warned('A - Mon', 'B - Mon', 'A - Tue', 'B - Tue')).toContain('Plot and tractor are mixed')
+  })
+
+  it.each([
+    ['blocks of plots', ['A K1 Mon', 'A K1 Mon', 'B K1 Mon', 'A K2 Mon', 'B K2 Mon']],
+    ['unlike fields', ['A K1 Mon', 'A K1 Mon', 'B K2 Tue', 'B K3 Wed']],
+  ])('says that runs of one trial lean on each other, in %s', (_what, texts) => {
+    expect(warned(...texts)).toContain('Runs of one tractor on one plot lean on each other')
+  })
+
+  it('is not there where each run had its own plot, or a plot it shared once', () => {
+    expect(warned('A K1 Mon', 'B K1 Mon', 'A K2 Mon', 'B K2 Mon')).toBeNull()
+    expect(warned('A K1 Mon', 'B K1 Mon', 'A K2 Mon', 'B K2 Mon', 'B K3 Mon', 'B K3 Mon')).toBeNull()
+    expect(warned('A K1 Mon', 'A K2 Tue', 'B - Wed')).toBeNull()
+  })
+})
+
 describe('treatments linked through blocks', () => {
   it('are found through others', () => {
     const of = (...pairs: string[]) =>

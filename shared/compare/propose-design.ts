@@ -19,6 +19,8 @@ export interface Proposal {
   why: string
   /** What a block is called; null where nothing is shared. */
   block: 'plot' | 'day' | null
+  /** What makes the intervals of this design less sure than they look, in one sentence. */
+  warning: string | null
   observations: Observation[]
   leftOut: LeftOut[]
 }
@@ -28,6 +30,13 @@ export interface Proposal {
  * @param noun what a treatment is: tractor, implement, gear, soil
  */
 export function proposeDesign(candidates: readonly Candidate[], noun: string): Proposal {
+  const design = designOf(candidates, noun)
+  return { ...design, warning: warningOf(design, candidates, noun) }
+}
+
+type Design = Omit<Proposal, 'warning'>
+
+function designOf(candidates: readonly Candidate[], noun: string): Design {
   const all = inOrder(candidates.map((c) => c.treatment))
   for (const level of ['plot', 'day'] as const) {
     const shared = sharedBlocks(candidates, level)
@@ -44,6 +53,17 @@ export function proposeDesign(candidates: readonly Candidate[], noun: string): P
   }
 }
 
+/** Runs of one trial lean on each other; and a day is not a plot: what differs between its plots looks like the treatment. */
+function warningOf({ block, observations }: Design, candidates: readonly Candidate[], noun: string): string | null {
+  if (block === 'day')
+    return `Plot and ${noun} are mixed: within a day the ${plural(noun)} did not share their plots, as far as the plans tell, and each run of a trial counts as a value of its own.`
+  const compared = new Set(observations.map((o) => o.id))
+  const onPlots = candidates.filter((c) => c.plot !== null && compared.has(c.id))
+  const trials = new Set(onPlots.map((c) => `${c.plot} ${c.treatment}`))
+  if (trials.size === onPlots.length) return null
+  return `Runs of one ${noun} on one plot lean on each other, yet each counts as a value of its own: the intervals may be too narrow.`
+}
+
 /** Where some worked side by side and others did not, it says who: choosing them alone makes a better comparison. */
 function unlikeWhy(groups: readonly string[][], all: number, noun: string): string {
   const side = groups.filter((group) => group.length > 1)
@@ -52,7 +72,7 @@ function unlikeWhy(groups: readonly string[][], all: number, noun: string): stri
   const who = side.map((group) => group.join(' and ')).join('; ')
   return side.length === 1 && side[0]!.length === all
     ? `These ${plural(noun)} shared one day only: their runs stand on unlike fields.`
-    : `Not all of these ${plural(noun)} worked side by side, so their runs stand on unlike fields. Side by side worked: ${who}. Choose one of these groups to compare it in blocks.`
+    : `Not all of these ${plural(noun)} worked side by side, so their runs stand on unlike fields. Side by side worked: ${who}. Choose one of these groups to compare it by itself.`
 }
 
 interface Shared {
@@ -74,7 +94,7 @@ function sharedBlocks(candidates: readonly Candidate[], level: 'plot' | 'day'): 
   return { kept, alone }
 }
 
-function fromShared({ kept, alone }: Shared, level: 'plot' | 'day', noun: string): Proposal {
+function fromShared({ kept, alone }: Shared, level: 'plot' | 'day', noun: string): Design {
   const treatments = inOrder(kept.map((o) => o.treatment))
   const blocks = inOrder(kept.map((o) => o.block!))
   const cells = groupedBy(kept, (o) => `${o.block} ${o.treatment}`)

@@ -114,6 +114,8 @@ export const bookComparisonSchema = z.object({
   analysis: analysisSchema.nullable(),
   /** In place of an analysis: why there is none. */
   whyNot: z.string().nullable(),
+  /** What makes the intervals less sure than they look; null where nothing does. */
+  warning: z.string().nullable(),
   beside: z.array(besideSchema),
   claim: claimSchema,
 })

@@ -55,6 +55,7 @@ export function compareRuns(book: readonly ComparableRun[], query: ComparisonQue
     runs: chosen.map((run) => toRun(run, ask, keys, refusalOf(run, ask) ?? reasons.get(String(run.number)) ?? null, proposal)),
     runU,
     ...made,
+    warning: made.analysis && proposal.warning,
     beside,
     claim: made.analysis
       ? claimOf({ figure, unit, noun: of, analysis: made.analysis, gaps: gapsOf(made.analysis), beside, runU, setting })

@@ -8,13 +8,14 @@ const figures = (head: string) => ({ head, figures: true })
 
 /** Everything the sentence rests on, in tables. */
 export function AnalysisTables({ comparison, analysis }: { comparison: BookComparison; analysis: Analysis }) {
-  const { unit, of } = comparison
+  const { unit, of, warning } = comparison
   const { design } = analysis
   return (
     <section aria-label="Analysis" className="px-margin pt-2 pb-3">
       <p className="text-2 leading-[27px]">
         <strong>{NAMES[design.kind]}.</strong> {design.why}
       </p>
+      {warning && <p className="my-0.5 max-w-[720px] border-l-[3px] border-ink pl-1">{warning}</p>}
       <p className="label">
         α {design.alpha}, two-sided; stated before any figure is looked at. Assumed: runs do not lean on each other, and what is
         left over is about normal.
