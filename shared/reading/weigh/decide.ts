@@ -4,6 +4,7 @@ import type { TickDist } from '../classes.ts'
 import {
   CLEAR,
   CLEAR_BESIDE_A_WRONG_SUM,
+  CLEAR_BY_INK_ALONE,
   DIGIT_ALLOWED,
   GAP_DOUBT,
   INK_ALLOWS,
@@ -49,13 +50,14 @@ export function decideComb(
   const inkBest = variable.options[byInk]!
   // Knowledge may choose between what the ink allows, never replace it: a value a box denies is offered, not proposed.
   const denied = value !== inkBest && value.weakest < DIGIT_ALLOWED
+  const least = p[best]! > value.ink ? CLEAR : CLEAR_BY_INK_ALONE
   const reasons: Reason[] = []
   const add = (rule: ReasonRule, text: string, cells = [variable.key]) => reasons.push({ rule, text, cells })
 
   if (variable.spoiled >= VOID_DOUBT) add('R01', `A box of ${variable.label} looks crossed out or written over.`)
   if (variable.gap >= GAP_DOUBT) add('Q55', `${variable.label} seems to have an empty box between or after its digits.`)
   // Plain ink stands by itself, but for the result of a sum that nobody has added up.
-  if (unjudged || (posterior === null && p[best]! < CLEAR))
+  if (unjudged || (posterior === null && p[best]! < least))
     add('R05', `${variable.label} was not weighed against the sheet's sums: there were too many ways to read them.`)
   // Plain ink whose sum does not hold is no question of reading: the wrong sum is the reason.
   const explained = wrongSums.some((sum) => sum.isResult) && value.ink >= CLEAR
@@ -65,7 +67,7 @@ export function decideComb(
       'R03',
       `The ink of ${variable.label} reads ${said(inkBest.value)} (${percent(inkBest.ink)}); what else is known speaks for ${said(value.value)} (${percent(p[best]!)}).`,
     )
-  } else if (!explained && (p[best]! < CLEAR || value.weakest < DIGIT_ALLOWED)) {
+  } else if (!explained && (p[best]! < least || value.weakest < DIGIT_ALLOWED)) {
     add('R02', unsure(variable, p))
   }
   for (const sum of wrongSums) {
