@@ -5,6 +5,7 @@ import type { ComparableRun } from '../../server/db/desk/comparable-runs.ts'
 import { compareRuns } from '../../server/features/comparisons/compare-runs.ts'
 import { bookComparisonSchema, comparisonQuerySchema, exclusionLogSchema } from '../../shared/schemas/book-comparison.ts'
 import { buildComparableRun, buildSixPlots } from '../builders/comparable-run.ts'
+import { type HalvedRun, readHalvedRuns } from '../builders/halved-runs.ts'
 import { answer, type FakeApi, fakeApi } from './support/fake-api.ts'
 import { renderApp, signedIn } from './support/render-app.tsx'
 
@@ -47,6 +48,66 @@ test('the sentence that may be said stands first, and the tables hold what R com
     '0.007',
     '0.36 to 1.38',
   ])
+})
+
+/** By hand from jar and tape alone: a half's L/ha, and the paired t of the lower number's minus the other's. */
+function handCheck(halves: readonly HalvedRun[], [lower, higher]: readonly [number, number]) {
+  const plots = [...new Set(halves.map((half) => half.plot))]
+  const l_per_ha = (plot: string, tractor: number) => {
+    const { readings } = halves.find((half) => half.plot === plot && half.tractor === tractor)!
+    return (Number(readings.fuel_used_written_ml) / (Number(readings.side_ab_m) * Number(readings.side_bc_m))) * 10
+  }
+  const gaps = plots.map((plot) => l_per_ha(plot, lower) - l_per_ha(plot, higher))
+  const n = gaps.length
+  const mean = gaps.reduce((sum, gap) => sum + gap, 0) / n
+  const se = Math.sqrt(gaps.reduce((sum, gap) => sum + (gap - mean) ** 2, 0) / (n - 1) / n)
+  // The t that R's interval for SIX_PLOTS (5 df, 95 %) stands on: 0.508372 / (0.484424 / √6).
+  return { n, mean, half: 2.5706 * se, t: mean / se }
+}
+
+async function pairedTable(pair: string): Promise<string[]> {
+  await headline()
+  const table = screen.getByText(pair, { selector: 'caption' }).closest('table')
+  return [...(table?.querySelectorAll('tbody td') ?? [])].map((cell) => cell.lastElementChild?.textContent ?? '')
+}
+
+test('the demo season’s pair that differs is said to, with the figures a hand computes from jar and tape', async () => {
+  const halves = readHalvedRuns([11, 14])
+  const hand = handCheck(halves, [11, 14])
+  opened(halves.map(({ run }) => run))
+  expect(await headline()).toBe(
+    'On 6 paired plots in Sannipur, ploughing, 15.7 cm deep against 15.7 cm, Tarnfold 50 used 1.7 ± 0.8 L/ha less than Ostrel D5.',
+  )
+  expect([hand.n, (-hand.mean).toFixed(1), hand.half.toFixed(1)]).toEqual([6, '1.7', '0.8'])
+  const cells = await pairedTable('Tarnfold 50 − Ostrel D5')
+  expect(cells[3]).toBe(hand.t.toFixed(2).replace('-', '−'))
+  expect(cells[6]).toBe(`−${(hand.half - hand.mean).toFixed(2)} to −${(-hand.mean - hand.half).toFixed(2)}`)
+  expect(screen.getByText(/leaves out zero, and the gap, 1\.71, is wider than the ± of one run/)).toBeDefined()
+  expect(screen.queryByText(/are mixed|each counts as/)).toBeNull()
+})
+
+test('the demo season’s pair that does not differ is not said to', async () => {
+  const halves = readHalvedRuns([12, 15])
+  const hand = handCheck(halves, [12, 15])
+  opened(halves.map(({ run }) => run))
+  expect(await headline()).toMatch(
+    /^No difference may be said: Ostrel D6 measured 0\.3 ± 0\.8 L\/ha less than Tarnfold 60, ploughing\.$/,
+  )
+  expect([hand.n, hand.mean.toFixed(1), hand.half.toFixed(1)]).toEqual([6, '0.3', '0.8'])
+  expect((await pairedTable('Tarnfold 60 − Ostrel D6'))[3]).toBe(hand.t.toFixed(2))
+  expect(screen.getByText(/holds zero; the gap, .* is not wider than the ± of one run/)).toBeDefined()
+})
+
+test('tractors that kept their own plots are not told apart, and the page says plot and tractor are mixed', async () => {
+  const book = buildSixPlots().map((run, i) => ({
+    ...run,
+    plot: run.tractor!.number === 11 ? 'A' : 'B',
+    trialDate: `2026-09-${16 + (i % 3)}`,
+  }))
+  opened(book)
+  expect(await headline()).toMatch(/^No difference may be said/)
+  expect(screen.getByText(/^Plot and tractor are mixed: within a day the tractors did not share their plots/)).toBeDefined()
+  expect(screen.getByText(/only work on the same plots carries a difference/)).toBeDefined()
 })
 
 test('every plot has its files and its table', async () => {
