@@ -4,7 +4,7 @@ import { isComb, type Layout, type LayoutCell } from '../layouts/layout.ts'
 import type { Alignment, PlacedPart } from './align/align-page.ts'
 import { tickContrast } from './align/measure-tick.ts'
 import type { Picture } from './align/patch.ts'
-import { hasEnds, isTraced } from './align/trace-rules.ts'
+import { isPlaced } from './align/trace-rules.ts'
 import { blackAt } from './cells/black-level.ts'
 import { cutCell, samplesFor } from './cells/cut.ts'
 import { inkWithin, signedBy } from './cells/signed.ts'
@@ -36,7 +36,7 @@ interface PlacedCell {
   /** Null where a box was not found on its own lines. */
   fit_mm: number | null
   hasFrame: boolean
-  /** All of its boxes were seen, or the line under its area. */
+  /** All of its boxes were seen, or the place of the line under its area is known. */
   seen: boolean
   /** The maps of its left and its right end. */
   ends: readonly [FieldMap, FieldMap]
@@ -126,7 +126,7 @@ function placeCells(alignment: Alignment, layout: Layout, planned: boolean): Pla
     }
     const right = box.x + box.width
     const line = { y: box.y + box.height, left: box.x, right }
-    const seen = isTraced(alignment.anchors, line) && hasEnds(alignment.anchors, line)
+    const seen = isPlaced(alignment.anchors, field, line)
     const boxes = [{ box, map: mapAt(box.x + box.width / 2) }]
     return [{ cell, boxes, fit_mm: null, hasFrame: false, seen, ends: [mapAt(box.x), mapAt(right)] }]
   })

@@ -6,7 +6,7 @@ import { cellBounds } from '../../layouts/geometry.ts'
 import type { Layout } from '../../layouts/layout.ts'
 import type { Homography } from '../geometry/homography.ts'
 import { type Anchor, ResidualField } from '../geometry/residual-field.ts'
-import { lineEnd } from './line-ends.ts'
+import { agreeing, lineEnd } from './line-ends.ts'
 import type { Mark } from './marks.ts'
 import { lineProfile, type Picture, samplePatch } from './patch.ts'
 
@@ -119,9 +119,20 @@ const FEWEST_STEPS = 2
 export const isTraced = (anchors: readonly Anchor[], { y, left, right }: Rule): boolean =>
   anchors.filter((a) => a.onlyDown && Math.abs(a.y - y) < 0.1 && a.x >= left && a.x <= right).length >= FEWEST_STEPS
 
-/** Whether both ends of a line were seen. */
-export const hasEnds = (anchors: readonly Anchor[], { y, left, right }: Rule): boolean =>
-  [left, right].every((x) => anchors.some((a) => !a.onlyDown && Math.hypot(a.x - x, a.y - y) < 0.1))
+/** An end counts for the lines beside it too, this far, mm. */
+const BESIDE_MM = 4
+/** Where the fields around tell of less bending than this, mm, the page is flat under a line, seen or not. */
+const FLAT_MM = 0.35
+/** A line that was followed, without its ends, is placed sideways by the fields around where these tell of less, mm. */
+const SIDEWAYS_MM = 0.6
+
+/** Whether the place of a line without frame is known within 1 mm: by itself and its ends, or by flat paper around. */
+export function isPlaced(anchors: readonly Anchor[], field: ResidualField, line: Rule): boolean {
+  const sides = [line.left, line.right].map((x) => ({ x, bend: field.at({ x, y: line.y }) }))
+  if (!isTraced(anchors, line)) return sides.every(({ bend }) => Math.hypot(bend.dx, bend.dy) < FLAT_MM)
+  const hasEnd = (x: number) => anchors.some((a) => !a.onlyDown && Math.abs(a.y - line.y) < 0.1 && Math.abs(a.x - x) < BESIDE_MM)
+  return sides.every(({ x, bend }) => Math.abs(bend.dx) < SIDEWAYS_MM || hasEnd(x))
+}
 
 /** Lines that stand so near each other, mm, are followed as one. */
 const SAME_LINE_MM = 6
@@ -153,9 +164,9 @@ export function traceBaselines(picture: Picture, layout: Layout, homography: Hom
       lineEnd(picture, homography, lower, { x, y: line.y }, 1),
       lineEnd(picture, homography, lower, { x: line.right, y: line.y }, -1),
     ]
-    return both.flatMap((mark) => mark ?? [])
+    return both.flatMap((end) => end ?? [])
   })
-  return [...followed, ...ends]
+  return [...followed, ...agreeing(ends)]
 }
 
 /** Height of a trace between its steps; null outside or across a gap. */
