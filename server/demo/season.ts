@@ -51,7 +51,7 @@ function codeOf(seed: string): string {
 }
 
 const ownPlot = (tractor: number): string => ['A, by the road', 'B, by the ditch'][tractor]!
-const halfOfPlot = (_tractor: number, run: number): string => ['by the road', 'by the well', 'by the ditch'][run]!
+const halfOfPlot = (_tractor: number, run: number): string => ['upper', 'middle', 'lower'][run]!
 
 /** @param plotOf names the plot of the day's nth tractor and its nth run, both from 0 */
 const runsOf = (days: readonly Day[], plotOf: (tractor: number, run: number) => string): DemoRun[] =>

@@ -29,7 +29,7 @@ interface RowsPlotProps {
   width: number
   /** The tape reaches zero. */
   zero?: boolean
-  /** A dotted tie between the rows of a group. */
+  /** A dotted tie between the rows of a group that count. */
   tied?: boolean
 }
 
@@ -105,7 +105,10 @@ function Ties({ laid, tape }: { laid: readonly Laid[]; tape: TapeScale }) {
     ({ row }) => tape.at(row.at),
     ({ y }) => y,
   )
-  const groups = [...new Set(laid.map(({ row }) => row.group))].map((group) => laid.filter(({ row }) => row.group === group))
+  const counted = laid.filter(({ row }) => !row.faint)
+  const groups = [...new Set(counted.map(({ row }) => row.group))].map((group) =>
+    counted.filter(({ row }) => row.group === group),
+  )
   return groups.map((members) => (
     <path
       key={members[0]?.row.key}
