@@ -51,6 +51,20 @@ test('each rule stands with its limits, how sure they are, and how often it was 
   expect(screen.getByText(/“new jars”/)).toBeTruthy()
 })
 
+test('a rule that never fired has nothing to be right about', async () => {
+  const api = fakeApi()
+  signedIn(api, 'analyst')
+  const [rule] = PAGE.rules
+  const quiet = { ...rule!, fired: 0, right: 0, letStand: 0, open: 0 }
+  const unanswered = { ...quiet, id: 'Q11', name: 'too little burned', fired: 2 }
+  api.on('GET', '/rules', () => answer(rulePageSchema, { ...PAGE, rules: [quiet, unanswered] }))
+  renderApp('/rules')
+  const rowOf = async (name: string) => (await screen.findByText(name)).closest('tr')?.textContent
+  expect(await rowOf('jar ran low')).toContain('–')
+  expect(await rowOf('jar ran low')).not.toContain('none answered')
+  expect(await rowOf('too little burned')).toContain('none answered')
+})
+
 test('an admin sets a limit with a reason; what was typed stays when somebody was quicker', async () => {
   const api = fakeApi()
   signedIn(api, 'admin')

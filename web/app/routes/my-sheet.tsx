@@ -1,10 +1,13 @@
 import { useQuery } from '@tanstack/react-query'
 import { Link, useParams } from 'react-router-dom'
+import type { Sheet } from '../../../shared/schemas/sheet.ts'
+import { LeastBurn } from '../../features/demonstrations/components/least-burn.tsx'
 import { MySheetDetail } from '../../features/sheets/components/my-sheet-detail.tsx'
 import { sheetName } from '../../features/sheets/sheet-words.ts'
 import { mySheetQueries } from '../../features/sheets/sheets.queries.ts'
 import { ApiError } from '../../lib/api-error.ts'
 import { paths } from '../../lib/paths.ts'
+import { registerQueries } from '../../lib/register-rows.ts'
 import { Page } from '../../ui/page.tsx'
 import { ErrorState, Loading } from '../../ui/says.tsx'
 import { NotFound } from './route-error.tsx'
@@ -41,7 +44,20 @@ export function Component() {
         </>
       }
     >
-      <MySheetDetail sheet={sheet.data} />
+      <MySheetDetail sheet={sheet.data}>
+        {sheet.data.recordNumber === null && <BurnWithItsKit sheet={sheet.data} />}
+      </MySheetDetail>
     </Page>
+  )
+}
+
+/** What to burn with the kit of a sheet that is not in the book yet: a run that is sent back may be worked again. */
+function BurnWithItsKit({ sheet }: { sheet: Sheet }) {
+  const number = sheet.readings.find((reading) => reading.key === 'kit_id')?.value
+  const kits = useQuery(registerQueries.rows('kits')).data ?? []
+  return (
+    <div className="-mx-margin">
+      <LeastBurn kits={kits.filter((kit) => kit.number === number)} />
+    </div>
   )
 }

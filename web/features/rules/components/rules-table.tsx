@@ -30,8 +30,9 @@ function LimitLine({ limit }: { limit: RuleLimit }) {
   )
 }
 
-/** "right 3 of 5" of those a person has answered. */
-function answeredWords({ right, letStand }: RuleRow): string {
+/** "right 3 of 5" of those a person has answered; nothing to say of a rule that never fired. */
+function answeredWords({ fired, right, letStand }: RuleRow): string {
+  if (fired === 0) return '–'
   return right + letStand === 0 ? 'none answered' : `${right} of ${right + letStand}`
 }
 

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react'
 import { formatValue } from '../../../../shared/layouts/cell-value.ts'
 import { findLayout } from '../../../../shared/layouts/registry.ts'
 import type { Sheet } from '../../../../shared/schemas/sheet.ts'
@@ -9,7 +10,7 @@ import { Glyph } from '../../../ui/glyphs.tsx'
 import { STATE_WORDS, wantsAnswer } from '../sheet-words.ts'
 
 /** One sheet as its demonstrator sees it: where it stands, what is asked, the picture, what was read, what happened. */
-export function MySheetDetail({ sheet }: { sheet: Sheet }) {
+export function MySheetDetail({ sheet, children }: { sheet: Sheet; children?: ReactNode }) {
   return (
     <div className="grid lg:grid-cols-[minmax(0,1fr)_minmax(0,1fr)]">
       <div className="px-margin py-3">
@@ -26,6 +27,7 @@ export function MySheetDetail({ sheet }: { sheet: Sheet }) {
           </ButtonLink>
         )}
         {sheet.openDoubts > 0 && <OpenDoubts sheet={sheet} />}
+        {children}
         <History sheet={sheet} />
       </div>
       <Pictures sheet={sheet} />
