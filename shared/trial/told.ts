@@ -109,6 +109,6 @@ function notTestedBy(results: ToldResults, operation: string | null): string[] {
     ? ['other soils', 'other gears', 'the road']
     : operation === 'transport'
       ? ['other loads', 'other roads', 'the field']
-      : ['other loads', 'the field', 'the road']
+      : ['other loads', 'the field']
   return [...other, 'other tractors', ...missing]
 }

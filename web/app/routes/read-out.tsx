@@ -42,7 +42,7 @@ function RecordReadOut({ record }: { record: TrialRecord }) {
   return (
     <ReadOut
       told={toldOf(record.results, record.implement.operation)}
-      what={line(record.tractor.name, record.implement.name)}
+      what={line(record.tractor.name, record.implement.name) || 'Tractor not known'}
       where={line(record.place.name, record.trialDate && dateText(record.trialDate), runWords(record.run))}
       standing={{
         firm: !challenged,
@@ -75,7 +75,7 @@ function SheetReadOut({ sheet }: { sheet: Sheet }) {
   return (
     <ReadOut
       told={toldOf(results, facts.operation ?? null)}
-      what={line(sheet.tractor, sheet.implement)}
+      what={line(sheet.tractor, sheet.implement) || 'Tractor not known yet'}
       where={line(sheet.place, sheet.trialDate && dateText(sheet.trialDate), run)}
       standing={
         sheet.openDoubts > 0
