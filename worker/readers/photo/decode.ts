@@ -22,6 +22,22 @@ export const sharpOnce = () => {
 
 const OPEN = { limitInputPixels: FILE_LIMITS.photo_pixels, failOn: 'truncated' } as const
 
+/**
+ * What libjpeg says where bits of the picture itself are lost: part of it is then shifted or grey, and could be read as something
+ * else. Its other warnings (bytes too many before a marker, odd parameters) come with sound pictures of some phones.
+ */
+const LOST_BITS = /bad Huffman|premature end of data|instead of RST|Corrupt JPEG data: bad/i
+
+/** Decodes strictly; a warning that costs no part of the picture is passed over by decoding once more. */
+async function strictly<T>(decode: (open: { failOn: 'warning' | 'truncated' }) => Promise<T>): Promise<T> {
+  try {
+    return await decode({ failOn: 'warning' })
+  } catch (cause) {
+    if (cause instanceof Error && LOST_BITS.test(cause.message)) throw cause
+    return decode({ failOn: 'truncated' })
+  }
+}
+
 /** How many pages a JPEG, PNG, WebP or TIFF file holds. */
 export async function countImagePages(bytes: Uint8Array): Promise<number> {
   const sharp = await sharpOnce()
@@ -42,14 +58,14 @@ export async function countImagePages(bytes: Uint8Array): Promise<number> {
 export async function decodeImage(bytes: Uint8Array, page: number, colour: boolean, most_px?: number): Promise<Raster> {
   const sharp = await sharpOnce()
   try {
-    const image = sharp(bytes, { ...OPEN, page })
-    const { channels = 3 } = await image.metadata()
-    const upright = image.autoOrient().flatten({ background: '#ffffff' })
-    if (most_px) upright.resize({ width: most_px, withoutEnlargement: true })
-    const wanted = channels < 3 ? upright.greyscale() : upright.toColourspace('srgb')
-    const { data, info } = await (colour || channels < 3 ? wanted : wanted.extractChannel('green'))
-      .raw()
-      .toBuffer({ resolveWithObject: true })
+    const { data, info } = await strictly(async (how) => {
+      const image = sharp(bytes, { ...OPEN, ...how, page })
+      const { channels = 3 } = await image.metadata()
+      const upright = image.autoOrient().flatten({ background: '#ffffff' })
+      if (most_px) upright.resize({ width: most_px, withoutEnlargement: true })
+      const wanted = channels < 3 ? upright.greyscale() : upright.toColourspace('srgb')
+      return (colour || channels < 3 ? wanted : wanted.extractChannel('green')).raw().toBuffer({ resolveWithObject: true })
+    })
     return {
       width: info.width,
       height: info.height,
