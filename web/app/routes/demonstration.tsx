@@ -83,7 +83,9 @@ function DayPage({ day }: { day: Demonstration }) {
             </h2>
             <TrialRuns trials={day.trials} links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint }} />
           </section>
-          <LeastBurn kits={kits} />
+          <div className="px-margin">
+            <LeastBurn kits={kits} />
+          </div>
           {layouts.map((layout) => (
             <CheckList key={layout.key} layout={layout} among={layouts.length} />
           ))}

@@ -55,9 +55,5 @@ export function Component() {
 function BurnWithItsKit({ sheet }: { sheet: Sheet }) {
   const number = sheet.readings.find((reading) => reading.key === 'kit_id')?.value
   const kits = useQuery(registerQueries.rows('kits')).data ?? []
-  return (
-    <div className="-mx-margin">
-      <LeastBurn kits={kits.filter((kit) => kit.number === number)} />
-    </div>
-  )
+  return <LeastBurn kits={kits.filter((kit) => kit.number === number)} />
 }

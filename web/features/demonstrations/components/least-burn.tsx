@@ -5,7 +5,7 @@ import { burnLines } from '../plan-model.ts'
 export function LeastBurn({ kits }: { kits: readonly Kit[] }) {
   if (kits.length === 0) return null
   return (
-    <section aria-labelledby="least-burn" className="px-margin pt-3">
+    <section aria-labelledby="least-burn" className="pt-3">
       <h2 id="least-burn" className="pb-0.5 text-2">
         Burn at least
       </h2>
