@@ -49,6 +49,8 @@ test('a block printed before the tractor was exchanged names tractor and both nu
 
 test('what could not be recognised says nothing', () => {
   expect(planFindings(['tract?r l2', ''], plan)).toEqual([])
+  expect(planFindings(['date 47-11-2026'], plan)).toEqual([])
+  expect(planFindings(['date 20-10-2626'], plan)).toEqual([])
 })
 
 test('every number that the block prints is compared', () => {

@@ -12,9 +12,12 @@ interface Printed {
 
 const day = (iso: string) => iso.split('-').reverse().join('-')
 
+/** A day a demonstration can be on, DD-MM-YYYY; another one was not printed so, but read so. */
+const A_DAY = /\b((?:0[1-9]|[12]\d|3[01])-(?:0[1-9]|1[0-2])-20[0-4]\d)\b/
+
 /** As server/print/plan-lines.ts prints them. */
 const PRINTED: readonly Printed[] = [
-  { cell: 'trial_date', words: 'date', pattern: /\b(\d{2}-\d{2}-\d{4})\b/, planned: (p) => day(p.heldOn) },
+  { cell: 'trial_date', words: 'date', pattern: A_DAY, planned: (p) => day(p.heldOn) },
   { cell: 'place_id', words: 'place', pattern: /\bplace\s+(\d{1,4})\b/i, planned: (p) => String(p.placeNumber) },
   { cell: 'tractor_id', words: 'tractor', pattern: /\btractor\s+(\d{1,4})\b/i, planned: (p) => String(p.tractorNumber) },
   { cell: 'implement_id', words: 'implement', pattern: /\bimplement\s+(\d{1,4})\b/i, planned: (p) => String(p.implementNumber) },
