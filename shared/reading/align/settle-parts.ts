@@ -26,6 +26,8 @@ const BETWEEN = 4.5
 
 /** Where a field's own lines are not plain its lean is its neighbours', and its corners are off by so much more than its middle. */
 const TO_CORNER = 1.3
+/** A lean that only neighbours tell is right to this share of itself. */
+const LEAN_SHARE = 0.3
 
 export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[]): PlacedPart[] {
   const byKey = new Map(marks.map((mark, i) => [mark.key, i]))
@@ -51,10 +53,23 @@ export function settleParts(parts: readonly FieldPart[], marks: readonly Mark[])
       dyy: (plain ? dyy : null) ?? around.dyy,
     }
     const own_mm = spread_mm === undefined || Number.isNaN(spread_mm) ? 0 : spread_mm
+    const half_mm = halfWidth(part)
+    if (plain) {
+      // One line taken for another at one end stretches a comb as no paper does: its corners are off, not its middle.
+      const others = field.at(center, part.key)
+      const lean_mm = Math.hypot(displacement.dxx - others.dxx, displacement.dyx - others.dyx) * half_mm
+      return { part, center, displacement, found: true, seen: true, fit_mm: Math.max(own_mm, lean_mm) }
+    }
     // Lines that are not plain and do not fit well among themselves may be others' lines.
-    const fit_mm = plain ? own_mm : TO_CORNER * off.get(mark)! + own_mm
+    const corner_mm = LEAN_SHARE * Math.hypot(around.dxx, around.dyx) * half_mm
+    const fit_mm = TO_CORNER * off.get(mark)! + own_mm + corner_mm
     return { part, center, displacement, found: true, seen: true, fit_mm }
   })
+}
+
+function halfWidth({ boxes }: FieldPart): number {
+  const [first, last] = [boxes[0]!, boxes.at(-1)!]
+  return (last.x + last.width - first.x) / 2
 }
 
 function vouched(part: FieldPart, center: Point, off: ReadonlyMap<Mark, number>): number | null {
