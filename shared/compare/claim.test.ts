@@ -44,7 +44,7 @@ describe('the claim', () => {
       'On 6 paired plots at Kelwadi, ploughing, 15.1 cm deep against 15.2 cm, B used 0.9 ± 0.5 L/ha less than A.',
     )
     expect(said.because).toEqual([
-      'the 95 % interval, 0.36 to 1.38 L/ha, leaves out zero, and the gap, 0.87, is wider than the ± of one run, 0.70.',
+      'the 95 % interval of A − B, 0.36 to 1.38 L/ha, leaves out zero, and the gap, 0.87, is wider than the ± of one run, 0.70.',
     ])
     expect(said.mayNot).toContain('in other soils')
   })
@@ -56,7 +56,13 @@ describe('the claim', () => {
   it('may not be said of the same values where only the days were shared', () => {
     const said = claim({}, 'blocks', 'day')
     expect(said.may).toBe(false)
+    expect(said.before).toBe('No difference may be said, because plot and tractor are mixed within a day: B measured')
     expect(said.because).toEqual(['plot and tractor are mixed within a day: only work on the same plots carries a difference'])
+  })
+
+  it('gives the interval in the direction of the tables', () => {
+    const gaps = [{ first: 'B', second: 'A', difference: -0.9, interval: [-1.4, -0.4] as [number, number] }]
+    expect(claim({ gaps }).because[0]).toContain('the 95 % interval of B − A, −1.40 to −0.40 L/ha, leaves out zero')
   })
 
   it.each<[string, Partial<Matter>, DesignKind, string]>([
@@ -67,7 +73,7 @@ describe('the claim', () => {
       'the interval holds zero',
       { gaps: [{ first: 'A', second: 'B', difference: 0.9, interval: [-0.1, 1.9] }] },
       'paired',
-      'the 95 % interval, −0.10 to 1.90 L/ha, holds zero',
+      'the 95 % interval of A − B, −0.10 to 1.90 L/ha, holds zero',
     ],
     [
       'the one that burned less worked shallower, and no less for each m³',
@@ -78,7 +84,11 @@ describe('the claim', () => {
   ])('may not be said where %s', (_what, changes, kind, because) => {
     const said = claim(changes, kind)
     expect(said.may).toBe(false)
-    expect(said.before).toBe('No difference may be said: B measured')
+    expect(said.before).toBe(
+      kind === 'one factor'
+        ? 'No difference may be said, because the fields differ as well as the tractors: B measured'
+        : 'No difference may be said: B measured',
+    )
     expect(said.because.join('; ')).toContain(because)
   })
 

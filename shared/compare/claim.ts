@@ -21,6 +21,12 @@ export interface Matter {
   setting: string
 }
 
+/** A gap as the tables give it, and as the sentence does: the lower one first. */
+interface Seen {
+  tabled: Gap
+  gap: Gap
+}
+
 const FUEL: readonly ComparedFigure[] = ['l_per_ha', 'l_per_h', 'l_per_acre', 'ml_per_m3']
 const FUEL_BY_AREA: readonly ComparedFigure[] = ['l_per_ha', 'l_per_acre', 'l_per_h']
 const MAY_NOT =
@@ -39,20 +45,21 @@ export const noClaim = (because: string): Claim => ({
 /** One sentence of what may be said of the widest gap that may be said, or that none may. */
 export function claimOf(matter: Matter): Claim {
   const judged = matter.gaps
-    .map((gap) => (gap.difference <= 0 ? gap : turned(gap)))
-    .map((gap) => ({ gap, objections: objectionsTo(gap, matter) }))
+    .map((tabled) => ({ tabled, gap: tabled.difference <= 0 ? tabled : turned(tabled) }))
+    .map((seen) => ({ ...seen, objections: objectionsTo(seen, matter) }))
     .sort((a, b) => a.gap.difference - b.gap.difference)
   const best = judged.find((one) => one.objections.length === 0)
-  if (best) return mayBeSaid(best.gap, judged.length, judged.filter((one) => one.objections.length === 0).length, matter)
+  if (best) return mayBeSaid(best, judged.length, judged.filter((one) => one.objections.length === 0).length, matter)
   const widest = judged[0]
   if (!widest) return noClaim('The runs carry no interval.')
   const { gap } = widest
-  const several = matter.analysis.design.treatments.length > 2
+  const count = matter.analysis.design.treatments.length
+  const none = count > 2 ? `Between these ${count} ${matter.noun}s no difference may be said` : 'No difference may be said'
+  const mixed = mixedUp(matter)
   return {
     may: false,
-    before: several
-      ? `Between these ${matter.analysis.design.treatments.length} ${matter.noun}s no difference may be said: ${gap.first} measured`
-      : `No difference may be said: ${gap.first} measured`,
+    // What the runs themselves cannot carry stands in the sentence: small p values beside it do not mend it.
+    before: `${none}${mixed ? `, because ${mixed}` : ''}: ${gap.first} measured`,
     figure: banded(gap),
     after: `${matter.unit} less than ${gap.second}${tail(matter)}.`,
     because: widest.objections,
@@ -60,7 +67,7 @@ export function claimOf(matter: Matter): Claim {
   }
 }
 
-function mayBeSaid(gap: Gap, all: number, sayable: number, matter: Matter): Claim {
+function mayBeSaid({ tabled, gap }: Seen, all: number, sayable: number, matter: Matter): Claim {
   const { unit, runU, analysis } = matter
   const verb = FUEL.includes(matter.figure) ? 'used' : 'measured'
   const rest = all - sayable
@@ -72,20 +79,20 @@ function mayBeSaid(gap: Gap, all: number, sayable: number, matter: Matter): Clai
     figure: banded(gap),
     after: `${unit} less than ${gap.second}.`,
     because: [
-      `the ${percent(analysis)} interval, ${span(gap)} ${unit}, leaves out zero, and the gap, ${shown(-gap.difference, gap)}, is wider than the ± of one run, ${shown(runU ?? 0, gap)}.${others}`,
+      `the ${percent(analysis)} interval of ${span(tabled)} ${unit}, leaves out zero, and the gap, ${shown(-gap.difference, gap)}, is wider than the ± of one run, ${shown(runU ?? 0, gap)}.${others}`,
     ],
     mayNot: MAY_NOT,
   }
 }
 
 /** Why this gap may not be said; empty where it may. `first` is the lower one. */
-function objectionsTo(gap: Gap, { analysis, unit, runU, noun, figure, beside }: Matter): string[] {
+function objectionsTo({ tabled, gap }: Seen, matter: Matter): string[] {
+  const { analysis, unit, runU, figure, beside } = matter
   const said: string[] = []
-  if (analysis.design.kind === 'one factor')
-    said.push(`the fields differ as well as the ${noun}s: nothing paired the runs or put them in blocks`)
-  else if (analysis.design.block !== 'plot')
-    said.push(`plot and ${noun} are mixed within a ${analysis.design.block}: only work on the same plots carries a difference`)
-  if (gap.interval[1] >= 0) said.push(`the ${percent(analysis)} interval, ${span(gap)} ${unit}, holds zero`)
+  const mixed = mixedUp(matter)
+  if (mixed && analysis.design.kind === 'one factor') said.push(`${mixed}: nothing paired the runs or put them in blocks`)
+  else if (mixed) said.push(`${mixed}: only work on the same plots carries a difference`)
+  if (gap.interval[1] >= 0) said.push(`the ${percent(analysis)} interval of ${span(tabled)} ${unit}, holds zero`)
   if (runU === null) said.push('the ± of a run is not known')
   else if (-gap.difference <= runU)
     said.push(`the gap, ${shown(-gap.difference, gap)} ${unit}, is not wider than the ± of one run, ${shown(runU, gap)}`)
@@ -96,6 +103,12 @@ function objectionsTo(gap: Gap, { analysis, unit, runU, noun, figure, beside }: 
       said.push(`${gap.first} worked ${(-depth.difference).toFixed(1)} cm shallower, and for each m³ of soil it did not use less`)
   }
   return said
+}
+
+/** What the runs mix up, so that no gap between them may be said; null where they shared plots. */
+function mixedUp({ analysis: { design }, noun }: Matter): string | null {
+  if (design.kind === 'one factor') return `the fields differ as well as the ${noun}s`
+  return design.block === 'plot' ? null : `plot and ${noun} are mixed within a ${design.block}`
 }
 
 function besideGap(beside: readonly Beside[], key: ComparedFigure, { first, second }: Gap): Gap | null {
@@ -126,6 +139,7 @@ const banded = (gap: Gap): string => {
   const { value, U } = roundByUncertainty(-gap.difference, half(gap))
   return `${value} ± ${U}`
 }
-/** The interval of how much less the first is. */
-const span = (gap: Gap): string => `${shown(-gap.interval[1], gap)} to ${shown(-gap.interval[0], gap)}`.replaceAll('-', '−')
+/** The pair and its interval, in the direction the tables and plots give it. */
+const span = (gap: Gap): string =>
+  `${gap.first} − ${gap.second}, ${[...gap.interval].map((end) => shown(end, gap).replace('-', '−')).join(' to ')}`
 const tail = ({ setting }: Matter): string => (setting === '' ? '' : `, ${setting}`)

@@ -161,9 +161,11 @@ function Pairs({ analysis, unit }: { analysis: Analysis; unit: string }) {
       />
       <p className="label pt-0.5">
         {hsd !== null && `Tukey’s least difference ${hsd.toPrecision(3)} ${unit}. `}
-        {lsd === null
-          ? 'No least difference for pairs alone: F is not significant, or errors differ.'
-          : `For a pair alone ${lsd.toPrecision(3)} ${unit}.`}
+        {lsd !== null
+          ? `For a pair alone ${lsd.toPrecision(3)} ${unit}.`
+          : hsd === null
+            ? 'No one least difference holds for all pairs: their errors differ, as where runs are not equally many.'
+            : 'No least difference for pairs alone: F is not significant.'}
       </p>
     </>
   )
