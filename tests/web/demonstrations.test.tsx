@@ -45,9 +45,9 @@ test('a demonstrator plans two trials for themselves; the second keeps implement
   const added = within(screen.getByRole('group', { name: 'Trial 2' }))
   expect(added.getByLabelText<HTMLSelectElement>('tractor').value).toBe('')
   await user.selectOptions(added.getByLabelText('tractor'), second?.id ?? '')
-  await user.type(added.getByLabelText('plot'), 'lower')
   await user.selectOptions(added.getByLabelText('sheet'), 'haulage and PTO work')
-  expect(added.getByText('This sheet has no plot: write the way or the yard.')).toBeDefined()
+  expect(added.queryByLabelText('plot')).toBeNull()
+  await user.type(added.getByLabelText('way or yard'), 'lower')
   await user.click(screen.getByRole('button', { name: 'Save the plan and make its sheets' }))
 
   await waitFor(() => expect(router.state.location.pathname).toBe(`/demonstrations/${id(100)}`))
@@ -122,7 +122,7 @@ test('a day shows where each run stands; consent is withdrawn only with a reason
   expect(screen.queryByRole('link', { name: /sheet of run 1/ })).toBeNull()
 
   await user.click(screen.getByText('The farmer withdraws consent'))
-  expect(screen.getByText(/Erased for good: name and phone/)).toBeDefined()
+  expect(screen.getByText(/Erased for good: name, phone and e-mail/)).toBeDefined()
   const erase = screen.getByRole<HTMLButtonElement>('button', { name: 'Erase the farmer' })
   expect(erase.disabled).toBe(true)
   await user.click(screen.getByRole('checkbox', { name: /cannot be undone/ }))

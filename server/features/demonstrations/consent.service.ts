@@ -13,7 +13,7 @@ import { writeTrail } from '../trail/trail.service.ts'
 import { checkMayChange, getDemonstration } from './get-demonstration.ts'
 
 /**
- * Erases the farmer of a demonstration: name and phone, and their place in every stored picture. The readings stay.
+ * Erases the farmer of a demonstration: name, phone and e-mail, and their place in every stored picture. The readings stay.
  * The trail keeps a salted hash, by which somebody who knows name and phone can prove that it was they.
  * @throws UserError `not_found` (also for another demonstrator's), `conflict` when it was done before
  */

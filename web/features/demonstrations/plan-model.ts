@@ -123,9 +123,8 @@ export function leastArea_ha(kit: Kit, tool: Implement): number | null {
 /** The sheets a run can be written on, by what they are for. */
 export const sheetChoices = NEWEST_LAYOUTS.map((layout) => ({ value: layout.key, words: workOf(layout) }))
 
-/** Said where the sheet chosen has no plot to peg out: the line is printed all the same. */
-export const plotNote = (layout: string | undefined): string | null =>
-  findLayout(layout ?? USUAL_LAYOUT)?.figure ? null : 'This sheet has no plot: write the way or the yard.'
+/** Whether a plot is pegged out for the sheet chosen. Without one the line is printed all the same: for the way or the yard. */
+export const hasPlot = (layout: string | undefined): boolean => Boolean(findLayout(layout ?? USUAL_LAYOUT)?.figure)
 
 /** A row of a register, or a person, that a plan can name. */
 export interface Chosen {

@@ -119,7 +119,7 @@ export function PlanForm({ begin, choices, farmerKnown, pending, error, saveWord
             </div>
           ) : (
             <p className="border-t-[1.5px] border-ink py-1">
-              Consent was withdrawn: name and phone are erased, and planning does not bring them back.
+              Consent was withdrawn: name, phone and e-mail are erased, and planning does not bring them back.
             </p>
           )}
         </section>

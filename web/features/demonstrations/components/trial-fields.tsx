@@ -3,7 +3,7 @@ import { RUNS_MAX, type SaveDemonstration } from '../../../../shared/schemas/dem
 import type { Implement, Kit } from '../../../../shared/schemas/register.ts'
 import { Button } from '../../../ui/button.tsx'
 import type { FieldOption } from '../../../ui/field.tsx'
-import { leastArea_ha, leastFuel_l, oldCheck, plotNote, sheetChoices } from '../plan-model.ts'
+import { hasPlot, leastArea_ha, leastFuel_l, oldCheck, sheetChoices } from '../plan-model.ts'
 import { FormCell } from './form-cell.tsx'
 
 export interface TrialChoices {
@@ -51,7 +51,7 @@ export function TrialFields({ index, register, errors, choices, kit, tool, heldO
         <FormCell label="kit" error={wrong?.kitId?.message} note={kit ? oldCheck(kit, heldOn) : null}>
           {(tied) => <Options {...tied} {...name('kitId')} options={choices.kits} />}
         </FormCell>
-        <FormCell label="plot" error={wrong?.plot?.message} note={plotNote(layout)}>
+        <FormCell label={hasPlot(layout) ? 'plot' : 'way or yard'} error={wrong?.plot?.message}>
           {(tied) => <input {...tied} {...name('plot')} autoComplete="off" />}
         </FormCell>
         <FormCell label="sheet" error={wrong?.layout?.message}>
@@ -61,7 +61,7 @@ export function TrialFields({ index, register, errors, choices, kit, tool, heldO
           {(tied) => <input {...tied} {...name('runs')} inputMode="numeric" autoComplete="off" />}
         </FormCell>
       </div>
-      {kit && <LeastFuel kit={kit} tool={plotNote(layout) === null ? tool : undefined} />}
+      {kit && <LeastFuel kit={kit} tool={hasPlot(layout) ? tool : undefined} />}
     </fieldset>
   )
 }

@@ -25,8 +25,8 @@ export function WithdrawConsent({ pending, error, onWithdraw }: WithdrawConsentP
       <summary className="word inline-block">The farmer withdraws consent</summary>
       <form noValidate className="mt-1 max-w-[640px]" onSubmit={form.handleSubmit(({ reason }) => onWithdraw(reason))}>
         <p>
-          Erased for good: name and phone, and the place of name and signature in every stored picture of these sheets. A picture
-          whose page was never found is removed whole.
+          Erased for good: name, phone and e-mail, and the place of name and signature in every stored picture of these sheets. A
+          picture whose page was never found is removed whole.
         </p>
         <p className="py-1">
           Kept: the readings, the figures and the records, which name nobody. The trail says that consent was withdrawn, by whom
