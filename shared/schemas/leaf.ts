@@ -4,6 +4,8 @@ import { z } from 'zod'
 export const leafStatusSchema = z.object({
   /** Why it cannot be sent by mail now; null when it can. */
   why: z.string().nullable(),
+  /** The plan that can take the farmer's e-mail address, where its lack is why; else null. */
+  planId: z.string().nullable(),
   /** Versions of the record whose leaf was handed to the mail, newest first. */
   sent: z.array(
     z.object({

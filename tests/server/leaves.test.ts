@@ -106,7 +106,9 @@ describe('the leaf', () => {
     ['the farmer did not agree', { consent_contact: 'no' }, 'matis@fields.example', /did not agree/],
     ['there is no address', {}, '', /no e-mail address/],
   ] as const)('does not go out where %s', async (_, readings, email, why) => {
-    const { number } = await entered(readings, email)
+    const { number, planned } = await entered(readings, email)
+    // Only a missing address is mended in the plan.
+    expect((await status(number)).planId).toBe(email === '' ? planned.id : null)
     expect(await send(number)).toMatchObject({ status: 409, body: { error: { message: expect.stringMatching(why) } } })
     await deliver()
     expect(received).toEqual([])

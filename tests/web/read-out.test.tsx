@@ -37,9 +37,11 @@ test('the leaf goes out once: afterwards the page says when, and offers it no mo
   const api = fakeApi()
   signedIn(api, 'demonstrator')
   shown(api, buildRecord())
-  api.on('GET', '/records/231/leaf', () => answer(leafStatusSchema, { why: null, sent: [] }))
+  api.on('GET', '/records/231/leaf', () => answer(leafStatusSchema, { why: null, planId: null, sent: [] }))
   const gone = { version: 1, by: 'Ossa Brandt', at: '2026-10-15T09:00:00.000Z', state: 'queued' as const, error: null }
-  api.on('POST', '/records/231/leaf', () => answer(leafStatusSchema, { why: 'It has gone out already.', sent: [gone] }))
+  api.on('POST', '/records/231/leaf', () =>
+    answer(leafStatusSchema, { why: 'It has gone out already.', planId: null, sent: [gone] }),
+  )
   renderApp('/book/231')
   await userEvent.setup().click(await screen.findByRole('button', { name: 'Send it to the farmer' }))
   expect(await screen.findByText(/version 1: waits to go out/)).toBeDefined()

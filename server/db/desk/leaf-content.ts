@@ -13,6 +13,8 @@ export interface Leaf {
   sheetId: string
   /** The farmer as the plan names them; null for unplanned sheets, and once consent was withdrawn. */
   farmer: { name: string; email: string } | null
+  /** The demonstration whose plan it is; null for unplanned sheets. */
+  demonstrationId: string | null
   /** The farmer ticked on the sheet that they may be contacted. */
   mayBeContacted: boolean
 }
@@ -31,6 +33,7 @@ export async function findLeaf(db: Db, number: number, version?: number): Promis
   return {
     sheetId: record.sheetId,
     farmer: farmer && { name: farmer.name, email: farmer.email ?? '' },
+    demonstrationId: run?.demonstrationId ?? null,
     mayBeContacted: consent === 'yes',
     content: {
       row,

@@ -28,6 +28,8 @@ export async function leafPdf(deps: Deps, actor: User, number: number, version?:
   return printLeaf(actor.role === 'analyst' ? { ...content, farmerName: null } : content)
 }
 
+const NO_ADDRESS = 'The plan has no e-mail address for the farmer: add it there first.'
+
 /** Why the leaf cannot go out by mail; null when it can. */
 function obstacle(leaf: Leaf, sent: LeafStatus['sent']): string | null {
   const { state, version } = leaf.content.row
@@ -35,7 +37,7 @@ function obstacle(leaf: Leaf, sent: LeafStatus['sent']): string | null {
     return 'The record is challenged and back at the desk. Its leaf can go out when it is entered again.'
   if (!leaf.farmer) return 'The plan names no farmer, or the farmer withdrew consent.'
   if (!leaf.mayBeContacted) return 'On the sheet the farmer did not agree to be contacted.'
-  if (!leaf.farmer.email) return 'The plan has no e-mail address for the farmer: add it there first.'
+  if (!leaf.farmer.email) return NO_ADDRESS
   if (sent.some((s) => s.version === version && s.state !== 'failed')) return 'The leaf of this version has gone out already.'
   return null
 }
@@ -44,7 +46,8 @@ export async function leafStatus(deps: Deps, actor: User, number: number): Promi
   const db = deps.source.manager
   const leaf = await ownLeaf(db, actor, number)
   const sent = await listLeaves(db, number)
-  return { why: obstacle(leaf, sent), sent }
+  const why = obstacle(leaf, sent)
+  return { why, planId: why === NO_ADDRESS ? leaf.demonstrationId : null, sent }
 }
 
 /** @throws UserError `conflict` with the reason why it cannot go out */

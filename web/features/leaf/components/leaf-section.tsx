@@ -1,5 +1,7 @@
 import { useQuery } from '@tanstack/react-query'
+import { Link } from 'react-router-dom'
 import type { LeafStatus } from '../../../../shared/schemas/leaf.ts'
+import { paths } from '../../../lib/paths.ts'
 import { momentText } from '../../../lib/time.ts'
 import { Button } from '../../../ui/button.tsx'
 import { ErrorNote } from '../../../ui/says.tsx'
@@ -42,7 +44,14 @@ export function LeafSection({ number, version, maySend }: LeafSectionProps) {
       {maySend && status.data && (
         <div className="border-t border-feint py-1">
           {status.data.why ? (
-            <p className="label">{status.data.why}</p>
+            <p className="label">
+              {status.data.why}{' '}
+              {status.data.planId && (
+                <Link className="word" to={paths.editDemonstration.to(status.data.planId)}>
+                  Change the plan
+                </Link>
+              )}
+            </p>
           ) : (
             <Button disabled={send.isPending} onClick={() => send.mutate()}>
               Send it to the farmer
