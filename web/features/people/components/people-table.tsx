@@ -2,6 +2,7 @@ import { useState } from 'react'
 import { ROLES, type Role, type User } from '../../../../shared/schemas/user.ts'
 import { Button } from '../../../ui/button.tsx'
 import { type LedgerColumn, LedgerTable } from '../../../ui/ledger-table.tsx'
+import { SignInSwitch } from './sign-in-switch.tsx'
 
 interface PeopleTableProps {
   people: readonly User[]
@@ -65,15 +66,7 @@ export function PeopleTable({ people, me, onRole, onActive, onInvite }: PeopleTa
               invite again
             </Button>
           )}
-          {p.id !== me.id && (
-            <Button
-              look="word"
-              onClick={() => onActive(p, !p.active)}
-              aria-label={`${p.active ? 'Disable' : 'Enable'} ${p.name}`}
-            >
-              {p.active ? 'disable' : 'enable'}
-            </Button>
-          )}
+          {p.id !== me.id && <SignInSwitch key={String(p.active)} person={p} onActive={(active) => onActive(p, active)} />}
         </span>
       ),
     },
