@@ -32,9 +32,11 @@ const LAYOUT = findLayout('tillage', 1)!
 /** Two filled sheets, scanned small: what the pieces are cut from. Made once. */
 let bases: Promise<readonly [Base, Base]> | null = null
 const twoSheets = () => {
-  bases ??= Promise.all([filled('fuzz one'), filled('fuzz two')])
+  bases ??= oneByOne()
   return bases
 }
+/** The simulator draws on one page at a time: made together, both pictures would show the second sheet. */
+const oneByOne = async () => [await filled('fuzz one'), await filled('fuzz two')] as const
 
 async function filled(seed: string): Promise<Base> {
   const scan = { dpi: 150, grey: true, skew: 0.004, scale: 1, copied: false, contrast: 1, jpegQuality: 80 }
