@@ -94,6 +94,15 @@ test('limits made on an old version, or of no rule, are refused', async () => {
   expect((await rules()).settingsVersion).toBe(settingsVersion)
 })
 
+test('a limit out of its range is refused, and limits in force already make no new version', async () => {
+  const { settingsVersion: version } = await rules()
+  const wrong = await admin.post('/rules/limits', { limits: { kit_check_months: -3 }, why: 'a slip', version })
+  expect(wrong).toMatchObject({ status: 400, body: { error: { issues: [{ path: 'limits.kit_check_months' }] } } })
+  const same = await admin.post('/rules/limits', { limits: { kit_check_months: 12, late_days: null }, why: 'the same', version })
+  expect(same.status).toBe(409)
+  expect((await rules()).settingsVersion).toBe(version)
+})
+
 test('of ten admins who set limits on one version, one is heard', async () => {
   const { settingsVersion: version } = await rules()
   const writes = Array.from({ length: 10 }, (_, i) =>

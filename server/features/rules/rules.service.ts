@@ -1,4 +1,5 @@
 /** The rules with their limits. A change of limits is a new version; sheets not entered yet are judged by it at once. */
+import { limitProblems } from '../../../shared/checks/limit-range.ts'
 import { certaintyOf, LIMITS, type LimitName, limitWords } from '../../../shared/checks/limits.ts'
 import { limitsOfRule } from '../../../shared/checks/rule-limits.ts'
 import { RULES, RULES_VERSION } from '../../../shared/checks/run-checks.ts'
@@ -43,14 +44,19 @@ export async function readRules(db: Db): Promise<RulePage> {
   }
 }
 
-/** @throws UserError `invalid` for a limit no rule has, `changed` when somebody set limits meanwhile */
+/**
+ * @throws UserError `invalid` for a limit no rule has or out of its range, `changed` when somebody set limits meanwhile,
+ * `conflict` when these are in force already
+ */
 export async function setLimits(deps: Deps, actor: User, input: SaveLimits): Promise<RulePage> {
   return deps.source.transaction(async (db) => {
     const standing = await currentLimits(db)
     const limits = mergedLimits(standing.limits, input.limits)
+    if (standing.version !== input.version) throw meanwhile()
+    if (Object.keys(input.limits).every((name) => isSame(name as LimitName, standing.limits, limits)))
+      throw new UserError('conflict', 'These limits are in force already. No new version was made.')
     const next = { version: input.version + 1, limits, why: input.why, by: actor.id }
-    if (standing.version !== input.version || !(await addLimitVersion(db, next)))
-      throw new UserError('changed', 'Somebody set limits after you loaded them. Yours were not saved.')
+    if (!(await addLimitVersion(db, next))) throw meanwhile()
     const text = `limits, version ${next.version}: ${changeWords(standing.limits, input.limits)}. “${input.why}”`
     await writeTrail(db, {
       actor,
@@ -65,13 +71,24 @@ export async function setLimits(deps: Deps, actor: User, input: SaveLimits): Pro
   })
 }
 
+const meanwhile = () => new UserError('changed', 'Somebody set limits after you loaded them. Yours were not saved.')
+
+const isSame = (name: LimitName, a: LimitValues, b: LimitValues) =>
+  (a[name] ?? LIMITS[name].value) === (b[name] ?? LIMITS[name].value)
+
 function mergedLimits(standing: LimitValues, changes: SaveLimits['limits']): LimitValues {
   const unknown: Issue[] = Object.keys(changes)
     .filter((name) => !Object.hasOwn(LIMITS, name))
     .map((name) => ({ path: `limits.${name}`, message: 'No rule has this limit.' }))
   if (unknown.length > 0) throw new UserError('invalid', 'A limit is not known. Nothing was saved.', { issues: unknown })
-  const merged = { ...standing, ...changes }
-  return Object.fromEntries(Object.entries(merged).filter((entry): entry is [string, number] => entry[1] !== null))
+  const entries = Object.entries({ ...standing, ...changes }).filter((entry): entry is [string, number] => entry[1] !== null)
+  const merged = Object.fromEntries(entries)
+  const issues = Object.entries(limitProblems(merged, Object.keys(changes))).map(([name, message]) => ({
+    path: `limits.${name}`,
+    message,
+  }))
+  if (issues.length > 0) throw new UserError('invalid', 'A limit is out of its range. Nothing was saved.', { issues })
+  return merged
 }
 
 function changeWords(standing: LimitValues, changes: SaveLimits['limits']): string {
