@@ -1,4 +1,4 @@
-import type { ReactNode } from 'react'
+import { Fragment, type ReactNode } from 'react'
 
 export interface LedgerColumn<Row> {
   key: string
@@ -37,6 +37,8 @@ interface LedgerTableProps<Row> {
   quiet?: (row: Row) => boolean
   /** Pressing anywhere in a row; the row's own link must do the same for the keyboard. */
   onRow?: (row: Row) => void
+  /** What is opened under a row, over the whole width; null where nothing is. */
+  under?: (row: Row) => ReactNode
   /** Closes the table: cells of a last row over the double rule. */
   total?: ReactNode
   /** On a phone each row stands as a block of named lines, and nothing scrolls sideways. */
@@ -45,7 +47,7 @@ interface LedgerTableProps<Row> {
 
 /** No frame, no stripes, no filled heads: rules, right-aligned figures, groups as sentences. */
 export function LedgerTable<Row>(table: LedgerTableProps<Row>) {
-  const { caption, columns, groups, rowKey, inHand, quiet, onRow, total, stacked = false } = table
+  const { caption, columns, groups, rowKey, inHand, quiet, onRow, under, total, stacked = false } = table
   return (
     <div className="overflow-x-auto">
       <table className={`w-full border-collapse text-left ${stacked ? 'max-sm:block' : ''}`}>
@@ -77,21 +79,34 @@ export function LedgerTable<Row>(table: LedgerTableProps<Row>) {
               </tr>
             )}
             {group.rows.map((row) => (
-              <LedgerRow
-                key={rowKey(row)}
-                row={row}
-                columns={columns}
-                held={inHand?.(row) ?? false}
-                quiet={quiet?.(row) ?? false}
-                stacked={stacked}
-                {...(onRow ? { onRow } : {})}
-              />
+              <Fragment key={rowKey(row)}>
+                <LedgerRow
+                  row={row}
+                  columns={columns}
+                  held={inHand?.(row) ?? false}
+                  quiet={quiet?.(row) ?? false}
+                  stacked={stacked}
+                  {...(onRow ? { onRow } : {})}
+                />
+                <Under opened={under?.(row)} span={columns.length} stacked={stacked} />
+              </Fragment>
             ))}
           </tbody>
         ))}
         {total && <tfoot className="double-under border-t border-ink font-[700]">{total}</tfoot>}
       </table>
     </div>
+  )
+}
+
+function Under({ opened, span, stacked }: { opened: ReactNode; span: number; stacked: boolean }) {
+  if (!opened) return null
+  return (
+    <tr className={stacked ? 'max-sm:block' : ''}>
+      <td colSpan={span} className={stacked ? 'max-sm:block' : ''}>
+        {opened}
+      </td>
+    </tr>
   )
 }
 

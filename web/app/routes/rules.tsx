@@ -1,8 +1,9 @@
 import { useQuery } from '@tanstack/react-query'
 import { useState } from 'react'
+import type { RulePage, RuleRow } from '../../../shared/schemas/rules.ts'
 import type { Role } from '../../../shared/schemas/user.ts'
 import { LimitsForm } from '../../features/rules/components/limits-form.tsx'
-import { RulesTable } from '../../features/rules/components/rules-table.tsx'
+import { RulesTable, setLimitsId } from '../../features/rules/components/rules-table.tsx'
 import { Versions } from '../../features/rules/components/versions.tsx'
 import { ruleQueries } from '../../features/rules/rules.queries.ts'
 import { useMe } from '../../lib/me.ts'
@@ -22,12 +23,27 @@ function RulesPage() {
   const me = useMe()
   const page = useQuery(ruleQueries.page())
   const [open, setOpen] = useState<string | null>(null)
-  const [saved, setSaved] = useState<string | null>(null)
-  const rule = page.data?.rules.find((row) => row.id === open)
+  const [saved, setSaved] = useState<{ rule: string; says: string } | null>(null)
   const edit = (id: string) => {
     setSaved(null)
     setOpen(id)
   }
+  const close = (id: string) => {
+    setOpen(null)
+    document.getElementById(setLimitsId(id))?.focus()
+  }
+  const under = ({ id }: RuleRow) => saved?.rule === id && <Saved says={saved.says} />
+  const form = (data: RulePage, rule: RuleRow) => (
+    <LimitsForm
+      page={data}
+      rule={rule}
+      onSaved={(says) => {
+        setSaved({ rule: rule.id, says })
+        close(rule.id)
+      }}
+      onLeave={() => close(rule.id)}
+    />
+  )
   return (
     <Page
       title="Rules"
@@ -37,19 +53,6 @@ function RulesPage() {
       }
       sentence={page.data ? `${page.data.rules.length} rules look at every sheet.` : 'The rules that look at every sheet.'}
     >
-      {page.data && rule && (
-        <LimitsForm
-          key={rule.id}
-          page={page.data}
-          rule={rule}
-          onSaved={(says) => {
-            setSaved(says)
-            setOpen(null)
-          }}
-          onLeave={() => setOpen(null)}
-        />
-      )}
-      {saved && <Saved says={saved} />}
       {page.error && <ErrorState error={page.error} again={() => page.refetch()} />}
       {page.isPending && <Loading what="Opening the rules" />}
       {page.data && (
@@ -58,7 +61,11 @@ function RulesPage() {
             A stop takes its figures back until a person answers it; a doubt goes to the desk; a note is only shown. Right: a cell
             it named was corrected, or the sheet sent back.
           </p>
-          <RulesTable page={page.data} {...(me.role === 'admin' ? { onChange: (row) => edit(row.id) } : {})} />
+          <RulesTable
+            page={page.data}
+            under={(row) => (row.id === open ? form(page.data, row) : under(row))}
+            {...(me.role === 'admin' ? { onChange: (row) => edit(row.id) } : {})}
+          />
           <Versions page={page.data} />
         </>
       )}

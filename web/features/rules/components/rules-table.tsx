@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react'
 import { limitWords } from '../../../../shared/checks/limits.ts'
 import type { RuleLimit, RulePage, RuleRow } from '../../../../shared/schemas/rules.ts'
 import { listed } from '../../../lib/words.ts'
@@ -36,8 +37,18 @@ function answeredWords({ fired, right, letStand }: RuleRow): string {
   return right + letStand === 0 ? 'none answered' : `${right} of ${right + letStand}`
 }
 
-/** Every rule in plain words; `onChange` opens its limits. */
-export function RulesTable({ page, onChange }: { page: RulePage; onChange?: (rule: RuleRow) => void }) {
+interface RulesTableProps {
+  page: RulePage
+  /** Opens a rule's limits, which then stand under its row. */
+  onChange?: (rule: RuleRow) => void
+  under?: (rule: RuleRow) => ReactNode
+}
+
+/** The word that opens the limits of a rule: the focus comes back to it. */
+export const setLimitsId = (rule: string) => `set-limits-${rule}`
+
+/** Every rule in plain words. */
+export function RulesTable({ page, onChange, under }: RulesTableProps) {
   const limits = new Map(page.limits.map((limit) => [limit.name, limit]))
   const columns: LedgerColumn<RuleRow>[] = [
     { key: 'id', head: 'rule', tight: true, stack: 'word', cell: (rule) => <span className="figures">{rule.id}</span> },
@@ -77,7 +88,12 @@ export function RulesTable({ page, onChange }: { page: RulePage; onChange?: (rul
       tight: true,
       cell: (rule) =>
         rule.limits.length > 0 && (
-          <Button look="word" aria-label={`Set limits of ${rule.id}, ${rule.name}`} onClick={() => onChange(rule)}>
+          <Button
+            look="word"
+            id={setLimitsId(rule.id)}
+            aria-label={`Set limits of ${rule.id}, ${rule.name}`}
+            onClick={() => onChange(rule)}
+          >
             set limits
           </Button>
         ),
@@ -90,6 +106,7 @@ export function RulesTable({ page, onChange }: { page: RulePage; onChange?: (rul
       columns={columns}
       groups={[{ key: 'all', rows: page.rules }]}
       rowKey={(rule) => rule.id}
+      {...(under ? { under } : {})}
       quiet={(rule) => rule.fired === 0}
     />
   )
