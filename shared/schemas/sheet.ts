@@ -84,6 +84,8 @@ const heldSchema = z.object({ userId: idSchema, name: z.string(), since: z.strin
 export const sheetRowSchema = z.object({
   id: idSchema,
   code: z.string().nullable(),
+  /** The file it first came in, by which a sheet without a code is told apart; null where there is a code, or no file. */
+  fileName: z.string().nullable(),
   state: sheetStateSchema,
   layout: z.string().nullable(),
   origin: z.enum(['photo', 'spreadsheet', 'keyed']).nullable(),

@@ -31,6 +31,14 @@ test('the find box takes every letter, opens the first hit by Enter, and says wh
   await waitFor(() => expect(router.state.location.pathname).toBe(`/desk/${id(3)}`))
 })
 
+test('a sheet without a code shows the file it came in', async () => {
+  const api = fakeApi()
+  signedIn(api, 'clerk')
+  api.on('GET', '/sheets', () => answer(sheetListSchema, { sheets: [waiting(1, { fileName: 'rooka-3.jpg' })], next: null }))
+  renderApp('/desk')
+  expect((await screen.findByText('rooka-3.jpg')).closest('a')?.getAttribute('href')).toBe(`/desk/${id(1)}`)
+})
+
 test('the row in hand is brought into view', async () => {
   const api = fakeApi()
   signedIn(api, 'clerk')

@@ -6,6 +6,7 @@ import { ofPerson } from '../repositories/sheet-people.ts'
 interface Row {
   id: string
   code: string | null
+  fileName: string | null
   state: SheetState
   layout: string | null
   origin: SheetRow['origin']
@@ -34,7 +35,9 @@ const named = (table: string, key: string, alias: string) =>
    LEFT JOIN ${table} ${alias} ON to_jsonb(${alias}.number) = r_${alias}.value`
 
 const SELECT = `
-SELECT s.id, s.code, s.state, s.layout_key AS layout, s.origin, s.arrived_at AS "arrivedAt",
+SELECT s.id, s.code, CASE WHEN s.code IS NULL THEN
+    (SELECT u.file_name FROM pages pg JOIN uploads u ON u.id = pg.upload_id WHERE pg.sheet_id = s.id ORDER BY u.received_at, pg.number LIMIT 1)
+  END AS "fileName", s.state, s.layout_key AS layout, s.origin, s.arrived_at AS "arrivedAt",
   coalesce(d.name, o.name) AS demonstrator, coalesce(p.name, pp.name) AS place, coalesce(t.name, pt.name) AS tractor,
   coalesce(i.name, pi.name) AS implement, coalesce(rd.value #>> '{}', pd.held_on::text) AS "trialDate", run.number AS "runNumber",
   s.open_doubts AS "openDoubts", s.stops,

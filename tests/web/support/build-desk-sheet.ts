@@ -46,6 +46,7 @@ export function buildDeskSheet(readings: Reading[], change: Partial<Sheet> = {})
   return {
     id: SHEET_ID,
     code: null,
+    fileName: null,
     state: 'waiting',
     layout: layout.key,
     layoutVersion: layout.version,

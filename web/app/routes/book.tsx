@@ -27,7 +27,7 @@ export function Component() {
     })
   const total = book.data?.total ?? 0
   const said = book.data
-    ? `${counted(total, 'run', 'runs')} ${filtered ? 'in this view of' : total === 1 ? 'stands in' : 'stand in'} the trial book.`
+    ? `${counted(total, 'run', 'runs')} ${filtered ? 'in this view of' : total === 1 ? 'stands in' : 'stand in'} the trial book, the last entered first.`
     : 'The trial book.'
   return (
     <Page title="Trial book" sentence={said} aside={me.role !== 'demonstrator' && <Downloads filters={filters} />}>
@@ -54,7 +54,7 @@ export function Component() {
       {book.data?.next && (
         <p className="px-margin py-2">
           <Button look="word" onClick={() => setSearch((s) => new URLSearchParams([...s, ['after', String(book.data?.next)]]))}>
-            Older runs
+            Runs entered before these
           </Button>
         </p>
       )}

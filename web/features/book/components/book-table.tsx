@@ -98,7 +98,7 @@ export function BookTable({ records }: { records: readonly RecordRow[] }) {
   return (
     <LedgerTable
       stacked
-      caption="Records of the trial book, newest first, each figure with its uncertainty U, k = 2"
+      caption="Records of the trial book, the last entered first, each figure with its uncertainty U, k = 2"
       columns={columns}
       groups={byDay(records)}
       rowKey={(row) => String(row.number)}

@@ -105,6 +105,7 @@ function GroupSays({ group }: { group: DeskGroup }) {
 const SheetLink = ({ row }: { row: SheetRow }) => (
   <Link to={paths.deskSheet.to(row.id)} className="figures no-underline" onClick={(event) => event.stopPropagation()}>
     {row.code ? formatSheetCode(row.code) : 'without a code'}
+    {row.fileName && <span className="label block">{row.fileName}</span>}
   </Link>
 )
 
