@@ -9,6 +9,8 @@ export const trailEntrySchema = z.object({
   subject: z.string(),
   subjectId: z.string().nullable(),
   text: z.string(),
+  /** Code of the sheet it was done to; null for other subjects, and for a sheet without one. */
+  sheetCode: z.string().nullable(),
 })
 export type TrailEntry = z.infer<typeof trailEntrySchema>
 export const trailListSchema = z.object({ entries: z.array(trailEntrySchema), next: z.number().int().nullable() })

@@ -1,7 +1,9 @@
 import { afterAll, beforeAll, expect, test } from 'vitest'
+import type { z } from 'zod'
 import { takeInPage } from '../../server/db/intake/take-in-page.ts'
 import type { TrialRecord } from '../../shared/schemas/record.ts'
 import type { Entered, Sheet } from '../../shared/schemas/sheet.ts'
+import type { trailListSchema } from '../../shared/schemas/trail.ts'
 import { buildReadings } from '../builders/readings.ts'
 import { buildOutcome, createArrivedSheet, createGoldenRegisters, createPage, readingsOf } from '../builders/sheet.ts'
 import { startTestServer, type TestServer } from '../support/server.ts'
@@ -35,6 +37,9 @@ test('a sheet whose readings are clear and agree is settled, and entering it mak
   expect(sheet.doubts.filter((d) => d.severity !== 'note')).toEqual([])
   expect(sheet.state).toBe('settled')
   const entered = (await clerk.post(`/sheets/${id}/enter`, { version: sheet.version })).body as Entered
+  const admin = await server.signIn('admin')
+  const { entries } = (await admin.get('/trail')).body as z.infer<typeof trailListSchema>
+  expect(entries.find((e) => e.subjectId === id)).toMatchObject({ action: 'entered', sheetCode: sheet.code })
   const record = (await analyst.get(`/records/${entered.recordNumber}`)).body as TrialRecord
   // DOMAIN's short golden sheet, computed independently: 14.0741 L/ha, 9.28982 mL/m³, depth 15.15 cm, width 0.908 m.
   expect(record.results.l_per_ha?.value).toBeCloseTo(14.074074, 6)
@@ -43,6 +48,13 @@ test('a sheet whose readings are clear and agree is settled, and entering it mak
   expect(record.results.width_mean_m?.value).toBeCloseTo(0.908, 10)
   expect(record.tractor.name).toBe('Tarnfold 45')
   expect(record.history.map((h) => h.action)).toEqual(['read', 'entered'])
+})
+
+test('a sheet without a code names the file it came in; one with a code needs none', async () => {
+  const readings = readingsOf(golden())
+  const bare = await createArrivedSheet(server.deps.source, demonstrator.user.id, buildOutcome({ readings, sheetCode: null }))
+  expect((await open(bare)).fileName).toBe('sheet.jpg')
+  expect((await open(await arrive())).fileName).toBeNull()
 })
 
 test('a doubt is settled by a person, with who and why, and results follow', async () => {

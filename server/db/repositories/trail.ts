@@ -34,13 +34,15 @@ export interface TrailRow {
   subject: string
   subjectId: string | null
   text: string
+  sheetCode: string | null
 }
 
 /** Newest first; `before` is the id of the last line seen. */
 export async function listTrail(db: Db, options: { before: number | null; limit: number }): Promise<TrailRow[]> {
   return db.query(
-    `SELECT id, at, who, action, subject, subject_id AS "subjectId", text FROM trail
-     WHERE $1::bigint IS NULL OR id < $1 ORDER BY id DESC LIMIT $2`,
+    `SELECT t.id, t.at, t.who, t.action, t.subject, t.subject_id AS "subjectId", t.text, s.code AS "sheetCode"
+     FROM trail t LEFT JOIN sheets s ON t.subject = 'sheet' AND s.id = t.subject_id
+     WHERE $1::bigint IS NULL OR t.id < $1 ORDER BY t.id DESC LIMIT $2`,
     [options.before, options.limit],
   )
 }

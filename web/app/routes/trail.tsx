@@ -1,7 +1,10 @@
 import { useInfiniteQuery } from '@tanstack/react-query'
+import { Link } from 'react-router-dom'
+import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { TrailEntry } from '../../../shared/schemas/trail.ts'
 import { trailQueries } from '../../features/trail/trail.queries.ts'
 import { actWords } from '../../features/trail/trail-words.ts'
+import { paths } from '../../lib/paths.ts'
 import { momentText } from '../../lib/time.ts'
 import { Button } from '../../ui/button.tsx'
 import { type LedgerColumn, LedgerTable } from '../../ui/ledger-table.tsx'
@@ -18,8 +21,21 @@ const columns: LedgerColumn<TrailEntry>[] = [
   },
   { key: 'who', head: 'who', tight: true, cell: (e) => e.who },
   { key: 'what', head: 'what', tight: true, cell: actWords },
-  { key: 'text', head: 'in words', stack: 'lead', cell: (e) => e.text },
+  { key: 'text', head: 'in words', stack: 'lead', cell: inWords },
 ]
+
+/** What was done; on a sheet with the way to it, since its readings alone name none. */
+function inWords({ subject, subjectId, sheetCode, text }: TrailEntry) {
+  if (subject !== 'sheet' || !subjectId) return text
+  return (
+    <>
+      <Link className="word figures" to={paths.deskSheet.to(subjectId)}>
+        {sheetCode ? formatSheetCode(sheetCode) : 'sheet without a code'}
+      </Link>{' '}
+      {text}
+    </>
+  )
+}
 
 export const Component = () => (
   <OnlyFor roles={ADMIN} title="Trail" says="The trail is open to the admin.">
