@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest'
 import { sharesOf } from '../../shared/trial/budget.ts'
 import { computeResults } from '../../shared/trial/compute-results.ts'
-import { burnLines, leastArea_ha } from '../../web/features/demonstrations/plan-model.ts'
+import { burnLines, burnTables, leastArea_ha } from '../../web/features/demonstrations/plan-model.ts'
 import { largestWords } from '../../web/features/record/budget-words.ts'
 import { mainFigureOf } from '../../web/features/record/record-model.ts'
 import { buildFacts, buildFullReadings } from '../builders/readings.ts'
@@ -44,6 +44,14 @@ test('the day page tells how much to burn in marks of the jar', () => {
   const hectare = burnLines(kit).find((line) => line.says === 'L/ha to ± 5 %')
   expect(hectare?.least_ml).toBeGreaterThan(3570)
   expect(burnLines({ ...kit, scale_pct: 4 }).find((line) => line.says === 'L/h to ± 3 %')?.least_ml).toBeNull()
+})
+
+test('like kits share one table, and a kit that only hauls is told nothing of hectares', () => {
+  const kit = (number: number, jarMark_ml = 200) => ({ ...buildKit({ number, jarMark_ml, jugMark_ml: 100 }), id, version: 1 })
+  const used = [1, 2, 3].map((number) => ({ kit: kit(number), perArea: number !== 3 }))
+  const tables = burnTables([...used, { kit: kit(4, 100), perArea: true }])
+  expect(tables.map(({ kits }) => kits)).toEqual([[1, 2], [3], [4]])
+  expect(tables[1]?.lines.map(({ says }) => says)).toEqual(['L/h to ± 3 %', 'L/h to ± 5 %', 'L/h to ± 10 %'])
 })
 
 test('the plan tells the least plot for a kit and an implement, where a usual figure is known', () => {

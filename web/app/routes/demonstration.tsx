@@ -3,6 +3,7 @@ import { Link, useLocation, useParams } from 'react-router-dom'
 import { z } from 'zod'
 import { NEWEST_LAYOUTS } from '../../../shared/layouts/registry.ts'
 import type { Demonstration } from '../../../shared/schemas/demonstration.ts'
+import type { Kit } from '../../../shared/schemas/register.ts'
 import { sheetStateSchema } from '../../../shared/schemas/sheet.ts'
 import type { Role } from '../../../shared/schemas/user.ts'
 import { Cautions, CheckList } from '../../features/demonstrations/components/check-list.tsx'
@@ -12,6 +13,7 @@ import { TakeAlong } from '../../features/demonstrations/components/take-along.t
 import { hasArrived, TrialRuns } from '../../features/demonstrations/components/trial-runs.tsx'
 import { WithdrawConsent } from '../../features/demonstrations/components/withdraw-consent.tsx'
 import { demonstrationQueries, useWithdrawConsent } from '../../features/demonstrations/demonstrations.queries.ts'
+import { hasPlot } from '../../features/demonstrations/plan-model.ts'
 import { STATE_WORDS } from '../../features/sheets/sheet-words.ts'
 import { isNowhere } from '../../lib/api-error.ts'
 import { useMe } from '../../lib/me.ts'
@@ -43,8 +45,7 @@ export function Component() {
 function DayPage({ day }: { day: Demonstration }) {
   const me = useMe()
   const withdraw = useWithdrawConsent(day.id)
-  const numbers = day.trials.map((trial) => trial.kit.number)
-  const kits = (useQuery(registerQueries.rows('kits')).data ?? []).filter((kit) => numbers.includes(kit.number))
+  const kits = usedKits(day, useQuery(registerQueries.rows('kits')).data ?? [])
   const { state } = useLocation()
   const arrivedWith = savedSchema.safeParse(state)
   const layouts = NEWEST_LAYOUTS.filter((layout) => day.trials.some((trial) => trial.layout === layout.key))
@@ -84,7 +85,7 @@ function DayPage({ day }: { day: Demonstration }) {
             <TrialRuns trials={day.trials} links={{ sheetPath: sheetPathOf(me.role), stateMark, mayPrint }} />
           </section>
           <div className="px-margin">
-            <LeastBurn kits={kits} />
+            <LeastBurn used={kits} />
           </div>
           {layouts.map((layout) => (
             <CheckList key={layout.key} layout={layout} among={layouts.length} />
@@ -106,6 +107,12 @@ function DayPage({ day }: { day: Demonstration }) {
     </Page>
   )
 }
+
+const usedKits = ({ trials }: Demonstration, kits: readonly Kit[]) =>
+  kits.flatMap((kit) => {
+    const its = trials.filter((trial) => trial.kit.number === kit.number)
+    return its.length === 0 ? [] : [{ kit, perArea: its.some((trial) => hasPlot(trial.layout)) }]
+  })
 
 const sheetPathOf = (role: Role) => (role === 'demonstrator' ? paths.mySheet.to : role === 'analyst' ? null : paths.deskSheet.to)
 

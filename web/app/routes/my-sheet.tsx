@@ -2,6 +2,7 @@ import { useQuery } from '@tanstack/react-query'
 import { Link, useParams } from 'react-router-dom'
 import type { Sheet } from '../../../shared/schemas/sheet.ts'
 import { LeastBurn } from '../../features/demonstrations/components/least-burn.tsx'
+import { hasPlot } from '../../features/demonstrations/plan-model.ts'
 import { MySheetDetail } from '../../features/sheets/components/my-sheet-detail.tsx'
 import { sheetName } from '../../features/sheets/sheet-words.ts'
 import { mySheetQueries } from '../../features/sheets/sheets.queries.ts'
@@ -55,5 +56,6 @@ export function Component() {
 function BurnWithItsKit({ sheet }: { sheet: Sheet }) {
   const number = sheet.readings.find((reading) => reading.key === 'kit_id')?.value
   const kits = useQuery(registerQueries.rows('kits')).data ?? []
-  return <LeastBurn kits={kits.filter((kit) => kit.number === number)} />
+  const perArea = hasPlot(sheet.layout ?? undefined)
+  return <LeastBurn used={kits.filter((kit) => kit.number === number).map((kit) => ({ kit, perArea }))} />
 }

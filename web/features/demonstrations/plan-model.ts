@@ -98,6 +98,34 @@ export function burnLines(kit: Kit): BurnLine[] {
   })
 }
 
+/** A kit, and whether any of its runs has a plot to give litres a hectare of. */
+export interface UsedKit {
+  kit: Kit
+  perArea: boolean
+}
+
+export interface BurnTable {
+  /** Numbers of the kits it holds for. */
+  kits: number[]
+  jarMark_ml: number
+  perArea: boolean
+  lines: BurnLine[]
+}
+
+/** One table for kits of which the same holds; litres a hectare only where a run has a plot. */
+export function burnTables(used: readonly UsedKit[]): BurnTable[] {
+  const tables = new Map<string, BurnTable>()
+  for (const { kit, perArea } of used) {
+    const { jarMark_ml } = kit
+    const lines = burnLines(kit).filter(({ says }) => perArea || !says.startsWith('L/ha'))
+    const key = JSON.stringify([jarMark_ml, lines])
+    const like = tables.get(key)
+    if (like) like.kits.push(kit.number)
+    else tables.set(key, { kits: [kit.number], jarMark_ml, perArea, lines })
+  }
+  return [...tables.values()]
+}
+
 /** Length of a pass taken for the edge of a plot nobody has pegged yet, m. */
 const USUAL_PASS_M = 60
 

@@ -1,18 +1,19 @@
-import type { Kit } from '../../../../shared/schemas/register.ts'
-import { burnLines } from '../plan-model.ts'
+import { listed } from '../../../lib/words.ts'
+import { burnTables, type UsedKit } from '../plan-model.ts'
 
 /** On the phone during the run: how much must be burned before the figure says something, in marks of the kit's own jar. */
-export function LeastBurn({ kits }: { kits: readonly Kit[] }) {
-  if (kits.length === 0) return null
+export function LeastBurn({ used }: { used: readonly UsedKit[] }) {
+  if (used.length === 0) return null
+  const tables = burnTables(used)
   return (
     <section aria-labelledby="least-burn" className="pt-3">
       <h2 id="least-burn" className="pb-0.5 text-2">
         Burn at least
       </h2>
-      {kits.map((kit) => (
-        <table key={kit.id} className="mb-1 w-full max-w-[560px] border-collapse text-left">
+      {tables.map(({ kits, jarMark_ml, lines }) => (
+        <table key={kits[0]} className="mb-1 w-full max-w-[560px] border-collapse text-left">
           <caption className="label py-0.5 text-left">
-            kit {kit.number}, jar marked each {kit.jarMark_ml} mL, one top-up
+            {kits.length === 1 ? 'kit' : 'kits'} {listed(kits.map(String))}, jar marked each {jarMark_ml} mL, one top-up
           </caption>
           <thead>
             <tr className="label border-b-[1.5px] border-ink">
@@ -28,7 +29,7 @@ export function LeastBurn({ kits }: { kits: readonly Kit[] }) {
             </tr>
           </thead>
           <tbody>
-            {burnLines(kit).map(({ says, least_ml, marks }) => (
+            {lines.map(({ says, least_ml, marks }) => (
               <tr key={says} className="border-b border-feint">
                 <th scope="row" className="py-0.5 font-normal">
                   {says}
@@ -40,7 +41,10 @@ export function LeastBurn({ kits }: { kits: readonly Kit[] }) {
           </tbody>
         </table>
       ))}
-      <p className="label">L/ha: with the area known to 0.6 %, as a plot of 60 × 45 m is. Never: no amount is enough.</p>
+      <p className="label">
+        {tables.some((table) => table.perArea) && 'L/ha: with the area known to 0.6 %, as a plot of 60 × 45 m is. '}
+        Never: no amount is enough.
+      </p>
     </section>
   )
 }
