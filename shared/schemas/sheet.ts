@@ -169,8 +169,11 @@ export const sendBackSchema = onVersion.extend({
 export type SendBack = z.infer<typeof sendBackSchema>
 export const setAsideSchema = onVersion.extend({ reason: whySchema.min(3) })
 export type SetAside = z.infer<typeof setAsideSchema>
-/** Enter, or take up again what was set aside or sent back. */
+/** Take up again what was set aside or sent back. */
 export const onVersionSchema = onVersion
+/** `answer`: what the clerk answers to a challenge; needed for a challenged sheet, kept in the trail. */
+export const enterSheetSchema = onVersion.extend({ answer: whySchema.default('') })
+export type EnterSheet = z.input<typeof enterSheetSchema>
 export const enteredSchema = z.object({ recordNumber: z.number().int(), version: z.number().int(), next: idSchema.nullable() })
 export type Entered = z.infer<typeof enteredSchema>
 /** A picture the reader could not place: four corners of the page in picture pixels (clockwise from the sheet's top left), or keyed beside it. */

@@ -50,7 +50,7 @@ test('entering, challenging and entering again stand in the feed in order, with 
   const { recordNumber, sheetId } = await enter()
   await analyst.post(`/records/${recordNumber}/challenge`, { reason: 'speed cannot be' })
   const { version } = (await clerk.get(`/sheets/${sheetId}`)).body as Sheet
-  await clerk.post(`/sheets/${sheetId}/enter`, { version })
+  await clerk.post(`/sheets/${sheetId}/enter`, { version, answer: 'the watch was read twice' })
   const { changes } = await changesAfter(start)
   expect(changes.map((c) => [c.what, c.number, c.version])).toEqual([
     ['entered', recordNumber, 1],

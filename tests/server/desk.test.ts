@@ -1,7 +1,7 @@
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import type { z } from 'zod'
 import { takeInPage } from '../../server/db/intake/take-in-page.ts'
-import type { TrialRecord } from '../../shared/schemas/record.ts'
+import type { recordListSchema, TrialRecord } from '../../shared/schemas/record.ts'
 import type { Entered, Sheet } from '../../shared/schemas/sheet.ts'
 import type { trailListSchema } from '../../shared/schemas/trail.ts'
 import { buildReadings } from '../builders/readings.ts'
@@ -37,6 +37,10 @@ test('a sheet whose readings are clear and agree is settled, and entering it mak
   expect(sheet.doubts.filter((d) => d.severity !== 'note')).toEqual([])
   expect(sheet.state).toBe('settled')
   const entered = (await clerk.post(`/sheets/${id}/enter`, { version: sheet.version })).body as Entered
+  for (const find of [String(entered.recordNumber), `${sheet.code?.slice(0, 4)}-${sheet.code?.slice(4, 8).toLowerCase()}`]) {
+    const { records } = (await analyst.get(`/records?find=${find}`)).body as z.infer<typeof recordListSchema>
+    expect(records.map(({ number }) => number)).toEqual([entered.recordNumber])
+  }
   const admin = await server.signIn('admin')
   const { entries } = (await admin.get('/trail')).body as z.infer<typeof trailListSchema>
   expect(entries.find((e) => e.subjectId === id)).toMatchObject({ action: 'entered', sheetCode: sheet.code })
@@ -183,8 +187,11 @@ test('a challenged record goes back to the desk and comes out as the next versio
   await analyst.post(`/records/${entered.recordNumber}/challenge`, { reason: 'speed cannot be' })
   const again = await open(id)
   expect(again.state).toBe('challenged')
-  const second = (await clerk.post(`/sheets/${id}/enter`, { version: again.version })).body as Entered
+  expect((await clerk.post(`/sheets/${id}/enter`, { version: again.version })).status).toBe(400)
+  const answer = { version: again.version, answer: 'the watch was read twice' }
+  const second = (await clerk.post(`/sheets/${id}/enter`, answer)).body as Entered
   expect(second).toMatchObject({ recordNumber: entered.recordNumber, version: 2 })
+  expect((await open(id)).history.at(-1)?.text).toContain('answered: “the watch was read twice”')
 })
 
 test('the book downloads as CSV with units in the header, numbers untouched and live text made harmless', async () => {

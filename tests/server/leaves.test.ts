@@ -137,7 +137,8 @@ describe('the leaf', () => {
     }
     expect((await send(number)).status).toBe(409)
     const sheet = (await clerk!.get(`/sheets/${record.sheetId}`)).body as { version: number }
-    expect((await clerk!.post(`/sheets/${record.sheetId}/enter`, { version: sheet.version })).status).toBe(200)
+    const again = { version: sheet.version, answer: 'it reads 2300' }
+    expect((await clerk!.post(`/sheets/${record.sheetId}/enter`, again)).status).toBe(200)
     const old = await textOf((await demonstrator!.get(`/records/${number}/leaf.pdf?version=1`)).bytes)
     expect(old.text).toContain('Superseded')
     const fresh = await textOf((await demonstrator!.get(`/records/${number}/leaf.pdf`)).bytes)

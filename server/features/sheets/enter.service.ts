@@ -19,14 +19,21 @@ import type { Deps } from '../../http/route.ts'
 import { announceRecord } from '../webhooks/announce.ts'
 import { writeOnSheet } from './change-sheet.ts'
 
-export async function enterSheet(deps: Deps, actor: User, id: string, version: number): Promise<Entered> {
+const LEAST_ANSWER = 3
+
+/** @throws UserError `conflict` while doubts are open, `invalid` for a challenged sheet without an `answer` to the challenge */
+export async function enterSheet(deps: Deps, actor: User, id: string, version: number, answer = ''): Promise<Entered> {
   let entered = { number: 0, version: 0 }
   await writeOnSheet({ deps, actor, id, version, from: ['settled', 'challenged'] }, async (db, sheet) => {
     if (sheet.openDoubts > 0)
       throw new UserError('conflict', `${sheet.openDoubts} doubts are still open on this sheet: settle them first.`)
+    const challenged = sheet.state === 'challenged'
+    if (challenged && answer.length < LEAST_ANSWER)
+      throw new UserError('invalid', 'This sheet was challenged: say in a line how that is answered. Nothing was entered.')
     entered = await makeRecord(db, sheet, actor)
     await announceRecord(deps, db, { type: entered.version === 1 ? 'record.entered' : 'record.changed', ...entered })
-    const text = `entered as record ${entered.number}, version ${entered.version}`
+    const answered = challenged ? `; the challenge is answered: “${answer}”` : ''
+    const text = `entered as record ${entered.number}, version ${entered.version}${answered}`
     return {
       sheet: { state: 'entered', enteredAt: new Date(), heldBy: null, heldSince: null, heldUntil: null },
       trail: { action: 'entered', text, details: { record: entered.number } },

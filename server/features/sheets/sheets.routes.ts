@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import {
   enteredSchema,
+  enterSheetSchema,
   listSheetsSchema,
   onVersionSchema,
   placeSheetSchema,
@@ -145,8 +146,8 @@ export const sheetRoutes: Route[] = [
     summary: 'Enter a settled sheet into the trial book',
     access: DESK,
     params,
-    body: onVersionSchema,
+    body: enterSheetSchema,
     response: enteredSchema,
-    handle: ({ deps, actor, params, body }) => enterSheet(deps, actor, params.id, body.version),
+    handle: ({ deps, actor, params, body }) => enterSheet(deps, actor, params.id, body.version, body.answer),
   }),
 ]
