@@ -50,7 +50,7 @@ export function registerFindings(values: Values, named: Named): Finding[] {
     const key = REGISTER_CELLS[noun]
     const number = values[key]
     if (typeof number !== 'number' || named[noun]) return []
-    const text = `No ${WORDS[noun]} has the number ${number}: correct it, or have it entered in the register.`
+    const text = `No ${WORDS[noun]} has the number ${number}: correct it, or ask the admin to add it to the register.`
     return [{ rule: 'register', version: 1, severity: 'doubt' as const, cells: [key], text, compared: { number } }]
   })
 }
