@@ -1,6 +1,7 @@
 import { useQuery, useQueryClient } from '@tanstack/react-query'
 import { useEffect, useState } from 'react'
-import { Link, useNavigate, useParams } from 'react-router-dom'
+import { Link, useLocation, useNavigate, useParams } from 'react-router-dom'
+import { z } from 'zod'
 import { findLayout } from '../../../shared/layouts/registry.ts'
 import { formatSheetCode } from '../../../shared/layouts/sheet-code.ts'
 import type { Sheet } from '../../../shared/schemas/sheet.ts'
@@ -12,7 +13,7 @@ import { paths } from '../../lib/paths.ts'
 import { useKeys } from '../../lib/use-keys.ts'
 import { Button } from '../../ui/button.tsx'
 import { Page } from '../../ui/page.tsx'
-import { ErrorState, Loading } from '../../ui/says.tsx'
+import { ErrorState, Loading, Saved } from '../../ui/says.tsx'
 import { AT_THE_DESK, DESK_SHUT, OnlyFor } from './only-for.tsx'
 
 export const Component = () => (
@@ -25,6 +26,7 @@ function DeskSheetPage() {
   const { id = '' } = useParams()
   const me = useMe()
   const navigate = useNavigate()
+  const starts = enteredWords(useLocation().state)
   const sheet = useQuery(deskQueries.detail(id))
   const next = useNextAhead(id, me.id)
   // Held here: the page of the picture goes while it is read again.
@@ -37,12 +39,15 @@ function DeskSheetPage() {
     return <Loading what="The sheet is being read again by its corners. A few seconds." />
   if (state === 'unreadable' || !layout)
     return (
-      <Placing
-        key={id}
-        sheet={sheet.data}
-        placed={placing?.id === id ? placing.placed : placedOn(sheet.data)}
-        onPlaced={(placed) => setPlacing({ id, placed })}
-      />
+      <>
+        {starts && <Saved says={starts} />}
+        <Placing
+          key={id}
+          sheet={sheet.data}
+          placed={placing?.id === id ? placing.placed : placedOn(sheet.data)}
+          onPlaced={(placed) => setPlacing({ id, placed })}
+        />
+      </>
     )
   if (state === 'sent back' || state === 'set aside' || state === 'entered' || state === 'printed')
     return <Away sheet={sheet.data} next={next} />
@@ -59,10 +64,17 @@ function DeskSheetPage() {
       }
       onLeave={(to) => navigate(to ? paths.deskSheet.to(to) : paths.desk.to())}
       // With none left it stays: the page says that it is entered.
-      onEntered={(to) => to && navigate(paths.deskSheet.to(to))}
+      onEntered={({ next: to, recordNumber }) => to && navigate(paths.deskSheet.to(to), { state: { entered: recordNumber } })}
+      starts={starts}
       next={next}
     />
   )
+}
+
+/** What the sheet before became, handed over with the address of this one. */
+function enteredWords(state: unknown): string | null {
+  const handed = z.object({ entered: z.number() }).safeParse(state)
+  return handed.success ? `Entered as record ${handed.data.entered}. This is the next sheet.` : null
 }
 
 /** The next sheet is fetched while this one is worked on, so that entering one opens the other at once. */
@@ -110,7 +122,6 @@ function Placing({ sheet, placed, onPlaced }: { sheet: Sheet; placed: Placed; on
 const SAID: Partial<Record<Sheet['state'], string>> = {
   'sent back': 'It was sent back and waits for the field.',
   'set aside': 'It was set aside.',
-  entered: 'It is entered in the trial book.',
   printed: 'It is printed; no picture of it has come yet.',
 }
 
@@ -126,11 +137,15 @@ function Away({ sheet, next }: { sheet: Sheet; next: string | null }) {
     { keys: 'Enter', does: 'back to the list', press: toList },
     ...(toNext ? [{ keys: 'n', does: 'next sheet', press: toNext }] : []),
   ]
-  const said = SAID[sheet.state] ?? sheet.state
+  const said = sheet.state === 'entered' ? `Entered as record ${sheet.recordNumber}.` : (SAID[sheet.state] ?? sheet.state)
   return (
     <Page title={nameOf(sheet)} over={nameOf(sheet)} sentence={said} aside={<BackToList />} keys={keys}>
       <div className="px-margin py-3">
-        {sheet.state === 'entered' && next === null && <p className="mb-1 text-2">No other sheet waits at the desk.</p>}
+        {sheet.state === 'entered' && next === null && (
+          <p role="status" className="mb-1 text-2">
+            No other sheet waits at the desk.
+          </p>
+        )}
         {reason && <p className="text-2 text-pen">“{reason}”</p>}
         {takeUp.error && <ErrorState error={takeUp.error} />}
         <div className="mt-2 flex gap-3">

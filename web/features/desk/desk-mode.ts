@@ -8,6 +8,7 @@ export type DeskMode =
   | { kind: 'let stand' }
   | { kind: 'send back' }
   | { kind: 'set aside' }
+  | { kind: 'answer' }
   | { kind: 'find' }
   | { kind: 'keys' }
 

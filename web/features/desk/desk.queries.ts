@@ -1,5 +1,6 @@
 import { queryOptions, useMutation, useQueryClient } from '@tanstack/react-query'
 import {
+  type EnterSheet,
   enteredSchema,
   type PlaceSheet,
   type SendBack,
@@ -54,5 +55,4 @@ export const useSetAside = (id: string) => useAct((input: SetAside) => api.post(
 export const useTakeUp = (id: string) =>
   useAct((input: { version: number }) => api.post(`/sheets/${id}/take-up`, input, sheetSchema))
 export const usePlace = (id: string) => useAct((input: PlaceSheet) => api.post(`/sheets/${id}/place`, input, sheetSchema))
-export const useEnter = (id: string) =>
-  useAct((input: { version: number }) => api.post(`/sheets/${id}/enter`, input, enteredSchema))
+export const useEnter = (id: string) => useAct((input: EnterSheet) => api.post(`/sheets/${id}/enter`, input, enteredSchema))

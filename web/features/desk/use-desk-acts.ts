@@ -11,10 +11,10 @@ const KEYED = 'keyed beside the picture'
 
 export type DeskActs = ReturnType<typeof useDeskActs>
 
-/** The verbs of the desk, each said once: keys, rows and words at the foot all call these. */
-export function useDeskActs(desk: Desk) {
+/** `starts`: what is said at first. The verbs of the desk, each said once: keys, rows and words at the foot all call these. */
+export function useDeskActs(desk: Desk, starts: string | null) {
   const [mode, setMode] = useState<DeskMode>(LOOK)
-  const [says, setSays] = useState<string | null>(null)
+  const [says, setSays] = useState(starts)
   const { layout, view, item } = desk
   const cell: LayoutCell | null = layout.cells.find((c) => c.key === desk.key) ?? null
   const reading = desk.key ? (view.readings.get(desk.key) ?? null) : null

@@ -1,7 +1,7 @@
 import { useMemo, useRef, useState } from 'react'
 import type { Layout } from '../../../shared/layouts/layout.ts'
 import type { Settlement, Sheet, Value } from '../../../shared/schemas/sheet.ts'
-import { type DeskItem, itemsOf, nextOpen, openOf } from './model/desk-items.ts'
+import { countOf, type DeskItem, itemsOf, nextOpen, numbered, openOf, seenWith } from './model/desk-items.ts'
 import { type DeskOp, oppositeOf } from './model/desk-op.ts'
 import { BLANK_RULES, type DeskView, viewOf } from './model/desk-view.ts'
 import { useSaver } from './use-saver.ts'
@@ -16,7 +16,11 @@ export function useDesk(given: Sheet, layout: Layout, me: string, readOnly: bool
   const refused = saved.trouble?.kind === 'changed'
   const shown = useMemo(() => (readOnly ? [] : refused ? saved.ops.slice(1) : saved.ops), [readOnly, refused, saved.ops])
   const view = useMemo(() => viewOf(sheet, layout, shown, me), [sheet, layout, shown, me])
-  const items = useMemo(() => itemsOf(view, layout), [view, layout])
+  const found = useMemo(() => itemsOf(view, layout), [view, layout])
+  const [seen, setSeen] = useState<readonly string[]>([])
+  const all = seenWith(seen, found)
+  if (all.length > seen.length) setSeen(all)
+  const items = useMemo(() => numbered(found, all), [found, all])
   const [chosen, setChosen] = useState<{ itemId: string | null; key: string | null }>({ itemId: null, key: null })
   const done = useRef<DeskOp[]>([])
 
@@ -46,6 +50,7 @@ export function useDesk(given: Sheet, layout: Layout, me: string, readOnly: bool
     readOnly,
     view,
     items,
+    count: countOf(items, all),
     /** The doubt in hand, or null when a clear cell (or nothing) is. */
     item,
     /** The cell in hand. */

@@ -1,6 +1,6 @@
 import { type ReactNode, useRef } from 'react'
 import type { Layout } from '../../../../shared/layouts/layout.ts'
-import type { Sheet } from '../../../../shared/schemas/sheet.ts'
+import type { Entered, Sheet } from '../../../../shared/schemas/sheet.ts'
 import type { User } from '../../../../shared/schemas/user.ts'
 import { useKeys } from '../../../lib/use-keys.ts'
 import { Foot } from '../../../ui/foot.tsx'
@@ -26,16 +26,18 @@ interface DeskSheetProps {
   /** Where to go when the sheet leaves the desk: to the next one, or to the list. */
   onLeave: (next: string | null) => void
   /** It stands in the trial book; `next` is the sheet the server names. */
-  onEntered: (next: string | null) => void
+  onEntered: (entered: Entered) => void
+  /** What was done just before, in words. */
+  starts: string | null
   /** The next sheet that waits and is free, for when this one is not. */
   next: string | null
 }
 
 /** One sheet at the desk. Made for a keyboard and a wide screen; on a narrow one the margin comes first. */
-export function DeskSheet({ sheet, layout, me, back, onLeave, onEntered, next }: DeskSheetProps) {
+export function DeskSheet({ sheet, layout, me, back, onLeave, onEntered, starts, next }: DeskSheetProps) {
   const held = useHold(sheet, me.id)
   const desk = useDesk(sheet, layout, me.name, held !== null)
-  const acts = useDeskActs(desk)
+  const acts = useDeskActs(desk, starts)
   const crop = useRef<HTMLElement>(null)
   const pane = useRef<HTMLElement>(null)
   useAlignedRow({ pane, crop, share: rowInHand(desk) })
@@ -43,10 +45,13 @@ export function DeskSheet({ sheet, layout, me, back, onLeave, onEntered, next }:
   const { version } = desk.sheet
 
   const leave = { onSuccess: () => onLeave(null), onError: (error: Error) => acts.say(error.message) }
+  const enterIt = (answer = '') =>
+    enter.mutate({ version, answer }, { onSuccess: onEntered, onError: (error) => acts.say(error.message) })
   const entering = () => {
     const reason = acts.notYet()
     if (reason) acts.say(reason)
-    else enter.mutate({ version }, { onSuccess: (answer) => onEntered(answer.next), onError: (error) => acts.say(error.message) })
+    else if (desk.sheet.state === 'challenged') acts.setMode({ kind: 'answer' })
+    else enterIt()
   }
   const whole = { entering, leave: () => onLeave(null), next: next ? () => onLeave(next) : null }
   useKeys(deskKeyMap(desk, acts, whole))
@@ -72,6 +77,7 @@ export function DeskSheet({ sheet, layout, me, back, onLeave, onEntered, next }:
             picture={picture}
             crop={crop}
             onSendBack={(reason) => sendBack.mutate({ version, reason, cells: [...(desk.item?.cells ?? [])] }, leave)}
+            onAnswer={enterIt}
             onSetAside={(reason) => setAside.mutate({ version, reason }, leave)}
           />
         </div>

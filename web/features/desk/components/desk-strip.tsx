@@ -3,13 +3,12 @@ import { formatSheetCode } from '../../../../shared/layouts/sheet-code.ts'
 import { clockOf } from '../../../lib/time.ts'
 import { counted } from '../../../lib/words.ts'
 import { Tally } from '../../../ui/tally.tsx'
-import { openOf } from '../model/desk-items.ts'
 import type { Desk } from '../use-desk.ts'
 
 /** The strip over the sheet: which one it is, how far its doubts are, and whether all is saved. */
 export function DeskStrip({ desk, held, back }: { desk: Desk; held: string | null; back: ReactNode }) {
-  const { sheet, items } = desk
-  const open = openOf(items).length
+  const { sheet } = desk
+  const { settled, open } = desk.count
   const what = [sheet.tractor, sheet.implement].filter(Boolean).join(', ')
   const where = [sheet.place, sheet.runNumber ? `run ${sheet.runNumber}` : null].filter(Boolean).join(', ')
   return (
@@ -24,9 +23,9 @@ export function DeskStrip({ desk, held, back }: { desk: Desk; held: string | nul
       {sheet.demonstrator && <span>from {sheet.demonstrator}</span>}
       <span className="ml-auto flex flex-wrap items-center gap-x-3">
         <span>{held ? 'only to look at' : 'in your hand'}</span>
-        <Tally settled={items.length - open} waiting={open} inHand={open > 0} />
+        <Tally settled={settled} waiting={open} inHand={open > 0} />
         <span>
-          <strong className="figures">{items.length - open}</strong> settled <strong className="figures">{open}</strong> wait
+          <strong className="figures">{settled}</strong> settled <strong className="figures">{open}</strong> wait
         </span>
         <span role="status" className="w-[126px] text-right">
           <Saved desk={desk} />

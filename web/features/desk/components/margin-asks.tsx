@@ -11,10 +11,12 @@ interface MarginAsksProps {
   acts: DeskActs
   onSendBack: (reason: string) => void
   onSetAside: (reason: string) => void
+  /** Enters a challenged sheet with the answer. */
+  onAnswer: (answer: string) => void
 }
 
 /** What the margin asks for while it is busy with something. */
-export function MarginAsks({ desk, acts, onSendBack, onSetAside }: MarginAsksProps) {
+export function MarginAsks({ desk, acts, onSendBack, onSetAside, onAnswer }: MarginAsksProps) {
   const { mode, cell, back } = acts
   switch (mode.kind) {
     case 'type':
@@ -73,6 +75,17 @@ export function MarginAsks({ desk, acts, onSendBack, onSetAside }: MarginAsksPro
           does="Set it aside"
           least={3}
           onReason={onSetAside}
+          onCancel={back}
+        />
+      )
+    case 'answer':
+      return (
+        <ReasonForm
+          asks={`How is the challenge answered? “${desk.sheet.reason ?? ''}”`}
+          hint="One line; the trail keeps it with the record."
+          does="Enter it again, with this answer"
+          least={3}
+          onReason={onAnswer}
           onCancel={back}
         />
       )

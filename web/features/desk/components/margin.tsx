@@ -1,8 +1,10 @@
 import type { ReactNode, RefObject } from 'react'
 import { formatValue } from '../../../../shared/layouts/cell-value.ts'
 import { wordsFor } from '../../../../shared/layouts/layout.ts'
+import type { Sheet } from '../../../../shared/schemas/sheet.ts'
+import { counted } from '../../../lib/words.ts'
 import { KeyCap } from '../../../ui/foot.tsx'
-import { LETTERS, openOf } from '../model/desk-items.ts'
+import { LETTERS } from '../model/desk-items.ts'
 import type { Desk } from '../use-desk.ts'
 import type { DeskActs } from '../use-desk-acts.ts'
 import { CropOrOrigin } from './crop-or-origin.tsx'
@@ -22,12 +24,14 @@ interface MarginProps {
   /** Acts on the whole sheet that need a reason. */
   onSendBack: (reason: string) => void
   onSetAside: (reason: string) => void
+  /** Enters a challenged sheet with the answer. */
+  onAnswer: (answer: string) => void
 }
 
 /** Beside the sheet: the doubt in hand in one sentence, its ink enlarged, what may be taken, and the other doubts. */
 export function Margin(props: MarginProps) {
   const { desk, held, acts, picture, crop } = props
-  const { item, items } = desk
+  const { item } = desk
   return (
     <section
       aria-label="The doubt in hand"
@@ -40,20 +44,18 @@ export function Margin(props: MarginProps) {
           </p>
         )}
         <TroubleNote desk={desk} />
-        {desk.sheet.state === 'challenged' && desk.sheet.reason && (
-          <p className="mb-2 border-l-[3px] border-ink pl-2">Challenged after it was entered: “{desk.sheet.reason}”</p>
-        )}
+        <Challenged sheet={desk.sheet} />
         <p className="label flex flex-wrap justify-between gap-x-2">
           <span>
             {item ? (
               <>
                 <strong className="text-ink">
-                  Doubt {item.number} of {items.length}
+                  Doubt {item.number} of {desk.count.all}
                 </strong>{' '}
                 on this sheet
               </>
             ) : (
-              `${items.length - openOf(items).length} of ${items.length} doubts settled`
+              `${desk.count.settled} of ${counted(desk.count.all, 'doubt')} settled`
             )}
           </span>
           {item?.doubt && <span>rule {item.doubt.rule}</span>}
@@ -85,8 +87,19 @@ export function Margin(props: MarginProps) {
   )
 }
 
+/** Who challenged the record of this sheet, and why. */
+function Challenged({ sheet }: { sheet: Sheet }) {
+  if (sheet.state !== 'challenged') return null
+  const who = sheet.history.findLast((line) => line.action === 'challenged')?.who
+  return (
+    <p className="mb-2 border-l-[3px] border-ink pl-2">
+      Challenged {who ? `by ${who} ` : ''}after it was entered: “{sheet.reason}”
+    </p>
+  )
+}
+
 function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
-  const { item, items } = desk
+  const { item } = desk
   if (item) {
     return (
       <>
@@ -118,7 +131,17 @@ function Headline({ desk, acts }: { desk: Desk; acts: DeskActs }) {
       </>
     )
   }
-  const done = items.length > 0 ? 'Every doubt is settled.' : 'Nothing is in doubt here.'
+  const done = desk.count.all > 0 ? 'Every doubt is settled.' : 'Nothing is in doubt here.'
+  if (desk.sheet.state === 'challenged' && !desk.readOnly) {
+    return (
+      <>
+        <h1 className="mt-0.5 text-5 leading-[36px]">Answer the challenge</h1>
+        <p className="text-2">
+          {done} Correct what the challenge names, or enter the sheet again as it stands: Shift Enter asks for one line of answer.
+        </p>
+      </>
+    )
+  }
   return (
     <>
       <h1 className="mt-0.5 text-5 leading-[36px]">{desk.readOnly ? 'Nothing is open here' : 'Ready to enter'}</h1>

@@ -78,6 +78,25 @@ function twoWays(reading: Reading): string {
 
 export const openOf = (items: readonly DeskItem[]) => items.filter((item) => item.open)
 
+/** What an item asks about: the same when its cells have other values meanwhile. */
+const topicOf = ({ id, doubt }: DeskItem) => (doubt ? JSON.stringify([doubt.rule, doubt.cells]) : id)
+
+/** Every topic seen in this sitting, in the order it was first seen: a doubt that a correction ended is gone from the items. */
+export function seenWith(seen: readonly string[], items: readonly DeskItem[]): readonly string[] {
+  const all = new Set([...seen, ...items.map(topicOf)])
+  return all.size > seen.length ? [...all] : seen
+}
+
+/** Each item keeps its number of the sitting while others go. */
+export const numbered = (items: readonly DeskItem[], seen: readonly string[]): DeskItem[] =>
+  items.map((item) => ({ ...item, number: seen.indexOf(topicOf(item)) + 1 }))
+
+/** How many were seen in this sitting, and how many of them are settled: by a person, or by a correction that ended them. */
+export function countOf(items: readonly DeskItem[], seen: readonly string[]) {
+  const open = new Set(openOf(items).map(topicOf)).size
+  return { all: seen.length, settled: seen.length - open, open }
+}
+
 /** The next open one after the one in hand, from the top again at the end. */
 export function nextOpen(items: readonly DeskItem[], fromId: string | null): DeskItem | null {
   const at = items.findIndex((item) => item.id === fromId)
