@@ -11,7 +11,7 @@ const KEYED = 'keyed beside the picture'
 
 export type DeskActs = ReturnType<typeof useDeskActs>
 
-/** `starts`: what is said at first. The verbs of the desk, each said once: keys, rows and words at the foot all call these. */
+/** The verbs of the desk, each said once: keys, rows and words at the foot all call these. `starts` is what is said at first. */
 export function useDeskActs(desk: Desk, starts: string | null) {
   const [mode, setMode] = useState<DeskMode>(LOOK)
   const [says, setSays] = useState(starts)
