@@ -62,6 +62,8 @@ export type TrialRecord = z.infer<typeof recordSchema>
 
 /** Filters of the trial book; they stand in the address, so a view can be sent to a colleague. */
 export const listRecordsSchema = z.object({
+  /** A record number, or a sheet code or part of one, with or without its hyphens. */
+  find: z.string().trim().max(20).optional(),
   tractor: idSchema.optional(),
   implement: idSchema.optional(),
   place: idSchema.optional(),

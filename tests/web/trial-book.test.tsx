@@ -32,6 +32,20 @@ test('filters stand in the address, are asked of the server, and go with the dow
   expect(Object.fromEntries(csv.searchParams)).toEqual({ implement: PLOUGH.id, soil: 'medium' })
 })
 
+test('a record is found by its number or its sheet code, and the box keeps the focus', async () => {
+  const api = fakeApi()
+  signedIn(api, 'analyst')
+  serveRegisters(api)
+  listed(api, buildRecord())
+  const user = userEvent.setup()
+  renderApp('/book')
+  await screen.findByRole('link', { name: '0231' })
+  const box = screen.getByLabelText('record or sheet code')
+  await user.type(box, '231{Enter}')
+  await waitFor(() => expect(api.reads('/records').at(-1)?.query.get('find')).toBe('231'))
+  expect(document.activeElement).toBe(box)
+})
+
 test('a view that holds nothing says so and takes the filters off', async () => {
   const api = fakeApi()
   signedIn(api, 'analyst')

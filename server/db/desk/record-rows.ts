@@ -36,6 +36,11 @@ export function whereOf(filter: RecordFilter, values: unknown[]): string {
   const bind = (value: unknown) => `$${values.push(value)}`
   const where = ["rec.state <> 'superseded'"]
   if (filter.demonstratorId) where.push(`s.owner_id = ${bind(filter.demonstratorId)}`)
+  if (filter.find && /^\d{1,9}$/.test(filter.find)) where.push(`rec.number = ${bind(Number(filter.find))}`)
+  else if (filter.find) {
+    const part = filter.find.toUpperCase().replace(/[^0-9A-Z]/g, '')
+    where.push(part === '' ? 'false' : `s.code LIKE ${bind(`%${part}%`)}`)
+  }
   if (filter.tractor) where.push(`rec.tractor_id = ${bind(filter.tractor)}`)
   if (filter.implement) where.push(`rec.implement_id = ${bind(filter.implement)}`)
   if (filter.place) where.push(`rec.place_id = ${bind(filter.place)}`)

@@ -4,7 +4,7 @@ import { api, withQuery } from '../../lib/api.ts'
 
 /** What stands in the address: every filter as text. */
 export type BookFilters = Record<Exclude<keyof ListRecords, 'after'>, string>
-export const FILTERS = ['tractor', 'implement', 'place', 'operation', 'soil', 'from', 'to'] as const
+export const FILTERS = ['find', 'tractor', 'implement', 'place', 'operation', 'soil', 'from', 'to'] as const
 
 export const filtersOf = (search: URLSearchParams): BookFilters =>
   Object.fromEntries(FILTERS.map((name) => [name, search.get(name) ?? ''])) as BookFilters

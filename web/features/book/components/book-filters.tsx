@@ -1,5 +1,5 @@
 import { useQuery } from '@tanstack/react-query'
-import { useId } from 'react'
+import { useEffect, useId, useRef } from 'react'
 import { OPERATIONS } from '../../../../shared/schemas/register.ts'
 import { registerQueries } from '../../../lib/register-rows.ts'
 import type { BookFilters } from '../book.queries.ts'
@@ -30,6 +30,7 @@ export function BookFilterBar({
       aria-label="Filters"
       className="flex flex-wrap items-end gap-x-3 gap-y-1 border-b border-line px-margin py-1.5 max-sm:grid max-sm:grid-cols-2"
     >
+      <Find value={filters.find} onFind={set('find')} />
       <Pick label="tractor" value={filters.tractor} choices={tractors.data?.map(named) ?? []} onPick={set('tractor')} />
       <Pick label="implement" value={filters.implement} choices={tools.data?.map(named) ?? []} onPick={set('implement')} />
       <Pick label="operation" value={filters.operation} choices={OPERATIONS.map(words)} onPick={set('operation')} />
@@ -42,6 +43,35 @@ export function BookFilterBar({
 }
 
 const LOOK = 'w-full min-w-0 min-h-[36px] max-sm:min-h-[44px] border-b-[1.5px] border-ink bg-leaf px-1 text-pen'
+
+/** Looked for when the box is left or Enter is pressed: letter by letter would fill the browser's way back. */
+function Find({ value, onFind }: { value: string; onFind: (value: string) => void }) {
+  const id = useId()
+  const field = useRef<HTMLInputElement>(null)
+  // The address may change without the box: by the way back, or as the filters are taken off.
+  useEffect(() => {
+    if (field.current) field.current.value = value
+  }, [value])
+  const find = (typed: string) => typed.trim() !== value && onFind(typed.trim())
+  return (
+    <div className="flex min-w-0 flex-col">
+      <label htmlFor={id} className="label">
+        record or sheet code
+      </label>
+      <input
+        ref={field}
+        id={id}
+        type="search"
+        maxLength={20}
+        autoComplete="off"
+        className={`${LOOK} figures`}
+        defaultValue={value}
+        onBlur={(event) => find(event.currentTarget.value)}
+        onKeyDown={(event) => event.key === 'Enter' && find(event.currentTarget.value)}
+      />
+    </div>
+  )
+}
 
 function Pick({
   label,
