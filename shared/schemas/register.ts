@@ -1,5 +1,6 @@
 /** The registers: what a sheet names by number, and what the rules need to know about it. */
 import { z } from 'zod'
+import { OPERATIONS } from '../trial/facts.ts'
 import { idSchema, nameSchema, numberSchema } from './user.ts'
 
 const optionalText = z.string().trim().max(200).default('')
@@ -55,16 +56,6 @@ export const tractorSchema = saveTractorSchema.extend(registered)
 export type SaveTractor = z.infer<typeof saveTractorSchema>
 export type Tractor = z.infer<typeof tractorSchema>
 
-export const OPERATIONS = [
-  'plough',
-  'disc',
-  'cultivator',
-  'rotary_tiller',
-  'harrow',
-  'subsoiler',
-  'transport',
-  'pto_work',
-] as const
 export const operationSchema = z.enum(OPERATIONS)
 export type Operation = z.infer<typeof operationSchema>
 export const saveImplementSchema = z.object({

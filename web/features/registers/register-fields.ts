@@ -1,5 +1,6 @@
 /** What each register shows and asks: one list draws the table and the form. */
-import { DRIVES, OPERATIONS, type RegisterName } from '../../../shared/schemas/register.ts'
+import { DRIVES, type RegisterName } from '../../../shared/schemas/register.ts'
+import { OPERATIONS } from '../../../shared/trial/facts.ts'
 import type { FieldOption } from '../../ui/field.tsx'
 
 export interface RegisterField {

@@ -1,6 +1,6 @@
 import { useQuery } from '@tanstack/react-query'
 import { useEffect, useId, useRef } from 'react'
-import { OPERATIONS } from '../../../../shared/schemas/register.ts'
+import { OPERATIONS } from '../../../../shared/trial/facts.ts'
 import { registerQueries } from '../../../lib/register-rows.ts'
 import type { BookFilters } from '../book.queries.ts'
 
