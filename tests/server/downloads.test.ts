@@ -65,7 +65,7 @@ test('the long data hold every reading and figure once, with unit, uncertainty, 
       const result = record.results[figure.key]!
       expect(figure).toMatchObject({ value: result.value, u: result.u, expanded_u: result.U, k: result.k, unit: result.unit })
       expect(figure.formula_version).toBe(record.formulaVersion)
-      if (figure.value === null) expect(figure.why).toBeTruthy()
+      expect(figure.why).toBe(result.reason?.text ?? null)
     }
     const shown = record.readings.filter((r) => own.some((v) => v.kind === 'reading' && v.key === r.key))
     expect(own).toHaveLength(shown.length + Object.keys(record.results).length)

@@ -2,9 +2,8 @@ import { zodResolver } from '@hookform/resolvers/zod'
 import { type Resolver, useForm } from 'react-hook-form'
 import { type LandUnitRow, type SaveLandUnit, saveLandUnitSchema } from '../../../../shared/schemas/land-unit.ts'
 import { plainIssue } from '../../../lib/plain-issue.ts'
-import { Button } from '../../../ui/button.tsx'
 import { Field } from '../../../ui/field.tsx'
-import { ErrorNote } from '../../../ui/says.tsx'
+import { FormFoot } from '../../../ui/form-foot.tsx'
 import { useConfirmLandUnit } from '../land-units.queries.ts'
 
 /** What the form begins with: a suggestion, or nothing. */
@@ -45,15 +44,7 @@ export function UnitForm({ start, onSaved, onLeave }: UnitFormProps) {
           {...form.register('source')}
         />
       </div>
-      {confirm.error && <ErrorNote error={confirm.error} kept="What you typed is kept here." />}
-      <div className="mt-2 flex gap-3">
-        <Button look="ink" type="submit" disabled={confirm.isPending}>
-          Confirm
-        </Button>
-        <Button look="word" onClick={onLeave}>
-          Leave it
-        </Button>
-      </div>
+      <FormFoot act={confirm} does="Confirm" onLeave={onLeave} />
     </form>
   )
 }

@@ -3,9 +3,8 @@ import { useEffect } from 'react'
 import { type Resolver, useForm } from 'react-hook-form'
 import { REGISTERS, type RegisterName } from '../../../../shared/schemas/register.ts'
 import { plainIssue } from '../../../lib/plain-issue.ts'
-import { Button } from '../../../ui/button.tsx'
 import { Field, FieldChoice } from '../../../ui/field.tsx'
-import { ErrorNote } from '../../../ui/says.tsx'
+import { FormFoot } from '../../../ui/form-foot.tsx'
 import { newRow, REGISTER_FIELDS, REGISTER_WORDS, type RegisterField } from '../register-fields.ts'
 import { useSaveRow } from '../registers.queries.ts'
 
@@ -69,15 +68,7 @@ export function RowForm({ register: name, row, onSaved, onLeave }: RowFormProps)
         <input type="checkbox" className="size-[20px]" {...form.register('active')} />
         in use: offered when a demonstration is planned
       </label>
-      {save.error && <ErrorNote error={save.error} kept="What you typed is kept here." />}
-      <div className="mt-2 flex gap-3">
-        <Button look="ink" type="submit" disabled={save.isPending}>
-          Save
-        </Button>
-        <Button look="word" onClick={onLeave}>
-          Leave it
-        </Button>
-      </div>
+      <FormFoot act={save} does="Save" onLeave={onLeave} />
     </form>
   )
 }

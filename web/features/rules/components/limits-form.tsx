@@ -2,9 +2,8 @@ import { type FormEvent, useEffect, useRef, useState } from 'react'
 import { limitProblems } from '../../../../shared/checks/limit-range.ts'
 import { limitWords } from '../../../../shared/checks/limits.ts'
 import type { RuleLimit, RulePage, RuleRow } from '../../../../shared/schemas/rules.ts'
-import { Button } from '../../../ui/button.tsx'
 import { Field } from '../../../ui/field.tsx'
-import { ErrorNote } from '../../../ui/says.tsx'
+import { FormFoot } from '../../../ui/form-foot.tsx'
 import { useSetLimits } from '../rules.queries.ts'
 
 interface LimitsFormProps {
@@ -88,15 +87,7 @@ export function LimitsForm({ page, rule, onSaved, onLeave }: LimitsFormProps) {
         ))}
         <Field label="Why" error={problems.why} value={why} onChange={(event) => setWhy(event.target.value)} />
       </div>
-      {save.error && <ErrorNote error={save.error} kept="What you typed is kept here." />}
-      <div className="mt-2 flex gap-3">
-        <Button look="ink" type="submit" disabled={save.isPending}>
-          Save
-        </Button>
-        <Button look="word" onClick={onLeave}>
-          Leave it
-        </Button>
-      </div>
+      <FormFoot act={save} does="Save" onLeave={onLeave} />
     </form>
   )
 }

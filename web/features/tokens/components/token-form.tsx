@@ -3,9 +3,8 @@ import { useEffect } from 'react'
 import { useForm } from 'react-hook-form'
 import { type CreatedToken, type CreateToken, createTokenSchema, SCOPE_WORDS, SCOPES } from '../../../../shared/schemas/token.ts'
 import { plainIssue } from '../../../lib/plain-issue.ts'
-import { Button } from '../../../ui/button.tsx'
 import { Field } from '../../../ui/field.tsx'
-import { ErrorNote } from '../../../ui/says.tsx'
+import { FormFoot } from '../../../ui/form-foot.tsx'
 import { TickList } from '../../../ui/tick-list.tsx'
 import { useMakeToken } from '../tokens.queries.ts'
 
@@ -44,15 +43,7 @@ export function TokenForm({ onMade, onLeave }: { onMade: (token: CreatedToken) =
         />
         <TickList legend="It may" ticks={TICKS} error={errors.scopes?.message} field={form.register('scopes')} />
       </div>
-      {make.error && <ErrorNote error={make.error} kept="What you typed is kept here." />}
-      <div className="mt-2 flex gap-3">
-        <Button look="ink" type="submit" disabled={make.isPending}>
-          Make the token
-        </Button>
-        <Button look="word" onClick={onLeave}>
-          Leave it
-        </Button>
-      </div>
+      <FormFoot act={make} does="Make the token" onLeave={onLeave} />
     </form>
   )
 }

@@ -3,9 +3,8 @@ import { useEffect } from 'react'
 import { useForm } from 'react-hook-form'
 import { type CreatedWebhook, type SaveWebhook, saveWebhookSchema, WEBHOOK_EVENTS } from '../../../../shared/schemas/webhook.ts'
 import { plainIssue } from '../../../lib/plain-issue.ts'
-import { Button } from '../../../ui/button.tsx'
 import { Field } from '../../../ui/field.tsx'
-import { ErrorNote } from '../../../ui/says.tsx'
+import { FormFoot } from '../../../ui/form-foot.tsx'
 import { TickList } from '../../../ui/tick-list.tsx'
 import { useMakeWebhook } from '../webhooks.queries.ts'
 
@@ -35,15 +34,7 @@ export function WebhookForm({ onMade, onLeave }: { onMade: (webhook: CreatedWebh
         <Field label="Address" type="url" hint="It begins with https." error={errors.url?.message} {...form.register('url')} />
         <TickList legend="It is told when" ticks={TICKS} error={errors.events?.message} field={form.register('events')} />
       </div>
-      {make.error && <ErrorNote error={make.error} kept="What you typed is kept here." />}
-      <div className="mt-2 flex gap-3">
-        <Button look="ink" type="submit" disabled={make.isPending}>
-          Make the webhook
-        </Button>
-        <Button look="word" onClick={onLeave}>
-          Leave it
-        </Button>
-      </div>
+      <FormFoot act={make} does="Make the webhook" onLeave={onLeave} />
     </form>
   )
 }
